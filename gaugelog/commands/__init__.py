@@ -1,0 +1,1 @@
+"""The command line: a file a command group; wires the parts together."""

@@ -1,0 +1,1 @@
+"""What leaves: the signed record and the files that go with it."""
