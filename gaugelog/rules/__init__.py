@@ -1,1 +1,1 @@
-"""What is acceptable: limits, verdicts, fitting lots, conflicts, who may sign. Reads, never writes."""
+"""What is acceptable: limits, verdicts, fitting lots, who may sign. Reads, never writes."""
