@@ -1,0 +1,59 @@
+"""Instruments: meters and references, with certificate, due date and accuracy by range."""
+
+from __future__ import annotations
+
+from typing import ClassVar
+
+from sqlmodel import Field, SQLModel
+
+from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+
+
+class InstrumentRange(Part):
+    """One range of an instrument and its accuracy, each part a rectangular half-width."""
+
+    name: str
+    quantity: str
+    """`resistance`, `insulation`, `voltage`, `temperature`, `humidity` …"""
+    low: Quantity
+    high: Quantity
+    gain: Quantity
+    """Per cent of the reading."""
+    offset: Quantity
+    """In the unit of the quantity, whatever the reading."""
+    resolution: Quantity
+    test_voltage: Quantity | None = None
+
+
+class InstrumentAdded(FactBody):
+    """An instrument with its present certificate; added again when it is calibrated anew."""
+
+    kind: ClassVar[str] = "instrument.added"
+
+    id: Id
+    label: str
+    type: str
+    maker: str
+    serial: str
+    certificate_number: str
+    calibrated_by: str
+    calibrated_on: DateText
+    due: DateText
+    ranges: tuple[InstrumentRange, ...]
+    certificate: str = ""
+    """Digest of the certificate among the evidence, or empty."""
+
+
+class InstrumentRow(SQLModel, table=True):
+    """An instrument under its present certificate."""
+
+    __tablename__ = "instrument"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    type: str
+    serial: str
+    due: str
+    data: str
+    """The whole of `InstrumentAdded` as JSON."""
+    seq: int

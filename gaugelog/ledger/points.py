@@ -1,0 +1,109 @@
+"""Points: what is measured and why, at which place, by which grids."""
+
+from __future__ import annotations
+
+from typing import ClassVar, Literal
+
+from sqlmodel import Field, SQLModel
+
+from gaugelog.ledger.base import FactBody, Id, Part, Quantity
+
+GridState = Literal[
+    "planned",
+    "released",
+    "in work",
+    "on hold",
+    "ready to coat",
+    "awaiting review",
+    "accepted",
+    "returned",
+    "non-conforming",
+    "failed in service",
+    "withdrawn",
+    "removed",
+]
+
+
+class Place(Part):
+    """Where a gauge sits: datum, coordinates, side and axis direction, with tolerances."""
+
+    datum: str
+    x: Quantity
+    y: Quantity
+    z: Quantity | None = None
+    side: str
+    axis: str
+    """What the gauge axis follows: `length of girder`."""
+    angle: Quantity
+    """From that direction, counter-clockwise seen from outside."""
+    tolerance: Quantity
+    angle_tolerance: Quantity
+
+
+class PlannedGrid(Part):
+    """One sensing element of the point."""
+
+    id: Id
+    label: str
+    number: int
+
+
+class PointPlanned(FactBody):
+    """A point as planned, with its place and grids."""
+
+    kind: ClassVar[str] = "point.planned"
+
+    id: Id
+    label: str
+    campaign: Id
+    article: Id
+    zone: str
+    quantity: str
+    purpose: str
+    load: Literal["static", "dynamic"]
+    strain_min: Quantity
+    strain_max: Quantity
+    temperature_min: Quantity
+    temperature_max: Quantity
+    duration: Quantity | None = None
+    cycles: int | None = None
+    permitted_error: Quantity
+    """In µm/m."""
+    place: Place
+    lot: Id
+    route: Id
+    grids: tuple[PlannedGrid, ...]
+
+
+class PointRow(SQLModel, table=True):
+    """A point with the route it follows."""
+
+    __tablename__ = "point"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    campaign: str = Field(index=True)
+    zone: str
+    lot: str
+    route: str
+    gauge: str
+    """The physical gauge in place, or empty."""
+    generation: int
+    """1 for the first gauge at the place; a replaced gauge is a new generation."""
+    data: str
+    """The whole of `PointPlanned` as JSON."""
+    seq: int
+
+
+class GridRow(SQLModel, table=True):
+    """A grid and its state."""
+
+    __tablename__ = "grid"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    point: str = Field(index=True)
+    number: int
+    circuit: str
+    """The circuit it is wired into, or empty."""
+    state: str

@@ -1,0 +1,97 @@
+"""Readings: each observation as typed, with the limit that ruled and the verdict."""
+
+from __future__ import annotations
+
+from typing import ClassVar, Literal
+
+from sqlmodel import Field, SQLModel
+
+from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity, TimeText
+
+Word = Literal["pass", "conditional pass", "conditional fail", "fail", "undecided"]
+Qualifier = Literal["=", ">", "<", "overload"]
+
+
+class LimitFound(Part):
+    """One limit that applies to a reading; the strictest rules."""
+
+    origin: Literal["criteria", "permitted error", "prediction"]
+    at_least: Quantity | None = None
+    at_most: Quantity | None = None
+    source: str
+    formula: str = ""
+    rules: bool
+
+
+class Verdict(Part):
+    """The judgement of a reading, with the digits that decided."""
+
+    word: Word
+    blocks: bool
+    """Whether the word keeps the work from going on, by the criteria."""
+    probability: DecimalText | None = None
+    """Probability of conformance (JCGM 106, flat prior); none where it can't be given."""
+    standard_uncertainty: Quantity | None = None
+    guard_band: Quantity | None = None
+    coverage: DecimalText = "2"
+    reason: str = ""
+    rule: str
+    """Name and version of the rule, `insulation 1`."""
+
+
+class ReadingTaken(FactBody):
+    """One observation of one check at one stage; every attempt is kept."""
+
+    kind: ClassVar[str] = "reading.taken"
+
+    id: Id
+    point: Id
+    subject: Id
+    step: str
+    check: str
+    stage: str
+    attempt: int
+    typed: str
+    qualifier: Qualifier
+    value: Quantity | None = None
+    instrument: Id
+    range: str
+    test_voltage: Quantity | None = None
+    conditions: dict[str, Quantity] = {}
+    observed_at: TimeText
+    observed_by: Id
+    reason: str = ""
+    """Why it was measured again; empty at the first attempt."""
+    compared_with: Id | None = None
+    """The earlier reading that this one is held against."""
+    result: Quantity | None = None
+    """What was judged, where it is not the value itself: a change in per cent."""
+    limits: tuple[LimitFound, ...] = ()
+    verdict: Verdict
+
+
+class ReadingRow(SQLModel, table=True):
+    """A reading and its verdict."""
+
+    __tablename__ = "reading"
+
+    id: str = Field(primary_key=True)
+    point: str = Field(index=True)
+    subject: str = Field(index=True)
+    step: str
+    check: str
+    stage: str
+    attempt: int
+    latest: int
+    """1 for the last attempt of this check at this stage on this subject, else 0."""
+    typed: str
+    word: str
+    blocks: int
+    instrument: str
+    observed_at: str
+    observed_by: str
+    entered_at: str
+    entered_by: str
+    data: str
+    """The whole of `ReadingTaken` as JSON."""
+    seq: int

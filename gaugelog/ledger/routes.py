@@ -1,0 +1,87 @@
+"""Routes: the ordered steps of one kind of installation."""
+
+from __future__ import annotations
+
+from typing import ClassVar, Literal
+
+from sqlmodel import Field, SQLModel
+
+from gaugelog.ledger.base import FactBody, Id, Part, Quantity
+
+StepSubject = Literal["place", "grid", "circuit"]
+InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
+SkipRule = Literal["never", "planner", "with reason"]
+
+
+class Window(Part):
+    """A bound on when the step may be done, counted from when an earlier step was observed."""
+
+    bound: Literal["not before", "within"]
+    duration: Quantity
+    after: str
+    """Id of the earlier step."""
+
+
+class StepInput(Part):
+    """One thing the person enters: what it is, its prompt, its unit."""
+
+    name: str
+    kind: InputKind
+    prompt: str
+    unit: str = ""
+    check: str = ""
+    """For a reading: the check kind, `resistance` or `insulation` …"""
+    type: str = ""
+    """For a consumable: its kind. For an instrument: what it measures."""
+    required: bool = True
+
+
+class RouteStep(Part):
+    """One step: on what, what to do, what to beware of, what to enter, when it may be done."""
+
+    id: str
+    title: str
+    subject: StepSubject
+    stage: str = ""
+    """The stage of the readings taken in the step."""
+    instruction: str
+    cautions: tuple[str, ...] = ()
+    inputs: tuple[StepInput, ...] = ()
+    hold: bool = False
+    """A second person decides; refused, work goes back to `refused_to`."""
+    refused_to: str = ""
+    windows: tuple[Window, ...] = ()
+    skip: SkipRule = "never"
+    reaches: Literal["", "ready to coat"] = ""
+    """The state the grids reach when the step is done, where it has a name of its own."""
+
+
+class RouteAdopted(FactBody):
+    """A route card as it stands for this campaign."""
+
+    kind: ClassVar[str] = "route.adopted"
+
+    id: Id
+    label: str
+    title: str
+    edition: str
+    family: str
+    """What it is for: `room-temperature bond on metal`."""
+    basis: str
+    """What the order of work follows."""
+    steps: tuple[RouteStep, ...]
+    file: str
+    """Digest of the route's file among the evidence."""
+
+
+class RouteRow(SQLModel, table=True):
+    """A route."""
+
+    __tablename__ = "route"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    title: str
+    edition: str
+    data: str
+    """The whole of `RouteAdopted` as JSON."""

@@ -1,0 +1,123 @@
+"""Stock: gauge lots with their packs and pieces, and consumable lots, as received."""
+
+from __future__ import annotations
+
+from typing import ClassVar, Literal
+
+from sqlmodel import Field, SQLModel
+
+from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+
+GaugeState = Literal["on shelf", "in service", "removed", "scrapped"]
+ConsumableKind = Literal["adhesive", "coating", "solder", "cable", "cleaner", "other"]
+
+
+class GridData(Part):
+    """One grid of the lot's pattern: its factor and transverse sensitivity, as certified."""
+
+    number: int
+    gauge_factor: Quantity
+    gauge_factor_tolerance: Quantity
+    """Half-width in per cent of the factor, k = 2 unless the certificate says otherwise."""
+    transverse_sensitivity: Quantity
+    angle: Quantity
+    """Direction of the grid in the pattern, counter-clockwise from grid 1."""
+
+
+class PackReceived(Part):
+    """One pack of a lot, with the ids of the pieces in it, in the order they are numbered."""
+
+    id: Id
+    label: str
+    pieces: tuple[Id, ...]
+
+
+class LotReceived(FactBody):
+    """A gauge lot as received, with its certificate's figures and its packs."""
+
+    kind: ClassVar[str] = "lot.received"
+
+    id: Id
+    label: str
+    maker: str
+    type: str
+    pattern: str = "single"
+    nominal_resistance: Quantity
+    resistance_tolerance: Quantity
+    """Half-width in per cent of the nominal resistance."""
+    grid_length: Quantity
+    grid_width: Quantity
+    grids: tuple[GridData, ...]
+    expansion_class: Quantity | None = None
+    """Expansion coefficient of the material the gauge is matched to, ppm/K."""
+    temperature_min: Quantity | None = None
+    temperature_max: Quantity | None = None
+    strain_limit: Quantity | None = None
+    test_voltage_max: Quantity | None = None
+    expires: DateText | None = None
+    received_on: DateText
+    packs: tuple[PackReceived, ...]
+    certificate: str = ""
+    """Digest of the certificate among the evidence, or empty."""
+
+
+class ConsumableReceived(FactBody):
+    """A lot of adhesive, coating, solder, cable or cleaner as received."""
+
+    kind: ClassVar[str] = "consumable.received"
+
+    id: Id
+    label: str
+    type: ConsumableKind
+    maker: str
+    name: str
+    expires: DateText | None = None
+    received_on: DateText
+    pot_life: Quantity | None = None
+    wire_resistance: Quantity | None = None
+    """Resistance of one conductor per metre, for a cable."""
+
+
+class LotRow(SQLModel, table=True):
+    """A gauge lot."""
+
+    __tablename__ = "lot"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    maker: str
+    type: str
+    data: str
+    """The whole of `LotReceived` as JSON."""
+    seq: int
+
+
+class GaugeRow(SQLModel, table=True):
+    """One physical gauge, named by its pack and number: `K7-03/4`."""
+
+    __tablename__ = "gauge"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    lot: str = Field(index=True)
+    pack: str
+    number: int
+    state: str
+    point: str
+    """The point it was taken for, or empty."""
+
+
+class ConsumableRow(SQLModel, table=True):
+    """A consumable lot."""
+
+    __tablename__ = "consumable"
+
+    id: str = Field(primary_key=True)
+    label: str = Field(index=True)
+    type: str
+    name: str
+    expires: str
+    """A date, or empty when it does not expire."""
+    data: str
+    """The whole of `ConsumableReceived` as JSON."""
+    seq: int
