@@ -80,6 +80,14 @@ def between(name: str, value: _T, low: float, high: float) -> _T:
     return _require(name, value, inside, f"must lie between {low:g} and {high:g}")
 
 
+def strictly_between(name: str, value: _T, low: float, high: float) -> _T:
+    """`value` if it is finite and between `low` and `high`, neither included."""
+    finite(name, value)
+    plain = nominal(value)
+    inside = (plain > low) & (plain < high)
+    return _require(name, value, inside, f"must lie between {low:g} and {high:g}")
+
+
 def above(name: str, value: _T, low: float) -> _T:
     """`value` if it is finite and greater than `low` everywhere (a temperature, say)."""
     finite(name, value)
