@@ -1,0 +1,130 @@
+"""`gaugelog journal`: check the chain, print its head, look at entries, export them."""
+
+from __future__ import annotations
+
+from pathlib import Path
+from typing import TYPE_CHECKING, Annotated, Any
+
+import typer
+
+from gaugelog.commands.session import Json, open_logbook
+from gaugelog.commands.talk import put, put_json, put_table, say
+from gaugelog.errors import ExitCode
+
+if TYPE_CHECKING:
+    from gaugelog.journal.check import Report
+    from gaugelog.journal.entry import Entry
+
+group = typer.Typer(help="The journal: check it, print its head, look at it, export it.")
+
+
+@group.command()
+def check(
+    ctx: typer.Context,
+    head: Annotated[
+        list[str] | None,
+        typer.Option(help="A head as printed on a record, 137:ABC…; may be given several times."),
+    ] = None,
+    json: Json = False,
+) -> None:
+    """Check the whole journal and say of each trouble which entry it is in.
+
+    Steps: format, sequence, chain, bodies, deeds and signatures, certificates valid then,
+    evidence, ledger rebuilt and compared. Exit code 1 when there is trouble.
+    """
+    from gaugelog.work.logbook import check_logbook
+
+    logbook = open_logbook(ctx)
+    report = check_logbook(logbook, printed=head or [])
+    if json:
+        put_json(report.as_json())
+    else:
+        _tell_report(report)
+    if not report.ok:
+        raise typer.Exit(int(ExitCode.TROUBLE))
+
+
+def _tell_report(report: Report) -> None:
+    for step in report.steps:
+        sign = "–" if step.skipped else ("✓" if not step.troubles else "✗")
+        note = " (not asked)" if step.skipped else ""
+        put(f"{sign} {step.number}. {step.title}{note}")
+        for trouble in step.troubles:
+            put(f"    {trouble.where}: {trouble.what}")
+            if trouble.remedy:
+                put(f"      → {trouble.remedy}")
+    for notice in report.notices:
+        put(f"· {notice.where}: {notice.what}")
+    put("", report.summary)
+
+
+@group.command()
+def head(ctx: typer.Context, json: Json = False) -> None:
+    """Print the head: its sequence number and 128 bits of its hash. Keep it elsewhere."""
+    logbook = open_logbook(ctx)
+    found = logbook.head()
+    if json:
+        put_json({"chain": found.chain, "sequence": found.seq, "head": found.printed})
+    else:
+        put(found.printed)
+
+
+@group.command()
+def show(
+    ctx: typer.Context,
+    about: Annotated[
+        str, typer.Argument(help="An entry's number, or the label of a point, lot, meter, person.")
+    ] = "",
+    last: Annotated[int, typer.Option(min=1, help="How many entries, the newest ones.")] = 30,
+    json: Json = False,
+) -> None:
+    """Show entries: the newest, one by number, or those about a subject."""
+    from gaugelog.work.history import entries_about
+
+    logbook = open_logbook(ctx)
+    found = entries_about(logbook, about)[-last:]
+    if json:
+        put_json([_entry_json(entry) for entry in found])
+    elif about.isdigit():
+        put_json(_entry_json(found[0]))
+    else:
+        put_table(
+            "Journal",
+            [">entry", "time (UTC)", "by", "what", "about"],
+            [_entry_row(entry) for entry in found],
+            empty="No entry is about that.",
+        )
+
+
+def _entry_row(entry: Entry) -> list[str]:
+    header = entry.header
+    about = ", ".join(entry.body.about) if entry.body else "body withheld"
+    return [str(header.seq), header.time[:19].replace("T", " "), header.actor, header.kind, about]
+
+
+def _entry_json(entry: Entry) -> dict[str, Any]:
+    from gaugelog.journal.canonical import parse
+
+    body = parse(entry.body_bytes) if entry.body_bytes is not None else None
+    return {
+        "hash": entry.hash.hex(),
+        "header": parse(entry.header_bytes),
+        "body": body,
+        "signed": entry.signature is not None,
+    }
+
+
+@group.command()
+def export(
+    ctx: typer.Context,
+    folder: Annotated[Path, typer.Argument(help="A new or empty folder.")],
+) -> None:
+    """Write every entry, certificate and evidence file out, to be checked without Gaugelog.
+
+    The folder's READ ME.txt says how, with openssl and sha256sum only.
+    """
+    from gaugelog.work.history import export_journal
+
+    logbook = open_logbook(ctx)
+    count = export_journal(logbook, folder)
+    say(f"{count} entries written to {folder}; READ ME.txt there says how to check them.")

@@ -1,0 +1,107 @@
+"""`gaugelog stock`: gauge lots and consumables as received, and what is left of them."""
+
+from __future__ import annotations
+
+from collections import Counter
+from pathlib import Path
+from typing import TYPE_CHECKING, Annotated, Any
+
+import typer
+
+from gaugelog.commands.passphrases import Secrets
+from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import put_json, put_table, say
+
+if TYPE_CHECKING:
+    from gaugelog.ledger.stock import ConsumableReceived, LotReceived
+    from gaugelog.ledger.view import View
+
+group = typer.Typer(help="Stock: receive gauge lots and consumables, list what is there.")
+
+
+@group.command()
+def receive(
+    ctx: typer.Context,
+    files: Annotated[
+        list[Path], typer.Argument(help="CSV of gauge lots (a row a pack) or of consumables.")
+    ],
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Receive gauge lots and consumables from CSV files.
+
+    Every fault of every file is named at once; nothing is stored unless all is right.
+    """
+    from gaugelog.intake.stock import load_stock
+    from gaugelog.journal.ids import new_id
+    from gaugelog.work import stock
+
+    logbook = open_logbook(ctx)
+    facts = load_stock(files, new_id=new_id)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    stock.receive(logbook, signer, facts)
+    say(f"Received: {len(facts.lots)} gauge lots, {len(facts.consumables)} consumables.")
+
+
+@group.command("list")
+def list_(ctx: typer.Context, json: Json = False) -> None:
+    """List gauge lots with what is left on the shelf, and consumables with their expiry."""
+    logbook = open_logbook(ctx)
+    with logbook.reading() as view:
+        lots, consumables = _lots(view), _consumables(view)
+    if json:
+        put_json({"lots": lots, "consumables": consumables})
+        return
+    put_table(
+        "Gauge lots",
+        ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other"],
+        [[str(value) for value in row.values()] for row in lots],
+        empty="No gauge lot has been received. Try: gaugelog stock receive lots.csv",
+    )
+    put_table(
+        "Consumables",
+        ["lot", "kind", "name", "expires"],
+        [[str(value) for value in row.values()] for row in consumables],
+        empty="No consumable has been received.",
+    )
+
+
+def _lots(view: View) -> list[dict[str, Any]]:
+    from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
+
+    states: dict[str, Counter[str]] = {}
+    for gauge in view.all(GaugeRow):
+        states.setdefault(gauge.lot, Counter())[gauge.state] += 1
+    return [
+        _lot(LotReceived.model_validate_json(row.data), states.get(row.id, Counter()))
+        for row in view.all(LotRow)
+    ]
+
+
+def _lot(lot: LotReceived, states: Counter[str]) -> dict[str, Any]:
+    shelf, service = states["on shelf"], states["in service"]
+    return {
+        "lot": lot.label,
+        "type": lot.type,
+        "nominal_resistance_ohm": lot.nominal_resistance.value,
+        "gauge_factor": lot.grids[0].gauge_factor.value,
+        "on_shelf": shelf,
+        "in_service": service,
+        "other": states.total() - shelf - service,
+    }
+
+
+def _consumables(view: View) -> list[dict[str, Any]]:
+    from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow
+
+    rows = view.all(ConsumableRow)
+    return [_consumable(ConsumableReceived.model_validate_json(row.data)) for row in rows]
+
+
+def _consumable(lot: ConsumableReceived) -> dict[str, Any]:
+    return {
+        "lot": lot.label,
+        "kind": lot.type,
+        "name": lot.name,
+        "expires": lot.expires or "does not expire",
+    }

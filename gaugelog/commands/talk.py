@@ -1,0 +1,128 @@
+"""How commands talk: data to stdout, talk to stderr, foreign text never acts on the terminal."""
+
+from __future__ import annotations
+
+import json
+import sys
+import traceback
+from collections.abc import Callable, Iterable, Sequence
+from typing import TYPE_CHECKING, Any
+
+from gaugelog.errors import ExitCode, Fault, Faulty, GaugelogError
+from gaugelog.visible import visible
+
+if TYPE_CHECKING:
+    from rich.console import Console
+
+
+def console(*, stderr: bool = False) -> Console:
+    """A rich console that reads no markup, no emoji names, and wraps no data to a pipe."""
+    from rich.console import Console
+
+    stream = sys.stderr if stderr else sys.stdout
+    width = None if stream.isatty() else 160
+    return Console(
+        stderr=stderr, markup=False, emoji=False, highlight=False, soft_wrap=False, width=width
+    )
+
+
+def say(*lines: str) -> None:
+    """Talk to the person, on stderr."""
+    for line in lines:
+        sys.stderr.write(visible(line, keep_newlines=True) + "\n")
+
+
+def put(*lines: str) -> None:
+    """Give data, on stdout."""
+    for line in lines:
+        sys.stdout.write(visible(line, keep_newlines=True) + "\n")
+
+
+def put_json(value: object) -> None:
+    """Give data as JSON on stdout: two-space indent, unseen characters escaped."""
+    text = json.dumps(value, ensure_ascii=False, indent=2, default=str)
+    sys.stdout.write(_escape_unseen(text) + "\n")
+
+
+def _escape_unseen(text: str) -> str:
+    # JSON has its own way to show a control or bidi character, and it stays data.
+    return "".join(
+        char if char == "\n" or visible(char) == char else json.dumps(char)[1:-1] for char in text
+    )
+
+
+def put_table(
+    title: str, columns: Sequence[str], rows: Iterable[Sequence[str]], *, empty: str
+) -> None:
+    """Give a table on stdout; a column whose heading starts with `>` is aligned right.
+
+    With no rows, `empty` is told on stderr instead: stdout stays free of talk.
+    """
+    from rich import box
+    from rich.table import Table
+    from rich.text import Text
+
+    body = [[Text(visible(cell, keep_newlines=True)) for cell in row] for row in rows]
+    if not body:
+        say(empty)
+        return
+    table = Table(title=Text(title), title_justify="left", box=box.SIMPLE_HEAD, pad_edge=False)
+    for column in columns:
+        right = column.startswith(">")
+        table.add_column(
+            Text(column.removeprefix(">")), justify="right" if right else "left", overflow="fold"
+        )
+    for cells in body:
+        table.add_row(*cells)
+    console().print(table)
+
+
+def tell_error(error: GaugelogError) -> None:
+    """Say what stopped the program and what to do, every fault on its own line."""
+    if isinstance(error, Faulty):
+        tell_faults(error.faults)
+    say(f"gaugelog: {error.message}")
+    if error.remedy:
+        say(f"  {error.remedy}")
+
+
+def tell_faults(faults: Iterable[Fault]) -> None:
+    """Name each fault: its place, what is wrong, and what to do on the next line."""
+    for fault in faults:
+        say(f"  ✗ {fault.where}: {fault.what}")
+        if fault.remedy:
+            say(f"      → {fault.remedy}")
+
+
+def tell_unexpected(error: Exception, *, debug: bool) -> int:
+    """Own up to a defect; the traceback only with `--debug`. Returns the exit code."""
+    if debug:
+        sys.stderr.write("".join(traceback.format_exception(error)))
+    kind = type(error).__name__
+    say(f"gaugelog: this is a defect of Gaugelog ({kind}: {error}); nothing half-done was stored.")
+    if not debug:
+        say("  Run the same command with `gaugelog --debug …` and report what it prints.")
+    return int(ExitCode.UNEXPECTED)
+
+
+def waiting() -> Callable[[float], None]:
+    """A callback that says once that another program is writing, and that we wait."""
+    told: list[bool] = []
+
+    def on_wait(_seconds: float) -> None:
+        if not told:
+            say("Waiting: another program is writing to this logbook …")
+            told.append(True)
+
+    return on_wait
+
+
+def as_json(model: Any) -> Any:
+    """A pydantic or dataclass value as plain JSON data."""
+    from dataclasses import asdict, is_dataclass
+
+    if hasattr(model, "model_dump"):
+        return model.model_dump(mode="json")
+    if is_dataclass(model) and not isinstance(model, type):
+        return asdict(model)
+    return model
