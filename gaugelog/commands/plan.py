@@ -1,0 +1,121 @@
+"""`gaugelog plan`: load the planner's files, check the plan, look at it, release it."""
+
+from __future__ import annotations
+
+from pathlib import Path
+from typing import TYPE_CHECKING, Annotated, Any
+
+import typer
+
+from gaugelog.commands.passphrases import Secrets
+from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+from gaugelog.errors import ExitCode
+
+if TYPE_CHECKING:
+    from gaugelog.rules.fit import PlanFinding
+
+group = typer.Typer(help="The plan: load, check, show, release.")
+
+_SIGNS = {"ok": "✓", "warning": "!", "refusal": "✗"}
+_MEANING = "I release this plan and its acceptance criteria for work."
+
+
+@group.command()
+def load(
+    ctx: typer.Context,
+    folder: Annotated[
+        Path,
+        typer.Argument(
+            help="Folder with campaign.toml, criteria.toml, grids.csv and circuits.csv."
+        ),
+    ],
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Load a plan as a draft; it replaces an earlier draft.
+
+    Every fault of every file is named at once; nothing is stored unless all is right.
+    """
+    from gaugelog.work import plan
+
+    logbook = open_logbook(ctx)
+    facts = plan.understand(logbook, folder)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    loaded = plan.load(logbook, signer, facts)
+    say(
+        f"Draft revision {loaded.revision} loaded: {len(loaded.points)} points, "
+        f"{len(loaded.circuits)} circuits.",
+        "Next: gaugelog plan check",
+    )
+
+
+@group.command()
+def check(ctx: typer.Context, json: Json = False) -> None:
+    """Check the plan: does everything fit? Each finding comes with its figure and source.
+
+    Exit code 1 when something is refused.
+    """
+    from gaugelog.work import plan
+
+    findings = plan.check(open_logbook(ctx))
+    if json:
+        put_json([as_json(finding) for finding in findings])
+    else:
+        _tell_findings(findings)
+    if any(finding.level == "refusal" for finding in findings):
+        raise typer.Exit(int(ExitCode.TROUBLE))
+
+
+def _tell_findings(findings: list[PlanFinding]) -> None:
+    for finding in findings:
+        figure = f" [{finding.figure}]" if finding.figure else ""
+        source = f" ({finding.source})" if finding.source else ""
+        put(f"{_SIGNS[finding.level]} {finding.subject}: {finding.what}{figure}{source}")
+    levels = [finding.level for finding in findings]
+    put(
+        "",
+        f"{levels.count('refusal')} refusals, {levels.count('warning')} warnings, "
+        f"{levels.count('ok')} ok.",
+    )
+
+
+@group.command()
+def show(ctx: typer.Context, json: Json = False) -> None:
+    """Show the plan: each point with its place, lot, circuit, channel and state."""
+    from gaugelog.work import plan
+
+    rows = plan.overview(open_logbook(ctx))
+    if json:
+        put_json([as_json(row) for row in rows])
+        return
+    put_table(
+        "Plan",
+        ["point", "zone", "lot", "circuit", "channel", "route", ">permitted error", "state"],
+        [_cells(row) for row in rows],
+        empty="No plan is loaded. Try: gaugelog plan load FOLDER",
+    )
+
+
+def _cells(row: Any) -> list[str]:
+    return [
+        row.point,
+        row.zone,
+        row.lot,
+        row.circuit,
+        row.channel,
+        row.route,
+        row.permitted_error,
+        row.state,
+    ]
+
+
+@group.command()
+def release(ctx: typer.Context, as_: As = "", secret_fd: SecretFd = None) -> None:
+    """Release the plan: it and its criteria are frozen, and work may begin. A sign-off."""
+    from gaugelog.work import plan
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose="release the plan")
+    released = plan.release(logbook, signer, meaning=_MEANING)
+    say(f"Revision {released.revision} is released. Next: gaugelog step next")

@@ -1,0 +1,55 @@
+"""`gaugelog record`: hand out a point's signed record, or draw a draft of it."""
+
+from __future__ import annotations
+
+from pathlib import Path
+from typing import Annotated
+
+import typer
+
+from gaugelog.commands.session import Json, open_logbook
+from gaugelog.commands.talk import put, put_json, put_table, say
+
+
+def record(
+    ctx: typer.Context,
+    point: Annotated[str, typer.Argument(help="Label of the point; left out: list records.")] = "",
+    out: Annotated[Path | None, typer.Option(help="File to write; default POINT-rN.pdf.")] = None,
+    revision: Annotated[int | None, typer.Option(help="Revision; default the newest.")] = None,
+    draft: Annotated[
+        bool, typer.Option("--draft", help="Draw the record as it stands, marked as a draft.")
+    ] = False,
+    json: Json = False,
+) -> None:
+    """Hand out the signed record of a point. It is never drawn or signed again.
+
+    With --draft, draws the present state marked DRAFT on every page. The file's path goes to
+    stdout.
+    """
+    from gaugelog.documents.maker import PdfRecordMaker
+    from gaugelog.work import reviews
+
+    logbook = open_logbook(ctx)
+    if not point:
+        _list(reviews.records(logbook), json)
+        return
+    if draft:
+        found = reviews.draft(logbook, PdfRecordMaker(), point=point)
+    else:
+        found = reviews.record(logbook, point=point, revision=revision)
+    target = out or Path(f"{found.file_name}.pdf")
+    target.write_bytes(found.pdf)
+    say(f"{point}: {found.description}")
+    put(str(target))
+
+
+def _list(rows: list[dict[str, str]], json: bool) -> None:
+    if json:
+        put_json(rows)
+        return
+    put_table(
+        "Records",
+        ["point", ">revision", "state", "submitted by", "accepted by", "head", "SHA-256"],
+        [[str(value) for value in row.values()] for row in rows],
+        empty="No point has been submitted yet.",
+    )

@@ -1,0 +1,72 @@
+"""`gaugelog submit`, `accept` and `return`: the sign-offs of a point's record."""
+
+from __future__ import annotations
+
+from typing import Annotated
+
+import typer
+
+from gaugelog.commands.passphrases import Secrets
+from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import say
+
+Point = Annotated[str, typer.Argument(help="Label of the point.")]
+
+SUBMIT_MEANING = "I did or saw the work recorded here and submit it for review."
+ACCEPT_MEANING = "I reviewed this record against its criteria and accept it."
+
+
+def submit(
+    ctx: typer.Context,
+    point: Point,
+    meaning: Annotated[str, typer.Option(help="What the signature means.")] = SUBMIT_MEANING,
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Sign a point's record and hand it to review. A sign-off: asks the passphrase."""
+    from gaugelog.documents.maker import PdfRecordMaker
+    from gaugelog.work import reviews
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"submit {point}")
+    done = reviews.submit(logbook, signer, PdfRecordMaker(), point=point, meaning=meaning)
+    say(
+        f"{point}: record revision {done.revision} signed and submitted; head {done.head}.",
+        f"Next, by a reviewer: gaugelog accept {point} --as ID",
+    )
+
+
+def accept(
+    ctx: typer.Context,
+    point: Point,
+    meaning: Annotated[str, typer.Option(help="What the signature means.")] = ACCEPT_MEANING,
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Add the reviewer's signature; the point is accepted. A sign-off: asks the passphrase."""
+    from gaugelog.documents.maker import PdfRecordMaker
+    from gaugelog.work import reviews
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"accept {point}")
+    done = reviews.accept(logbook, signer, PdfRecordMaker(), point=point, meaning=meaning)
+    say(f"{point} is accepted; head {done.head}. Next: gaugelog record {point}")
+
+
+def give_back(
+    ctx: typer.Context,
+    point: Point,
+    reason: Annotated[str, typer.Option(help="Why; the technician and the record show it.")],
+    redo_from: Annotated[
+        str, typer.Option(help="Step to go on from; left out: nothing is done again.")
+    ] = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Return a submitted point with a reason. A sign-off: asks the passphrase."""
+    from gaugelog.work import reviews
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"return {point}")
+    reviews.give_back(logbook, signer, point=point, reason=reason, redo_from=redo_from)
+    say(f"{point} is returned. Next: gaugelog step next {point}")

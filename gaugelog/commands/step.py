@@ -1,0 +1,145 @@
+"""`gaugelog step`: what comes next at a point, do it, skip it."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING, Annotated
+
+import typer
+
+from gaugelog.commands.calc.engine import parse_pairs
+from gaugelog.commands.passphrases import Secrets
+from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+
+if TYPE_CHECKING:
+    from gaugelog.rules.progress import NextStep
+    from gaugelog.work.steps import StepOutcome
+
+group = typer.Typer(help="Steps: what comes next, do it, skip it.")
+
+Point = Annotated[str, typer.Argument(help="Label of the point.")]
+
+
+@group.command("next")
+def next_(
+    ctx: typer.Context,
+    point: Annotated[str, typer.Argument(help="Label of a point; left out: all points.")] = "",
+    json: Json = False,
+) -> None:
+    """Show the next step: instruction, cautions, what to enter, and what blocks it."""
+    from gaugelog.work import steps
+
+    logbook = open_logbook(ctx)
+    if point:
+        found = steps.next_step(logbook, point)
+        put_json(as_json(found)) if json else _tell_step(found)
+        return
+    rows = steps.worklist(logbook)
+    if json:
+        put_json([as_json(row) for row in rows])
+        return
+    put_table(
+        "Worklist",
+        ["point", "zone", "state", "next step", "blocked by"],
+        [[row.point, row.zone, row.state, row.title, "; ".join(row.blocks)] for row in rows],
+        empty="No plan is released. Try: gaugelog plan release",
+    )
+
+
+def _tell_step(found: NextStep) -> None:
+    put(f"{found.point} · {found.state}")
+    if found.step is None:
+        put(found.hint)
+        return
+    step = found.step
+    put(f"Step {found.number} of {found.count}: {step.title}  [{step.id}]", "", step.instruction)
+    for caution in step.cautions:
+        put(f"  ⚠ {caution}")
+    for item in step.inputs:
+        unit = f" ({item.unit})" if item.unit else ""
+        put(f"  {item.name} = {item.prompt}{unit}{'' if item.required else ', may be left out'}")
+    for window in found.windows:
+        put(f"  ◷ {window}")
+    for block in found.blocks:
+        put(f"  ✗ {block}")
+    put("", found.hint)
+
+
+@group.command()
+def do(
+    ctx: typer.Context,
+    point: Point,
+    pairs: Annotated[
+        list[str] | None,
+        typer.Argument(metavar="NAME=VALUE…", help='What to enter: resistance="350.4 ohm".'),
+    ] = None,
+    note: Annotated[str, typer.Option(help="A remark kept with the step.")] = "",
+    reason: Annotated[str, typer.Option(help="Why a reading is taken again.")] = "",
+    refuse: Annotated[
+        str, typer.Option(help="At a hold: refuse with this reason instead of releasing.")
+    ] = "",
+    at: At = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Do the next step of a point; at a hold step, decide it as the second person.
+
+    Inputs left out are asked for when a person sits at the terminal. A reading that fails is
+    kept, and the step stays open until it is measured again with a reason.
+    """
+    from gaugelog.work import steps
+
+    logbook = open_logbook(ctx)
+    found = steps.next_step(logbook, point)
+    typed = {**parse_pairs(pairs or [])}
+    typed.update(_ask_missing(found, typed))
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=_purpose(found))
+    outcome = steps.do(
+        logbook, signer, point=point, typed=typed, note=note, reason=reason, refuse=refuse, at=at
+    )
+    _tell_outcome(outcome)
+    raise typer.Exit(int(outcome.exit_code))
+
+
+def _purpose(found: NextStep) -> str:
+    if found.step is None:
+        return ""
+    return f"sign the hold “{found.step.title}”" if found.step.hold else ""
+
+
+def _ask_missing(found: NextStep, typed: dict[str, str]) -> dict[str, str]:
+    import sys
+
+    if found.step is None or not sys.stdin.isatty():
+        return {}
+    missing = [item for item in found.step.inputs if item.name not in typed and item.required]
+    if missing:
+        _tell_step(found)
+    return {
+        item.name: typer.prompt(f"{item.prompt}{f' ({item.unit})' if item.unit else ''}", err=True)
+        for item in missing
+    }
+
+
+def _tell_outcome(outcome: StepOutcome) -> None:
+    for reading in outcome.readings:
+        put(f"{reading.check} {reading.typed}: {reading.verdict.word.upper()}")
+        put(*(f"  {line}" for line in reading.explained))
+    say(*outcome.lines)
+
+
+@group.command()
+def skip(
+    ctx: typer.Context,
+    point: Point,
+    reason: Annotated[str, typer.Option(help="Why; kept in the record.")],
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Skip the next step with a reason, where its skip rule lets you."""
+    from gaugelog.work import steps
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    outcome = steps.skip(logbook, signer, point=point, reason=reason)
+    say(*outcome.lines)
