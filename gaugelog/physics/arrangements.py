@@ -47,6 +47,14 @@ class Arrangement:
         return any(self.across)
 
     @property
+    def active(self) -> tuple[bool, bool, bool, bool]:
+        """Whether each arm holds a grid that feels strain."""
+        one, two, three, four = (
+            bool(along or across) for along, across in zip(self.along, self.across, strict=True)
+        )
+        return one, two, three, four
+
+    @property
     def kind(self) -> str:
         """`quarter`, `half` or `full`, by the arms outside the module."""
         return {1: "quarter", 2: "half", 4: "full"}[len(self.outside)]

@@ -73,6 +73,21 @@ def resistance_between(network: Network, start: str, end: str) -> Number:
     return math.inf if conductance is None else 1 / conductance
 
 
+def connected(network: Network, start: str, end: str) -> bool:
+    """Whether current can pass between two nodes.
+
+    Source: the graph of the network.
+    """
+    mesh, alias = _mesh(network)
+    seen, waiting = set[str](), [_known(alias, start)]
+    while waiting:
+        node = waiting.pop()
+        if node not in seen:
+            seen.add(node)
+            waiting += mesh[node]
+    return _known(alias, end) in seen
+
+
 def potential(network: Network, node: str, high: str, low: str) -> Number:
     """Potential of a node as a part of the voltage between `high` and `low`: 0 at low, 1 at high.
 
