@@ -90,14 +90,14 @@ class Fault:
 
 
 class Faulty(GaugelogError):
-    """Input had faults; carries every one of them. Nothing was stored."""
+    """Input had faults; carries every one of them, and says what was therefore not done."""
 
     exit_code = ExitCode.FAULTS
 
-    def __init__(self, faults: Iterable[Fault]) -> None:
+    def __init__(self, faults: Iterable[Fault], outcome: str = "nothing was stored") -> None:
         self.faults = tuple(faults)
         count = len(self.faults)
         super().__init__(
-            f"{count} fault{'' if count == 1 else 's'} found; nothing was stored.",
+            f"{count} fault{'' if count == 1 else 's'} found; {outcome}.",
             "Put them right and try again.",
         )

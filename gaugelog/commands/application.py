@@ -9,6 +9,7 @@ import typer
 
 from gaugelog import __version__
 from gaugelog.commands import (
+    calc,
     demo,
     doctor,
     instrument,
@@ -47,6 +48,7 @@ def application() -> typer.Typer:
         app.command(command.__name__)(command)
     app.command("return")(review.give_back)
     app.command("record")(record.record)
+    app.command("calc")(calc.calc)
     app.command("doctor")(doctor.doctor)
     app.command("demo")(demo.demo)
     return app

@@ -12,6 +12,9 @@ from gaugelog.commands.calc.quantities import Dimension, NotUnderstood, Understo
 from gaugelog.errors import Fault, Faulty, GaugelogError
 
 
+_NOTHING = "nothing was worked out"
+
+
 @dataclass(frozen=True)
 class Argument:
     """One argument of a subject.
@@ -114,7 +117,7 @@ def work_out(subject: Subject, typed: Mapping[str, str], where: str = "") -> Wor
         except NotUnderstood as error:
             faults.append(Fault(place, f"{error}."))
     if faults:
-        raise Faulty(faults)
+        raise Faulty(faults, _NOTHING)
     return Worked(subject, inputs, _computed(subject, values, where))
 
 
@@ -125,7 +128,7 @@ def _computed(subject: Subject, values: Values, where: str) -> Answer:
         raise
     except GaugelogError as error:
         raise Faulty(
-            [Fault(where.rstrip(", ") or subject.name, error.message, error.remedy)]
+            [Fault(where.rstrip(", ") or subject.name, error.message, error.remedy)], _NOTHING
         ) from error
 
 
@@ -171,7 +174,13 @@ def name_of(formula: Callable[..., Any]) -> str:
 def source_of(formula: Callable[..., Any]) -> str:
     """The `Source:` paragraph of the formula's docstring on one line."""
     found = re.search(r"Source:\s*(.+?)(?:\n\s*\n|\Z)", inspect.getdoc(formula) or "", re.DOTALL)
-    return " ".join(found[1].split()) if found else "see its docstring"
+    if found is None:
+        return "see its docstring"
+    text = " ".join(found[1].split())
+    # "as `desensitisation`" sends the reader to a sibling: follow it.
+    sibling = re.match(r"as `(\w+)`", text)
+    other = getattr(inspect.getmodule(formula), sibling[1], None) if sibling else None
+    return text if other is None or sibling is None else source_of(other) + text[sibling.end() :]
 
 
 def parse_pairs(pairs: Sequence[str]) -> dict[str, str]:
@@ -186,5 +195,5 @@ def parse_pairs(pairs: Sequence[str]) -> dict[str, str]:
         else:
             typed[name] = value
     if faults:
-        raise Faulty(faults)
+        raise Faulty(faults, _NOTHING)
     return typed

@@ -4,12 +4,9 @@ from __future__ import annotations
 
 import math
 import re
-from collections.abc import Callable
 from dataclasses import dataclass
 from functools import cache
 from typing import Any
-
-from gaugelog.errors import Fault
 
 
 @dataclass(frozen=True)
@@ -78,7 +75,7 @@ _ALIASES: dict[str, str] = {
 }
 _NUMBER = re.compile(r"^\s*([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)\s*(.*?)\s*$")
 _WIRE = re.compile(r"^AWG$", re.IGNORECASE)
-_UNSAID_PREFIX = re.compile(r"^mohm$", re.IGNORECASE)
+_UNSAID_PREFIX = re.compile(r"^(mohm|mOhm|MOHM)$")
 
 
 class NotUnderstood(ValueError):
@@ -126,7 +123,7 @@ def _scale(dimension: Dimension) -> float:
 
 def _value(number: float, unit: str, dimension: Dimension) -> float:
     if _UNSAID_PREFIX.match(unit):
-        raise NotUnderstood("“mohm” may mean milli or mega; type milliohm or Mohm (as megaohm)")
+        raise NotUnderstood("“mohm” may mean milli or mega; type milliohm or Mohm")
     if _WIRE.match(unit):
         return _wire_area(number, dimension)
     if not unit:
@@ -137,13 +134,11 @@ def _value(number: float, unit: str, dimension: Dimension) -> float:
 
 
 def _wire_area(number: float, dimension: Dimension) -> float:
-    from gaugelog.physics.leads import awg_area
+    from gaugelog.physics.conductors import awg_diameter
 
     if dimension is not AREA:
         raise NotUnderstood(f"AWG is a wire size, not a {dimension.name}")
-    if number != int(number):
-        raise NotUnderstood("an AWG size is a whole number")
-    return float(awg_area(int(number)))
+    return math.pi / 4 * awg_diameter(number) ** 2
 
 
 def _convert(number: float, unit: str, dimension: Dimension) -> float:
@@ -169,11 +164,3 @@ def _registry() -> Any:
     registry = pint.UnitRegistry(cache_folder=":auto:")
     registry.default_format = "~P"
     return registry
-
-
-def fault_of(where: str, read: Callable[[], Understood]) -> Understood | Fault:
-    """Run `read`; what it could not understand comes back as a fault at `where`."""
-    try:
-        return read()
-    except NotUnderstood as error:
-        return Fault(where, f"{error}.")

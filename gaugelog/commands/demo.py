@@ -1,0 +1,7 @@
+"""`gaugelog demo`."""
+
+from __future__ import annotations
+
+
+def demo() -> None:
+    """Play the demo."""
