@@ -36,7 +36,7 @@ CHECKS = (
     [(0.01, 611.7), (10.0, 1228.2), (20.0, 2339.3), (30.0, 4247.0), (40.0, 7384.9), (50.0, 12352)],
 )
 def test_saturation_pressures_are_those_of_the_steam_tables(celsius: float, pascal: float) -> None:
-    """Steam tables (from memory); the Magnus form is good to half a per cent, 0.1 K of dew point."""
+    """Steam tables (from memory); the Magnus form is good to half a per cent."""
     assert pascal == pytest.approx(saturation_pressure(celsius), rel=5e-3)
 
 
