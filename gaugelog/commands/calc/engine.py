@@ -11,7 +11,6 @@ from typing import Any
 from gaugelog.commands.calc.quantities import Dimension, NotUnderstood, Understood, show, understand
 from gaugelog.errors import Fault, Faulty, GaugelogError
 
-
 _NOTHING = "nothing was worked out"
 
 
@@ -180,7 +179,11 @@ def source_of(formula: Callable[..., Any]) -> str:
     # "as `desensitisation`" sends the reader to a sibling: follow it.
     sibling = re.match(r"as `(\w+)`", text)
     other = getattr(inspect.getmodule(formula), sibling[1], None) if sibling else None
-    return text if other is None or sibling is None else source_of(other) + text[sibling.end() :]
+    return (
+        text
+        if other is None or sibling is None
+        else source_of(other).rstrip(".") + text[sibling.end() :]
+    )
 
 
 def parse_pairs(pairs: Sequence[str]) -> dict[str, str]:
