@@ -62,32 +62,30 @@ def from_loop(loop: Number) -> WireResistance:
     return WireResistance(not_negative("loop", loop) / 2, "half of the measured loop")
 
 
-def from_table(
-    length: Number,
-    *,
-    awg: float | None = None,
-    mm2: float | None = None,
-    conductor: str = "class 5",
-) -> WireResistance:
-    """Resistance of one copper wire at 20 °C from a table: the last resort; says which table.
+def from_awg(length: Number, awg: float) -> WireResistance:
+    """Resistance of one solid copper wire at 20 °C by its gauge number: a last resort.
 
-    Give `awg`, a solid wire by ASTM B258, or `mm2` with a class by IEC 60228, whose figure is
-    the largest allowed. Sizes below 0.5 mm² are not in that table and are taken from the area.
-    Units: metre. Source: ASTM B258; IEC 60228:2004, tables for classes 2 and 5; IEC 60028.
+    Units: metre in, ohm out. Source: ASTM B258.
+    """
+    total = not_negative("length", length) * awg_per_metre(awg)
+    return WireResistance(total, f"{awg:g} AWG solid, ASTM B258")
+
+
+def from_mm2(length: Number, mm2: float, conductor: str = "class 5") -> WireResistance:
+    """Resistance of one copper wire at 20 °C by its nominal size: a last resort.
+
+    The largest that IEC 60228 allows; sizes that its table lacks, as those under 0.5 mm², are
+    taken from the area of copper, which flatters a thin tinned strand. Units: metre in, ohm out.
+    Source: IEC 60228:2004, tables for classes 2 and 5; IEC 60028:1925.
     """
     not_negative("length", length)
-    if (awg is None) == (mm2 is None):
-        raise OutOfDomain("awg or mm2", "must be given, one of the two.")
-    if awg is not None:
-        return WireResistance(length * awg_per_metre(awg), f"{awg:g} AWG solid, ASTM B258")
-    assert mm2 is not None  # noqa: S101
     if mm2 in _SIZES:
+        per_metre = iec_60228_per_metre(mm2, conductor)
         return WireResistance(
-            length * iec_60228_per_metre(mm2, conductor),
-            f"{mm2:g} mm² {conductor}, IEC 60228 (largest allowed)",
+            length * per_metre, f"{mm2:g} mm² {conductor}, IEC 60228 (largest allowed)"
         )
     return WireResistance(
-        length * per_metre_of_area(mm2 * 1e-6), f"{mm2:g} mm², copper of IEC 60028 by its area"
+        length * per_metre_of_area(mm2 * 1e-6), f"{mm2:g} mm² of copper, IEC 60028 by area"
     )
 
 
