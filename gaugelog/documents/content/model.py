@@ -1,0 +1,147 @@
+"""The record as data: the very JSON that is attached to the PDF, `gaugelog-record 1`.
+
+Everything on the page comes from here, so a client's program can read what a person reads. The
+shipped `templates/record.schema.json` is the schema of these models. Values are decimal text
+with a unit, never floats; times are UTC.
+"""
+
+from __future__ import annotations
+
+from typing import Literal
+
+from gaugelog.documents.content.base import OffsetText, Shown
+from gaugelog.documents.content.installation import (
+    ArticleShown,
+    CircuitShown,
+    GaugeShown,
+    GridShown,
+    PointShown,
+)
+from gaugelog.documents.content.workdone import ReadingShown, StepShown
+from gaugelog.ledger.base import DateText, DecimalText, Id, TimeText
+from gaugelog.ledger.instruments import InstrumentRange
+from gaugelog.ledger.people import Qualification
+
+RECORD_FORMAT = "gaugelog-record 1"
+
+
+class Drawn(Shown):
+    """When and from what the record was drawn."""
+
+    at: TimeText
+    offset: OffsetText
+    head: str
+    """The journal's head as printed: sequence number and 26 characters of its hash."""
+    program: str
+
+
+class CampaignShown(Shown):
+    """The job."""
+
+    label: str
+    title: str
+    client: str
+    contract: str = ""
+    document: str = ""
+    site: str = ""
+    surroundings: str
+    plan_revision: int
+
+
+class CriteriaShown(Shown):
+    """The acceptance criteria agreed with the plan, and what they say of doubtful words."""
+
+    title: str
+    edition: str
+    agreed_by: str = ""
+    coverage: DecimalText
+    conditional_pass: str
+    conditional_fail: str
+
+
+class RouteShown(Shown):
+    """The route card that was followed."""
+
+    label: str
+    title: str
+    edition: str
+    family: str
+    basis: str
+    file: str
+    """SHA-256 of the route's file."""
+
+
+class InstrumentShown(Shown):
+    """An instrument that was used, under the certificate it had."""
+
+    id: Id
+    label: str
+    type: str
+    maker: str
+    serial: str
+    certificate_number: str
+    calibrated_by: str
+    calibrated_on: DateText
+    due: DateText
+    ranges: tuple[InstrumentRange, ...]
+    """Only the ranges that were used."""
+
+
+class ConsumableShown(Shown):
+    """A lot of adhesive, coating, solder, cable or cleaner that was used."""
+
+    id: Id
+    label: str
+    type: str
+    maker: str
+    name: str
+    received_on: DateText
+    expires: DateText | None = None
+
+
+class PersonShown(Shown):
+    """A person who did something for the record; the name is as known when it was drawn."""
+
+    id: Id
+    name: str
+    initials: str = ""
+    roles: tuple[str, ...]
+    qualifications: tuple[Qualification, ...] = ()
+    part: tuple[str, ...] = ()
+    """What they did: `steps`, `readings`, `holds`, `submission`."""
+
+
+class SigningShown(Shown):
+    """What the first signature means and whose it is; empty in a draft."""
+
+    person: str
+    name: str
+    meaning: str
+
+
+class RecordContent(Shown):
+    """One revision of a point's record."""
+
+    format: Literal["gaugelog-record 1"] = "gaugelog-record 1"
+    number: str
+    """Campaign, point and revision: `K1-BR2-R1`."""
+    revision: int
+    state: Literal["draft", "submitted"]
+    drawn: Drawn
+    campaign: CampaignShown
+    criteria: CriteriaShown
+    article: ArticleShown
+    point: PointShown
+    grids: tuple[GridShown, ...]
+    gauge: GaugeShown | None = None
+    """The gauge in place; none in a draft before one is taken."""
+    circuits: tuple[CircuitShown, ...]
+    route: RouteShown
+    steps: tuple[StepShown, ...]
+    readings: tuple[ReadingShown, ...]
+    instruments: tuple[InstrumentShown, ...]
+    consumables: tuple[ConsumableShown, ...]
+    people: tuple[PersonShown, ...]
+    signing: SigningShown | None = None
+    cautions: tuple[str, ...]
+    """Cautions of the article and the route, each once."""

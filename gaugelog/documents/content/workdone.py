@@ -1,0 +1,73 @@
+"""What was done and found: steps and readings as the record has them."""
+
+from __future__ import annotations
+
+from pydantic import Field
+
+from gaugelog.documents.content.base import Shown
+from gaugelog.ledger.base import Id, Quantity, TimeText
+from gaugelog.ledger.readings import LimitFound, Qualifier, Verdict
+from gaugelog.ledger.routes import Window
+
+
+class InputShown(Shown):
+    """What was entered for one input of a step."""
+
+    prompt: str
+    typed: str
+    means: str = ""
+    """Label of the gauge, consumable or instrument meant, where it is not as typed."""
+
+
+class StepShown(Shown):
+    """A step of the route on one subject, and what became of it."""
+
+    number: int
+    """Place in the route, from 1."""
+    step: str
+    title: str
+    subject: str
+    """Label of the grid or circuit; of the point for a step on the place."""
+    hold: bool
+    instruction: str
+    windows: tuple[Window, ...] = ()
+    outcome: str
+    """`done`, `skipped`, `released`, `refused`, `reopened`, or `open`: not reached."""
+    by: str = ""
+    """Id of the person; empty while open."""
+    observed_at: TimeText | None = None
+    entered_at: TimeText | None = None
+    note: str = ""
+    """The note, or the reason of a skip or refusal."""
+    inputs: tuple[InputShown, ...] = ()
+
+
+class ReadingShown(Shown):
+    """One attempt of a check, with every limit it was held to and the verdict."""
+
+    id: Id
+    check: str
+    stage: str
+    subject: str
+    attempt: int
+    latest: bool
+    """Whether it is the last attempt of its check at its stage."""
+    typed: str
+    qualifier: Qualifier
+    value: Quantity | None = None
+    result: Quantity | None = None
+    """What was judged, where it is not the value itself: a change in per cent."""
+    compared_with: Id | None = None
+    instrument: str
+    """Label of the instrument."""
+    range: str
+    test_voltage: Quantity | None = None
+    conditions: dict[str, Quantity] = Field(default_factory=dict)
+    observed_at: TimeText
+    observed_by: Id
+    entered_at: TimeText
+    entered_by: Id
+    reason: str = ""
+    """Why it was measured again."""
+    limits: tuple[LimitFound, ...] = ()
+    verdict: Verdict
