@@ -45,7 +45,8 @@ class Place:
         """The logbook's folder. Raises StorageTrouble when there is none."""
         from gaugelog.work.logbook import find_logbook
 
-        return find_logbook(Path.cwd(), self.folder)
+        found: Path = find_logbook(Path.cwd(), self.folder)
+        return found
 
 
 def open_logbook(ctx: typer.Context) -> Logbook:

@@ -52,9 +52,12 @@ class Answer:
     """What a subject answers: figures, the formulas that gave them, warnings."""
 
     figures: tuple[Figure, ...]
-    formulas: tuple[Callable[..., Any], ...]
+    formulas: tuple[Formula, ...]
     warnings: tuple[str, ...] = ()
 
+
+Formula = Callable[..., Any]
+"""A public function of `physics/`."""
 
 Values = Mapping[str, Any]
 """Argument name to float (base unit), tuple of floats, word, or None."""
@@ -165,12 +168,12 @@ def _word(argument: Argument, text: str) -> tuple[str, str]:
     return text, text
 
 
-def name_of(formula: Callable[..., Any]) -> str:
+def name_of(formula: Formula) -> str:
     """The formula's name with its module, `leads.three_wire_loss`."""
     return f"{formula.__module__.rsplit('.', 1)[-1]}.{formula.__qualname__}"
 
 
-def source_of(formula: Callable[..., Any]) -> str:
+def source_of(formula: Formula) -> str:
     """The `Source:` paragraph of the formula's docstring on one line."""
     found = re.search(r"Source:\s*(.+?)(?:\n\s*\n|\Z)", inspect.getdoc(formula) or "", re.DOTALL)
     if found is None:

@@ -161,6 +161,5 @@ def _convert(number: float, unit: str, dimension: Dimension) -> float:
 def _registry() -> Any:
     import pint
 
-    registry = pint.UnitRegistry(cache_folder=":auto:")
-    registry.default_format = "~P"
+    registry: Any = pint.UnitRegistry(cache_folder=":auto:")
     return registry

@@ -2,9 +2,7 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING
-
-from gaugelog.commands.calc.engine import Answer, Argument, Figure, Subject, Values
+from gaugelog.commands.calc.engine import Answer, Argument, Figure, Formula, Subject, Values
 from gaugelog.commands.calc.quantities import (
     AREA,
     DIFFERENCE,
@@ -16,10 +14,6 @@ from gaugelog.commands.calc.quantities import (
     STRAIN,
 )
 from gaugelog.errors import Fault, Faulty
-
-if TYPE_CHECKING:
-    from collections.abc import Callable
-    from typing import Any
 
 LAYOUTS = (
     "quarter two-wire",
@@ -43,7 +37,7 @@ def _compute(values: Values) -> Answer:
         Figure("multiply readings by", leads.correction_factor(layout, grid, wire), RATIO, 6),
         Figure("factor to set", leads.effective_factor(layout, grid, wire, factor), RATIO),
     ]
-    formulas: list[Callable[..., Any]] = [formula, leads.sensitivity_loss, leads.effective_factor]
+    formulas: list[Formula] = [formula, leads.sensitivity_loss, leads.effective_factor]
     if layout == "quarter two-wire":
         drift = leads.temperature_strain(grid, 2 * wire, 0.0, 0.00393, values["rise"], factor)
         figures += [
@@ -62,7 +56,7 @@ def _percent(figures: list[Figure]) -> tuple[Figure, ...]:
     )
 
 
-def _wire(values: Values) -> tuple[float, str, Callable[..., Any]]:
+def _wire(values: Values) -> tuple[float, str, Formula]:
     from gaugelog.physics import conductors
 
     given = [name for name in ("loop", "per_metre", "area") if values[name] is not None]

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from gaugelog.commands.calc.engine import Answer, Argument, Figure, Subject, Values
+from gaugelog.commands.calc.engine import Answer, Argument, Figure, Formula, Subject, Values
 from gaugelog.commands.calc.quantities import INSULATION, RATIO, RESISTANCE, STRAIN
 from gaugelog.errors import Fault, Faulty
 
@@ -14,7 +14,9 @@ def _compute(values: Values) -> Answer:
     insulation, permitted, later = values["insulation"], values["permitted"], values["later"]
     if insulation is None and permitted is None:
         raise Faulty([Fault("insulation, permitted", "give at least one of the two.")])
-    figures, formulas, warnings = [], [], []
+    figures: list[Figure] = []
+    formulas: list[Formula] = []
+    warnings: list[str] = []
     if insulation is not None:
         figures.append(
             Figure("apparent strain", leakage.leakage_strain(grid, factor, insulation), STRAIN)

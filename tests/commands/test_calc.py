@@ -1,0 +1,100 @@
+"""`gaugelog calc`: figures with their formulas, every fault at once, many rows at a time."""
+
+from __future__ import annotations
+
+import csv
+import io
+import json
+from pathlib import Path
+
+import pytest
+
+from gaugelog.commands import run
+from gaugelog.commands.calc.engine import parse_pairs, source_of, work_out
+from gaugelog.commands.calc.subjects import SUBJECTS
+from gaugelog.errors import Faulty
+from gaugelog.physics import leads
+
+
+def _figures(subject: str, **typed: str) -> dict[str, str]:
+    worked = work_out(SUBJECTS[subject], typed)
+    return {figure.name: figure.shown for figure in worked.answer.figures}
+
+
+def test_leads_give_the_loss_of_a_long_thin_cable() -> None:
+    found = _figures(
+        "leads", layout="quarter two-wire", resistance="120 ohm", length="50 m", area="0.14 mm2"
+    )
+    assert found["one wire"] == "6.1576 Ω"
+    assert found["sensitivity lost"] == "9.308 %"
+    assert found["offset"] == "24.405 mV/V"
+
+
+def test_a_shunt_keeps_its_three_readings_apart() -> None:
+    found = _figures("shunt", resistance="350 ohm", shunt="174650 ohm")
+    assert found["simulated at the gauge"] == "-1000 µm/m"
+    assert found["indicated by a linear scale"] == "-1001 µm/m"
+
+
+def test_every_fault_is_named_at_once() -> None:
+    with pytest.raises(Faulty) as caught:
+        work_out(SUBJECTS["leads"], {"layout": "nonsense", "resistance": "5", "colour": "red"})
+    assert [fault.where for fault in caught.value.faults] == ["colour", "layout", "resistance"]
+
+
+def test_a_value_that_cannot_be_is_told_by_its_formula() -> None:
+    with pytest.raises(Faulty, match="nothing was worked out") as caught:
+        work_out(SUBJECTS["leakage"], {"resistance": "-3 ohm", "permitted": "5 ue"})
+    assert "resistance" in caught.value.faults[0].what or "grid" in caught.value.faults[0].what
+
+
+def test_every_formula_of_an_answer_names_its_source() -> None:
+    assert "Dally and Riley" in source_of(leads.sensitivity_loss)
+    assert "`" not in source_of(leads.sensitivity_loss)
+
+
+def test_a_word_without_equals_and_a_double_name_are_faults() -> None:
+    with pytest.raises(Faulty) as caught:
+        parse_pairs(["resistance", "a=1", "a=2"])
+    assert len(caught.value.faults) == 2
+
+
+def test_many_rows_come_back_with_results_beside_them(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    file = tmp_path / "rows.csv"
+    file.write_text("insulation,permitted\n10 Mohm,5 ue\n1 Gohm,1 ue\n", encoding="utf-8")
+    assert run(["calc", "leakage", "--each", str(file)]) == 0
+    rows = list(csv.DictReader(io.StringIO(capsys.readouterr().out)))
+    assert [row["apparent strain"] for row in rows] == ["-17.499 µm/m", "-0.175 µm/m"]
+
+
+def test_faults_of_many_rows_name_row_and_column(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    file = tmp_path / "rows.csv"
+    file.write_text("insulation\n10\nabc\n10 Mohm\n", encoding="utf-8")
+    assert run(["calc", "leakage", "--each", str(file)]) == 3
+    told = capsys.readouterr()
+    assert "rows.csv, row 2, column insulation" in told.err
+    assert "rows.csv, row 3, column insulation" in told.err
+    assert told.out == ""
+
+
+def test_json_carries_values_in_base_units(capsys: pytest.CaptureFixture[str]) -> None:
+    assert run(["calc", "leakage", "permitted=5 ue", "--json"]) == 0
+    found = json.loads(capsys.readouterr().out)
+    assert found["results"][0]["unit"] == "ohm"
+    assert found["results"][0]["value"] == pytest.approx(350 * (1 / (2 * 5e-6) - 1))
+
+
+@pytest.mark.parametrize("name", list(SUBJECTS))
+def test_each_subject_lists_its_arguments(name: str, capsys: pytest.CaptureFixture[str]) -> None:
+    assert run(["calc", name]) == 0
+    told = capsys.readouterr().out
+    assert all(argument.name in told for argument in SUBJECTS[name].arguments)
+
+
+def test_an_unknown_subject_lists_those_there_are(capsys: pytest.CaptureFixture[str]) -> None:
+    assert run(["calc", "astrology"]) == 3
+    assert "bridge" in capsys.readouterr().err
