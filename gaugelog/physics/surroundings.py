@@ -9,6 +9,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from gaugelog.physics._maths import Number, exp, log, nominal
+from gaugelog.physics._order import any_of
 from gaugelog.physics.validity import Notice, OutOfDomain, above, between, finite, positive
 
 MAGNUS_SOURCE = "WMO-No. 8, Guide to instruments, Magnus form over water (6.112, 17.62, 243.12)"
@@ -86,8 +87,7 @@ def dew_point_notices(celsius: Number) -> tuple[Notice, ...]:
     """A notice for air outside the range for which the constants are given."""
     low, high = MAGNUS_RANGE
     plain = nominal(celsius)
-    outside = (plain < low) | (plain > high)
-    if not (outside.any() if hasattr(outside, "any") else outside):
+    if not any_of((plain < low) | (plain > high)):
         return ()
     message = f"The Magnus form over water is given from {low:g} to {high:g} °C only."
     return (Notice("dew point", message, MAGNUS_SOURCE),)
