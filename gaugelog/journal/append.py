@@ -15,7 +15,7 @@ from gaugelog.journal.keys import Signer
 from gaugelog.journal.storage.port import Reader, Writer
 
 
-def append(  # noqa: PLR0913, PLR0917 (each is a part of the deed)
+def append(
     writer: Writer,
     chain: str,
     facts: Sequence[Fact],
@@ -44,7 +44,7 @@ def append(  # noqa: PLR0913, PLR0917 (each is a part of the deed)
     return entries
 
 
-def begin(  # noqa: PLR0913, PLR0917 (what append takes, and the name)
+def begin(
     writer: Writer,
     facts: Sequence[Fact],
     signer: Signer,

@@ -9,6 +9,7 @@ writes RFC 8785 byte for byte.
 from __future__ import annotations
 
 import json
+import re
 import unicodedata
 from collections.abc import Mapping, Sequence
 from typing import NoReturn, TypeAlias
@@ -57,7 +58,7 @@ def parse(data: bytes, *, strict: bool = False) -> JsonValue:
         text = data.decode("utf-8")
         value: JsonValue = _READ_STRICTLY(text) if strict else _READ(text)
         if strict:
-            _demand_canonical(value, data)
+            _demand_canonical(value, data, text)
         else:
             _written(value)
     except RecursionError:
@@ -69,13 +70,16 @@ def parse(data: bytes, *, strict: bool = False) -> JsonValue:
     return value
 
 
-def _demand_canonical(value: JsonValue, data: bytes) -> None:
-    # Writing the value again shows doubled names, spaces, escapes and -0. Bytes that are plain
-    # ASCII and equal to what we write hold only ASCII text, which needs no closer look.
+def _demand_canonical(value: JsonValue, data: bytes, text: str) -> None:
+    # Writing the value again shows doubled names, spaces, escapes and -0. The quotes around each
+    # text compose with nothing, so the whole is in normal form just when each text in it is.
     if _written(value) != data:
         raise NotCanonical("The JSON is not in canonical form.")
-    if not data.isascii():
-        _allow(value)
+    if data.isascii():
+        return
+    _allow_text(text)
+    if _NAME_BEYOND_ASCII.search(text):
+        raise NotCanonical("A name in the JSON is not ASCII text.")
 
 
 def _written(value: JsonValue) -> bytes:
@@ -135,6 +139,9 @@ def _no_doubles(pairs: list[tuple[str, JsonValue]]) -> dict[str, JsonValue]:
         raise NotCanonical("A name is given twice in one object.")
     return found
 
+
+_NAME_BEYOND_ASCII = re.compile(r'[^\x00-\x7f](?:[^"\\]|\\.)*":')
+"""From a character beyond ASCII to the end of its text, which a colon shows to be a name."""
 
 _WRITE = json.JSONEncoder(
     sort_keys=True, separators=(",", ":"), ensure_ascii=False, allow_nan=False

@@ -160,6 +160,6 @@ def _texts(value: dict[str, Any], name: str) -> tuple[str, ...]:
 
 def _digests(value: dict[str, Any], name: str) -> tuple[str, ...]:
     digests = _texts(value, name)
-    if not all(HEX_256.fullmatch(digest) for digest in digests):
+    if digests and not all(HEX_256.fullmatch(digest) for digest in digests):
         raise BadEntry(f"Its body names {name} by something that is no SHA-256 digest.")
     return digests

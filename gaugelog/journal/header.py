@@ -6,6 +6,7 @@ itself. So every header can be shown to anyone without giving anything away.
 
 from __future__ import annotations
 
+import json
 import re
 from collections.abc import Mapping
 from dataclasses import dataclass, field
@@ -21,10 +22,12 @@ from gaugelog.journal.head import Head
 FORMAT = "gaugelog-journal 1"
 """Names the form of the bytes, within the bytes that are signed."""
 
-NAME = re.compile(r"[A-Za-z0-9][A-Za-z0-9._-]{0,63}")
+_NAME = "[A-Za-z0-9][A-Za-z0-9._-]{0,63}"
+NAME = re.compile(_NAME)
 """Ids of chains, deeds, people and runs of a machine."""
 
-HEX_256 = re.compile(r"[0-9a-f]{64}")
+_HEX = "[0-9a-f]{64}"
+HEX_256 = re.compile(_HEX)
 """A SHA-256 digest as text."""
 
 _REMEDY = "Run the check of the journal to see what else is wrong, and restore a backup."
@@ -93,70 +96,119 @@ class Header:
         return canonical(fields)
 
 
-_SHAPES: dict[str, re.Pattern[str] | int] = {
-    "format": re.compile(re.escape(FORMAT)),
-    "chain": NAME,
-    "seq": 1,
-    "deed": NAME,
-    "index": 1,
+_TIME = r"[0-9]{4}-[0-9]{2}-[0-9]{2}T[0-9]{2}:[0-9]{2}:[0-9]{2}\.[0-9]{6}Z"
+
+_SHAPES: dict[str, str | int] = {
+    "actor": _NAME,
+    "body": _HEX,
+    "boot": _NAME,
+    "certificate": _HEX,
+    "chain": _NAME,
     "count": 1,
-    "time": re.compile(r"\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{6}Z", re.ASCII),
-    "offset": re.compile(r"[+-][01][0-9]:[0-5][0-9]"),
-    "boot": NAME,
+    "deed": _NAME,
+    "format": re.escape(FORMAT),
+    "index": 1,
+    "kind": "[a-z][a-z0-9._-]{0,63}",
+    "offset": "[+-][01][0-9]:[0-5][0-9]",
+    "previous": _HEX,
+    "seq": 1,
+    "time": _TIME,
     "uptime_ms": 0,
-    "actor": NAME,
-    "certificate": HEX_256,
-    "kind": re.compile(r"[a-z][a-z0-9._-]{0,63}"),
     "version": 1,
-    "body": HEX_256,
-    "previous": HEX_256,
 }
 """What each field must look like: text by a pattern, a whole number by its least value."""
 
-_SHARED = ("format", "chain", "boot", "actor", "certificate", "kind", "offset")
-"""Text that many entries share is held once: a journal of 100 000 entries has it in memory."""
-
 
 def parse_header(data: bytes) -> Header:
-    """Read a header from its exact bytes. Raises BadEntry saying what is wrong with them."""
+    """Read a header from its exact bytes. Raises BadEntry saying what is wrong with them.
+
+    Canonical bytes with just the fields of this format are a regular language, read by one
+    pattern at a quarter of the cost; the rest, good or bad, is read field by field.
+    """
+    match = _WHOLE.fullmatch(data.decode("ascii")) if data.isascii() else None
+    header = Header(**_read_slowly(data)) if match is None else _read_whole(match)
+    _demand_sense(header)
+    return header
+
+
+def _read_whole(match: re.Match[str]) -> Header:
+    found = match.groupdict()
+    heads = json.loads(found["heads"]) if found["heads"] != "[]" else ()
+    return Header(
+        format=FORMAT,
+        chain=intern(found["chain"]),
+        seq=int(found["seq"]),
+        heads=tuple(_head(item) for item in heads),
+        deed=found["deed"],
+        index=int(found["index"]),
+        count=int(found["count"]),
+        time=found["time"],
+        offset=intern(found["offset"]),
+        boot=intern(found["boot"]),
+        uptime_ms=int(found["uptime_ms"]),
+        actor=intern(found["actor"]),
+        certificate=intern(found["certificate"]),
+        kind=intern(found["kind"]),
+        version=int(found["version"]),
+        body=found["body"],
+        previous=found["previous"],
+    )
+
+
+def _read_slowly(data: bytes) -> dict[str, Any]:
     try:
         value = parse(data, strict=True)
     except NotCanonical as error:
         raise BadEntry(f"Its header can't be read. {error.message}") from None
     if not isinstance(value, dict):
         raise BadEntry("Its header is not a JSON object.")
-    fields: dict[str, Any] = value
     for name, shape in _SHAPES.items():
-        _demand(fields, name, shape)
-    _demand_sense(fields)
-    heads = tuple(_head(item) for item in _listed(fields, "heads"))
-    return _header(fields, heads)
+        _demand(value, name, shape)
+    fields: dict[str, Any] = {name: value.pop(name) for name in _SHAPES}
+    fields["heads"] = tuple(_head(item) for item in _listed(value, "heads"))
+    del value["heads"]
+    fields["unknown"] = value
+    return fields
 
 
-def _header(fields: dict[str, Any], heads: tuple[Head, ...]) -> Header:
-    for name in _SHARED:
-        fields[name] = intern(fields[name])
-    known = {name: fields.pop(name) for name in _SHAPES}
-    del fields["heads"]
-    return Header(heads=heads, unknown=fields, **known)
+def _whole_pattern() -> re.Pattern[str]:
+    # Fifteen digits are well within what JSON keeps exactly; longer numbers are read slowly.
+    shapes = {
+        name: "0|[1-9][0-9]{0,14}" if shape == 0 else "[1-9][0-9]{0,14}"
+        for name, shape in _SHAPES.items()
+        if isinstance(shape, int)
+    }
+    parts = {
+        name: f'"{name}":(?P<{name}>{shapes[name]})'
+        if isinstance(shape, int)
+        else f'"{name}":"(?P<{name}>{shape})"'
+        for name, shape in _SHAPES.items()
+    }
+    head = f'\\{{"chain":"{_NAME}","hash":"{_HEX}","seq":[1-9][0-9]{{0,14}}\\}}'
+    parts["heads"] = f'"heads":(?P<heads>\\[(?:{head}(?:,{head})*)?\\])'
+    inside = ",".join(parts[name] for name in sorted(parts))
+    return re.compile(f"\\{{{inside}\\}}")
 
 
-def _demand(fields: Mapping[str, Any], name: str, shape: re.Pattern[str] | int) -> None:
+_WHOLE = _whole_pattern()
+
+
+def _demand(fields: Mapping[str, Any], name: str, shape: str | int) -> None:
     value = fields.get(name)
     if isinstance(shape, int):
         if type(value) is not int or value < shape:
             raise BadEntry(f"Its header gives {value!r} as {name}, not a number from {shape} up.")
-    elif not isinstance(value, str) or shape.fullmatch(value) is None:
+    elif not isinstance(value, str) or re.fullmatch(shape, value) is None:
         raise BadEntry(f"Its header gives {value!r} as {name}, which is not as the format says.")
 
 
-def _demand_sense(fields: Mapping[str, Any]) -> None:
-    if fields["index"] > fields["count"]:
-        raise BadEntry(f"Its header counts {fields['index']} of {fields['count']} in its deed.")
+def _demand_sense(header: Header) -> None:
+    if header.index > header.count:
+        raise BadEntry(f"Its header counts {header.index} of {header.count} in its deed.")
     try:
-        datetime.fromisoformat(fields["time"])
+        datetime.fromisoformat(header.time)
     except ValueError:
-        raise BadEntry(f"Its header gives {fields['time']!r}, which no calendar has.") from None
+        raise BadEntry(f"Its header gives {header.time!r}, which no calendar has.") from None
 
 
 def _listed(fields: Mapping[str, Any], name: str) -> list[Any]:
@@ -169,7 +221,7 @@ def _listed(fields: Mapping[str, Any], name: str) -> list[Any]:
 def _head(item: object) -> Head:
     if not isinstance(item, dict) or set(item) != {"chain", "hash", "seq"}:
         raise BadEntry("Its header gives a head of another chain that can't be read.")
-    _demand(item, "chain", NAME)
-    _demand(item, "hash", HEX_256)
+    _demand(item, "chain", _NAME)
+    _demand(item, "hash", _HEX)
     _demand(item, "seq", 1)
     return Head(item["chain"], item["seq"], bytes.fromhex(item["hash"]))

@@ -40,7 +40,7 @@ class KeyFolder:
         """Whether the authority's key is here."""
         return self._file(_AUTHORITY).is_file()
 
-    def save(  # noqa: PLR0913, PLR0917 (the parts of a key file)
+    def save(
         self,
         person: str,
         key: ec.EllipticCurvePrivateKey,

@@ -7,8 +7,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Collection, Iterator
 from contextlib import AbstractContextManager
-from dataclasses import dataclass
-from typing import Protocol
+from typing import NamedTuple, Protocol
 
 from gaugelog.errors import StorageTrouble
 from gaugelog.journal.entry import Entry, Head
@@ -17,14 +16,13 @@ OnWait = Callable[[float], None]
 """Told the seconds waited so far, again and again while another process writes."""
 
 
-@dataclass(frozen=True, slots=True)
-class Filed:
+class Filed(NamedTuple):
     """An entry with the place the storage keeps it at, which must be the one its header names."""
 
     chain: str
     seq: int
     deed: str
-    index: int
+    deed_index: int
     entry: Entry
 
 

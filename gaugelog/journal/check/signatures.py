@@ -1,0 +1,205 @@
+"""Steps 5 and 6: deeds are whole and signed, by certificates that were good at the time."""
+
+from __future__ import annotations
+
+import os
+from collections.abc import Callable
+from concurrent.futures import ThreadPoolExecutor
+from dataclasses import dataclass
+
+from cryptography.exceptions import InvalidSignature
+from cryptography.hazmat.primitives.asymmetric import ec
+from cryptography.hazmat.primitives.hashes import SHA256
+
+from gaugelog.journal.certificates import CERTIFICATE_KINDS, Certificates
+from gaugelog.journal.check.look import RESTORE, Look
+from gaugelog.journal.check.report import Findings, Trouble
+from gaugelog.journal.entry import Header
+from gaugelog.journal.header import BadEntry
+
+_ECDSA = ec.ECDSA(SHA256())
+_BATCH = 2048
+"""Signatures verified at a time: enough to keep the threads busy, few enough for memory."""
+
+_OUTSIDE = "Someone wrote here without the key. " + RESTORE
+
+
+class Deeds:
+    """Step 5. A deed's entries are all there, in order and alike; the last is signed, truly."""
+
+    number = 5
+
+    def __init__(self, findings: Findings, certificates: Certificates) -> None:
+        self._findings = findings
+        self._certificates = certificates
+        self._unfinished: dict[str, Look] = {}
+        self._begun: dict[str, str] = {}
+        self._verifier = _Verifier(self._bad_signature)
+
+    def see(self, look: Look) -> None:
+        """Look at one entry."""
+        before = self._unfinished.pop(look.filed.chain, None)
+        header = look.header
+        if header is None:
+            return
+        if before is None or before.header is None:
+            self._start(look, header)
+        elif not _continues(before.header, header):
+            self._cut_short(before, before.header)
+            self._start(look, header)
+        if header.is_last:
+            self._demand_signature(look, header)
+        else:
+            self._unfinished[look.filed.chain] = look
+            if look.entry.signature is not None:
+                self._trouble(look, "It carries a signature, which only the last of a deed does.")
+
+    def finish(self) -> None:
+        """Wait for the signatures that are still being verified; name deeds that were cut off."""
+        for look in self._unfinished.values():
+            if look.header is not None:
+                self._cut_short(look, look.header)
+        self._verifier.finish()
+
+    def close(self) -> None:
+        """Let go of the threads."""
+        self._verifier.close()
+
+    def _start(self, look: Look, header: Header) -> None:
+        if header.index != 1:
+            self._trouble(
+                look, f"It is {header.index} of {header.count} of a deed that lacks more."
+            )
+        first = self._begun.setdefault(header.deed, look.where)
+        if first != look.where and header.index == 1:
+            self._trouble(look, f"Its deed was done before, at {first}.")
+
+    def _cut_short(self, look: Look, header: Header) -> None:
+        self._trouble(look, f"Its deed has {header.count} entries and ends here at {header.index}.")
+
+    def _demand_signature(self, look: Look, header: Header) -> None:
+        signature = look.entry.signature
+        if signature is None:
+            self._trouble(look, "It ends its deed and carries no signature.", _OUTSIDE)
+            return
+        key = self._certificates.key(header.certificate)
+        if key is None:
+            self._trouble(look, "Its signature can't be verified: its certificate is not known.")
+            return
+        self._verifier.add(
+            _Signature(look.position, look.where, key, signature, look.entry.header_bytes)
+        )
+
+    def _bad_signature(self, signed: _Signature) -> None:
+        what = "Its signature does not fit it: it was altered, or signed by another key."
+        self._findings.trouble(signed.position, Trouble(5, signed.where, what, _OUTSIDE))
+
+    def _trouble(self, look: Look, what: str, remedy: str = RESTORE) -> None:
+        self._findings.trouble(look.position, Trouble(5, look.where, what, remedy))
+
+
+class Issues:
+    """Learns of certificates before any signature is judged; troubles count to step 6."""
+
+    number = 6
+
+    def __init__(self, findings: Findings, certificates: Certificates) -> None:
+        self._findings = findings
+        self._certificates = certificates
+
+    def see(self, look: Look) -> None:
+        """Take in what the entry says of certificates, if its body is the one that was signed."""
+        if look.header is None or look.body is None or look.header.kind not in CERTIFICATE_KINDS:
+            return
+        try:
+            self._certificates.apply(look.entry)
+        except BadEntry as error:
+            trouble = Trouble(6, look.where, error.message, RESTORE)
+            self._findings.trouble(look.position, trouble)
+
+    def finish(self) -> None:
+        """A journal names the authority it began with."""
+        if self._certificates.authority is None:
+            what = "No entry names the authority it began with."
+            self._findings.trouble(0, Trouble(6, "the journal", what, RESTORE))
+
+
+class Validity:
+    """Step 6. Each deed's certificate was issued by the authority and in force at its time."""
+
+    number = 6
+
+    def __init__(self, findings: Findings, certificates: Certificates) -> None:
+        self._findings = findings
+        self._certificates = certificates
+
+    def see(self, look: Look) -> None:
+        """Look at one entry."""
+        header = look.header
+        if header is None or not header.is_last:
+            return
+        when = header.moment.utc
+        what = self._certificates.standing(header.certificate, header.actor, when, header.deed)
+        if what:
+            self._findings.trouble(look.position, Trouble(6, look.where, what, _OUTSIDE))
+
+    def finish(self) -> None:
+        """Nothing is left to say."""
+
+
+@dataclass(frozen=True, slots=True)
+class _Signature:
+    position: int
+    where: str
+    key: ec.EllipticCurvePublicKey
+    signature: bytes
+    data: bytes
+
+
+class _Verifier:
+    """Verifies signatures on several threads, a large batch at a time while the walk waits.
+
+    The library lets go of Python's lock for each one. A walk that went on meanwhile would fight
+    the threads for it, and take longer than the walk and the verifying one after the other.
+    """
+
+    def __init__(self, bad: Callable[[_Signature], None]) -> None:
+        self._bad = bad
+        self._count = max(2, min(8, os.cpu_count() or 2))
+        self._threads = ThreadPoolExecutor(self._count)
+        self._batch: list[_Signature] = []
+
+    def add(self, signature: _Signature) -> None:
+        self._batch.append(signature)
+        if len(self._batch) >= _BATCH:
+            self.finish()
+
+    def finish(self) -> None:
+        shares = [self._batch[start :: self._count] for start in range(self._count)]
+        self._batch = []
+        for bad in self._threads.map(_bad_ones, shares):
+            for signature in bad:
+                self._bad(signature)
+
+    def close(self) -> None:
+        self._threads.shutdown(cancel_futures=True)
+
+
+def _bad_ones(batch: list[_Signature]) -> list[_Signature]:
+    return [signature for signature in batch if not _fits(signature)]
+
+
+def _fits(signed: _Signature) -> bool:
+    try:
+        signed.key.verify(signed.signature, signed.data, _ECDSA)
+    except (InvalidSignature, ValueError):
+        return False
+    return True
+
+
+def _continues(before: Header, header: Header) -> bool:
+    return _of_deed(before) == _of_deed(header) and header.index == before.index + 1
+
+
+def _of_deed(header: Header) -> tuple[object, ...]:
+    return (header.deed, header.count, header.actor, header.certificate, header.time, header.boot)
