@@ -1,0 +1,25 @@
+"""Deeds about instruments: add them, enter their new certificates."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+
+from gaugelog.journal.keys import Signer
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+from gaugelog.rules.who import demand_role
+from gaugelog.work.logbook import Logbook
+
+
+def add(logbook: Logbook, signer: Signer, facts: Iterable[InstrumentAdded]) -> None:
+    """Add instruments; one whose label is known keeps its id and gets the new certificate.
+
+    Raises Refused without a fitting role.
+    """
+    with logbook.deed(signer) as deed:
+        demand_role(deed.view, signer.person, "planner", "technician", "custodian")
+        known = {row.label.casefold(): row.id for row in deed.view.all(InstrumentRow)}
+        for fact in facts:
+            there = known.get(fact.label.casefold(), fact.id)
+            instrument = fact.model_copy(update={"id": there})
+            evidence = [fact.certificate] if fact.certificate else []
+            deed.keep(instrument, [instrument.id], evidence=evidence)

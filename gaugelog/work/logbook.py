@@ -1,0 +1,224 @@
+"""The logbook: a folder with its journal, ledger and evidence; one deed is one transaction."""
+
+from __future__ import annotations
+
+import tomllib
+from collections.abc import Callable, Iterable, Iterator
+from contextlib import contextmanager
+from dataclasses import dataclass, field
+from pathlib import Path
+from typing import TYPE_CHECKING
+
+from gaugelog.errors import Refused, StorageTrouble
+from gaugelog.journal.append import append, begin
+from gaugelog.journal.certificates import certificates_of
+from gaugelog.journal.clock import Clock, Moment, SystemClock
+from gaugelog.journal.entry import Entry, Fact, Head
+from gaugelog.journal.evidence import FolderEvidence
+from gaugelog.journal.ids import new_id
+from gaugelog.journal.keys import Signer
+from gaugelog.journal.storage.sqlite import SqliteReader, SqliteStorage, SqliteWriter
+from gaugelog.ledger import fold, schema
+from gaugelog.ledger.base import FactBody
+from gaugelog.ledger.view import View
+
+if TYPE_CHECKING:
+    from gaugelog.journal.storage.port import OnWait
+
+SIGN = "logbook.toml"
+"""The file that makes a folder a logbook."""
+
+FORMAT = 1
+
+
+@dataclass
+class Deed:
+    """One deed in the making: what is known, and what it keeps. All of it, or nothing."""
+
+    view: View
+    writer: SqliteWriter
+    chain: str
+    signer: Signer
+    moment: Moment
+    id: str
+    facts: list[Fact] = field(default_factory=list)
+
+    def keep(
+        self, body: FactBody, about: Iterable[str], *, evidence: Iterable[str] = (), sheet: str = ""
+    ) -> None:
+        """Keep a fact of the trade; `about` names every subject concerned."""
+        content = body.model_dump(mode="json", exclude_none=True)
+        self.keep_fact(
+            Fact(
+                body.kind,
+                body.version,
+                tuple(dict.fromkeys(about)),
+                content,
+                tuple(evidence),
+                (sheet,) if sheet else (),
+            )
+        )
+
+    def keep_fact(self, fact: Fact) -> None:
+        """Keep a fact of the journal's own."""
+        self.facts.append(fact)
+
+
+class Logbook:
+    """An open logbook. `id` names it among key folders, `chain` is this copy's own chain."""
+
+    def __init__(
+        self,
+        folder: Path,
+        settings: dict[str, str],
+        *,
+        clock: Clock | None = None,
+        on_wait: OnWait | None = None,
+    ) -> None:
+        self.folder = folder
+        self.id = settings["id"]
+        self.name = settings["name"]
+        self.chain = settings["chain"]
+        self.clock = clock or SystemClock()
+        self.storage = SqliteStorage(folder / "logbook.db")
+        self.evidence = FolderEvidence(folder / "evidence")
+        self._on_wait = on_wait
+
+    @classmethod
+    def create(cls, folder: Path, name: str, *, clock: Clock | None = None) -> Logbook:
+        """Lay down an empty logbook in a new or empty folder; `begin` makes it usable.
+
+        Raises StorageTrouble when something is in the folder, or it can't be written.
+        """
+        settings = {"id": new_id(), "name": name, "chain": new_id()}
+        try:
+            folder.mkdir(parents=True, exist_ok=True)
+            if any(folder.iterdir()):
+                raise StorageTrouble(f"{folder} is not empty.", "Choose a new folder.")
+            logbook = cls(folder, settings, clock=clock)
+            logbook.storage.create()
+            (folder / "evidence").mkdir()
+            (folder / SIGN).write_text(_settings_text(settings), encoding="utf-8")
+        except OSError as error:
+            raise StorageTrouble(
+                f"{folder} can't be written: {error.strerror}.", "Choose a folder you may write."
+            ) from error
+        with logbook.storage.writing() as writer:
+            schema.create_tables(writer.connection)
+        return logbook
+
+    @classmethod
+    def open(
+        cls, folder: Path, *, clock: Clock | None = None, on_wait: OnWait | None = None
+    ) -> Logbook:
+        """Open the logbook in `folder`; replays the journal when the ledger is of another version.
+
+        Raises StorageTrouble when there is none or it can't be read.
+        """
+        logbook = cls(folder, _read_settings(folder), clock=clock, on_wait=on_wait)
+        with logbook.storage.reading() as reader:
+            version = schema.ledger_version(reader.connection)
+        if version != schema.LEDGER_VERSION:
+            logbook.rebuild()
+        return logbook
+
+    def begin(self, signer: Signer, facts: Callable[[Deed], None]) -> list[Entry]:
+        """Keep the first deed: authority, custodian's certificate, and what `facts` adds."""
+        moment, deed = self.clock.now(), new_id()
+        with self.storage.writing(self._on_wait) as writer:
+            making = Deed(self._view(writer), writer, self.chain, signer, moment, deed)
+            facts(making)
+            kept = begin(writer, making.facts, signer, moment, self.chain, deed, name=self.name)
+            fold.keep(writer.connection, kept)
+        return kept
+
+    @contextmanager
+    def reading(self) -> Iterator[View]:
+        """Look at what is known: one unchanging view."""
+        with self.storage.reading() as reader:
+            yield self._view(reader)
+
+    @contextmanager
+    def deed(self, signer: Signer, deed: str | None = None) -> Iterator[Deed]:
+        """Do one deed: rules are asked, facts are kept, tables follow; all of it or nothing.
+
+        Raises Refused when the signer's certificate is not in force, and StorageTrouble when the
+        logbook can't be written.
+        """
+        moment = self.clock.now()
+        with self.storage.writing(self._on_wait) as writer:
+            standing = certificates_of(writer).standing(
+                signer.fingerprint, signer.person, moment.utc
+            )
+            if standing:
+                raise Refused(
+                    f"{signer.person} can't sign: {standing}", "Have the person enrolled anew."
+                )
+            making = Deed(self._view(writer), writer, self.chain, signer, moment, deed or new_id())
+            yield making
+            if making.facts:
+                kept = append(writer, self.chain, making.facts, signer, moment, making.id)
+                fold.keep(writer.connection, kept)
+
+    def head(self) -> Head:
+        """The head of this logbook's own chain."""
+        with self.storage.reading() as reader:
+            head = reader.head(self.chain)
+        if head is None:
+            raise StorageTrouble("The journal is empty.", "Start the logbook again.")
+        return head
+
+    def rebuild(self) -> None:
+        """Throw the ledger's tables away and fold them anew from the journal."""
+        with self.storage.writing(self._on_wait) as writer:
+            fold.rebuild(writer.connection, writer.entries())
+
+    def _view(self, reader: SqliteReader) -> View:
+        return View(reader.connection, reader.sheet)
+
+
+def find_logbook(start: Path, asked: Path | None) -> Path:
+    """The logbook's folder: the one asked for, else found by walking up from `start`.
+
+    Raises StorageTrouble when there is none.
+    """
+    if asked is not None:
+        if (asked / SIGN).is_file():
+            return asked
+        raise StorageTrouble(
+            f"There is no logbook in {asked}.", "Name the folder that holds logbook.toml."
+        )
+    for folder in (start, *start.parents):
+        if (folder / SIGN).is_file():
+            return folder
+    raise StorageTrouble(
+        "There is no logbook here or in any folder above.",
+        "Go into one, name it with --logbook, or make one with `gaugelog start`.",
+    )
+
+
+def _settings_text(settings: dict[str, str]) -> str:
+    import json
+
+    lines = ["# A Gaugelog logbook. Keep this file with logbook.db and evidence/.", "format = 1"]
+    # A JSON string is a TOML string.
+    lines += [f"{key} = {json.dumps(value)}" for key, value in settings.items()]
+    return "\n".join(lines) + "\n"
+
+
+def _read_settings(folder: Path) -> dict[str, str]:
+    try:
+        found = tomllib.loads((folder / SIGN).read_text(encoding="utf-8"))
+        settings = {key: str(found[key]) for key in ("id", "name", "chain")}
+        version = int(found["format"])
+    except OSError as error:
+        raise StorageTrouble(
+            f"{folder / SIGN} can't be read: {error.strerror}.", "Restore it from a backup."
+        ) from error
+    except (tomllib.TOMLDecodeError, UnicodeDecodeError, KeyError, ValueError, TypeError) as error:
+        raise StorageTrouble(f"{folder / SIGN} is damaged.", "Restore it from a backup.") from error
+    if version > FORMAT:
+        raise StorageTrouble(
+            f"{folder} was written by a newer Gaugelog (format {version}).", "Update Gaugelog."
+        )
+    return settings

@@ -1,0 +1,176 @@
+"""Deeds about the plan: load it as a draft, check it, release it; look at it."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from dataclasses import dataclass
+from pathlib import Path
+
+from gaugelog.errors import Refused
+from gaugelog.intake.plan import PlanFacts, load_plan
+from gaugelog.journal.ids import new_id
+from gaugelog.journal.keys import Signer
+from gaugelog.ledger.campaign import CampaignRow, ChannelRow, PlanLoaded, PlanReleased
+from gaugelog.ledger.circuits import CircuitRow
+from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
+from gaugelog.ledger.routes import RouteRow
+from gaugelog.ledger.stock import LotRow
+from gaugelog.ledger.view import View
+from gaugelog.rules.fit import PlanFinding, check_plan
+from gaugelog.rules.progress import worst_state
+from gaugelog.rules.who import demand_role
+from gaugelog.work.logbook import Deed, Logbook
+
+
+@dataclass(frozen=True, slots=True)
+class PlannedPoint:
+    """One line of the plan, in the words people read."""
+
+    point: str
+    zone: str
+    lot: str
+    circuit: str
+    channel: str
+    route: str
+    permitted_error: str
+    state: str
+
+
+def understand(logbook: Logbook, folder: Path) -> PlanFacts:
+    """Read the planner's files in `folder`. Raises Faulty naming every fault of every file."""
+    with logbook.reading() as view:
+        lots = {row.label: row.id for row in view.all(LotRow)}
+    return load_plan(folder, lots=lots, new_id=new_id)
+
+
+def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
+    """Keep a plan as the draft; an earlier draft is replaced. Returns what was loaded.
+
+    Raises Refused when the one who acts is no planner, or the plan is released already.
+    """
+    for data in facts.files.values():
+        logbook.evidence.put(data)
+    with logbook.deed(signer) as deed:
+        demand_role(deed.view, signer.person, "planner")
+        earlier = _campaign(deed.view)
+        if earlier is not None and earlier.state == "released":
+            raise Refused(
+                f"The plan of {earlier.label} is released.",
+                "A released plan is changed by a revision, which this version can't make yet; "
+                "start another logbook for another job.",
+            )
+        loaded = _loaded(facts, revision=1 + (earlier.revision if earlier else 0))
+        _keep(deed, facts, loaded)
+    return loaded
+
+
+def check(logbook: Logbook) -> list[PlanFinding]:
+    """Everything found about the plan: ok, warning or refusal, each with figure and source."""
+    with logbook.reading() as view:
+        return check_plan(view, _planned(view))
+
+
+def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
+    """Release the draft for work: plan and criteria are frozen. Returns what was released.
+
+    Raises Refused when the check refuses something, naming it, or there is no draft.
+    """
+    with logbook.deed(signer) as deed:
+        demand_role(deed.view, signer.person, "planner")
+        campaign = _planned(deed.view)
+        if campaign.state == "released":
+            raise Refused(f"Revision {campaign.revision} is released already.")
+        findings = check_plan(deed.view, campaign)
+        refused = [finding for finding in findings if finding.level == "refusal"]
+        if refused:
+            raise Refused(
+                f"The plan check refuses {len(refused)} things; first: {refused[0].subject}: "
+                f"{refused[0].what}",
+                "See them all with `gaugelog plan check`, mend the files, load them again.",
+            )
+        body = PlanReleased(
+            campaign=campaign.id,
+            revision=campaign.revision,
+            meaning=meaning,
+            warnings=tuple(
+                f"{finding.subject}: {finding.what}"
+                for finding in findings
+                if finding.level == "warning"
+            ),
+        )
+        deed.keep(body, [campaign.id, *(row.id for row in deed.view.all(PointRow))])
+    return body
+
+
+def overview(logbook: Logbook) -> list[PlannedPoint]:
+    """Every point of the plan with its lot, circuit, channel and state."""
+    with logbook.reading() as view:
+        grids: dict[str, list[GridRow]] = {}
+        for grid in view.all(GridRow):
+            grids.setdefault(grid.point, []).append(grid)
+        names = _Names(view)
+        return [names.line(row, grids.get(row.id, [])) for row in view.all(PointRow)]
+
+
+class _Names:
+    """Labels of what points refer to, read once."""
+
+    def __init__(self, view: View) -> None:
+        self._lots = {row.id: row.label for row in view.all(LotRow)}
+        self._routes = {row.id: row.label for row in view.all(RouteRow)}
+        self._circuits = {row.id: row for row in view.all(CircuitRow)}
+        self._channels = {row.id: row.label for row in view.all(ChannelRow)}
+
+    def line(self, row: PointRow, grids: list[GridRow]) -> PlannedPoint:
+        circuits = [self._circuits[grid.circuit] for grid in grids if grid.circuit]
+        planned = PointPlanned.model_validate_json(row.data)
+        return PlannedPoint(
+            row.label,
+            row.zone,
+            self._lots.get(row.lot, "not in stock"),
+            ", ".join(dict.fromkeys(circuit.label for circuit in circuits)) or "none",
+            ", ".join(dict.fromkeys(self._channels.get(item.channel, "?") for item in circuits)),
+            self._routes.get(row.route, "?"),
+            str(planned.permitted_error),
+            worst_state([grid.state for grid in grids]),
+        )
+
+
+def _campaign(view: View) -> CampaignRow | None:
+    rows = view.all(CampaignRow)
+    return rows[-1] if rows else None
+
+
+def _planned(view: View) -> CampaignRow:
+    found = _campaign(view)
+    if found is None:
+        raise Refused("No plan is loaded.", "Load one with `gaugelog plan load FOLDER`.")
+    return found
+
+
+def _loaded(facts: PlanFacts, revision: int) -> PlanLoaded:
+    return PlanLoaded(
+        campaign=facts.campaign.id,
+        revision=revision,
+        criteria=facts.criteria.id,
+        points=tuple(point.id for point in facts.points),
+        circuits=tuple(circuit.id for circuit in facts.circuits),
+        files=facts.digests,
+    )
+
+
+def _keep(deed: Deed, facts: PlanFacts, loaded: PlanLoaded) -> None:
+    campaign = facts.campaign.id
+    deed.keep(facts.campaign, [campaign, *(article.id for article in facts.campaign.articles)])
+    deed.keep(facts.criteria, [campaign, facts.criteria.id])
+    for route in facts.routes:
+        deed.keep(route, [campaign, route.id], evidence=[route.file])
+    for point in facts.points:
+        deed.keep(point, _about_point(campaign, point))
+    for circuit in facts.circuits:
+        deed.keep(circuit, [campaign, circuit.id, circuit.channel, *circuit.grids])
+    deed.keep(loaded, [campaign], evidence=loaded.files.values())
+
+
+def _about_point(campaign: str, point: PointPlanned) -> Iterable[str]:
+    return [campaign, point.id, *(grid.id for grid in point.grids), point.lot]

@@ -1,0 +1,212 @@
+"""Deeds about a point's record: submit it, accept it, return it; hand it out."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from gaugelog.errors import Refused
+from gaugelog.journal.append import touched_since
+from gaugelog.journal.keys import Signer
+from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
+from gaugelog.ledger.view import View
+from gaugelog.rules.progress import demand_complete, demand_step
+from gaugelog.rules.who import demand_role, demand_second_person
+from gaugelog.work.logbook import Deed, Logbook
+from gaugelog.work.ports import RecordMaker, RecordRequest, Stamp
+
+
+@dataclass(frozen=True, slots=True)
+class SignedOff:
+    """A sign-off that was kept: the record's revision and the journal's new head, as printed."""
+
+    revision: int
+    head: str
+
+
+@dataclass(frozen=True, slots=True)
+class RecordFile:
+    """A record as a file to hand out."""
+
+    pdf: bytes
+    file_name: str
+    description: str
+
+
+def submit(
+    logbook: Logbook, signer: Signer, maker: RecordMaker, *, point: str, meaning: str
+) -> SignedOff:
+    """Draw and sign the record of a point, and hand it to review.
+
+    The page is drawn before the transaction, from a snapshot; if the point was touched
+    meanwhile nothing is kept. Raises Refused when the point is not ready, MachineTrouble when
+    pages can't be drawn.
+    """
+    # The head comes first: what is kept after it, even before the view opens, counts as a touch.
+    head = logbook.head().printed
+    with logbook.reading() as view:
+        row = _point(view, point)
+        demand_role(view, signer.person, "technician")
+        demand_complete(view, row)
+        request = _request(view, row, head, logbook.clock.now(), meaning)
+        pdf = maker.submitted(view, request, signer)
+    file = logbook.evidence.put(pdf)
+    with logbook.deed(signer) as deed:
+        _demand_untouched(deed, row, request)
+        demand_complete(deed.view, row)
+        body = PointSubmitted(
+            point=row.id,
+            revision=request.revision,
+            file=file,
+            head=request.head,
+            meaning=meaning,
+            submitted_by=signer.person,
+        )
+        deed.keep(body, _about(deed.view, row), evidence=[file])
+    return SignedOff(request.revision, logbook.head().printed)
+
+
+def accept(
+    logbook: Logbook, signer: Signer, maker: RecordMaker, *, point: str, meaning: str
+) -> SignedOff:
+    """Add the reviewer's signature to the submitted record; the point is accepted.
+
+    Raises Refused when nothing is submitted, or the reviewer did a step of the point.
+    """
+    with logbook.reading() as view:
+        row, record = _under_review(view, point, signer, "accept it")
+        stamp = Stamp(
+            signer.person,
+            view.name(signer.person),
+            meaning,
+            logbook.clock.now(),
+            logbook.head().printed,
+        )
+    pdf = maker.accepted(logbook.evidence.get(record.submitted_file), stamp, signer)
+    file = logbook.evidence.put(pdf)
+    with logbook.deed(signer) as deed:
+        _, now = _under_review(deed.view, point, signer, "accept it")
+        if now.id != record.id:
+            raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
+        body = PointAccepted(
+            point=row.id,
+            revision=record.revision,
+            file=file,
+            head=stamp.head,
+            meaning=meaning,
+            accepted_by=signer.person,
+        )
+        deed.keep(body, _about(deed.view, row), evidence=[file])
+    return SignedOff(record.revision, logbook.head().printed)
+
+
+def give_back(
+    logbook: Logbook, signer: Signer, *, point: str, reason: str, redo_from: str = ""
+) -> None:
+    """Return a submitted point with a reason; work goes on from step `redo_from`, if named.
+
+    Raises Refused when nothing is submitted, the reviewer did a step, or the step is unknown.
+    """
+    if not reason.strip():
+        raise Refused("A point is returned with a reason.", "Say why with --reason.")
+    with logbook.deed(signer) as deed:
+        row, record = _under_review(deed.view, point, signer, "return it")
+        if redo_from:
+            demand_step(deed.view, row, redo_from)
+        body = PointReturned(
+            point=row.id,
+            revision=record.revision,
+            reason=reason,
+            redo_from=redo_from,
+            returned_by=signer.person,
+        )
+        deed.keep(body, _about(deed.view, row))
+
+
+def record(logbook: Logbook, *, point: str, revision: int | None = None) -> RecordFile:
+    """The newest (or that) revision of a point's signed record, as it was kept.
+
+    Raises Refused when there is none.
+    """
+    with logbook.reading() as view:
+        row = _point(view, point)
+        rows = [
+            item
+            for item in view.all(RecordRow, point=row.id)
+            if revision is None or item.revision == revision
+        ]
+    if not rows:
+        raise Refused(
+            f"{point} has no such record.", "See `gaugelog record`, or draw a draft with --draft."
+        )
+    found = rows[-1]
+    file = found.accepted_file or found.submitted_file
+    signatures = "both signatures" if found.accepted_file else "one signature, not yet valid"
+    return RecordFile(
+        logbook.evidence.get(file),
+        f"{row.label}-r{found.revision}",
+        f"revision {found.revision}, {found.state}, {signatures}; SHA-256 {file}",
+    )
+
+
+def draft(logbook: Logbook, maker: RecordMaker, *, point: str) -> RecordFile:
+    """The record as it stands now, marked as a draft on every page."""
+    head = logbook.head().printed
+    with logbook.reading() as view:
+        row = _point(view, point)
+        pdf = maker.draft(view, _request(view, row, head, logbook.clock.now(), ""))
+    return RecordFile(pdf, f"{row.label}-draft", "a draft, not signed")
+
+
+def records(logbook: Logbook) -> list[dict[str, str]]:
+    """Every record: point, revision, state, who signed, head, digest of the newest file."""
+    with logbook.reading() as view:
+        labels = {row.id: row.label for row in view.all(PointRow)}
+        return [
+            {
+                "point": labels[item.point],
+                "revision": str(item.revision),
+                "state": item.state,
+                "submitted_by": item.submitted_by,
+                "accepted_by": item.accepted_by,
+                "head": item.accepted_head or item.submitted_head,
+                "sha256": item.accepted_file or item.submitted_file,
+            }
+            for item in view.all(RecordRow)
+        ]
+
+
+def _point(view: View, label: str) -> PointRow:
+    row = view.point(label)
+    if row is None:
+        raise Refused(f"There is no point {label}.", "See `gaugelog plan show`.")
+    return row
+
+
+def _request(view: View, row: PointRow, head: str, moment: Moment, meaning: str) -> RecordRequest:
+    revision = 1 + max((item.revision for item in view.all(RecordRow, point=row.id)), default=0)
+    return RecordRequest(row.id, revision, head, moment, meaning)
+
+
+def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[PointRow, RecordRow]:
+    row = _point(view, point)
+    demand_role(view, signer.person, "reviewer")
+    demand_second_person(view, signer.person, row.id, what)
+    rows = view.all(RecordRow, point=row.id)
+    if not rows or rows[-1].state != "submitted":
+        raise Refused(f"{point} is not under review.", "It must be submitted first.")
+    return row, rows[-1]
+
+
+def _demand_untouched(deed: Deed, row: PointRow, request: RecordRequest) -> None:
+    since = int(request.head.partition(":")[0])
+    touched = touched_since(deed.writer, _about(deed.view, row), since, deed.chain)
+    if touched:
+        raise Refused(
+            f"{row.label} changed while its record was drawn (entry {touched[0].header.seq}).",
+            "Look at it and submit again; nothing was kept.",
+        )
+
+
+def _about(view: View, row: PointRow) -> list[str]:
+    return [row.id, *(grid.id for grid in view.all(GridRow, point=row.id))]
