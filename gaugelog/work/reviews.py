@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.journal.append import touched_since
+from gaugelog.journal.clock import Moment
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
