@@ -49,7 +49,7 @@ def _module(sketch: Sketch, circuit: CircuitShown) -> None:
     channel = circuit.channel
     sketch.box(Spot(_EDGE, 12), WIDTH - _EDGE - 6, HEIGHT - 24, ink=GREY, round_by=4)
     connector = f", connector {channel.connector}" if channel.connector else ""
-    sketch.text(Spot(_EDGE + 8, 25), f"Channel {channel.label}{connector}", ink=GREY, size=8)
+    sketch.text(Spot(_EDGE + 8, 25), f"Channel {channel.label}{connector}", ink=GREY, size=9)
     top, bottom = _TWO_THREE, _FOUR_ONE
     side = Spot(WIDTH - 34, top.y)
     sketch.line(top, side, Spot(side.x, _MIDDLE.y - 13))
@@ -57,7 +57,7 @@ def _module(sketch: Sketch, circuit: CircuitShown) -> None:
     sketch.dot(Spot(side.x, _MIDDLE.y), 13, fill=PAPER)
     sketch.text(Spot(side.x, _MIDDLE.y + 3), "E", at="middle", bold=True)
     supply = f"{channel.excitation} {channel.excitation_kind}"
-    sketch.text(Spot(side.x + 22, bottom.y + 14), supply, at="end", size=8, ink=GREY)
+    sketch.text(Spot(side.x + 22, bottom.y + 14), supply, at="end", size=9, ink=GREY)
     sketch.text(Spot(side.x - 6, top.y + 13), "+", at="end", bold=True)
     sketch.text(Spot(side.x - 6, bottom.y - 6), "−", at="end", bold=True)
     for corner in (top, bottom, _THREE_FOUR):
@@ -68,8 +68,8 @@ def _meter(sketch: Sketch, positive: Spot) -> None:
     sketch.line(positive, _THREE_FOUR)
     sketch.dot(_MIDDLE, 11, fill=PAPER)
     sketch.text(_MIDDLE.moved(0, 3), "e", at="middle", bold=True)
-    sketch.text(_MIDDLE.moved(-15, -4), "+", at="end", size=8)
-    sketch.text(_MIDDLE.moved(15, -4), "−", size=8)
+    sketch.text(_MIDDLE.moved(-15, -4), "+", at="end", size=9)
+    sketch.text(_MIDDLE.moved(15, -4), "−", size=9)
 
 
 def _four_arms(sketch: Sketch, circuit: CircuitShown) -> None:
@@ -89,9 +89,9 @@ def _pins(sketch: Sketch, circuit: CircuitShown) -> None:
         mark, pin = circuit.leads.marks.get(function, ""), circuit.channel.pins.get(function, "")
         if mark:
             sketch.line(spot.moved(-150), spot)
-            sketch.text(spot.moved(-75, -4), mark, at="middle", size=8)
+            sketch.text(spot.moved(-75, -4), mark, at="middle", size=9)
         sketch.dot(spot, fill=PAPER)
-        sketch.text(spot.moved(7, 3), f"{pin} {function}".strip(), size=7.5, ink=GREY)
+        sketch.text(spot.moved(7, 3), f"{pin} {function}".strip(), size=8.5, ink=GREY)
 
 
 def _arm(
@@ -108,10 +108,10 @@ def _arm(
     outward = 1 if middle.x > _MIDDLE.x else -1
     beside = middle.moved(outward * 15, -6 if middle.y < _MIDDLE.y else 12)
     anchor = "start" if outward > 0 else "end"
-    sketch.text(beside, str(number), at=anchor, bold=True, ink=ACCENT, size=10)
+    sketch.text(beside, str(number), at=anchor, bold=True, ink=ACCENT, size=11)
     labels = " + ".join(element.label for element in elements)
     down = -11 if middle.y < _MIDDLE.y else 11
-    sketch.text(beside.moved(outward * 2, down), labels, at=anchor, size=8)
+    sketch.text(beside.moved(outward * 2, down), labels, at=anchor, size=9)
 
 
 def _element(sketch: Sketch, element: ElementShown, middle: Spot, long: float, at: float) -> None:
@@ -144,9 +144,9 @@ def _wire(sketch: Sketch, wire: Wire, tab: Spot, height: float) -> None:
     pin = Spot(_EDGE, height)
     start = Spot(tab.x, height)
     sketch.line(*((tab, start) if height <= _MIDDLE.y else (start,)), pin)
-    sketch.text(Spot(158, height - 4), wire.mark, at="middle", size=8, bold=True)
+    sketch.text(Spot(158, height - 4), wire.mark, at="middle", size=9, bold=True)
     sketch.dot(pin, fill=PAPER)
-    sketch.text(pin.moved(6, -5), wire.pin, size=8, bold=True)
+    sketch.text(pin.moved(6, -5), wire.pin, size=9, bold=True)
 
 
 def _gauge(sketch: Sketch, elements: tuple[ElementShown, ...], middle: Spot) -> None:
@@ -159,15 +159,15 @@ def _gauge(sketch: Sketch, elements: tuple[ElementShown, ...], middle: Spot) -> 
         ends = (left, right) if row % 2 == 0 else (right, left)
         turns += [Spot(ends[0], height), Spot(ends[1], height)]
     sketch.line(*turns, middle.moved(0, 24), weight=0.9)
-    sketch.text(middle.moved(-20, -4), "1", at="end", bold=True, ink=ACCENT, size=10)
+    sketch.text(middle.moved(-20, -4), "1", at="end", bold=True, ink=ACCENT, size=11)
     label = " + ".join(element.label for element in elements)
-    sketch.text(middle.moved(22, 3), label, size=8)
+    sketch.text(middle.moved(22, 3), label, size=9)
 
 
 def _cable(sketch: Sketch, circuit: CircuitShown, top: float, bottom: float) -> None:
     leads = circuit.leads
     sketch.box(Spot(108, top), 100, bottom - top, ink=GREY, round_by=9, dashes="3 2.5")
     name = f"cable {leads.cable}, {leads.length}" if leads.cable else f"leads, {leads.length}"
-    sketch.text(Spot(158, bottom + 12), name, at="middle", size=8, ink=GREY)
+    sketch.text(Spot(158, bottom + 12), name, at="middle", size=9, ink=GREY)
     each = f"{leads.resistance_per_length} each"
-    sketch.text(Spot(158, bottom + 22), each, at="middle", size=8, ink=GREY)
+    sketch.text(Spot(158, bottom + 22), each, at="middle", size=9, ink=GREY)

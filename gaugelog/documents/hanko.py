@@ -10,7 +10,7 @@ from typing import Any
 
 from asn1crypto import x509
 from pyhanko.pdf_utils.content import PdfContent
-from pyhanko.pdf_utils.layout import BoxConstraints, Margins, SimpleBoxLayoutRule
+from pyhanko.pdf_utils.layout import AxisAlignment, BoxConstraints, Margins, SimpleBoxLayoutRule
 from pyhanko.pdf_utils.reader import PdfFileReader
 from pyhanko.sign.signers import PdfSigner
 from pyhanko.sign.signers.pdf_cms import Signer as CmsSigner
@@ -23,11 +23,11 @@ _P256_SIGNATURE_LIMIT = 72
 """Longest DER of an ECDSA P-256 signature."""
 
 
-class KeySigner(CmsSigner):  # type: ignore[misc]
+class KeySigner(CmsSigner):
     """Signs with a `Signer`, which keeps its key to itself."""
 
     def __init__(self, signer: Signer) -> None:
-        store = SimpleCertificateStore()
+        store = SimpleCertificateStore()  # type: ignore[no-untyped-call]
         store.register_multiple(x509.Certificate.load(each) for each in signer.chain)
         super().__init__(
             signing_cert=x509.Certificate.load(signer.certificate),
@@ -47,7 +47,7 @@ class KeySigner(CmsSigner):  # type: ignore[misc]
         return self._signer.sign(data)
 
 
-class TimedPdfSigner(PdfSigner):  # type: ignore[misc]
+class TimedPdfSigner(PdfSigner):
     """Signs at a moment that is handed in, not at the machine's own time."""
 
     def __init__(self, *arguments: Any, at: datetime, **named: Any) -> None:
@@ -61,7 +61,7 @@ class TimedPdfSigner(PdfSigner):  # type: ignore[misc]
         return session
 
 
-class _Page(PdfContent):  # type: ignore[misc]
+class _Page(PdfContent):
     """The first page of a PDF in memory, to be put into another."""
 
     def __init__(self, pdf: bytes) -> None:
@@ -85,6 +85,6 @@ def stamp_style(pdf: bytes) -> StaticStampStyle:
         background=_Page(pdf),
         background_opacity=1.0,
         background_layout=SimpleBoxLayoutRule(
-            x_align="left", y_align="bottom", margins=Margins.uniform(0)
+            x_align=AxisAlignment.ALIGN_MIN, y_align=AxisAlignment.ALIGN_MIN, margins=Margins()
         ),
     )

@@ -41,6 +41,11 @@ class FieldBox:
     top: float
 
     @property
+    def whole(self) -> tuple[int, int, int, int]:
+        """The corners in whole points, as the signing library has them."""
+        return round(self.left), round(self.bottom), round(self.right), round(self.top)
+
+    @property
     def width(self) -> float:
         """Width in points."""
         return self.right - self.left
@@ -56,6 +61,7 @@ class Drawing:
     """A drawn document and the boxes of its signature fields, by name."""
 
     pdf: bytes
+    pages: int
     boxes: dict[str, FieldBox]
 
 
@@ -97,7 +103,7 @@ def draw(html: str, size_css: str, attachments: list[Any]) -> Drawing:
         document.metadata.attachments = attachments
         pdf: bytes = document.write_pdf(pdf_variant="pdf/a-3u")
     _refuse_missing_glyphs(complaints)
-    return Drawing(finished(pdf), _boxes(document))
+    return Drawing(finished(pdf), len(document.pages), _boxes(document))
 
 
 def memory_fetcher() -> MemoryFetcher:

@@ -38,27 +38,40 @@ def sign_first(drawing: Drawing, stamp: Stamp, signer: Signer) -> bytes:
 def sign_second(pdf: bytes, stamp: Stamp, signer: Signer) -> bytes:
     """The record with the reviewer's field filled as an increment; the first bytes stay.
 
-    Raises Refused when the file has no such field, or it is filled already.
+    Raises Refused when the file has no such field, it is filled already, or it is no PDF.
     """
-    with quiet():
-        box = open_field(pdf, REVIEWER)
+    box = open_field(pdf, REVIEWER)
     return _sign(_writer(pdf), REVIEWER, box, stamp, signer)
 
 
 def open_field(pdf: bytes, name: str) -> FieldBox:
     """Where the empty signature field `name` is. Raises Refused when there is none to fill."""
-    from pyhanko.pdf_utils.reader import PdfFileReader
-    from pyhanko.sign.fields import enumerate_sig_fields
-
-    reader = PdfFileReader(io.BytesIO(pdf))
-    for found, value, reference in enumerate_sig_fields(reader):
-        if found == name and value is None:
-            left, bottom, right, top = (float(each) for each in reference.get_object()["/Rect"])
-            return FieldBox(0, left, bottom, right, top)
+    with quiet():
+        for found, value, rectangle in _fields(pdf):
+            if found == name and value is None:
+                left, bottom, right, top = rectangle
+                return FieldBox(0, left, bottom, right, top)
     raise Refused(
         f"The record has no empty field for the {name}'s signature.",
         "Ask for the signed record; a file is never signed twice in one place.",
     )
+
+
+def _fields(pdf: bytes) -> list[tuple[str, object, list[float]]]:
+    """Name, value and rectangle of each signature field. Foreign bytes may break the reader."""
+    from pyhanko.pdf_utils.reader import PdfFileReader
+    from pyhanko.sign.fields import enumerate_sig_fields
+
+    try:
+        reader = PdfFileReader(io.BytesIO(pdf))
+        return [
+            (name, value, [float(each) for each in reference.get_object()["/Rect"]])
+            for name, value, reference in enumerate_sig_fields(reader)
+        ]
+    except Exception as error:
+        raise Refused(
+            "The file is not a PDF that can be signed.", "Ask for the signed record again."
+        ) from error
 
 
 def _with_fields(drawing: Drawing) -> bytes:
@@ -72,12 +85,12 @@ def _with_fields(drawing: Drawing) -> bytes:
             SigFieldSpec(
                 name,
                 on_page=box.page,
-                box=(box.left, box.bottom, box.right, box.top),
+                box=box.whole,
                 readable_field_name=f"Signature of the {name}",
             ),
         )
     out = io.BytesIO()
-    writer.write(out)
+    writer.write(out)  # type: ignore[no-untyped-call]
     return out.getvalue()
 
 

@@ -45,7 +45,7 @@ class Sketch:
             ).format(points, ink, weight, dashes or "none")
         )
 
-    def box(  # noqa: PLR0913 (a shape has many looks)
+    def box(
         self,
         corner: Spot,
         width: float,
@@ -78,13 +78,13 @@ class Sketch:
             ).format(spot.x, spot.y, radius, fill, ink)
         )
 
-    def text(  # noqa: PLR0913 (a text has many looks)
+    def text(
         self,
         spot: Spot,
         words: str,
         *,
         at: str = "start",
-        size: float = 8.5,
+        size: float = 9.5,
         ink: str = INK,
         bold: bool = False,
     ) -> None:

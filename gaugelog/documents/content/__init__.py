@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from gaugelog.documents.content.build import build
 from gaugelog.documents.content.model import RECORD_FORMAT, RecordContent
 
-__all__ = ["RECORD_FORMAT", "RecordContent"]
+__all__ = ["RECORD_FORMAT", "RecordContent", "build"]

@@ -1,0 +1,159 @@
+"""What was done and found at a point, gathered from the ledger for its record."""
+
+from __future__ import annotations
+
+import json
+from collections.abc import Iterable, Iterator
+from typing import TYPE_CHECKING
+
+from gaugelog.documents.content.fromplan import Planned, needed
+from gaugelog.documents.content.model import ConsumableShown, InstrumentShown
+from gaugelog.documents.content.workdone import InputShown, ReadingShown, StepShown
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+from gaugelog.ledger.readings import ReadingRow, ReadingTaken
+from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.steps import Entered, StepRow
+from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, GaugeRow
+
+if TYPE_CHECKING:
+    from gaugelog.ledger.view import View
+
+
+def steps_shown(view: View, plan: Planned) -> tuple[StepShown, ...]:
+    """Every step of the route on each of its subjects, done or open, in the route's order."""
+    rows = {(row.step, row.subject): row for row in view.all(StepRow, point=plan.point.id)}
+    return tuple(
+        _step(view, number, step, label, rows.get((step.id, subject)))
+        for number, step in enumerate(plan.route.steps, start=1)
+        for subject, label in plan.subjects(step.subject)
+    )
+
+
+def _step(view: View, number: int, step: RouteStep, label: str, row: StepRow | None) -> StepShown:
+    card = {
+        "number": number,
+        "step": step.id,
+        "title": step.title,
+        "subject": label,
+        "hold": step.hold,
+        "instruction": step.instruction,
+        "windows": step.windows,
+    }
+    if row is None:
+        return StepShown.model_validate({**card, "outcome": "open"})
+    return StepShown.model_validate(
+        {
+            **card,
+            "outcome": row.outcome,
+            "by": row.by,
+            "observed_at": row.observed_at,
+            "entered_at": row.entered_at,
+            "note": row.note,
+            "inputs": tuple(_inputs(view, step, row)),
+        }
+    )
+
+
+def _inputs(view: View, step: RouteStep, row: StepRow) -> Iterator[InputShown]:
+    given = entered(row)
+    for asked in step.inputs:
+        if asked.name in given and asked.kind != "reading":
+            answer = given[asked.name]
+            means = _label(view, asked.kind, answer.id) if answer.id else ""
+            yield InputShown(prompt=asked.prompt, typed=answer.typed, means=means)
+
+
+def entered(row: StepRow) -> dict[str, Entered]:
+    """What was entered in a step, by the name of the input."""
+    return {
+        name: Entered.model_validate(each) for name, each in json.loads(row.data or "{}").items()
+    }
+
+
+def _label(view: View, kind: str, known: str) -> str:
+    if kind == "consumable":
+        lot = view.get(ConsumableRow, known)
+        return f"{lot.label}, {lot.name}" if lot is not None else ""
+    if kind == "instrument":
+        instrument = view.get(InstrumentRow, known)
+        return instrument.label if instrument is not None else ""
+    gauge = view.get(GaugeRow, known) if kind == "gauge" else None
+    return gauge.label if gauge is not None else ""
+
+
+def readings_shown(view: View, plan: Planned) -> tuple[ReadingShown, ...]:
+    """Every attempt of every check, in the order they were entered."""
+    labels = dict(plan.subjects("grid") + plan.subjects("circuit") + plan.subjects("place"))
+    return tuple(_reading(view, row, labels) for row in view.all(ReadingRow, point=plan.point.id))
+
+
+def _reading(view: View, row: ReadingRow, labels: dict[str, str]) -> ReadingShown:
+    taken = ReadingTaken.model_validate_json(row.data)
+    fields = {
+        name: getattr(taken, name)
+        for name in ReadingShown.model_fields
+        if name in ReadingTaken.model_fields
+    }
+    return ReadingShown.model_validate(
+        {
+            **fields,
+            "subject": labels.get(row.subject, row.subject),
+            "latest": bool(row.latest),
+            "instrument": needed(view.get(InstrumentRow, row.instrument)).label,
+            "entered_at": row.entered_at,
+            "entered_by": row.entered_by,
+        }
+    )
+
+
+def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
+    """The instruments that were used, each with the ranges that were used."""
+    used: dict[str, set[str]] = {}
+    for row in view.all(ReadingRow, point=plan.point.id):
+        taken = ReadingTaken.model_validate_json(row.data)
+        used.setdefault(row.instrument, set()).add(taken.range)
+    for instrument in _entered_ids(view, plan, "instrument"):
+        used.setdefault(instrument, set())
+    shown = (_instrument(view, each, ranges) for each, ranges in used.items())
+    return tuple(sorted(shown, key=lambda each: each.label))
+
+
+def _instrument(view: View, instrument: str, ranges: set[str]) -> InstrumentShown:
+    row = needed(view.get(InstrumentRow, instrument))
+    body = InstrumentAdded.model_validate_json(row.data)
+    fields = {name: getattr(body, name) for name in InstrumentShown.model_fields}
+    fields["ranges"] = tuple(each for each in body.ranges if each.name in ranges)
+    return InstrumentShown.model_validate(fields)
+
+
+def consumables_shown(view: View, plan: Planned) -> tuple[ConsumableShown, ...]:
+    """The lots that were used, the cable's among them where the plan names one."""
+    lots = dict.fromkeys(_entered_ids(view, plan, "consumable"))
+    for circuit in plan.circuits:
+        if circuit.leads.cable:
+            named = view.all(ConsumableRow, label=circuit.leads.cable)
+            lots.update(dict.fromkeys(row.id for row in named))
+    return tuple(_consumable(view, lot) for lot in lots)
+
+
+def _consumable(view: View, lot: str) -> ConsumableShown:
+    body = ConsumableReceived.model_validate_json(needed(view.get(ConsumableRow, lot)).data)
+    return ConsumableShown.model_validate(
+        {name: getattr(body, name) for name in ConsumableShown.model_fields}
+    )
+
+
+def _entered_ids(view: View, plan: Planned, kind: str) -> Iterable[str]:
+    """Ids entered for inputs of this kind, in the route's order, each once."""
+    asked = {step.id: {i.name for i in step.inputs if i.kind == kind} for step in plan.route.steps}
+    order = {step.id: number for number, step in enumerate(plan.route.steps)}
+    rows = sorted(
+        view.all(StepRow, point=plan.point.id), key=lambda row: order.get(row.step, len(order))
+    )
+    found = (
+        answer.id
+        for row in rows
+        for name, answer in entered(row).items()
+        if name in asked.get(row.step, ())
+    )
+    return dict.fromkeys(each for each in found if each)

@@ -1,0 +1,43 @@
+from __future__ import annotations
+
+from gaugelog.documents.fonts import FONTS, Lettering, drawable
+from gaugelog.documents.shipped import templates
+from gaugelog.ledger.base import SYMBOLS
+
+OURS = "ΩµνεαΔ°±≥≤×·−–—“”’‘…²³‹›→\u00a0\u202f"
+
+
+def test_every_letter_of_our_own_can_be_drawn() -> None:
+    texts = [OURS, *SYMBOLS.values()]
+    texts += [(templates() / name).read_text("utf-8") for name in ("record.html", "stamp.html")]
+    assert set() == {char for text in texts for char in text if char != "\n"} - {
+        chr(point) for point in drawable()
+    }
+
+
+def test_european_names_can_be_drawn() -> None:
+    lettering = Lettering()
+    for name in ("Łukasz Żółć", "Þóra Ægisdóttir", "Γεωργία", "Дмитро Їжак", "Đặng Ngọc Hân"):
+        assert name == lettering(name)
+    assert set() == lettering.missing
+
+
+def test_a_letter_no_font_has_is_shown_by_its_code_point_and_remembered() -> None:
+    lettering = Lettering()
+    assert "‹U+6F22› lot" == lettering("漢 lot")
+    assert {"漢"} == lettering.missing
+
+
+def test_unseen_and_turning_characters_become_visible() -> None:
+    lettering = Lettering()
+    assert "a‹U+202E›b‹U+200B›c‹U+001B›" == lettering("a\u202eb\u200bc\x1b")
+    assert set() == lettering.missing
+
+
+def test_each_font_has_its_licence_beside_it() -> None:
+    for font in FONTS:
+        family = font.file.partition("-")[0].removesuffix(".ttf")
+        licence = templates() / "fonts" / f"{family}-LICENSE.txt"
+        assert "Permission is hereby granted" in licence.read_text("utf-8") or "OFL" in (
+            licence.read_text("utf-8")
+        )
