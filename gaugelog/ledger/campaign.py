@@ -2,11 +2,14 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity
+from gaugelog.ledger.progress import grids_of, set_states
+from gaugelog.ledger.rows import At, Change, Drop, Known, Put, Row, have
 
 Surroundings = Literal["laboratory", "field"]
 Conditional = Literal["goes on", "blocks"]
@@ -153,6 +156,9 @@ class PlanLoaded(FactBody):
     criteria: Id
     points: tuple[Id, ...]
     circuits: tuple[Id, ...]
+    routes: tuple[Id, ...] = ()
+    replaces: Id | None = None
+    """The earlier draft's campaign, whose rows go."""
     files: dict[str, str]
 
 
@@ -215,3 +221,91 @@ class ChannelRow(SQLModel, table=True):
     module: str
     data: str
     """The `Channel` as JSON."""
+
+
+def apply_campaign_planned(_known: Known, _at: At, fact: CampaignPlanned) -> Iterator[Change]:
+    """The campaign and its channels are known; its plan is still being loaded."""
+    yield Put(
+        "campaign",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "title": fact.title,
+            "client": fact.client,
+            "surroundings": fact.surroundings,
+            "data": fact.model_dump_json(),
+            "criteria": "",
+            "revision": 0,
+            "state": "loading",
+            "plan": "",
+            "released_seq": 0,
+        },
+    )
+    for module in fact.modules:
+        for channel in module.channels:
+            yield Put("channel", _channel(fact.id, module, channel))
+
+
+def _channel(campaign: str, module: Module, channel: Channel) -> Row:
+    return {
+        "id": channel.id,
+        "label": f"{module.label}/{channel.label}",
+        "campaign": campaign,
+        "module": module.label,
+        "data": channel.model_dump_json(),
+    }
+
+
+def apply_criteria_agreed(_known: Known, _at: At, fact: CriteriaAgreed) -> Iterator[Change]:
+    """The criteria are known."""
+    yield Put(
+        "criteria",
+        {
+            "id": fact.id,
+            "campaign": fact.campaign,
+            "title": fact.title,
+            "edition": fact.edition,
+            "data": fact.model_dump_json(),
+        },
+    )
+
+
+def apply_plan_loaded(known: Known, _at: At, fact: PlanLoaded) -> Iterator[Change]:
+    """The draft is whole; the one it replaces goes."""
+    if fact.replaces is not None and known.get("campaign", fact.replaces) is not None:
+        yield from _drop_draft(known, have(known, "campaign", fact.replaces))
+    yield Put(
+        "campaign",
+        {
+            **have(known, "campaign", fact.campaign),
+            "criteria": fact.criteria,
+            "revision": fact.revision,
+            "state": "draft",
+            "plan": fact.model_dump_json(),
+        },
+    )
+
+
+def _drop_draft(known: Known, campaign: Row) -> Iterator[Change]:
+    plan = PlanLoaded.model_validate_json(campaign["plan"])
+    planned = CampaignPlanned.model_validate_json(campaign["data"])
+    for point in plan.points:
+        for grid in grids_of(have(known, "point", point)["data"]):
+            yield Drop("grid", grid)
+        yield Drop("point", point)
+    for module in planned.modules:
+        for channel in module.channels:
+            yield Drop("channel", channel.id)
+    for table, ids in (("circuit", plan.circuits), ("route", plan.routes)):
+        for row_id in ids:
+            yield Drop(table, row_id)
+    yield Drop("criteria", plan.criteria)
+    yield Drop("campaign", campaign["id"])
+
+
+def apply_plan_released(known: Known, at: At, fact: PlanReleased) -> Iterator[Change]:
+    """The plan is released, and so is every grid of it."""
+    campaign = have(known, "campaign", fact.campaign)
+    yield Put("campaign", {**campaign, "state": "released", "released_seq": at.seq})
+    for point in PlanLoaded.model_validate_json(campaign["plan"]).points:
+        yield from set_states(known, have(known, "point", point), "released")

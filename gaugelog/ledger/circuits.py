@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 ElementKind = Literal["grid", "dummy", "completion", "trim"]
 
@@ -60,3 +62,20 @@ class CircuitRow(SQLModel, table=True):
     arrangement: str
     data: str
     """The whole of `CircuitPlanned` as JSON."""
+
+
+def apply_circuit_planned(known: Known, _at: At, fact: CircuitPlanned) -> Iterator[Change]:
+    """The circuit is planned, and its grids know it."""
+    yield Put(
+        "circuit",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "campaign": fact.campaign,
+            "channel": fact.channel,
+            "arrangement": fact.arrangement,
+            "data": fact.model_dump_json(),
+        },
+    )
+    for grid in fact.grids:
+        yield Put("grid", {**have(known, "grid", grid), "circuit": fact.id})

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+from gaugelog.ledger.rows import At, Change, Known, Put
 
 
 class InstrumentRange(Part):
@@ -57,3 +59,19 @@ class InstrumentRow(SQLModel, table=True):
     data: str
     """The whole of `InstrumentAdded` as JSON."""
     seq: int
+
+
+def apply_instrument_added(_known: Known, at: At, fact: InstrumentAdded) -> Iterator[Change]:
+    """The instrument is known under this certificate."""
+    yield Put(
+        "instrument",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "type": fact.type,
+            "serial": fact.serial,
+            "due": fact.due,
+            "data": fact.model_dump_json(),
+            "seq": at.seq,
+        },
+    )

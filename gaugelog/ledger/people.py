@@ -2,11 +2,14 @@
 
 from __future__ import annotations
 
+import json
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DateText, FactBody, Id, Part
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 Role = Literal["planner", "technician", "reviewer", "custodian"]
 
@@ -61,3 +64,24 @@ class PersonRow(SQLModel, table=True):
     sheet: str
     active: int
     enrolled_seq: int
+
+
+def apply_person_enrolled(_known: Known, at: At, fact: PersonEnrolled) -> Iterator[Change]:
+    """A person is known, or known anew with other roles."""
+    qualifications = [item.model_dump(mode="json") for item in fact.qualifications]
+    yield Put(
+        "person",
+        {
+            "id": fact.person,
+            "roles": json.dumps(fact.roles),
+            "qualifications": json.dumps(qualifications, ensure_ascii=False),
+            "sheet": fact.sheet,
+            "active": 1,
+            "enrolled_seq": at.seq,
+        },
+    )
+
+
+def apply_person_left(known: Known, _at: At, fact: PersonLeft) -> Iterator[Change]:
+    """A person may act no more."""
+    yield Put("person", {**have(known, "person", fact.person), "active": 0})

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity
+from gaugelog.ledger.rows import At, Change, Known, Put
 
 GridState = Literal[
     "planned",
@@ -90,6 +92,8 @@ class PointRow(SQLModel, table=True):
     """The physical gauge in place, or empty."""
     generation: int
     """1 for the first gauge at the place; a replaced gauge is a new generation."""
+    blocked: str
+    """JSON list of `subject/check/stage` whose latest reading blocks."""
     data: str
     """The whole of `PointPlanned` as JSON."""
     seq: int
@@ -107,3 +111,35 @@ class GridRow(SQLModel, table=True):
     circuit: str
     """The circuit it is wired into, or empty."""
     state: str
+
+
+def apply_point_planned(_known: Known, at: At, fact: PointPlanned) -> Iterator[Change]:
+    """The point and its grids are planned."""
+    yield Put(
+        "point",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "campaign": fact.campaign,
+            "zone": fact.zone,
+            "lot": fact.lot,
+            "route": fact.route,
+            "gauge": "",
+            "generation": 1,
+            "blocked": "[]",
+            "data": fact.model_dump_json(),
+            "seq": at.seq,
+        },
+    )
+    for grid in fact.grids:
+        yield Put(
+            "grid",
+            {
+                "id": grid.id,
+                "label": grid.label,
+                "point": fact.id,
+                "number": grid.number,
+                "circuit": "",
+                "state": "planned",
+            },
+        )

@@ -2,11 +2,15 @@
 
 from __future__ import annotations
 
+import json
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity, TimeText
+from gaugelog.ledger.progress import move
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 Word = Literal["pass", "conditional pass", "conditional fail", "fail", "undecided"]
 Qualifier = Literal["=", ">", "<", "overload"]
@@ -62,6 +66,8 @@ class ReadingTaken(FactBody):
     observed_by: Id
     reason: str = ""
     """Why it was measured again; empty at the first attempt."""
+    repeats: Id | None = None
+    """The attempt before this one."""
     compared_with: Id | None = None
     """The earlier reading that this one is held against."""
     result: Quantity | None = None
@@ -95,3 +101,42 @@ class ReadingRow(SQLModel, table=True):
     data: str
     """The whole of `ReadingTaken` as JSON."""
     seq: int
+
+
+def apply_reading_taken(known: Known, at: At, fact: ReadingTaken) -> Iterator[Change]:
+    """The reading is the latest of its check; whether it blocks decides the grids' state."""
+    if fact.repeats is not None:
+        yield Put("reading", {**have(known, "reading", fact.repeats), "latest": 0})
+    yield Put(
+        "reading",
+        {
+            "id": fact.id,
+            "point": fact.point,
+            "subject": fact.subject,
+            "step": fact.step,
+            "check": fact.check,
+            "stage": fact.stage,
+            "attempt": fact.attempt,
+            "latest": 1,
+            "typed": fact.typed,
+            "word": fact.verdict.word,
+            "blocks": int(fact.verdict.blocks),
+            "instrument": fact.instrument,
+            "observed_at": fact.observed_at,
+            "observed_by": fact.observed_by,
+            "entered_at": at.time,
+            "entered_by": at.actor,
+            "data": fact.model_dump_json(),
+            "seq": at.seq,
+        },
+    )
+    point = have(known, "point", fact.point)
+    point["blocked"] = _blocked(point["blocked"], fact)
+    yield Put("point", point)
+    yield from move(known, point)
+
+
+def _blocked(before: str, fact: ReadingTaken) -> str:
+    key = f"{fact.subject}/{fact.check}/{fact.stage}"
+    others = [each for each in json.loads(before) if each != key]
+    return json.dumps([*others, key] if fact.verdict.blocks else others)

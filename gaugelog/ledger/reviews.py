@@ -2,11 +2,14 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id
+from gaugelog.ledger.progress import reopen, route_of, set_states
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 
 class PointSubmitted(FactBody):
@@ -74,3 +77,55 @@ class RecordRow(SQLModel, table=True):
     reason: str
     """Why it was returned, or empty."""
     seq: int
+
+
+def apply_point_submitted(known: Known, at: At, fact: PointSubmitted) -> Iterator[Change]:
+    """A record with one signature awaits review."""
+    yield Put(
+        "record",
+        {
+            "id": f"{fact.point}/{fact.revision}",
+            "point": fact.point,
+            "revision": fact.revision,
+            "state": "submitted",
+            "submitted_file": fact.file,
+            "submitted_by": fact.submitted_by,
+            "submitted_at": at.time,
+            "submitted_head": fact.head,
+            "accepted_file": "",
+            "accepted_by": "",
+            "accepted_at": "",
+            "accepted_head": "",
+            "reason": "",
+            "seq": at.seq,
+        },
+    )
+    yield from set_states(known, have(known, "point", fact.point), "awaiting review")
+
+
+def apply_point_accepted(known: Known, at: At, fact: PointAccepted) -> Iterator[Change]:
+    """The record has both signatures; the point is accepted."""
+    yield Put(
+        "record",
+        {
+            **have(known, "record", f"{fact.point}/{fact.revision}"),
+            "state": "accepted",
+            "accepted_file": fact.file,
+            "accepted_by": fact.accepted_by,
+            "accepted_at": at.time,
+            "accepted_head": fact.head,
+        },
+    )
+    yield from set_states(known, have(known, "point", fact.point), "accepted")
+
+
+def apply_point_returned(known: Known, _at: At, fact: PointReturned) -> Iterator[Change]:
+    """The record is returned; steps from `redo_from` on are to be done again."""
+    record = have(known, "record", f"{fact.point}/{fact.revision}")
+    yield Put("record", {**record, "state": "returned", "reason": fact.reason})
+    point = have(known, "point", fact.point)
+    steps = route_of(have(known, "route", point["route"])["data"]).steps
+    start = next((place for place, item in enumerate(steps) if item.id == fact.redo_from), None)
+    if start is not None:
+        yield from reopen(known, point, steps[start:])
+    yield from set_states(known, point, "returned")

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity
+from gaugelog.ledger.rows import At, Change, Known, Put
 
 StepSubject = Literal["place", "grid", "circuit"]
 InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
@@ -85,3 +87,17 @@ class RouteRow(SQLModel, table=True):
     edition: str
     data: str
     """The whole of `RouteAdopted` as JSON."""
+
+
+def apply_route_adopted(_known: Known, _at: At, fact: RouteAdopted) -> Iterator[Change]:
+    """The route is known."""
+    yield Put(
+        "route",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "title": fact.title,
+            "edition": fact.edition,
+            "data": fact.model_dump_json(),
+        },
+    )

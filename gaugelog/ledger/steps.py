@@ -2,11 +2,16 @@
 
 from __future__ import annotations
 
+import json
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity, TimeText
+from gaugelog.ledger.progress import move, reopen, route_of, step_key
+from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
 
 
 class Entered(Part):
@@ -80,3 +85,69 @@ class StepRow(SQLModel, table=True):
     data: str
     """The inputs as JSON."""
     seq: int
+
+
+def apply_step_done(known: Known, at: At, fact: StepDone) -> Iterator[Change]:
+    """The step is settled on its subject; a gauge that was entered is in service at the point."""
+    point = have(known, "point", fact.point)
+    step = next(item for item in _steps(known, point) if item.id == fact.step)
+    yield from _take_gauge(known, point, step, fact)
+    inputs = {name: item.model_dump(mode="json") for name, item in fact.inputs.items()}
+    row = _row(at, fact, "done", fact.done_by, fact.observed_at, fact.note)
+    yield Put("step", {**row, "data": json.dumps(inputs, ensure_ascii=False)})
+    yield from move(known, have(known, "point", fact.point), step.reaches)
+
+
+def _take_gauge(known: Known, point: Row, step: RouteStep, fact: StepDone) -> Iterator[Change]:
+    for item in step.inputs:
+        gauge = fact.inputs.get(item.name)
+        if item.kind == "gauge" and gauge is not None and gauge.id is not None:
+            yield Put("point", {**point, "gauge": gauge.id})
+            taken = {"state": "in service", "point": fact.point}
+            yield Put("gauge", {**have(known, "gauge", gauge.id), **taken})
+
+
+def apply_step_skipped(known: Known, at: At, fact: StepSkipped) -> Iterator[Change]:
+    """The step is settled without being done."""
+    yield Put("step", _row(at, fact, "skipped", fact.skipped_by, at.time, fact.reason))
+    yield from move(known, have(known, "point", fact.point))
+
+
+def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Change]:
+    """The hold is released; or refused, and the steps since `refused_to` are to be done again."""
+    point = have(known, "point", fact.point)
+    row = _row(at, fact, fact.outcome, fact.decided_by, fact.observed_at, fact.reason)
+    yield Put("step", row)
+    steps = _steps(known, point)
+    hold = next(place for place, item in enumerate(steps) if item.id == fact.step)
+    if fact.outcome == "refused":
+        back = [place for place, item in enumerate(steps) if item.id == steps[hold].refused_to]
+        yield from reopen(known, point, steps[back[0] if back else hold : hold])
+    yield from move(known, point, steps[hold].reaches if fact.outcome == "released" else "")
+
+
+def _steps(known: Known, point: Row) -> tuple[RouteStep, ...]:
+    return route_of(have(known, "route", point["route"])["data"]).steps
+
+
+def _row(
+    at: At,
+    fact: StepDone | StepSkipped | HoldDecided,
+    outcome: str,
+    by: str,
+    observed_at: str,
+    note: str,
+) -> Row:
+    return {
+        "id": step_key(fact.point, fact.step, fact.subject),
+        "point": fact.point,
+        "subject": fact.subject,
+        "step": fact.step,
+        "outcome": outcome,
+        "by": by,
+        "observed_at": observed_at,
+        "entered_at": at.time,
+        "note": note,
+        "data": "{}",
+        "seq": at.seq,
+    }

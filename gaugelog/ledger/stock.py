@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+from gaugelog.ledger.rows import At, Change, Known, Put
 
 GaugeState = Literal["on shelf", "in service", "removed", "scrapped"]
 ConsumableKind = Literal["adhesive", "coating", "solder", "cable", "cleaner", "other"]
@@ -121,3 +123,49 @@ class ConsumableRow(SQLModel, table=True):
     data: str
     """The whole of `ConsumableReceived` as JSON."""
     seq: int
+
+
+def apply_lot_received(_known: Known, at: At, fact: LotReceived) -> Iterator[Change]:
+    """The lot is in stock, with each of its gauges on the shelf."""
+    yield Put(
+        "lot",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "maker": fact.maker,
+            "type": fact.type,
+            "data": fact.model_dump_json(),
+            "seq": at.seq,
+        },
+    )
+    for pack in fact.packs:
+        for number, piece in enumerate(pack.pieces, start=1):
+            yield Put("gauge", _gauge(fact, pack, number, piece))
+
+
+def _gauge(lot: LotReceived, pack: PackReceived, number: int, piece: str) -> dict[str, object]:
+    return {
+        "id": piece,
+        "label": f"{pack.label}/{number}",
+        "lot": lot.id,
+        "pack": pack.id,
+        "number": number,
+        "state": "on shelf",
+        "point": "",
+    }
+
+
+def apply_consumable_received(_known: Known, at: At, fact: ConsumableReceived) -> Iterator[Change]:
+    """The consumable lot is in stock."""
+    yield Put(
+        "consumable",
+        {
+            "id": fact.id,
+            "label": fact.label,
+            "type": fact.type,
+            "name": fact.name,
+            "expires": fact.expires or "",
+            "data": fact.model_dump_json(),
+            "seq": at.seq,
+        },
+    )

@@ -1,0 +1,121 @@
+"""The fold from entries to tables: each kind of fact changes rows in its own pure way."""
+
+from __future__ import annotations
+
+import json
+import sqlite3
+from collections.abc import Iterable, Iterator
+
+from gaugelog.journal.check.report import Trouble
+from gaugelog.journal.entry import Entry
+from gaugelog.journal.order import ledger_order
+from gaugelog.ledger import (
+    campaign,
+    circuits,
+    instruments,
+    people,
+    points,
+    readings,
+    reviews,
+    routes,
+    schema,
+    steps,
+    stock,
+)
+from gaugelog.ledger.base import FactBody
+from gaugelog.ledger.buffer import Buffer
+from gaugelog.ledger.rows import Apply, At, Change, Known, Row
+
+_FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
+    (body.kind, body.version): (body, function)
+    for body, function in (
+        (people.PersonEnrolled, people.apply_person_enrolled),
+        (people.PersonLeft, people.apply_person_left),
+        (stock.LotReceived, stock.apply_lot_received),
+        (stock.ConsumableReceived, stock.apply_consumable_received),
+        (instruments.InstrumentAdded, instruments.apply_instrument_added),
+        (campaign.CampaignPlanned, campaign.apply_campaign_planned),
+        (campaign.CriteriaAgreed, campaign.apply_criteria_agreed),
+        (campaign.PlanLoaded, campaign.apply_plan_loaded),
+        (campaign.PlanReleased, campaign.apply_plan_released),
+        (routes.RouteAdopted, routes.apply_route_adopted),
+        (points.PointPlanned, points.apply_point_planned),
+        (circuits.CircuitPlanned, circuits.apply_circuit_planned),
+        (steps.StepDone, steps.apply_step_done),
+        (steps.StepSkipped, steps.apply_step_skipped),
+        (steps.HoldDecided, steps.apply_hold_decided),
+        (readings.ReadingTaken, readings.apply_reading_taken),
+        (reviews.PointSubmitted, reviews.apply_point_submitted),
+        (reviews.PointAccepted, reviews.apply_point_accepted),
+        (reviews.PointReturned, reviews.apply_point_returned),
+    )
+}
+"""Kind and version of a fact to its body and how it changes the tables."""
+
+_STEP = 8
+"""The step of the journal's check that compares the ledger."""
+
+
+def apply(known: Known, entry: Entry) -> Iterator[Change]:
+    """How one entry changes the tables, given what is known before it.
+
+    Kinds that this version does not know, and withheld bodies, change nothing.
+    """
+    header = json.loads(entry.header_bytes)
+    found = _FOLD.get((header["kind"], header["version"]))
+    if found is None or entry.body_bytes is None:
+        return
+    model, function = found
+    fact = model.model_validate(json.loads(entry.body_bytes)["fact"])
+    yield from function(known, At(header["seq"], header["time"], header["actor"]), fact)
+
+
+def keep(connection: sqlite3.Connection, entries: Iterable[Entry]) -> None:
+    """Let the tables follow new entries, in the open transaction."""
+    buffer = Buffer(lambda table, row_id: schema.load_row(connection, table, row_id))
+    for entry in entries:
+        buffer.take(apply(buffer, entry))
+    schema.write(connection, buffer)
+
+
+def fold(entries: Iterable[Entry]) -> Buffer:
+    """The whole ledger from the whole journal, in memory."""
+    buffer = Buffer()
+    for entry in ledger_order(entries):
+        buffer.take(apply(buffer, entry))
+    return buffer
+
+
+def rebuild(connection: sqlite3.Connection, entries: Iterable[Entry]) -> None:
+    """Throw the tables away and write them anew, in the open transaction."""
+    buffer = fold(entries)
+    schema.create_tables(connection)
+    schema.write(connection, buffer)
+
+
+def compare(connection: sqlite3.Connection, entries: Iterable[Entry]) -> list[Trouble]:
+    """Rebuild the ledger in memory and name each row of the tables that differs from it."""
+    wanted = fold(entries).rows
+    return [
+        trouble
+        for table in schema.names()
+        for trouble in _differences(
+            table,
+            {key: row for key, row in wanted.get(table, {}).items() if row is not None},
+            {str(row["id"]): row for row in schema.load_rows(connection, table)},
+        )
+    ]
+
+
+def _differences(table: str, wanted: dict[str, Row], found: dict[str, Row]) -> Iterator[Trouble]:
+    remedy = "The journal is right: rebuild the ledger with `gaugelog journal check --rebuild`."
+    for key in sorted(wanted.keys() | found.keys()):
+        where = f"table {table}, row {key}"
+        if key not in found:
+            yield Trouble(_STEP, where, "The row is missing from the table.", remedy)
+        elif key not in wanted:
+            yield Trouble(_STEP, where, "No entry of the journal gives this row.", remedy)
+        elif wanted[key] != found[key]:
+            columns = [name for name in wanted[key] if wanted[key][name] != found[key].get(name)]
+            what = f"It differs from the journal in {', '.join(columns)}."
+            yield Trouble(_STEP, where, what, remedy)

@@ -1,0 +1,99 @@
+"""How far a point is along its route: the step that is open, and the state of its grids."""
+
+from __future__ import annotations
+
+import json
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+from functools import lru_cache
+
+from gaugelog.ledger.points import PointPlanned
+from gaugelog.ledger.routes import RouteAdopted, RouteStep
+from gaugelog.ledger.rows import Change, Known, Put, Row, have
+
+SETTLED = frozenset({"done", "skipped", "released"})
+"""Outcomes after which the route goes on."""
+
+
+@dataclass(frozen=True, slots=True)
+class OpenStep:
+    """A step that is to be done on a subject; `number` counts from 1."""
+
+    number: int
+    step: RouteStep
+    subject: str
+
+
+@lru_cache(maxsize=256)
+def route_of(data: str) -> RouteAdopted:
+    """A route from its JSON; kept, because every step asks for it."""
+    return RouteAdopted.model_validate_json(data)
+
+
+@lru_cache(maxsize=4096)
+def grids_of(data: str) -> tuple[str, ...]:
+    """The ids of a point's grids, from the JSON of `PointPlanned`."""
+    return tuple(grid.id for grid in PointPlanned.model_validate_json(data).grids)
+
+
+def step_key(point: str, step: str, subject: str) -> str:
+    """The id of a step's row."""
+    return f"{point}/{step}/{subject}"
+
+
+def subjects_of(known: Known, point: Row, step: RouteStep) -> list[str]:
+    """What a step is done on: the point itself, each of its grids, or each circuit of theirs."""
+    grids = grids_of(point["data"])
+    if step.subject == "place":
+        return [point["id"]]
+    if step.subject == "grid":
+        return list(grids)
+    circuits = (have(known, "grid", grid)["circuit"] for grid in grids)
+    return list(dict.fromkeys(circuit for circuit in circuits if circuit))
+
+
+def open_step(known: Known, point: Row) -> OpenStep | None:
+    """The first step of the route that is not settled on each of its subjects; None at the end."""
+    route = route_of(have(known, "route", point["route"])["data"])
+    for number, step in enumerate(route.steps, start=1):
+        for subject in subjects_of(known, point, step):
+            row = known.get("step", step_key(point["id"], step.id, subject))
+            if row is None or row["outcome"] not in SETTLED:
+                return OpenStep(number, step, subject)
+    return None
+
+
+def move(known: Known, point: Row, reached: str = "") -> Iterator[Change]:
+    """The states of a point's grids after something happened; `reached` names a state of its own.
+
+    A grid with a blocking reading is non-conforming; where the next step is a hold, all are on
+    hold.
+    """
+    upcoming = open_step(known, point)
+    calm = "on hold" if upcoming is not None and upcoming.step.hold else reached or "in work"
+    blocked = json.loads(point["blocked"])
+    for grid_id in grids_of(point["data"]):
+        grid = have(known, "grid", grid_id)
+        bad = any(_concerns(key, grid_id, point) for key in blocked)
+        grid["state"] = "non-conforming" if bad else calm
+        yield Put("grid", grid)
+
+
+def _concerns(key: str, grid_id: str, point: Row) -> bool:
+    subject = key.split("/", 1)[0]
+    return subject == grid_id or subject not in grids_of(point["data"])
+
+
+def set_states(known: Known, point: Row, state: str) -> Iterator[Change]:
+    """All grids of a point into one state."""
+    for grid_id in grids_of(point["data"]):
+        yield Put("grid", {**have(known, "grid", grid_id), "state": state})
+
+
+def reopen(known: Known, point: Row, steps: Sequence[RouteStep]) -> Iterator[Change]:
+    """Mark steps that were settled as to be done again."""
+    for step in steps:
+        for subject in subjects_of(known, point, step):
+            row = known.get("step", step_key(point["id"], step.id, subject))
+            if row is not None:
+                yield Put("step", {**row, "outcome": "reopened"})

@@ -1,0 +1,117 @@
+"""Looking at what is known: rows by id or by column, labels to rows, ids to names."""
+
+from __future__ import annotations
+
+import sqlite3
+from collections.abc import Callable
+from functools import cache
+from typing import TypeVar
+
+from sqlmodel import SQLModel
+
+from gaugelog.errors import Refused
+from gaugelog.ledger.circuits import CircuitRow
+from gaugelog.ledger.instruments import InstrumentRow
+from gaugelog.ledger.people import IdentitySheet, PersonRow
+from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.schema import table_of
+from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
+
+T = TypeVar("T", bound=SQLModel)
+
+
+class View:
+    """One unchanging look at the ledger, inside a transaction or outside alike.
+
+    `sheet` gives the bytes of an identity sheet by its digest, None when it was erased.
+    """
+
+    def __init__(
+        self, connection: sqlite3.Connection, sheet: Callable[[str], bytes | None]
+    ) -> None:
+        self._connection = connection
+        self._sheet = sheet
+
+    def get(self, model: type[T], row_id: str) -> T | None:
+        """The row with this id, or None."""
+        found = self.all(model, id=row_id)
+        return found[0] if found else None
+
+    def all(self, model: type[T], **equals: str | int) -> list[T]:
+        """Every row whose columns equal what is given, in the journal's order or by label."""
+        where = " AND ".join(f'"{name}" = ?' for name in equals)
+        query = _select(model) + (f" WHERE {where}" if where else "") + _order(model)
+        names = _columns(model)
+        rows = self._connection.execute(query, tuple(equals.values()))
+        return [model(**dict(zip(names, row, strict=True))) for row in rows]
+
+    def identity(self, person: str) -> IdentitySheet | None:
+        """Name and initials of a person; None when unknown or erased."""
+        row = self.get(PersonRow, person)
+        data = self._sheet(row.sheet) if row is not None else None
+        return None if data is None else IdentitySheet.model_validate_json(data)
+
+    def name(self, person: str) -> str:
+        """The person as people read it: `T. Okoro (TO)`, or the id where the name was erased."""
+        sheet = self.identity(person)
+        if sheet is None:
+            return f"{person} (name erased)"
+        return f"{sheet.name} ({sheet.initials})"
+
+    def point(self, label: str) -> PointRow | None:
+        """The point with this label, whatever the case."""
+        return self._labelled(PointRow, label)
+
+    def gauge(self, label: str) -> GaugeRow | None:
+        """The gauge with this label, pack and number: `K7-03/4`."""
+        return self._labelled(GaugeRow, label)
+
+    def lot(self, label: str) -> LotRow | None:
+        """The gauge lot with this label."""
+        return self._labelled(LotRow, label)
+
+    def instrument(self, label: str) -> InstrumentRow | None:
+        """The instrument with this label."""
+        return self._labelled(InstrumentRow, label)
+
+    def consumable(self, label: str) -> ConsumableRow | None:
+        """The consumable lot with this label."""
+        return self._labelled(ConsumableRow, label)
+
+    def subject(self, label: str) -> str:
+        """The id of whatever is called `label`. Raises Refused when nothing or several are."""
+        models = (PointRow, GridRow, CircuitRow, GaugeRow, LotRow, InstrumentRow, ConsumableRow)
+        for model in models:
+            row = self._labelled(model, label)
+            if row is not None:
+                return str(row.id)  # type: ignore[attr-defined]
+        raise Refused(f"Nothing is called {label}.", "Give the label of a point, lot or meter.")
+
+    def _labelled(self, model: type[T], label: str) -> T | None:
+        query = f"{_select(model)} WHERE label = ? COLLATE NOCASE{_order(model)}"
+        names = _columns(model)
+        rows = self._connection.execute(query, (label.strip(),)).fetchall()
+        found = [model(**dict(zip(names, row, strict=True))) for row in rows]
+        exact = [row for row in found if row.label == label.strip()]  # type: ignore[attr-defined]
+        if len(exact or found) > 1:
+            raise Refused(f"Several are called {label}.", "Give the label in its exact spelling.")
+        fitting = exact or found
+        return fitting[0] if fitting else None
+
+
+@cache
+def _columns(model: type[SQLModel]) -> tuple[str, ...]:
+    return tuple(column.name for column in table_of(model).columns)
+
+
+@cache
+def _select(model: type[SQLModel]) -> str:
+    columns = ", ".join(f'"{name}"' for name in _columns(model))
+    return f'SELECT {columns} FROM "{table_of(model).name}"'
+
+
+@cache
+def _order(model: type[SQLModel]) -> str:
+    names = _columns(model)
+    keys = [name for name in ("seq", "number", "label") if name in names]
+    return f" ORDER BY {', '.join([*keys, 'id'])}"
