@@ -235,18 +235,32 @@ def circuit_of(
 ) -> Circuit:
     """The circuit of an arrangement with equal grids and equal wires, to start a figure from.
 
-    Grids are called `grid 1` to `grid 4` by their arm; arms without a grid hold `resistor 2` and
-    so on, of `completion` ohm, or the grid's resistance where none is given.
+    Grids are called `grid 1` to `grid 4` by their arm, the dummy of a half bridge `dummy 2`;
+    other arms hold `resistor 2` and so on, of `completion` ohm, or the grid's resistance where
+    none is given.
     Source: the circuits of common practice.
     """
     chosen, placed = arrangement(name), layout_for(name, wires)
     rest = resistance if completion is None else completion
     one, two, three, four = (
-        (
-            Element(f"grid {number}", "grid", resistance, factor)
-            if active
-            else Element(f"resistor {number}", "completion", rest),
-        )
+        (_filling(number, active, number in placed.outside, chosen.kind, resistance, factor, rest),)
         for number, active in enumerate(chosen.active, start=1)
     )
     return Circuit(placed, (one, two, three, four), dict.fromkeys(placed.wires, wire))
+
+
+def _filling(
+    number: int,
+    active: bool,
+    outside: bool,
+    kind: str,
+    resistance: Number,
+    factor: Number,
+    completion: Number,
+) -> Element:
+    """What an arm of an arrangement holds: a grid, a half bridge's dummy, or a resistor."""
+    if active:
+        return Element(f"grid {number}", "grid", resistance, factor)
+    if outside and kind == "half":
+        return Element(f"dummy {number}", "dummy", resistance, factor)
+    return Element(f"resistor {number}", "completion", completion)

@@ -7,6 +7,8 @@ the module measures as its supply (V/V).
 
 from __future__ import annotations
 
+from collections.abc import Collection
+
 from gaugelog.physics._maths import Number
 from gaugelog.physics.arrangements import arrangement, bridge_factor
 from gaugelog.physics.bridge import indicated_strain
@@ -26,11 +28,11 @@ STEP = 1e-6
 """Strain by which `sensitivity` steps to either side: small, yet far above rounding."""
 
 
-def network_of(circuit: Circuit) -> Network:
+def network_of(circuit: Circuit, arms: Collection[int] = (1, 2, 3, 4)) -> Network:
     """The network of a circuit: each wire and each element a resistor between named nodes.
 
-    Elements in series meet at nodes `arm 1.1`, `arm 1.2` … counted from the arm's first end.
-    Source: Kirchhoff's laws; corners as in `bridge`.
+    Only the numbered `arms` are taken. Elements in series meet at nodes `arm 1.1`, `arm 1.2` …
+    counted from the arm's first end. Source: Kirchhoff's laws; corners as in `bridge`.
     """
     placed = circuit.layout
     resistors = [
@@ -40,6 +42,8 @@ def network_of(circuit: Circuit) -> Network:
     for number, (arm, (start, end)) in enumerate(
         zip(circuit.arms, placed.arm_ends, strict=True), start=1
     ):
+        if number not in arms:
+            continue
         inner = [f"arm {number}.{place}" for place in range(1, len(arm))]
         stops = [start, *inner, end]
         resistors += [
