@@ -7,7 +7,6 @@ from typing import TYPE_CHECKING
 from gaugelog.documents.content.build import build
 from gaugelog.documents.render import Paper, render_record
 from gaugelog.documents.sign import sign_first, sign_second
-from gaugelog.errors import Refused
 from gaugelog.journal.keys import Signer
 from gaugelog.work.ports import RecordRequest, Stamp
 
@@ -31,15 +30,8 @@ class PdfRecordMaker:
         Raises MachineTrouble when pages can't be drawn here.
         """
         content = build(view, request, signer.person)
-        if content.signing is None:
-            raise Refused("A record is submitted by someone who signs it.")
-        stamp = Stamp(
-            person=signer.person,
-            name=content.signing.name,
-            meaning=request.meaning,
-            moment=request.moment,
-            head=request.head,
-        )
+        name = view.name(signer.person)
+        stamp = Stamp(signer.person, name, request.meaning, request.moment, request.head)
         return sign_first(render_record(content, self.paper), stamp, signer)
 
     def accepted(self, pdf: bytes, stamp: Stamp, signer: Signer) -> bytes:

@@ -5,6 +5,7 @@ from __future__ import annotations
 import io
 import json
 import subprocess
+from collections.abc import Callable
 from pathlib import Path
 
 import pikepdf
@@ -18,7 +19,7 @@ from tests.foreign import needs
 from tests.outside.pdfa import troubles
 
 pytestmark = pytest.mark.xdist_group("record")
-STAGES = {
+STAGES: dict[str, Callable[[], bytes]] = {
     "unsigned": lambda: drawing().pdf,
     "draft": draft,
     "submitted": submitted,
