@@ -8,7 +8,7 @@ numbers go through alike. A resistor of zero ohm joins its two nodes; one of inf
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 
 from gaugelog.physics._maths import Number
@@ -93,17 +93,20 @@ def potential(network: Network, node: str, high: str, low: str) -> Number:
 
     Source: nodal analysis (Kirchhoff's laws) by the star-mesh transform; any text on circuits.
     """
+    return potentials(network, (node,), high, low)[0]
+
+
+def potentials(network: Network, nodes: Sequence[str], high: str, low: str) -> tuple[Number, ...]:
+    """Potential of each node as a part of the voltage between `high` and `low`.
+
+    Source: nodal analysis (Kirchhoff's laws) by the star-mesh transform; any text on circuits.
+    """
     mesh, alias = _mesh(network)
-    here, top, bottom = (_known(alias, each) for each in (node, high, low))
+    top, bottom, *asked = (_known(alias, node) for node in (high, low, *nodes))
     if top == bottom:
         raise OutOfDomain("high", f"is shorted to {low}: no voltage stands between them.")
-    if here in (top, bottom):
-        return 1.0 if here == top else 0.0
-    links = _reduced(mesh, {here, top, bottom})[here]
-    up, down = links.get(top, 0.0), links.get(bottom, 0.0)
-    if not links:
-        raise OutOfDomain("node", f"{node} is joined to neither {high} nor {low}.")
-    return up / (up + down)
+    mesh = _reduced(mesh, {top, bottom, *asked})
+    return tuple(_potential(mesh, node, top, bottom) for node in asked)
 
 
 def signal_ratio(network: Network, signal: tuple[str, str], supply: tuple[str, str]) -> Number:
@@ -111,8 +114,18 @@ def signal_ratio(network: Network, signal: tuple[str, str], supply: tuple[str, s
 
     Source: nodal analysis (Kirchhoff's laws) by the star-mesh transform; any text on circuits.
     """
-    plus, minus = (potential(network, node, *supply) for node in signal)
+    plus, minus = potentials(network, signal, *supply)
     return plus - minus
+
+
+def _potential(mesh: _Mesh, node: str, top: str, bottom: str) -> Number:
+    if node in (top, bottom):
+        return 1.0 if node == top else 0.0
+    links = _reduced(mesh, {node, top, bottom})[node]
+    if not links:
+        raise OutOfDomain("node", f"{node} is joined to neither end of the supply.")
+    up, down = links.get(top, 0.0), links.get(bottom, 0.0)
+    return up / (up + down)
 
 
 def _mesh(network: Network) -> tuple[_Mesh, dict[str, str]]:

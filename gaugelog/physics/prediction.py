@@ -21,7 +21,14 @@ from gaugelog.physics.circuit import (
     SUPPLY_PLUS,
     Circuit,
 )
-from gaugelog.physics.network import Network, Resistor, connected, potential, resistance_between
+from gaugelog.physics.network import (
+    Network,
+    Resistor,
+    connected,
+    potential,
+    potentials,
+    resistance_between,
+)
 from gaugelog.physics.validity import OutOfDomain, not_zero, positive
 
 STEP = 1e-6
@@ -60,12 +67,13 @@ def output(circuit: Circuit, *added: Resistor) -> Number:
     Source: nodal analysis (Kirchhoff's laws).
     """
     whole = network_of(circuit).joined(*added)
-    plus = _measured(circuit, whole, SIGNAL_PLUS)
     if not _has_buffers(circuit):
-        return plus - _measured(circuit, whole, SIGNAL_MINUS)
+        plus, minus = _measured(circuit, whole, (SIGNAL_PLUS, SIGNAL_MINUS))
+        return plus - minus
     if connected(whole, HALF_MINUS, SUPPLY_MINUS):
         raise OutOfDomain("added", "may not join the module's buffered half bridge to the rest.")
-    return plus - potential(whole, SIGNAL_MINUS, HALF_PLUS, HALF_MINUS)
+    half = potential(whole, SIGNAL_MINUS, HALF_PLUS, HALF_MINUS)
+    return _measured(circuit, whole, (SIGNAL_PLUS,))[0] - half
 
 
 def strained_output(circuit: Circuit, name: str, strain: Number, poisson: Number = 0.0) -> Number:
@@ -143,15 +151,13 @@ def supply_resistance(circuit: Circuit) -> Number:
     return resistance_between(network_of(circuit), SUPPLY_PLUS, SUPPLY_MINUS)
 
 
-def _measured(circuit: Circuit, whole: Network, node: str) -> Number:
-    """A node's potential as a part of the voltage the module takes as its supply."""
-    here = potential(whole, node, SUPPLY_PLUS, SUPPLY_MINUS)
+def _measured(circuit: Circuit, whole: Network, nodes: tuple[str, ...]) -> tuple[Number, ...]:
+    """Potentials of nodes as parts of the voltage the module takes as its supply."""
     if not circuit.layout.sensed:
-        return here
-    high, low = (
-        potential(whole, pin, SUPPLY_PLUS, SUPPLY_MINUS) for pin in circuit.layout.reference
-    )
-    return (here - low) / (high - low)
+        return potentials(whole, nodes, SUPPLY_PLUS, SUPPLY_MINUS)
+    asked = (*circuit.layout.reference, *nodes)
+    high, low, *found = potentials(whole, asked, SUPPLY_PLUS, SUPPLY_MINUS)
+    return tuple((each - low) / (high - low) for each in found)
 
 
 def _has_buffers(circuit: Circuit) -> bool:

@@ -15,6 +15,7 @@ from tests.outside.spice import Bench, resistances, voltages
 CHECKS = (
     network.resistance_between,
     network.potential,
+    network.potentials,
     network.signal_ratio,
     network.connected,
 )
@@ -59,6 +60,8 @@ def test_every_potential_is_the_simulators(tmp_path: Path) -> None:
         for node in each.nodes:
             found = network.potential(each, node, high, low)
             assert volts[node] == pytest.approx(found, abs=1e-9)
+        together = network.potentials(each, each.nodes, high, low)
+        assert [volts[node] for node in each.nodes] == pytest.approx(list(together), abs=1e-9)
         first, second = each.nodes[1], each.nodes[-2]
         found = network.signal_ratio(each, (first, second), (high, low))
         assert volts[first] - volts[second] == pytest.approx(found, abs=1e-9)
