@@ -44,6 +44,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (steps.StepDone, steps.apply_step_done),
         (steps.StepSkipped, steps.apply_step_skipped),
         (steps.HoldDecided, steps.apply_hold_decided),
+        (steps.StepReopened, steps.apply_step_reopened),
         (readings.ReadingTaken, readings.apply_reading_taken),
         (reviews.PointSubmitted, reviews.apply_point_submitted),
         (reviews.PointAccepted, reviews.apply_point_accepted),
@@ -67,7 +68,8 @@ def apply(known: Known, entry: Entry) -> Iterator[Change]:
         return
     model, function = found
     fact = model.model_validate(json.loads(entry.body_bytes)["fact"])
-    yield from function(known, At(header["seq"], header["time"], header["actor"]), fact)
+    at = At(*(header[name] for name in ("seq", "time", "actor", "boot", "uptime_ms")))
+    yield from function(known, at, fact)
 
 
 def keep(connection: sqlite3.Connection, entries: Iterable[Entry]) -> None:

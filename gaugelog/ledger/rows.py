@@ -39,11 +39,16 @@ class Known(Protocol):
 
 @dataclass(frozen=True, slots=True)
 class At:
-    """Where in the journal a fact stands: its entry's number, time (UTC text) and actor."""
+    """Where in the journal a fact stands: number, time (UTC text), actor, and the machine's run.
+
+    `boot` and `uptime_ms` show whether the clock was set between two entries.
+    """
 
     seq: int
     time: str
     actor: str
+    boot: str = ""
+    uptime_ms: int = 0
 
 
 Apply = Callable[[Known, At, Any], Iterator[Change]]

@@ -36,6 +36,8 @@ class StepDone(FactBody):
     observed_at: TimeText
     done_by: Id
     note: str = ""
+    flags: tuple[str, ...] = ()
+    """What the program saw and could not judge: a clock that jumped, a conditional pass."""
 
 
 class StepSkipped(FactBody):
@@ -65,6 +67,17 @@ class HoldDecided(FactBody):
     meaning: str
 
 
+class StepReopened(FactBody):
+    """Work goes back: the step and those after it are to be done again."""
+
+    kind: ClassVar[str] = "step.reopened"
+
+    point: Id
+    step: str
+    reason: str
+    reopened_by: Id
+
+
 class StepRow(SQLModel, table=True):
     """The latest outcome of a step on a subject."""
 
@@ -80,6 +93,8 @@ class StepRow(SQLModel, table=True):
     by: str
     observed_at: str
     entered_at: str
+    boot: str
+    uptime_ms: int
     note: str
     """The note, or the reason of a skip or refusal."""
     data: str
@@ -126,6 +141,15 @@ def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Chan
     yield from move(known, point, steps[hold].reaches if fact.outcome == "released" else "")
 
 
+def apply_step_reopened(known: Known, _at: At, fact: StepReopened) -> Iterator[Change]:
+    """The step and those after it are to be done again."""
+    point = have(known, "point", fact.point)
+    steps = _steps(known, point)
+    start = next(place for place, item in enumerate(steps) if item.id == fact.step)
+    yield from reopen(known, point, steps[start:])
+    yield from move(known, point)
+
+
 def _steps(known: Known, point: Row) -> tuple[RouteStep, ...]:
     return route_of(have(known, "route", point["route"])["data"]).steps
 
@@ -147,6 +171,8 @@ def _row(
         "by": by,
         "observed_at": observed_at,
         "entered_at": at.time,
+        "boot": at.boot,
+        "uptime_ms": at.uptime_ms,
         "note": note,
         "data": "{}",
         "seq": at.seq,

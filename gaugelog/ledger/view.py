@@ -10,11 +10,12 @@ from typing import TypeVar
 from sqlmodel import SQLModel
 
 from gaugelog.errors import Refused
+from gaugelog.ledger.buffer import Buffer
 from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.ledger.instruments import InstrumentRow
 from gaugelog.ledger.people import IdentitySheet, PersonRow
 from gaugelog.ledger.points import GridRow, PointRow
-from gaugelog.ledger.schema import table_of
+from gaugelog.ledger.schema import load_row, table_of
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 
 T = TypeVar("T", bound=SQLModel)
@@ -44,6 +45,10 @@ class View:
         names = _columns(model)
         rows = self._connection.execute(query, tuple(equals.values()))
         return [model(**dict(zip(names, row, strict=True))) for row in rows]
+
+    def known(self) -> Buffer:
+        """The same look as plain rows, for the functions that the fold shares with the rules."""
+        return Buffer(lambda table, row_id: load_row(self._connection, table, row_id))
 
     def identity(self, person: str) -> IdentitySheet | None:
         """Name and initials of a person; None when unknown or erased."""

@@ -1,0 +1,57 @@
+"""What an instrument leaves uncertain: the range that took the reading, and its accuracy there."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from gaugelog.errors import Fault, Faulty
+from gaugelog.ledger.base import Quantity
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange
+from gaugelog.physics.change import Accuracy
+
+CHECK_QUANTITY = {"resistance": "resistance", "insulation": "insulation"}
+"""The quantity an instrument must measure for a check."""
+
+
+@dataclass(frozen=True, slots=True)
+class RangeTaken:
+    """The range of an instrument that a reading was taken on, with its accuracy in SI units."""
+
+    instrument: str
+    range: InstrumentRange
+
+    @property
+    def accuracy(self) -> Accuracy:
+        """Gain as a ratio; offset and resolution in the SI unit of the quantity."""
+        return Accuracy(self.range.gain.si(), self.range.offset.si(), self.range.resolution.si())
+
+    def uncertainty(self, value: float) -> float:
+        """Standard uncertainty of a reading of `value`, SI unit."""
+        return float(self.accuracy.uncertainty(value))
+
+
+def range_for(
+    instrument: InstrumentAdded, check: str, value: Quantity | None, qualifier: str
+) -> RangeTaken:
+    """The range that a reading of `check` was taken on: the finest that reaches its value.
+
+    An overload is on the range that reaches farthest. Raises Faulty when the instrument does not
+    measure that, or no range reaches the value.
+    """
+    quantity = CHECK_QUANTITY[check]
+    fitting = [item for item in instrument.ranges if item.quantity == quantity]
+    if not fitting:
+        raise Faulty(
+            [Fault(instrument.label, f"does not measure {quantity}.", "Take a meter that does.")]
+        )
+    fitting.sort(key=lambda item: item.high.si())
+    if value is None or qualifier == "overload":
+        return RangeTaken(instrument.id, fitting[-1])
+    size = value.si()
+    for item in fitting:
+        if item.low.si() <= size <= item.high.si():
+            return RangeTaken(instrument.id, item)
+    spans = "; ".join(f"{item.low} to {item.high}" for item in fitting)
+    raise Faulty(
+        [Fault(instrument.label, f"has no range that reaches {value}.", f"Its ranges: {spans}.")]
+    )

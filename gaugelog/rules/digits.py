@@ -1,0 +1,29 @@
+"""Computed numbers as decimal text, with the digits that decided."""
+
+from __future__ import annotations
+
+import math
+
+from gaugelog.ledger.base import UNITS, Quantity
+
+DIGITS = 9
+"""Significant digits that are kept: more than any meter gives, fewer than rounding noise."""
+
+
+def decimal_text(value: float, digits: int = DIGITS) -> str:
+    """A finite number as plain decimal text, never in exponent form when it is of common size.
+
+    >>> decimal_text(0.1 + 0.2)
+    '0.3'
+    """
+    if not math.isfinite(value):
+        raise ValueError(f"{value} can't be kept as a decimal number")
+    text = f"{value:.{digits}g}"
+    if "e" not in text:
+        return text
+    return f"{float(text):f}".rstrip("0").rstrip(".") if 1e-9 < abs(value) < 1e15 else text
+
+
+def quantity(value_si: float, unit: str, digits: int = DIGITS) -> Quantity:
+    """An SI value as a quantity in `unit`."""
+    return Quantity(value=decimal_text(value_si / float(UNITS[unit]), digits), unit=unit)

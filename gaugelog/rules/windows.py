@@ -1,0 +1,87 @@
+"""Windows of time between steps; none is judged across a clock that was set."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from datetime import datetime, timedelta
+
+from gaugelog.journal.clock import Moment
+from gaugelog.ledger.routes import Window
+from gaugelog.ledger.steps import StepRow
+
+JUMP_ALLOWED = timedelta(seconds=60)
+"""How far clock and time since boot may drift apart before the clock counts as set."""
+
+
+@dataclass(frozen=True, slots=True)
+class WindowFound:
+    """How a window stands at a moment: open or not, judged or not, and the sentence for it."""
+
+    open: bool
+    judged: bool
+    sentence: str
+
+
+def judge_window(
+    window: Window, title: str, earlier: StepRow, observed: datetime, now: Moment
+) -> WindowFound:
+    """Whether a step observed at `observed` (UTC) lies in `window` after `earlier`.
+
+    `title` names the earlier step. When the clock was set between the earlier entry and `now`,
+    the window is not judged, and that is said.
+    """
+    if clock_jumped(earlier, now):
+        return WindowFound(
+            True, False, f"The clock was set since “{title}”; this window is not judged."
+        )
+    start = _time(earlier.observed_at)
+    bound = start + timedelta(seconds=window.duration.si())
+    if window.bound == "not before":
+        return _not_before(title, observed, bound, now)
+    return _within(window, title, start, observed, bound, now)
+
+
+def clock_jumped(earlier: StepRow, now: Moment) -> bool:
+    """Whether the clock was set between an entry and `now`.
+
+    Within one run of the machine the time since boot tells; across runs only a clock that went
+    back does.
+    """
+    passed = now.utc - _time(earlier.entered_at)
+    if earlier.boot != now.boot:
+        return passed < timedelta(0)
+    run = timedelta(milliseconds=now.uptime_ms - earlier.uptime_ms)
+    return abs(passed - run) > JUMP_ALLOWED
+
+
+def _not_before(title: str, observed: datetime, bound: datetime, now: Moment) -> WindowFound:
+    when = f"not before {_local(bound, now)} after “{title}”"
+    if observed >= bound:
+        return WindowFound(True, True, f"{when}: reached")
+    return WindowFound(False, True, f"{when}: {_minutes(bound - observed)} to wait")
+
+
+def _within(
+    window: Window, title: str, start: datetime, observed: datetime, bound: datetime, now: Moment
+) -> WindowFound:
+    when = f"within {window.duration} of “{title}”, until {_local(bound, now)}"
+    if start <= observed <= bound:
+        return WindowFound(True, True, f"{when}: {_minutes(bound - observed)} left")
+    if observed < start:
+        return WindowFound(False, True, f"{when}: the time given lies before that step")
+    return WindowFound(False, True, f"{when}: over since {_minutes(observed - bound)}")
+
+
+def _time(text: str) -> datetime:
+    return datetime.fromisoformat(text.replace("Z", "+00:00"))
+
+
+def _local(when: datetime, now: Moment) -> str:
+    return f"{when + timedelta(minutes=now.offset_minutes):%Y-%m-%d %H:%M}"
+
+
+def _minutes(span: timedelta) -> str:
+    minutes = span.total_seconds() / 60
+    if minutes < 120:
+        return f"{minutes:.0f} min"
+    return f"{minutes / 60:.1f} h"
