@@ -18,6 +18,8 @@ from gaugelog.documents.wiring import Wire, three_wires
 
 WIDTH, HEIGHT = 560.0, 258.0
 _MIDDLE, _REACH = Spot(398, 132), 78.0
+_SIDE = 128.0
+"""How far right of the middle the supply stands."""
 _EDGE = 236.0
 """Where the module begins: its pins stand on this line."""
 _FILLED = "#d7e6e8"
@@ -51,25 +53,26 @@ def _module(sketch: Sketch, circuit: CircuitShown) -> None:
     connector = f", connector {channel.connector}" if channel.connector else ""
     sketch.text(Spot(_EDGE + 8, 25), f"Channel {channel.label}{connector}", ink=GREY, size=9)
     top, bottom = _TWO_THREE, _FOUR_ONE
-    side = Spot(WIDTH - 34, top.y)
+    side = top.moved(_SIDE)
     sketch.line(top, side, Spot(side.x, _MIDDLE.y - 13))
     sketch.line(bottom, Spot(side.x, bottom.y), Spot(side.x, _MIDDLE.y + 13))
     sketch.dot(Spot(side.x, _MIDDLE.y), 13, fill=PAPER)
     sketch.text(Spot(side.x, _MIDDLE.y + 3), "E", at="middle", bold=True)
     supply = f"{channel.excitation} {channel.excitation_kind}"
     sketch.text(Spot(side.x + 22, bottom.y + 14), supply, at="end", size=9, ink=GREY)
-    sketch.text(Spot(side.x - 6, top.y + 13), "+", at="end", bold=True)
-    sketch.text(Spot(side.x - 6, bottom.y - 6), "−", at="end", bold=True)
     for corner in (top, bottom, _THREE_FOUR):
         sketch.dot(corner)
 
 
-def _meter(sketch: Sketch, positive: Spot) -> None:
-    sketch.line(positive, _THREE_FOUR)
+def _meter(sketch: Sketch, left: Spot, signs: str = "+−") -> None:
+    """The output's meter and the signs of output and supply, which turn together."""
+    sketch.line(left, _THREE_FOUR)
     sketch.dot(_MIDDLE, 11, fill=PAPER)
     sketch.text(_MIDDLE.moved(0, 3), "e", at="middle", bold=True)
-    sketch.text(_MIDDLE.moved(-15, -4), "+", at="end", size=9)
-    sketch.text(_MIDDLE.moved(15, -4), "−", size=9)
+    sketch.text(_MIDDLE.moved(-15, -4), signs[0], at="end", size=9)
+    sketch.text(_MIDDLE.moved(15, -4), signs[1], size=9)
+    sketch.text(_TWO_THREE.moved(_SIDE - 6, 13), signs[0], at="end", bold=True)
+    sketch.text(_FOUR_ONE.moved(_SIDE - 6, -6), signs[1], at="end", bold=True)
 
 
 def _four_arms(sketch: Sketch, circuit: CircuitShown) -> None:
@@ -82,7 +85,7 @@ def _four_arms(sketch: Sketch, circuit: CircuitShown) -> None:
 
 
 def _pins(sketch: Sketch, circuit: CircuitShown) -> None:
-    """The pins of the channel as a list at the module's edge, with the wire marks."""
+    """The channel's pins at the module's edge, with the wire marks, and named at the corners."""
     names = {**circuit.leads.marks, **circuit.channel.pins}
     for row, function in enumerate(names):
         spot = Spot(_EDGE, 62 + row * 24)
@@ -92,6 +95,14 @@ def _pins(sketch: Sketch, circuit: CircuitShown) -> None:
             sketch.text(spot.moved(-75, -4), mark, at="middle", size=9)
         sketch.dot(spot, fill=PAPER)
         sketch.text(spot.moved(7, 3), f"{pin} {function}".strip(), size=8.5, ink=GREY)
+    pins = circuit.channel.pins
+    for function, at, corner in (
+        ("supply+", "middle", _TWO_THREE.moved(0, -6)),
+        ("supply-", "middle", _FOUR_ONE.moved(0, 13)),
+        ("signal+", "end", _ONE_TWO.moved(-5, 3)),
+        ("signal-", "start", _THREE_FOUR.moved(5, 3)),
+    ):
+        sketch.text(corner, pins.get(function, ""), at=at, size=9, bold=True)
 
 
 def _arm(
@@ -125,7 +136,7 @@ def _quarter(sketch: Sketch, circuit: CircuitShown) -> None:
     wires = three_wires(circuit)
     upper = _TWO_THREE.towards(_ONE_TWO, 0.66)
     heights = (upper.y, _MIDDLE.y, _FOUR_ONE.y)
-    _meter(sketch, Spot(_EDGE, _MIDDLE.y))
+    _meter(sketch, Spot(_EDGE, _MIDDLE.y), "−+" if wires[2].function.endswith("+") else "+−")
     sketch.line(Spot(_EDGE, upper.y), upper)
     sketch.line(Spot(_EDGE, heights[2]), _FOUR_ONE)
     _arm(sketch, 2, circuit.arms[1], _TWO_THREE, upper)

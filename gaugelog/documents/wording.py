@@ -13,6 +13,7 @@ from gaugelog.ledger.routes import Window
 
 _MINUS = "−"
 _THIN = "\u202f"
+_DIGITS = 5
 
 
 def number(text: str) -> str:
@@ -21,6 +22,8 @@ def number(text: str) -> str:
     >>> number("-174650")
     '−174\\u202f650'
     """
+    if "e" in text.lower():
+        text = format(Decimal(text), "f")
     whole, point, fraction = text.lstrip("+-").partition(".")
     if whole.isdigit() and len(whole) > 4:
         whole = f"{int(whole):,}".replace(",", _THIN)
@@ -53,6 +56,16 @@ def rounded(text: str, digits: int = 2, *, up: bool = False) -> str:
     return format((value / step).quantize(Decimal(1), way) * step, "f")
 
 
+def tidy(value: Quantity | None) -> Quantity | None:
+    """A worked-out quantity with at most five significant digits; typed ones have fewer.
+
+    The attached data keeps every digit that decided.
+    """
+    if value is None or len(value.value.strip("+-0.").replace(".", "")) <= _DIGITS:
+        return value
+    return Quantity(value=rounded(value.value, _DIGITS), unit=value.unit)
+
+
 def expanded(reading: ReadingShown) -> str:
     """The expanded uncertainty of what was judged, `± 1.1 GΩ`; empty where there is none."""
     verdict = reading.verdict
@@ -67,7 +80,7 @@ def judged(reading: ReadingShown) -> str:
     """What was judged: the value with its qualifier, or the result that was worked out of it."""
     if reading.result is not None:
         sign = "" if reading.result.value.startswith("-") else "+"
-        return f"{sign}{quantity(reading.result)}"
+        return f"{sign}{quantity(tidy(reading.result))}"
     if reading.qualifier == "overload":
         return "overload"
     sign = "" if reading.qualifier == "=" else f"{reading.qualifier}\u00a0"
@@ -89,7 +102,7 @@ def probability(reading: ReadingShown) -> str:
 
 def bound(limit: LimitFound) -> str:
     """The limit itself, `≥ 10 GΩ` or `348.95 Ω to 351.05 Ω`."""
-    low, high = limit.at_least, limit.at_most
+    low, high = tidy(limit.at_least), tidy(limit.at_most)
     if low is not None and high is not None:
         return f"{quantity(low)} to {quantity(high)}"
     if low is not None:

@@ -35,8 +35,9 @@ def attached(pdf: bytes) -> dict[str, Any]:
 def fields(pdf: bytes) -> dict[str, bool]:
     """The signature fields of a record and whether each is filled."""
     with pikepdf.open(io.BytesIO(pdf)) as opened:
-        found = opened.Root.get("/AcroForm", {}).get("/Fields", [])
-        return {str(each.T): "/V" in each for each in found}
+        if "/AcroForm" not in opened.Root:
+            return {}
+        return {str(each.T): "/V" in each for each in opened.Root.AcroForm.Fields}
 
 
 def _stamp(made: Job) -> Stamp:

@@ -23,11 +23,12 @@ def _reading(number: int, **changes: object) -> ReadingShown:
     [
         ("350.4", "350.4"),
         ("-200", "−200"),
+        ("2.5E-3", "0.0025"),
         ("+3", "3"),
         ("1234", "1234"),
         ("174650", "174\u202f650"),
         ("1234567.25", "1\u202f234\u202f567.25"),
-        ("1e9", "1e9"),
+        ("1e9", "1\u202f000\u202f000\u202f000"),
     ],
 )
 def test_numbers_have_a_true_minus_and_groups_of_three(text: str, shown: str) -> None:
@@ -61,8 +62,24 @@ def test_rounding_up_never_understates(value: Decimal) -> None:
     assert value <= shown <= value * Decimal("1.11")
 
 
+@pytest.mark.parametrize(
+    ("value", "shown"),
+    [
+        ("33813953.488372", "33814000"),
+        ("0.22831050228310502", "0.22831"),
+        ("10", "10"),
+        ("348.95", "348.95"),
+        ("100000000", "100000000"),
+    ],
+)
+def test_a_worked_out_figure_has_five_digits_at_most(value: str, shown: str) -> None:
+    tidied = wording.tidy(Quantity(value=value, unit="ohm"))
+    assert tidied is not None
+    assert shown == tidied.value
+
+
 def test_the_expanded_uncertainty_is_coverage_times_standard() -> None:
-    # 9.5 GΩ, ±10 % rectangular: u = 0.9.5/√3 = 0.548 GΩ, U = 1.096 GΩ at k = 2 (issue's numbers).
+    # 9.5 GΩ, ±10 % rectangular: u = 0.95/√3 = 0.548 GΩ, U = 1.096 GΩ at k = 2 (issue's numbers).
     assert "±\u00a01.1\u00a0GΩ" == wording.expanded(_reading(2))
 
 
