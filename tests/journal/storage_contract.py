@@ -58,7 +58,7 @@ class StorageContract:
         with storage.writing() as writer:
             entry = keep(writer, deed="deed-1")
         with storage.reading() as reader:
-            assert [(CHAIN, 1, "deed-1", 1, entry)] == list(reader.filed(CHAIN))
+            assert [(CHAIN, 1, "deed-1", 1, "note.taken", entry)] == list(reader.filed(CHAIN))
 
     def test_the_head_is_the_last_entry_of_its_chain(self, storage: Storage) -> None:
         with storage.writing() as writer:

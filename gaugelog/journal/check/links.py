@@ -53,10 +53,11 @@ class Numbering:
         self._last[filed.chain] = filed.seq if isinstance(filed.seq, int) else expected
         if header is None:
             return
-        kept = (filed.chain, filed.seq, filed.deed, filed.deed_index)
-        if kept != (header.chain, header.seq, header.deed, header.index):
-            said = f"entry {header.seq} of chain {header.chain}, {header.index} of {header.deed}"
-            what = f"It is filed here, but its header says it is {said}."
+        said = (header.chain, header.seq, header.deed, header.index, header.kind)
+        if filed[:-1] != said:
+            place = f"entry {header.seq} of chain {header.chain}"
+            part = f"{header.index} of deed {header.deed}, a {header.kind}"
+            what = f"It is filed otherwise than its header says: {place}, {part}."
             self._findings.trouble(look.position, Trouble(2, look.where, what, RESTORE))
 
     def finish(self) -> None:

@@ -94,7 +94,7 @@ class MemoryWriter(MemoryReader):
         """Keep a new entry as the next of its chain."""
         demand_next(self, entry)
         header = entry.header
-        filed = Filed(header.chain, header.seq, header.deed, header.index, entry)
+        filed = Filed(header.chain, header.seq, header.deed, header.index, header.kind, entry)
         self._shelf.chains.setdefault(header.chain, []).append(filed)
         self._shelf.deeds.setdefault(header.deed, []).append(entry)
 

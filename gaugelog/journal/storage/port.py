@@ -23,6 +23,7 @@ class Filed(NamedTuple):
     seq: int
     deed: str
     deed_index: int
+    kind: str
     entry: Entry
 
 

@@ -69,12 +69,12 @@ class SqliteReader:
 
     def filed(self, chain: str) -> Iterator[Filed]:
         """All entries of a chain as they are filed."""
-        for seq, deed, index, *row in self.connection.execute(
-            "SELECT seq, deed, deed_index, header, body, signature FROM entry WHERE chain = ?"
+        for seq, deed, index, kind, *row in self.connection.execute(
+            "SELECT seq, deed, deed_index, kind, header, body, signature FROM entry WHERE chain = ?"
             " ORDER BY seq",
             (chain,),
         ):
-            yield Filed(chain, seq, deed, index, _entry(*row))
+            yield Filed(chain, seq, deed, index, kind, _entry(*row))
 
     def entry(self, chain: str, seq: int) -> Entry | None:
         """One entry, or None."""
