@@ -16,7 +16,6 @@ from gaugelog.documents.fonts import Lettering
 from gaugelog.documents.shipped import templates
 from gaugelog.documents.statements import PROVES, decision_rule
 from gaugelog.documents.wiring import wiring_list
-from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.routes import Window
 
 _MOODS = {
@@ -78,7 +77,6 @@ def plain_environment(lettering: Lettering) -> Environment:
     )
     made.filters.update(
         q=wording.quantity,
-        roundq=_rounded_quantity,
         judged=wording.judged,
         expanded=wording.expanded,
         probability=wording.probability,
@@ -129,11 +127,6 @@ def _initials(content: RecordContent) -> Any:
 def _earlier(content: RecordContent) -> Any:
     known = {each.id: f"{each.typed} ({each.check}, {each.stage})" for each in content.readings}
     return lambda reading: known.get(reading, reading)
-
-
-def _rounded_quantity(value: Quantity) -> str:
-    text = wording.rounded(value.value, up=True)
-    return wording.quantity(Quantity(value=text, unit=value.unit))
 
 
 def _window(each: Window, titles: dict[str, str]) -> str:

@@ -18,7 +18,7 @@ def decision_rule(coverage: str) -> str:
         f"A reading is held to the strictest of its limits. U is the expanded uncertainty of the "
         f"instrument (GUM, k = {coverage}); the guard band is w = U. In the words of "
         f"ILAC-G8:09/2019: pass, inside the limit by w or more; conditional pass, inside by less; "
-        f"conditional fail, outside by less than w; fail, outside by w or more. Undecided: a "
-        f"bound that does not reach the limit, or a reading that lacks information. P is the "
-        f"probability that the true value conforms (JCGM 106, flat prior); a bound has none."
+        f"conditional fail, outside by w at most; fail, outside by more. Undecided: a bound that "
+        f"does not reach the limit, or a reading that lacks information. P is the probability "
+        f"that the true value conforms (JCGM 106, flat prior); a bound has none."
     )

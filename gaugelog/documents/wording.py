@@ -101,9 +101,11 @@ def probability(reading: ReadingShown) -> str:
 
 
 def bound(limit: LimitFound) -> str:
-    """The limit itself, `≥ 10 GΩ` or `348.95 Ω to 351.05 Ω`."""
+    """The limit itself, `≥ 10 GΩ`, `within ±0.3 %` or `348.95 Ω to 351.05 Ω`."""
     low, high = tidy(limit.at_least), tidy(limit.at_most)
     if low is not None and high is not None:
+        if low.unit == high.unit and Decimal(low.value) == -Decimal(high.value):
+            return f"within ±{quantity(high)}"
         return f"{quantity(low)} to {quantity(high)}"
     if low is not None:
         return f"≥\u00a0{quantity(low)}"

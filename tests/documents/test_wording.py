@@ -112,10 +112,14 @@ def test_a_probability_never_reads_as_certainty(probability: str | None, shown: 
 def test_a_limit_reads_as_floor_ceiling_or_span() -> None:
     low, high = q("10", "Gohm"), q("0.3", "%")
     span = limit("criteria", "lot", q("348.95", "ohm"), q("351.05", "ohm"))
-    bounds = [limit("criteria", "s", low, None), limit("criteria", "s", None, high), span]
-    assert ["≥\u00a010\u00a0GΩ", "≤\u00a00.3\u00a0%", "348.95\u00a0Ω to 351.05\u00a0Ω"] == [
-        wording.bound(LimitFound.model_validate(each)) for each in bounds
-    ]
+    either = limit("criteria", "s", q("-0.3", "%"), high)
+    bounds = [limit("criteria", "s", low, None), limit("criteria", "s", None, high), span, either]
+    assert [
+        "≥\u00a010\u00a0GΩ",
+        "≤\u00a00.3\u00a0%",
+        "348.95\u00a0Ω to 351.05\u00a0Ω",
+        "within ±0.3\u00a0%",
+    ] == [wording.bound(LimitFound.model_validate(each)) for each in bounds]
 
 
 def test_a_window_reads_as_a_clause() -> None:

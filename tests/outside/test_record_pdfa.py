@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import io
 import json
+import re
 import subprocess
 from collections.abc import Callable
 from pathlib import Path
@@ -12,6 +13,7 @@ import pikepdf
 import pytest
 from jsonschema import Draft202012Validator
 
+from gaugelog.documents.render import Paper, render_record
 from gaugelog.documents.schema import shipped_schema
 from tests.documents.drawn import accepted, draft, drawing, submitted
 from tests.documents.sample import HEAD, sample
@@ -132,6 +134,29 @@ def test_a_submitted_record_has_an_empty_box_for_the_reviewer(tmp_path: Path) ->
     last = _pages(tmp_path, submitted())[-1]
     assert "Tamsin Okondo-Havlíčková" in last
     assert "w.brandt I reviewed" not in " ".join(last.split())
+
+
+@needs("pdftotext")
+def test_no_word_runs_over_the_margins(tmp_path: Path) -> None:
+    campaign = {**sample().campaign.model_dump(), "client": _LONG, "title": _LONG * 2}
+    people = [{**person.model_dump(), "name": _LONG} for person in sample().people]
+    readings = [
+        {**each.model_dump(), "reason": _LONG, "typed": "12.34567890123 Gohm"}
+        for each in sample().readings
+    ]
+    content = sample(campaign=campaign, people=people, readings=readings, number="X-" * 14 + "R1")
+    papers: tuple[tuple[Paper, float], ...] = (("a4", 595.3), ("letter", 612.0))
+    for paper, width in papers:
+        path = _file(tmp_path, render_record(content, paper).pdf)
+        words = _run("pdftotext", "-bbox", path, "-")
+        spans = re.findall(r'<word xMin="([\d.-]+)" yMin="[\d.-]+" xMax="([\d.-]+)"', words)
+        assert 300 < len(spans)
+        assert _MARGIN - 1 <= min(float(left) for left, _ in spans)
+        assert width - _MARGIN + 1 >= max(float(right) for _, right in spans)
+
+
+_LONG = "Überlandleitungsbaugesellschaftsvorstandsvorsitzendenstellvertreterin"
+_MARGIN = 16 * 72 / 25.4
 
 
 def _pages(folder: Path, pdf: bytes) -> list[str]:

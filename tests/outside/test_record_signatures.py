@@ -1,4 +1,4 @@
-"""Poppler's pdfsig judges the signatures of a record, with the logbook's authority trusted.
+"""Poppler's pdfsig and OpenSSL judge the signatures of a record, its authority trusted.
 
 pdfsig ends with 0 even on a broken signature, so its words are read.
 """
@@ -10,12 +10,14 @@ import subprocess
 from pathlib import Path
 
 import pytest
+from cryptography import x509
+from cryptography.hazmat.primitives.serialization import Encoding
 
 from tests.documents.drawn import accepted, people, submitted
-from tests.documents.signers import crew
+from tests.documents.signers import ACCEPTED, crew
 from tests.foreign import needs
 
-pytestmark = [pytest.mark.xdist_group("record"), needs("pdfsig", "certutil")]
+pytestmark = [pytest.mark.xdist_group("record"), needs("pdfsig", "certutil", "openssl")]
 
 
 def _trusting(folder: Path, authority: bytes) -> Path:
@@ -87,3 +89,38 @@ def test_a_later_addition_shows_as_not_signed(tmp_path: Path) -> None:
     added = accepted() + b"\n% more\n"
     found = judged(tmp_path, added, people().authority.certificate)
     assert all("Not total document signed" in each for each in found)
+
+
+def _cut_out(folder: Path, pdf: bytes, number: int) -> tuple[Path, Path]:
+    """A signature and the bytes it covers, as files, by the PDF's own ByteRange."""
+    spans = re.findall(rb"/ByteRange\s*\[\s*(\d+)\s+(\d+)\s+(\d+)\s+(\d+)\s*\]", pdf)
+    start, length, after, rest = (int(each) for each in spans[number])
+    held = pdf[start + length : after].strip(b"<>")
+    signature, covered = folder / "signature.der", folder / "covered.bin"
+    signature.write_bytes(bytes.fromhex(held.decode()))
+    covered.write_bytes(pdf[start : start + length] + pdf[after : after + rest])
+    return signature, covered
+
+
+def _openssl_verifies(folder: Path, signature: Path, covered: Path) -> bool:
+    root = folder / "root.pem"
+    certificate = x509.load_der_x509_certificate(people().authority.certificate)
+    root.write_bytes(certificate.public_bytes(Encoding.PEM))
+    when = str(int(ACCEPTED.utc.timestamp()))
+    command = [
+        *("openssl", "cms", "-verify", "-binary", "-inform", "DER", "-in", signature),
+        *("-content", covered, "-CAfile", root, "-purpose", "any", "-attime", when),
+        *("-out", folder / "out.bin"),
+    ]
+    done = subprocess.run(command, capture_output=True, check=False)
+    return done.returncode == 0
+
+
+@pytest.mark.parametrize("number", [0, 1])
+def test_openssl_verifies_each_signature_over_the_bytes_it_covers(
+    number: int, tmp_path: Path
+) -> None:
+    signature, covered = _cut_out(tmp_path, accepted(), number)
+    assert _openssl_verifies(tmp_path, signature, covered)
+    covered.write_bytes(covered.read_bytes().replace(b"%PDF-1.7", b"%PDF-1.6"))
+    assert not _openssl_verifies(tmp_path, signature, covered)
