@@ -1,0 +1,304 @@
+"""Deeds at the article: what comes next, do a step, decide a hold, skip, go back."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from datetime import UTC, datetime, timedelta, timezone
+
+from gaugelog.errors import ExitCode, Fault, Faulty, Refused
+from gaugelog.journal.clock import Moment
+from gaugelog.journal.keys import Signer
+from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.readings import ReadingTaken
+from gaugelog.ledger.routes import RouteStep, StepInput
+from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepSkipped
+from gaugelog.ledger.view import View
+from gaugelog.rules.progress import NextStep, demand_step, state_of
+from gaugelog.rules.progress import next_step as progress
+from gaugelog.rules.who import demand_role, demand_second_person, roles_of
+from gaugelog.work.inputs import Asked, Understood, understand
+from gaugelog.work.logbook import Deed, Logbook
+from gaugelog.work.readings import Observation, explain, reading_taken
+
+HOLD_MEANING = "I looked at the work myself and let it go on."
+REFUSAL_MEANING = "I looked at the work myself and send it back."
+
+
+@dataclass(frozen=True, slots=True)
+class ReadingShown:
+    """A reading that was kept, with its verdict in plain lines."""
+
+    reading: ReadingTaken
+    explained: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class StepOutcome:
+    """What became of a step: whether it is settled, the readings kept, what to say."""
+
+    settled: bool
+    readings: tuple[ReadingShown, ...]
+    lines: tuple[str, ...]
+
+    @property
+    def exit_code(self) -> ExitCode:
+        """OK when the step is settled, TROUBLE when a reading keeps it open."""
+        return ExitCode.OK if self.settled else ExitCode.TROUBLE
+
+
+@dataclass(frozen=True, slots=True)
+class _Doing:
+    """A step in hand: the deed it is done in, the point, how far it is, when it was observed."""
+
+    making: Deed
+    row: PointRow
+    found: NextStep
+    step: RouteStep
+    observed: datetime
+
+
+def next_step(logbook: Logbook, point: str) -> NextStep:
+    """What a point needs now. Raises Refused when there is no such point."""
+    with logbook.reading() as view:
+        return progress(view, point_row(view, point), logbook.clock.now())
+
+
+def worklist(logbook: Logbook) -> list[NextStep]:
+    """What every point needs now."""
+    now = logbook.clock.now()
+    with logbook.reading() as view:
+        return [progress(view, row, now) for row in view.all(PointRow)]
+
+
+def do(
+    logbook: Logbook,
+    signer: Signer,
+    *,
+    point: str,
+    typed: Mapping[str, str],
+    note: str = "",
+    reason: str = "",
+    refuse: str = "",
+    at: str = "",
+    deed: str | None = None,
+) -> StepOutcome:
+    """Do the next step of a point; a hold is decided, by a second person.
+
+    A reading that blocks is kept by itself and the step stays open. `reason` says why a check is
+    measured again, `refuse` why a hold is refused, `at` when the step was observed, if not now;
+    `deed` is the caller's own id, so that a retry is recognised. Raises Faulty with every fault
+    of the input, Refused when a rule forbids the step now.
+    """
+    with logbook.deed(signer, deed) as making:
+        row = point_row(making.view, point)
+        observed = observed_at(at, making.moment)
+        found = progress(making.view, row, making.moment, observed)
+        doing = _Doing(making, row, found, _open(found), observed)
+        if doing.step.hold:
+            return _decide(doing, refuse)
+        if refuse:
+            raise Refused(f"“{found.title}” is no hold; there is nothing to refuse.")
+        return _do(doing, typed, note, reason)
+
+
+def skip(logbook: Logbook, signer: Signer, *, point: str, reason: str) -> StepOutcome:
+    """Skip the next step of a point, with a reason, where its skip rule lets the person.
+
+    Raises Refused when it does not.
+    """
+    if not reason.strip():
+        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])
+    with logbook.deed(signer) as making:
+        row = point_row(making.view, point)
+        found = progress(making.view, row, making.moment)
+        if found.step is None:
+            raise Refused(f"{row.label} has no step left.")
+        _demand_may_skip(making, found)
+        body = StepSkipped(
+            point=row.id,
+            subject=found.subject,
+            step=found.step.id,
+            reason=reason,
+            skipped_by=signer.person,
+        )
+        making.keep(body, about(making.view, row, found.subject))
+        return StepOutcome(True, (), (f"“{found.title}” is skipped: {reason}",))
+
+
+def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str) -> StepOutcome:
+    """Go back to a step: it and those after it are to be done again.
+
+    Raises Refused when the point is under review or accepted, or the step is ahead of the work.
+    """
+    if not reason.strip():
+        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])
+    with logbook.deed(signer) as making:
+        row = point_row(making.view, point)
+        demand_role(making.view, signer.person, "technician")
+        state = state_of(making.view, row)
+        if state in {"planned", "awaiting review", "accepted"}:
+            raise Refused(f"{row.label} is {state}; no step can be done again now.")
+        wanted = demand_step(making.view, row, step)
+        body = StepReopened(point=row.id, step=step, reason=reason, reopened_by=signer.person)
+        making.keep(body, about(making.view, row, row.id))
+        return StepOutcome(True, (), (f"Work goes on from “{wanted.title}”.",))
+
+
+def point_row(view: View, label: str) -> PointRow:
+    """The point with this label. Raises Refused when there is none."""
+    row = view.point(label)
+    if row is None:
+        raise Refused(f"There is no point {label}.", "See `gaugelog plan show`.")
+    return row
+
+
+def about(view: View, row: PointRow, subject: str, *others: str) -> list[str]:
+    """The ids a fact at a point concerns: the point, its grids, the subject, and others."""
+    grids = [grid.id for grid in view.all(GridRow, point=row.id)]
+    return [row.id, subject, *grids, *others]
+
+
+def observed_at(text: str, now: Moment) -> datetime:
+    """When something was observed, UTC: `14:30` or `2026-12-01 14:30` on this machine's clock.
+
+    Raises Faulty when it is no time or lies in the future.
+    """
+    if not text.strip():
+        return now.utc
+    zone = timezone(timedelta(minutes=now.offset_minutes))
+    try:
+        if len(text.strip()) <= len("14:30:00"):
+            text = f"{now.utc.astimezone(zone):%Y-%m-%d} {text.strip()}"
+        found = datetime.fromisoformat(text.strip())
+    except ValueError:
+        fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")
+        raise Faulty([fault]) from None
+    when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
+    if when > now.utc + timedelta(minutes=1):
+        raise Faulty([Fault("at", f"{text} lies in the future.", "Give when it was observed.")])
+    return when
+
+
+def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
+    view, row = doing.making.view, doing.row
+    demand_role(view, doing.making.signer.person, "technician")
+    got = understand(Asked(view, row, doing.step, doing.observed), typed)
+    readings = _readings(doing, got, reason)
+    for reading in readings:
+        others = (reading.id, reading.instrument)
+        doing.making.keep(reading, about(view, row, reading.subject, *others))
+    shown = tuple(ReadingShown(reading, tuple(explain(reading))) for reading in readings)
+    if any(reading.verdict.blocks for reading in readings):
+        return StepOutcome(False, shown, _blocked_lines(row, doing.step))
+    _keep_done(doing, got, readings, note)
+    return StepOutcome(True, shown, (f"{row.label}: “{doing.step.title}” is done.",))
+
+
+def _blocked_lines(row: PointRow, step: RouteStep) -> tuple[str, ...]:
+    return (
+        f"The reading is kept; “{step.title}” stays open.",
+        f"Find the cause, then measure again: gaugelog step do {row.label} … --reason WHY",
+    )
+
+
+def _readings(doing: _Doing, got: Understood, reason: str) -> list[ReadingTaken]:
+    if got.instrument is None:
+        return []
+    kinds = {item.name: item for item in doing.step.inputs}
+    entered = [
+        entry.id for name, entry in got.entered.items() if kinds[name].kind == "gauge" and entry.id
+    ]
+    gauge = entered[0] if entered else doing.row.gauge
+    seen = Observation(
+        doing.making.view,
+        doing.row,
+        doing.step,
+        doing.found.subject,
+        utc_text(doing.observed),
+        doing.making.signer.person,
+        reason,
+    )
+    return [
+        reading_taken(seen, kinds[name].check, typed, got.instrument, gauge)
+        for name, typed in got.readings.items()
+    ]
+
+
+def _keep_done(doing: _Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
+    entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
+    flags = [window.sentence for window in doing.found.windows if not window.judged]
+    flags += [
+        f"{reading.check} {reading.stage}: {reading.verdict.word}"
+        for reading in readings
+        if reading.verdict.word != "pass"
+    ]
+    body = StepDone(
+        point=doing.row.id,
+        subject=doing.found.subject,
+        step=doing.step.id,
+        inputs=entered,
+        observed_at=utc_text(doing.observed),
+        done_by=doing.making.signer.person,
+        note=note,
+        flags=tuple(flags),
+    )
+    used = [entry.id for entry in entered.values() if entry.id]
+    concerned = about(doing.making.view, doing.row, doing.found.subject, *used)
+    doing.making.keep(body, concerned)
+
+
+def _entered_readings(
+    got: Understood, inputs: tuple[StepInput, ...], readings: list[ReadingTaken]
+) -> dict[str, Entered]:
+    names = [item.name for item in inputs if item.name in got.readings]
+    return {
+        name: Entered(typed=reading.typed, id=reading.id)
+        for name, reading in zip(names, readings, strict=True)
+    }
+
+
+def _decide(doing: _Doing, refuse: str) -> StepOutcome:
+    making, row, step = doing.making, doing.row, doing.step
+    person = making.signer.person
+    demand_role(making.view, person, "technician", "reviewer")
+    demand_second_person(making.view, person, row.id, "decide this hold")
+    body = HoldDecided(
+        point=row.id,
+        subject=doing.found.subject,
+        step=step.id,
+        outcome="refused" if refuse else "released",
+        reason=refuse,
+        decided_by=person,
+        observed_at=utc_text(doing.observed),
+        meaning=REFUSAL_MEANING if refuse else HOLD_MEANING,
+    )
+    making.keep(body, about(making.view, row, doing.found.subject))
+    word = f"refused: {refuse}" if refuse else "released"
+    return StepOutcome(True, (), (f"{row.label}: hold “{step.title}” is {word}.",))
+
+
+def _open(found: NextStep) -> RouteStep:
+    """The step that is open and may be done now. Raises Refused when there is none."""
+    if found.blocks:
+        raise Refused(
+            f"{found.point}: “{found.title}” can't be done now: {' '.join(found.blocks)}",
+            f"See `gaugelog step next {found.point}`; go back with `gaugelog step redo`.",
+        )
+    if found.step is None:
+        raise Refused(f"{found.point} has no step left.", f"Next: gaugelog submit {found.point}")
+    return found.step
+
+
+def _demand_may_skip(making: Deed, found: NextStep) -> None:
+    rule = found.step.skip if found.step is not None else "never"
+    if rule == "never" or (found.step is not None and found.step.hold):
+        raise Refused(f"“{found.title}” can't be skipped.", "Do it, or ask the planner.")
+    if rule == "planner" and "planner" not in roles_of(making.view, making.signer.person):
+        raise Refused(f"“{found.title}” can only be skipped by a planner.")
+    demand_role(making.view, making.signer.person, "technician", "planner")
+
+
+def utc_text(when: datetime) -> str:
+    """A UTC time as facts carry it, to the second."""
+    return f"{when:%Y-%m-%dT%H:%M:%SZ}"
