@@ -18,7 +18,7 @@ class Wire:
 
 _COMPLETION = ("completion", "return", "dummy")
 _SIGNAL = ("signal", "sense")
-_SUPPLY = ("supply", "excitation")
+_SUPPLY = ("supply", "excitation", "gauge")
 
 
 def three_wires(circuit: CircuitShown) -> tuple[Wire, Wire, Wire]:

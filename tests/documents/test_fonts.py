@@ -1,6 +1,10 @@
 from __future__ import annotations
 
-from gaugelog.documents.fonts import FONTS, Lettering, drawable
+import pytest
+from markupsafe import escape
+
+from gaugelog.documents.fonts import FONTS, TEXT, WIDE, Lettering, drawable
+from gaugelog.documents.render import draw
 from gaugelog.documents.shipped import templates
 from gaugelog.ledger.base import SYMBOLS
 
@@ -41,3 +45,10 @@ def test_each_font_has_its_licence_beside_it() -> None:
         assert "Permission is hereby granted" in licence.read_text("utf-8") or "OFL" in (
             licence.read_text("utf-8")
         )
+
+
+@pytest.mark.parametrize("style", ["font-style: italic", "font-weight: 500", "font-weight: 600"])
+def test_every_letter_that_is_called_drawable_is_drawn(style: str) -> None:
+    letters = " ".join(Lettering()(chr(point)) for point in sorted(drawable()))
+    page = f'<p style="font-family: {TEXT}, {WIDE}; {style}">{escape(letters)}</p>'
+    assert 1 <= draw(page, "@page { size: A4 }", []).pages

@@ -8,9 +8,12 @@ from pathlib import Path
 from typing import Any
 
 import pytest
+from hypothesis import given, settings
+from hypothesis import strategies as st
 
 from gaugelog.documents.content import RecordContent
 from gaugelog.documents.fetcher import ForbiddenReference
+from gaugelog.documents.fonts import Lettering
 from gaugelog.documents.page import record_html
 from gaugelog.documents.render import draw, memory_fetcher, render_record
 from tests.documents import hostile
@@ -116,6 +119,13 @@ def test_hostile_text_is_shown_as_it_was_typed() -> None:
     text = _parsed(attacked()).text
     assert ATTACK in text
     assert "49" not in re.findall(r"\b49\b", text)
+
+
+@given(st.text(max_size=60))
+@settings(max_examples=25, deadline=None)
+def test_any_text_is_shown_as_it_is_or_by_its_code_points(text: str) -> None:
+    campaign = {**sample().campaign.model_dump(), "contract": f"[{text}]"}
+    assert f"[{Lettering()(text)}]" in _parsed(sample(campaign=campaign)).text
 
 
 def test_a_record_full_of_hostile_text_is_drawn_all_the_same() -> None:

@@ -11,6 +11,7 @@ import pytest
 from gaugelog.documents.content import RecordContent
 from gaugelog.documents.maker import PdfRecordMaker
 from gaugelog.errors import GaugelogError
+from gaugelog.work import reviews
 from gaugelog.work.ports import RecordMaker, Stamp
 from tests.documents.joblog import Job, job, work
 from tests.documents.signers import ACCEPTED
@@ -85,3 +86,15 @@ def test_letter_paper_is_used_when_asked_for(made: Job) -> None:
 def test_foreign_bytes_are_not_accepted(made: Job) -> None:
     with pytest.raises(GaugelogError, match="not a PDF"):
         PdfRecordMaker().accepted(b"nothing", _stamp(made), made.reviewer)
+
+
+def test_the_deeds_of_review_end_in_a_record_with_both_signatures(tmp_path: Path) -> None:
+    made = job(tmp_path)
+    work(made)
+    maker = PdfRecordMaker()
+    reviews.submit(made.logbook, made.technician, maker, point="P1", meaning="They are mine.")
+    reviews.accept(made.logbook, made.reviewer, maker, point="P1", meaning="I accept it.")
+    handed_out = reviews.record(made.logbook, point="P1")
+    assert {"technician": True, "reviewer": True} == fields(handed_out.pdf)
+    assert "both signatures" in handed_out.description
+    assert "submitted" == attached(handed_out.pdf)["state"]
