@@ -111,6 +111,11 @@ def log10(value: Number) -> Number:
     return _apply("log10", value)
 
 
+def magnitude(value: Number) -> Number:
+    """The value without its sign."""
+    return where(nominal(value) < 0, -value, value)
+
+
 def where(condition: Number, if_true: Number, if_false: Number) -> Number:
     """One of two values by a condition, element by element when the condition is an array."""
     if is_array(condition):

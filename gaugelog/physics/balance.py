@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from gaugelog.physics._maths import Number
 from gaugelog.physics.bridge import ARM_NAMES, indicated_strain, output_ratio
-from gaugelog.physics.validity import OutOfDomain, above, not_zero, one_of, positive
+from gaugelog.physics.validity import above, not_zero, one_of, positive
 
 ARM_NUMBERS = (1, 2, 3, 4)
 
@@ -41,12 +41,9 @@ def balancing_parallel(arms: tuple[Number, Number, Number, Number], arm: int) ->
     with the resistance of two resistors side by side.
     """
     wanted = balancing_arm(arms, arm)
-    here = positive(ARM_NAMES[arm - 1], arms[arm - 1])
-    spare = here - wanted
-    if not bool((spare > 0).all() if hasattr(spare, "all") else spare > 0):
-        raise OutOfDomain(
-            ARM_NAMES[arm - 1], "is not larger than the value that nulls; trim a neighbour."
-        )
+    name = ARM_NAMES[arm - 1]
+    here = positive(name, arms[arm - 1])
+    spare = above(f"{name} less the value that nulls", here - wanted, 0.0)
     return wanted * here / spare
 
 

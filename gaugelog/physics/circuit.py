@@ -36,11 +36,15 @@ class Element:
     factor: Number = 0.0
     strain: Number = 0.0
 
+    def __post_init__(self) -> None:
+        """Refuse a resistance that cannot be, and a strain that leaves none."""
+        positive(f"resistance of {self.name}", self.resistance)
+        above(f"strain times factor of {self.name}", self.factor * self.strain, -1.0)
+
     @property
     def value(self) -> Number:
         """Resistance under its strain, ohm: R (1 + K ε)."""
-        change = above(f"strain of {self.name}", self.factor * self.strain, -1.0)
-        return positive(f"resistance of {self.name}", self.resistance) * (1 + change)
+        return self.resistance * (1 + self.factor * self.strain)
 
 
 Arm = tuple[Element, ...]

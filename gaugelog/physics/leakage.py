@@ -6,7 +6,7 @@ otherwise. Leakage lowers a resistance and so feigns compression.
 
 from __future__ import annotations
 
-from gaugelog.physics._maths import Number
+from gaugelog.physics._maths import Number, magnitude
 from gaugelog.physics.bridge import indicated_strain
 from gaugelog.physics.validity import (
     Notice,
@@ -54,7 +54,7 @@ def insulation_needed(grid: Number, factor: Number, permitted: Number) -> Number
 
     Units: ohm and ratio in, ohm out. Source: as `leakage_strain`, turned round.
     """
-    change = abs(not_zero("factor", factor) * not_zero("permitted", permitted))
+    change = magnitude(not_zero("factor", factor) * not_zero("permitted", permitted))
     strictly_between("permitted times factor", change, 0.0, 1.0)
     return positive("grid", grid) * (1 / change - 1)
 
@@ -107,7 +107,7 @@ def shield_leak_strain(
 
 def leakage_strain_notices(insulation: Number) -> tuple[Notice, ...]:
     """A notice where insulation is so low that it will not stay what it is."""
-    if 1 / largest(1 / positive_or_infinite("insulation", insulation)) >= FIELD_FLOOR:
+    if largest(FIELD_FLOOR / positive_or_infinite("insulation", insulation)) <= 1:
         return ()
     return (
         Notice(

@@ -109,6 +109,9 @@ def added_strain(
     the instrument's gauge factor. Units: ohm in, ratio out.
     Source: nodal analysis (Kirchhoff's laws) and `bridge.indicated_strain`.
     """
+    nodes = network_of(circuit).nodes
+    if not set(between) <= set(nodes):
+        raise OutOfDomain("between", f"must name two nodes of the circuit ({', '.join(nodes)}).")
     resistor = Resistor("added resistor", *between, positive("resistance", resistance))
     change = output(circuit, resistor) - output(circuit)
     return indicated_strain(change, setting, name, poisson)

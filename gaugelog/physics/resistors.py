@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
-from gaugelog.physics._maths import Number
+from gaugelog.physics._maths import Number, magnitude
 from gaugelog.physics.validity import above, finite, not_negative, positive
 
 E96 = tuple(round(10 ** (step / 96), 2) for step in range(96))
@@ -54,7 +54,7 @@ def resistor_span(
     Source: IEC 60115-1, meaning of tolerance and temperature coefficient (from memory).
     """
     above("tolerance below one", 1 - not_negative("tolerance", tolerance), 0.0)
-    drift = abs(finite("coefficient", coefficient) * finite("rise", rise))
+    drift = magnitude(finite("coefficient", coefficient) * finite("rise", rise))
     return Span(
         warmed(resistance, -drift, 1.0) * (1 - tolerance),
         warmed(resistance, drift, 1.0) * (1 + tolerance),

@@ -7,7 +7,7 @@ non-linear. A *real* strain of the simulated size indicates something else again
 
 from __future__ import annotations
 
-from gaugelog.physics._maths import Number
+from gaugelog.physics._maths import Number, magnitude
 from gaugelog.physics.bridge import BRIDGE_SOURCE, NONLINEARITY_NOTED, indicated_strain
 from gaugelog.physics.validity import (
     Notice,
@@ -61,7 +61,7 @@ def shunt_for_strain(resistance: Number, factor: Number, strain: Number) -> Numb
     >>> round(shunt_for_strain(1000.0, 2.0, 0.001))
     499000
     """
-    change = abs(not_zero("factor", factor) * not_zero("strain", strain))
+    change = magnitude(not_zero("factor", factor) * not_zero("strain", strain))
     strictly_between("strain times factor", change, 0.0, 1.0)
     return positive("resistance", resistance) * (1 / change - 1)
 
