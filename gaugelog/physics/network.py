@@ -2,7 +2,7 @@
 
 Nodal analysis by star-mesh reduction. A node is removed and its neighbours are joined by
 g_i g_j / Σg; nothing is ever subtracted, so no digits are lost, and floats, arrays and uncertain
-numbers go through alike. A resistor of zero ohm joins its two nodes; one of infinity is open.
+numbers go through alike. A resistor of no ohm joins its two nodes; one of infinity is open.
 """
 
 from __future__ import annotations
@@ -13,6 +13,9 @@ from dataclasses import dataclass
 
 from gaugelog.physics._maths import Number
 from gaugelog.physics.validity import OutOfDomain, positive_or_infinite
+
+NEGLIGIBLE = 1e-12
+"""Resistance under which two nodes are one, ohm."""
 
 _Mesh = dict[str, dict[str, Number]]
 """Conductance between each pair of joined nodes, both ways round."""
@@ -134,7 +137,7 @@ def _mesh(network: Network) -> tuple[_Mesh, dict[str, str]]:
     mesh: _Mesh = {node: {} for node in alias.values()}
     for each in network.resistors:
         start, end = alias[each.start], alias[each.end]
-        if start != end and not _is_plainly(each.resistance, math.inf):
+        if start != end and not _is_open(each.resistance):
             positive_or_infinite(each.name, each.resistance)
             _add(mesh, start, end, 1 / each.resistance)
     return mesh, alias
@@ -145,7 +148,7 @@ def _aliases(resistors: Iterable[Resistor]) -> dict[str, str]:
     for each in resistors:
         alias.setdefault(each.start, each.start)
         alias.setdefault(each.end, each.end)
-        if _is_plainly(each.resistance, 0.0):
+        if _joins(each.resistance):
             kept, lost = alias[each.start], alias[each.end]
             alias = {node: kept if name == lost else name for node, name in alias.items()}
     return alias
@@ -177,8 +180,12 @@ def _add(mesh: _Mesh, start: str, end: str, conductance: Number) -> None:
     mesh[end][start] = total
 
 
-def _is_plainly(resistance: Number, value: float) -> bool:
-    return isinstance(resistance, int | float) and resistance == value
+def _is_open(resistance: Number) -> bool:
+    return isinstance(resistance, float) and resistance == math.inf
+
+
+def _joins(resistance: Number) -> bool:
+    return isinstance(resistance, int | float) and 0 <= resistance < NEGLIGIBLE
 
 
 def _known(alias: dict[str, str], node: str) -> str:
