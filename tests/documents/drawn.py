@@ -23,9 +23,14 @@ def drawing() -> Drawing:
 
 
 @cache
-def draft() -> bytes:
+def draft_drawing() -> Drawing:
     """The sample as a draft."""
-    return render_record(sample(state="draft", signing=None)).pdf
+    return render_record(sample(state="draft", signing=None))
+
+
+def draft() -> bytes:
+    """The draft's file."""
+    return draft_drawing().pdf
 
 
 @cache

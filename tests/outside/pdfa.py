@@ -85,7 +85,7 @@ def _widgets(opened: pikepdf.Pdf) -> Iterator[str]:
                 yield f"field {note.T} has no plain appearance"
             if "/A" in note or "/AA" in note:
                 yield f"field {note.T} acts"
-    if bool(opened.Root.get("/AcroForm", {}).get("/NeedAppearances", False)):
+    if "/AcroForm" in opened.Root and bool(opened.Root.AcroForm.get("/NeedAppearances", False)):
         yield "appearances are left to the viewer"
 
 

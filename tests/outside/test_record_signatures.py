@@ -107,7 +107,7 @@ def _openssl_verifies(folder: Path, signature: Path, covered: Path) -> bool:
     certificate = x509.load_der_x509_certificate(people().authority.certificate)
     root.write_bytes(certificate.public_bytes(Encoding.PEM))
     when = str(int(ACCEPTED.utc.timestamp()))
-    command = [
+    command: list[str | Path] = [
         *("openssl", "cms", "-verify", "-binary", "-inform", "DER", "-in", signature),
         *("-content", covered, "-CAfile", root, "-purpose", "any", "-attime", when),
         *("-out", folder / "out.bin"),
