@@ -74,9 +74,11 @@ def instrument_uncertainty(
     >>> round(instrument_uncertainty(12.0, 0.1, 0.0, 0.0), 4)
     0.6928
     """
+    not_negative("gain_fraction", gain_fraction)
     not_negative("offset", offset)
-    width = abs(finite("value", value)) * not_negative("gain_fraction", gain_fraction) + offset
-    return root(rectangular(width) ** 2 + resolution_uncertainty(resolution) ** 2)
+    not_negative("resolution", resolution)
+    width = abs(finite("value", value)) * gain_fraction + offset
+    return root(width**2 / 3 + resolution**2 / 12)
 
 
 def relative_change(before: Number, after: Number) -> Number:
@@ -120,5 +122,5 @@ def difference_uncertainty(
 
 
 def _by_one_meter(difference: Number, accuracy: Accuracy) -> Number:
-    gain = rectangular(accuracy.gain_fraction * abs(difference))
-    return root(gain**2 + 2 * resolution_uncertainty(accuracy.resolution) ** 2)
+    gain = accuracy.gain_fraction * abs(difference)
+    return root(gain**2 / 3 + accuracy.resolution**2 / 6)
