@@ -221,18 +221,18 @@ def circuit() -> dict[str, Any]:
             "length": q("18", "m"),
             "resistance_per_length": q("0.09", "ohm/m"),
             "cable": "CB-3",
-            "marks": {"supply": "red", "signal": "white", "return": "black"},
+            "marks": {"supply-": "red", "signal+": "white", "completion": "black"},
         },
         "channel": {
             "label": "M1/3",
             "module_type": "eight-channel bridge module",
             "module_serial": "BM-2207",
             "connector": "X3",
-            "pins": {"supply+": "A", "signal+": "B", "signal-": "C", "supply-": "D"},
+            "pins": {"completion": "A", "signal+": "B", "supply-": "D"},
             "excitation": q("2.5", "V"),
             "excitation_kind": "d.c.",
             "range": q("10", "mV/V"),
-            "shunt": {"value": q("174650", "ohm"), "arm": 2, "between": ["A", "B"]},
+            "shunt": {"value": q("174650", "ohm"), "arm": 1, "between": ["signal+", "supply-"]},
         },
     }
 

@@ -60,6 +60,16 @@ def test_opposite_arms_stand_opposite() -> None:
 def test_wires_bear_the_users_own_marks_and_pins() -> None:
     words = _words(_circuit())
     assert {"red", "white", "black"} <= set(words)
+    assert {"A", "B", "D"} <= set(words)
+
+
+def test_the_signs_turn_when_the_gauges_wire_is_the_positive_supply() -> None:
+    def left_sign(function: str) -> str:
+        leads = {**circuit()["leads"], "marks": {function: "red"}}
+        return _words(_circuit(leads=leads))[_words(_circuit(leads=leads)).index("e") + 1]
+
+    assert "+" == left_sign("supply-")
+    assert "−" == left_sign("supply+")
 
 
 def test_cable_channel_and_supply_are_named() -> None:
@@ -111,5 +121,5 @@ def test_the_wiring_list_has_each_function_once_with_mark_and_pin() -> None:
     leads = {**circuit()["leads"], "marks": {"supply-": "red", "signal+": "white"}}
     rows = {wire.function: (wire.mark, wire.pin) for wire in wiring_list(_circuit(leads=leads))}
     assert ("red", "D") == rows["supply-"]
-    assert ("", "C") == rows["signal-"]
-    assert 4 == len(rows)
+    assert ("", "A") == rows["completion"]
+    assert 3 == len(rows)
