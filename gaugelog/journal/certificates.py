@@ -10,6 +10,7 @@ from datetime import datetime
 from cryptography import x509
 from cryptography.exceptions import InvalidSignature
 from cryptography.hazmat.primitives.asymmetric import ec
+from cryptography.hazmat.primitives.serialization import Encoding, PublicFormat
 
 from gaugelog.errors import KeyTrouble
 from gaugelog.journal.entry import Entry, Fact, sha256
@@ -58,7 +59,7 @@ def sheet_erased(digest: str, reason: str, about: tuple[str, ...] = ()) -> Fact:
 class Issued:
     """A certificate that the journal holds, read once; `trouble` says why it is good for nothing.
 
-    Times are UTC; `key` is None when the certificate is not on an elliptic curve.
+    Times are UTC; `key` is the public key (DER), None when it is not on an elliptic curve.
     """
 
     person: str
@@ -66,7 +67,7 @@ class Issued:
     der: bytes
     since: datetime
     until: datetime
-    key: ec.EllipticCurvePublicKey | None
+    key: bytes | None
     trouble: str | None
 
 
@@ -107,8 +108,8 @@ class Certificates:
         """Whether a certificate was revoked by an entry applied so far."""
         return fingerprint in self._revoked_by
 
-    def key(self, fingerprint: str) -> ec.EllipticCurvePublicKey | None:
-        """The public key of a certificate, or None when there is none to verify with."""
+    def public_key(self, fingerprint: str) -> bytes | None:
+        """The public key of a certificate (DER), or None when there is none to verify with."""
         issued = self._by_fingerprint.get(fingerprint)
         return issued.key if issued else None
 
@@ -164,8 +165,9 @@ def read_certificate(der: bytes, person: str, authority: bytes | None) -> Issued
         trouble = _trouble(certificate, person, authority)
     except Exception as error:  # foreign bytes bring up anything
         raise BadEntry(f"Its certificate can't be read: {error}.") from None
-    elliptic = key if isinstance(key, ec.EllipticCurvePublicKey) else None
-    return Issued(person, sha256(der), der, since, until, elliptic, trouble)
+    public = key.public_bytes(Encoding.DER, PublicFormat.SubjectPublicKeyInfo)
+    elliptic = isinstance(key, ec.EllipticCurvePublicKey)
+    return Issued(person, sha256(der), der, since, until, public if elliptic else None, trouble)
 
 
 def _trouble(certificate: x509.Certificate, person: str, authority: bytes | None) -> str | None:

@@ -31,9 +31,13 @@ def authority() -> Authority:
     return Authority.create("Footbridge", clock())
 
 
-@lru_cache
 def signer(person: str = "custodian") -> UnlockedKey:
-    """A person with a key that the authority certified."""
+    """A person with a key that the authority certified; the same key each time."""
+    return _certified(person)
+
+
+@lru_cache
+def _certified(person: str) -> UnlockedKey:
     key = new_key()
     certificate = authority().issue(person, key.public_key(), clock())
     return UnlockedKey(key, certificate, authority().chain)

@@ -120,7 +120,7 @@ class _Walk:
             progress(self.count, total)
 
     def close(self) -> None:
-        """Let go of the threads."""
+        """Let go of what the verifying needed."""
         self._deeds.close()
 
     def _show(self, look: Look) -> None:

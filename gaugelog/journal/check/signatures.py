@@ -2,24 +2,12 @@
 
 from __future__ import annotations
 
-import os
-from collections.abc import Callable
-from concurrent.futures import ThreadPoolExecutor
-from dataclasses import dataclass
-
-from cryptography.exceptions import InvalidSignature
-from cryptography.hazmat.primitives.asymmetric import ec
-from cryptography.hazmat.primitives.hashes import SHA256
-
 from gaugelog.journal.certificates import CERTIFICATE_KINDS, Certificates
 from gaugelog.journal.check.look import RESTORE, Look
 from gaugelog.journal.check.report import Findings, Trouble
+from gaugelog.journal.check.verifier import Signed, Verifier
 from gaugelog.journal.entry import Header
 from gaugelog.journal.header import BadEntry
-
-_ECDSA = ec.ECDSA(SHA256())
-_BATCH = 2048
-"""Signatures verified at a time: enough to keep the threads busy, few enough for memory."""
 
 _OUTSIDE = "Someone wrote here without the key. " + RESTORE
 
@@ -34,7 +22,7 @@ class Deeds:
         self._certificates = certificates
         self._unfinished: dict[str, Look] = {}
         self._begun: dict[str, str] = {}
-        self._verifier = _Verifier(self._bad_signature)
+        self._verifier = Verifier(self._bad_signature)
 
     def see(self, look: Look) -> None:
         """Look at one entry."""
@@ -62,7 +50,7 @@ class Deeds:
         self._verifier.finish()
 
     def close(self) -> None:
-        """Let go of the threads."""
+        """Let go of what the verifying needed."""
         self._verifier.close()
 
     def _start(self, look: Look, header: Header) -> None:
@@ -82,15 +70,14 @@ class Deeds:
         if signature is None:
             self._trouble(look, "It ends its deed and carries no signature.", _OUTSIDE)
             return
-        key = self._certificates.key(header.certificate)
+        key = self._certificates.public_key(header.certificate)
         if key is None:
             self._trouble(look, "Its signature can't be verified: its certificate is not known.")
             return
-        self._verifier.add(
-            _Signature(look.position, look.where, key, signature, look.entry.header_bytes)
-        )
+        data = look.entry.header_bytes
+        self._verifier.add(Signed(key, signature, data, look.position, look.where))
 
-    def _bad_signature(self, signed: _Signature) -> None:
+    def _bad_signature(self, signed: Signed) -> None:
         what = "Its signature does not fit it: it was altered, or signed by another key."
         self._findings.trouble(signed.position, Trouble(5, signed.where, what, _OUTSIDE))
 
@@ -145,56 +132,6 @@ class Validity:
 
     def finish(self) -> None:
         """Nothing is left to say."""
-
-
-@dataclass(frozen=True, slots=True)
-class _Signature:
-    position: int
-    where: str
-    key: ec.EllipticCurvePublicKey
-    signature: bytes
-    data: bytes
-
-
-class _Verifier:
-    """Verifies signatures on several threads, a large batch at a time while the walk waits.
-
-    The library lets go of Python's lock for each one. A walk that went on meanwhile would fight
-    the threads for it, and take longer than the walk and the verifying one after the other.
-    """
-
-    def __init__(self, bad: Callable[[_Signature], None]) -> None:
-        self._bad = bad
-        self._count = max(2, min(8, os.cpu_count() or 2))
-        self._threads = ThreadPoolExecutor(self._count)
-        self._batch: list[_Signature] = []
-
-    def add(self, signature: _Signature) -> None:
-        self._batch.append(signature)
-        if len(self._batch) >= _BATCH:
-            self.finish()
-
-    def finish(self) -> None:
-        shares = [self._batch[start :: self._count] for start in range(self._count)]
-        self._batch = []
-        for bad in self._threads.map(_bad_ones, shares):
-            for signature in bad:
-                self._bad(signature)
-
-    def close(self) -> None:
-        self._threads.shutdown(cancel_futures=True)
-
-
-def _bad_ones(batch: list[_Signature]) -> list[_Signature]:
-    return [signature for signature in batch if not _fits(signature)]
-
-
-def _fits(signed: _Signature) -> bool:
-    try:
-        signed.key.verify(signed.signature, signed.data, _ECDSA)
-    except (InvalidSignature, ValueError):
-        return False
-    return True
 
 
 def _continues(before: Header, header: Header) -> bool:
