@@ -9,11 +9,10 @@ from pathlib import Path
 import numpy as np
 import pytest
 
-from gaugelog.physics import defects, pin_fit, pin_network, pin_next, pin_trials, pins, transfer
+from gaugelog.physics import defects, pin_network, pins
 from gaugelog.physics.circuit import circuit_of
 from gaugelog.physics.defects import Defect
 from gaugelog.physics.network import Network, Resistor
-from gaugelog.physics.pin_network import ARTICLE, SHIELD
 from gaugelog.physics.pins import Diagnosis, PinReading, diagnose
 from tests.foreign import needs
 from tests.outside.cases import case
@@ -26,23 +25,8 @@ CHECKS = (
     pin_network.pin_resistance,
     pin_network.pin_table,
     pin_network.three_quarters_rule,
-    transfer.solve,
-    transfer.strength,
-    transfer.changed_resistance,
-    defects.suspects,
-    defects.found,
-    defects.ohm,
-    pin_fit.model,
-    pin_fit.fit,
-    pin_fit.predict,
-    pin_trials.bench_of,
-    pin_trials.ranked,
-    pin_trials.grouped,
-    pin_trials.exchanged,
-    pin_next.next_measurement,
     pins.diagnose,
 )
-"""The steps of a diagnosis are held through it: planted defects, read by a simulator, are found."""
 
 
 def test_a_full_bridge_reads_as_the_book_on_tablet_machines_says() -> None:
@@ -187,23 +171,3 @@ def test_the_next_measurement_parts_what_the_first_could_not(tmp_path: Path) -> 
         [(_without_open(whole.changed("grid 1", math.inf)), *wanted.between)], tmp_path
     )
     assert f"about {defects.ohm(expected[0])}" in wanted.sentence
-
-
-def test_changes_of_one_resistance_follow_sherman_and_morrison() -> None:
-    """Against a fresh inverse by numpy of the changed network's nodal matrix."""
-    network = pin_network.pin_network(circuit_of("full bending", 4, 350.0, 2.0, 3.0))
-    solved = transfer.solve(network, (ARTICLE, SHIELD))
-    ends = [("supply+", "signal-"), ("supply-", "signal+")]
-    figures = solved.incidence(ends)
-    for each in network.resistors:
-        change = solved.incidence([(each.start, each.end)])
-        own = solved.along(change)
-        present = np.array([each.resistance])
-        for wanted in (0.01, 100.0, 400.0, 1e8):
-            s = transfer.strength(present, own, np.array([wanted]))
-            moved = solved.between(figures, change)[:, 0]
-            found = solved.along(figures) - s * moved**2
-            fresh = transfer.solve(network.changed(each.name, wanted))
-            assert fresh.along(fresh.incidence(ends)) == pytest.approx(found, rel=1e-6)
-            back = transfer.changed_resistance(present, own, s)
-            assert wanted == pytest.approx(float(back[0]), rel=1e-6)
