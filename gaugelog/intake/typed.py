@@ -12,7 +12,9 @@ from gaugelog.ledger.readings import Qualifier
 
 LONGEST = 60
 
-_READING = re.compile(r"^(?P<sign>[<>=]?)\s*(?P<number>[^\s<>=A-Za-zΩµ%°]+)\s*(?P<unit>.*)$")
+_READING = re.compile(
+    r"^(?P<sign>[<>=]?)\s*(?P<number>[^\s<>=A-Za-zΩµ%°]+(?:[eE][+-]?\d+)?)\s*(?P<unit>.*)$"
+)
 _NUMBER = re.compile(r"[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?")
 _COMMA = re.compile(r"[+-]?\d+,\d+")
 _OVERLOAD = frozenset({"ol", "o.l", "o.l.", "overload", "over", "0l"})
@@ -124,8 +126,8 @@ def _unit(unit: str, units: Sequence[str], typed: str) -> str:
             f"has the unit {plain}: milli or mega?",
             "Type Mohm for a million ohms, or the value in ohm.",
         )
-    found = unit_of(plain)
-    if found not in units:
+    found = "%RH" if plain == "%" and "%RH" in units else unit_of(plain)
+    if found is None or found not in units:
         allowed = ", ".join(_shown(each) for each in units)
         raise _fault(typed, f"has the unit {plain}.", f"Units here: {allowed}.")
     return found
@@ -145,8 +147,9 @@ def _shown(unit: str) -> str:
 
 
 def _example(units: Sequence[str]) -> str:
-    preferred = "Gohm" if "Gohm" in units else units[0]
-    return f"12.5 {_shown(preferred)}".strip()
+    if "Gohm" in units:
+        return "12.5 GΩ"
+    return "350.4 Ω" if units[0] == "ohm" else f"12.5 {_shown(units[0])}".strip()
 
 
 def _fault(typed: str, what: str, remedy: str) -> Faulty:
