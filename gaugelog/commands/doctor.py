@@ -100,7 +100,7 @@ def _keys() -> Iterator[Finding]:
 
 
 def _logbook(ctx: typer.Context) -> Iterator[Finding]:
-    from gaugelog.work.logbook import inspect
+    from gaugelog.work.inspect import inspect
 
     try:
         folder: Path = ctx.obj.find()

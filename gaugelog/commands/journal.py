@@ -32,7 +32,7 @@ def check(
     Steps: format, sequence, chain, bodies, deeds and signatures, certificates valid then,
     evidence, ledger rebuilt and compared. Exit code 1 when there is trouble.
     """
-    from gaugelog.work.logbook import check_logbook
+    from gaugelog.work.history import check_logbook
 
     logbook = open_logbook(ctx)
     report = check_logbook(logbook, printed=head or [])

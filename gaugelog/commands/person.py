@@ -41,17 +41,13 @@ def enrol(
     logbook = open_logbook(ctx)
     secrets = Secrets(secret_fd)
     keys = key_folder(logbook.id)
-    custodian, authority = keys.unlock_with_authority(as_, secrets.ask(f"Passphrase of {as_}"))
+    phrase = secrets.ask(f"Passphrase of {as_}")
     done = people.enrol(
         logbook,
-        custodian,
-        authority,
+        keys.unlock(as_, phrase),
+        keys.unlock_authority(phrase),
         keys,
-        person=person,
-        name=name,
-        initials=initials,
-        roles=role,
-        qualifications=qualification or [],
+        newcomer=people.Newcomer(person, name, initials, tuple(role), tuple(qualification or ())),
         passphrase=secrets.choose(f"of {person}"),
     )
     say(f"{person} is enrolled as {', '.join(role)}; certificate {done.fingerprint[:16]} …")

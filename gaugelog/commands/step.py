@@ -12,6 +12,7 @@ from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlo
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 
 if TYPE_CHECKING:
+    from gaugelog.ledger.routes import StepInput
     from gaugelog.rules.progress import NextStep
     from gaugelog.work.steps import StepOutcome
 
@@ -41,28 +42,44 @@ def next_(
     put_table(
         "Worklist",
         ["point", "zone", "state", "next step", "blocked by"],
-        [[row.point, row.zone, row.state, row.title, "; ".join(row.blocks)] for row in rows],
+        [[row.point, row.zone, row.state, row.title, " ".join(row.blocks)] for row in rows],
         empty="No plan is released. Try: gaugelog plan release",
     )
 
 
 def _tell_step(found: NextStep) -> None:
-    put(f"{found.point} · {found.state}")
+    put(f"{found.point}, zone {found.zone}: {found.state}")
     if found.step is None:
-        put(found.hint)
+        put(*found.blocks, *([] if found.blocks else [f"Next: gaugelog submit {found.point}"]))
         return
     step = found.step
-    put(f"Step {found.number} of {found.count}: {step.title}  [{step.id}]", "", step.instruction)
+    hold = ", a HOLD: a second person decides" if step.hold else ""
+    put(f"Step {found.number} of {found.count}{hold}: {step.title} [{step.id}]", "")
+    put(*_wrapped(step.instruction))
     for caution in step.cautions:
-        put(f"  ⚠ {caution}")
-    for item in step.inputs:
-        unit = f" ({item.unit})" if item.unit else ""
-        put(f"  {item.name} = {item.prompt}{unit}{'' if item.required else ', may be left out'}")
-    for window in found.windows:
-        put(f"  ◷ {window}")
-    for block in found.blocks:
-        put(f"  ✗ {block}")
-    put("", found.hint)
+        put(*_wrapped(caution, "CAUTION: "))
+    put("", *(_input_line(item) for item in step.inputs))
+    put(*(f"  time: {window.sentence}" for window in found.windows))
+    put(*(f"  BLOCKED: {block}" for block in found.blocks))
+    again = "; measured before: give --reason" if found.again else ""
+    put("", f"Next: {_command(found)}{again}")
+
+
+def _wrapped(text: str, lead: str = "") -> list[str]:
+    import textwrap
+
+    return textwrap.wrap(lead + text, 78, initial_indent="  ", subsequent_indent="  ")
+
+
+def _input_line(item: StepInput) -> str:
+    unit = f", in {item.unit}" if item.unit else ""
+    left_out = "" if item.required else ", may be left out"
+    return f"  {item.name} = {item.prompt}{unit}{left_out}"
+
+
+def _command(found: NextStep) -> str:
+    names = " ".join(f"{item.name}=…" for item in found.step.inputs) if found.step else ""
+    return " ".join(f"gaugelog step do {found.point} {names}".split())
 
 
 @group.command()
@@ -122,10 +139,28 @@ def _ask_missing(found: NextStep, typed: dict[str, str]) -> dict[str, str]:
 
 
 def _tell_outcome(outcome: StepOutcome) -> None:
-    for reading in outcome.readings:
-        put(f"{reading.check} {reading.typed}: {reading.verdict.word.upper()}")
-        put(*(f"  {line}" for line in reading.explained))
+    for shown in outcome.readings:
+        reading = shown.reading
+        put(f"{reading.check} {reading.stage} {reading.typed}: {reading.verdict.word.upper()}")
+        put(*(f"  {line}" for line in shown.explained))
     say(*outcome.lines)
+
+
+@group.command()
+def redo(
+    ctx: typer.Context,
+    point: Point,
+    step: Annotated[str, typer.Argument(help="Id of the step to go back to, as in brackets.")],
+    reason: Annotated[str, typer.Option(help="Why; kept in the record.")],
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Go back to an earlier step: it and those after it are done again."""
+    from gaugelog.work import steps
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    say(*steps.redo(logbook, signer, point=point, step=step, reason=reason).lines)
 
 
 @group.command()

@@ -117,12 +117,14 @@ def waiting() -> Callable[[float], None]:
     return on_wait
 
 
-def as_json(model: Any) -> Any:
-    """A pydantic or dataclass value as plain JSON data."""
-    from dataclasses import asdict, is_dataclass
+def as_json(value: Any) -> Any:
+    """A pydantic model, a dataclass, or a collection of them, as plain JSON data."""
+    from dataclasses import fields, is_dataclass
 
-    if hasattr(model, "model_dump"):
-        return model.model_dump(mode="json")
-    if is_dataclass(model) and not isinstance(model, type):
-        return asdict(model)
-    return model
+    if hasattr(value, "model_dump"):
+        return value.model_dump(mode="json")
+    if is_dataclass(value) and not isinstance(value, type):
+        return {item.name: as_json(getattr(value, item.name)) for item in fields(value)}
+    if isinstance(value, (list, tuple)):
+        return [as_json(item) for item in value]
+    return value

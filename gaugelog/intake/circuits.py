@@ -37,6 +37,7 @@ def read_circuits(
     campaign: str,
     grids: Mapping[str, str],
     channels: Mapping[tuple[str, str], str],
+    *,
     new_id: Callable[[], str],
     faults: Gathered,
 ) -> list[CircuitPlanned]:

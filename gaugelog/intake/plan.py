@@ -1,4 +1,4 @@
-"""A plan's folder as a whole: four files understood together, every fault of all of them at once."""
+"""A plan's folder as a whole: four files understood together, every fault of all at once."""
 
 from __future__ import annotations
 
@@ -182,7 +182,13 @@ class _Reading:
         }
         try:
             return read_circuits(
-                name, self.files[name], owner, grids, channels, self.new_id, faults
+                name,
+                self.files[name],
+                owner,
+                grids,
+                channels,
+                new_id=self.new_id,
+                faults=faults,
             )
         except Faulty as error:
             faults += error.faults

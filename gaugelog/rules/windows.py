@@ -3,14 +3,11 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from datetime import datetime, timedelta
+from datetime import UTC, datetime, timedelta
 
-from gaugelog.journal.clock import Moment
+from gaugelog.journal.clock import Moment, jump_between
 from gaugelog.ledger.routes import Window
 from gaugelog.ledger.steps import StepRow
-
-JUMP_ALLOWED = timedelta(seconds=60)
-"""How far clock and time since boot may drift apart before the clock counts as set."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -42,16 +39,9 @@ def judge_window(
 
 
 def clock_jumped(earlier: StepRow, now: Moment) -> bool:
-    """Whether the clock was set between an entry and `now`.
-
-    Within one run of the machine the time since boot tells; across runs only a clock that went
-    back does.
-    """
-    passed = now.utc - _time(earlier.entered_at)
-    if earlier.boot != now.boot:
-        return passed < timedelta(0)
-    run = timedelta(milliseconds=now.uptime_ms - earlier.uptime_ms)
-    return abs(passed - run) > JUMP_ALLOWED
+    """Whether the clock was set between an entry and `now` (see `clock.jump_between`)."""
+    entered = Moment(_time(earlier.entered_at), now.offset_minutes, earlier.boot, earlier.uptime_ms)
+    return jump_between(entered, now) is not None
 
 
 def _not_before(title: str, observed: datetime, bound: datetime, now: Moment) -> WindowFound:
@@ -73,7 +63,7 @@ def _within(
 
 
 def _time(text: str) -> datetime:
-    return datetime.fromisoformat(text.replace("Z", "+00:00"))
+    return datetime.fromisoformat(text.replace("Z", "+00:00")).astimezone(UTC)
 
 
 def _local(when: datetime, now: Moment) -> str:
