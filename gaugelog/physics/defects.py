@@ -7,7 +7,7 @@ is listed from its own network, not from a book of cases.
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from itertools import chain, combinations
 from typing import Literal
@@ -43,6 +43,10 @@ class Suspect:
     def sized(self) -> bool:
         """Whether the readings must tell how large it is."""
         return self.family in ("across", "value", "joint")
+
+    def touched(self, ends: Sequence[tuple[str, str]]) -> list[tuple[str, str]]:
+        """The terminals that a meter at `ends` really touches where wires are swapped."""
+        return [(self.swap.get(start, start), self.swap.get(end, end)) for start, end in ends]
 
 
 @dataclass(frozen=True, slots=True)

@@ -41,7 +41,7 @@ class Figures:
 
 @dataclass(frozen=True)
 class Fit:
-    """K suspects against M figures: predictions (M × K, ohm), misfit (chi-squared), size (ohm)."""
+    """K suspects against M figures: predictions (K × M, ohm), misfit (chi-squared), size (ohm)."""
 
     predicted: Array
     misfit: Array
@@ -53,10 +53,11 @@ class Fit:
 class Model:
     """How K changes move M figures of a network of E resistors.
 
-    `sound` (M) are the figures without a change, `moved` (M × K) their voltages per ampere along
-    a change, `own` (K) the resistance along each, `shares` (M × E) and `cross` (K × E) the part
-    of the current in each resistor, `spread` (E) its standard uncertainty, `itself` (K × E)
-    whether the change is to that resistor; `low` and `high` (K) bound the strength.
+    `sound` (K × M) are the figures without the change, through swapped wires where the suspect
+    swaps them; `moved` (K × M) their voltages per ampere along the change; `own` (K) the
+    resistance along it. `shares` (K × M × E) and `cross` (K × E) are parts of the current in
+    each resistor, `spread` (E) its standard uncertainty in ohm, `itself` (K × E) whether the
+    change is to that resistor. `low` and `high` (K) bound the strength.
     """
 
     sound: Array
@@ -78,23 +79,27 @@ def model(
     ends: Sequence[Ends],
     suspected: Sequence[Suspect],
 ) -> Model:
-    """Put suspects and pairs of terminals to a solved network."""
+    """Put suspects and pairs of terminals to a solved network.
+
+    Source: nodal analysis (Kirchhoff's laws) as in `transfer`.
+    """
     import numpy as np
 
-    figures = solved.incidence(ends)
+    which, figures = _touchings(solved, ends, suspected)
     changes = solved.incidence([each.ends for each in suspected])
     elements = solved.incidence([(each.start, each.end) for each in network.resistors])
     values = np.array([float(each.resistance) for each in network.resistors])
+    names = [each.name for each in network.resistors]
+    shape = (-1, len(ends), len(suspected))
     own = solved.along(changes)
     present = np.array([each.present for each in suspected])
     least, most = np.array([_bounds(each) for each in suspected]).T
-    names = [each.name for each in network.resistors]
     return Model(
-        sound=solved.along(figures),
-        moved=solved.between(figures, changes),
+        sound=solved.along(figures).reshape(-1, len(ends))[which],
+        moved=solved.between(figures, changes).reshape(shape)[which, :, np.arange(len(which))],
         own=own,
         present=present,
-        shares=solved.between(figures, elements) / values,
+        shares=(solved.between(figures, elements) / values).reshape(*shape[:2], len(values))[which],
         cross=solved.between(changes, elements) / values,
         spread=spread,
         itself=np.array([[name in each.where for name in names] for each in suspected]),
@@ -106,33 +111,49 @@ def model(
 def fit(given: Model, figures: Figures) -> Fit:
     """Fit each change's strength to the figures; misfit counts overloads that should not be.
 
-    Generalised least squares; what the spread of parts explains in several figures at once
-    counts once, by Woodbury's identity.
+    What the spread of parts explains in several figures at once counts once. Source:
+    generalised least squares with Woodbury's identity; any text on linear regression.
     """
     import numpy as np
 
-    first = _first_strength(given, figures)
-    final, misfit = _refined(given, figures, first)
-    predicted = given.sound[:, None] - final * given.moved**2
-    bound = figures.ohm[:, None]
-    short = np.where(figures.overload[:, None] & (predicted < bound), 1 - predicted / bound, 0.0)
+    final, misfit = _refined(given, figures, _first_strength(given, figures))
+    predicted = predict(given, final)
+    short = np.where(figures.overload, np.maximum(1 - predicted / figures.ohm, 0.0), 0.0)
     return Fit(
         predicted,
-        misfit + ((short / OVERLOAD_DOUBT) ** 2).sum(axis=0),
+        misfit + ((short / OVERLOAD_DOUBT) ** 2).sum(axis=1),
         changed_resistance(given.present, given.own, final),
         final,
     )
 
 
 def predict(given: Model, strengths: Array) -> Array:
-    """Figures (M × K) of changes whose strength is known, ohm."""
-    return given.sound[:, None] - strengths * given.moved**2
+    """Figures (K × M) of changes whose strength (K) is known, ohm.
+
+    Source: Sherman and Morrison, 1950 (from memory).
+    """
+    return given.sound - strengths[:, None] * given.moved**2
+
+
+def _touchings(
+    solved: Transfer, ends: Sequence[Ends], suspected: Sequence[Suspect]
+) -> tuple[list[int], Array]:
+    """Incidence of the figures for each different way of swapping, and each suspect's way."""
+    ways: dict[tuple[str, ...], int] = {}
+    touched: list[Ends] = []
+    which = []
+    for each in suspected:
+        way = each.where if each.swap else ()
+        if way not in ways:
+            ways[way] = len(ways)
+            touched += each.touched(ends)
+        which.append(ways[way])
+    return which, solved.incidence(touched)
 
 
 def _bounds(suspect: Suspect) -> tuple[float, float]:
     """Least and greatest resistance the change may lead to, ohm."""
     return {
-        "open": (AIR, AIR),
         "across": (LEAST, CEILING),
         "joint": (suspect.present, suspect.present + CEILING),
         "value": (suspect.present / VALUE_SPAN, suspect.present * VALUE_SPAN),
@@ -143,10 +164,10 @@ def _first_strength(given: Model, figures: Figures) -> Array:
     """Weighted straight line, figure by figure; overloads say nothing of the size."""
     import numpy as np
 
-    variance = figures.sigma**2 + ((given.shares**2 * given.spread) ** 2).sum(axis=1)
-    weight = np.where(figures.overload, 0.0, 1 / variance)[:, None] * given.moved**2
-    above = weight.T @ (given.sound - np.where(figures.overload, 0.0, figures.ohm))
-    return np.clip(_ratio(above, (weight * given.moved**2).sum(axis=0)), given.low, given.high)
+    variance = figures.sigma**2 + ((given.shares**2 * given.spread) ** 2).sum(axis=2)
+    weight = np.where(figures.overload, 0.0, 1 / variance) * given.moved**2
+    above = (weight * (given.sound - figures.ohm)).sum(axis=1)
+    return np.clip(_ratio(above, (weight * given.moved**2).sum(axis=1)), given.low, given.high)
 
 
 def _refined(given: Model, figures: Figures, first: Array) -> tuple[Array, Array]:
@@ -154,30 +175,26 @@ def _refined(given: Model, figures: Figures, first: Array) -> tuple[Array, Array
     import numpy as np
 
     known = np.where(figures.overload, 0.0, 1 / figures.sigma)
-    line = (known[:, None] * given.moved**2).T
-    left = (figures.ohm - given.sound + first[:, None] * given.moved.T**2) * known
-    passed = _passed_on(given, first) * known[None, :, None]
-    joint = np.swapaxes(passed, 1, 2)
-    inner = np.eye(passed.shape[2]) + joint @ passed
-    seen = joint @ np.stack([left, line], axis=2)
-    solved = np.linalg.solve(inner, seen)
-    products = np.stack([left, line], axis=1) @ np.stack([left, line], axis=2)
-    products = products - np.swapaxes(seen, 1, 2) @ solved
-    step = -_ratio(products[:, 0, 1], products[:, 1, 1])
-    final = np.clip(first + step, given.low, given.high)
+    left = (figures.ohm - predict(given, first)) * known
+    both = np.stack([left, given.moved**2 * known], axis=2)
+    passed = _passed_on(given, first) * known[:, None]
+    across = np.swapaxes(passed, 1, 2)
+    seen = across @ both
+    solved = np.linalg.solve(np.eye(passed.shape[2]) + across @ passed, seen)
+    products = np.swapaxes(both, 1, 2) @ both - np.swapaxes(seen, 1, 2) @ solved
+    square, mixed, line = products[:, 0, 0], products[:, 0, 1], products[:, 1, 1]
+    final = np.clip(first - _ratio(mixed, line), given.low, given.high)
     step = final - first
-    misfit = products[:, 0, 0] + 2 * step * products[:, 0, 1] + step**2 * products[:, 1, 1]
-    return final, np.maximum(misfit, 0.0)
+    return final, np.maximum(square + 2 * step * mixed + step**2 * line, 0.0)
 
 
 def _passed_on(given: Model, strengths: Array) -> Array:
     """Standard uncertainty (K × M × E) that each part's spread brings to each figure, ohm."""
     import numpy as np
 
-    moved = (strengths * given.moved).T
-    share = given.shares[None, :, :] - moved[:, :, None] * given.cross[:, None, :]
-    share = np.where(given.itself[:, None, :], 0.0, share)
-    return share**2 * given.spread
+    moved = strengths[:, None] * given.moved
+    share = given.shares - moved[:, :, None] * given.cross[:, None, :]
+    return np.where(given.itself[:, None, :], 0.0, share**2 * given.spread)
 
 
 def _ratio(above: Array, below: Array) -> Array:

@@ -9,7 +9,7 @@ from itertools import combinations
 from gaugelog.physics.defects import ohm
 from gaugelog.physics.pin_fit import CEILING, Ends, Figures, model, predict
 from gaugelog.physics.pin_network import ARTICLE, SHIELD
-from gaugelog.physics.pin_trials import APART, Bench, Trial, exchanged
+from gaugelog.physics.pin_trials import APART, Bench, Trial
 from gaugelog.physics.transfer import Array
 
 RIVAL = 25.0
@@ -41,15 +41,13 @@ def next_measurement(
     rivals = _rivals(groups)
     if len(rivals) < 2:
         return None
-    choices = _choices(bench, figures)
-    predicted = [_predicted(bench, trial, choices) for trial in rivals]
     doubt = _relative_doubt(figures)
-    scores = [_score([each[place] for each in predicted], doubt) for place in range(len(choices))]
-    best = max(range(len(choices)), key=lambda place: scores[place], default=None)
-    if best is None or scores[best][0] == 0:
-        return NextMeasurement(None, NO_HELP)
-    expected = [(trial, float(each[best])) for trial, each in zip(rivals, predicted, strict=True)]
-    return NextMeasurement(choices[best], _sentence(choices[best], expected))
+    # Tabs may be coated already, so pins come first wherever they part anything.
+    for choices in _choices(bench, figures):
+        found = _best(bench, rivals, choices, doubt)
+        if found is not None:
+            return found
+    return NextMeasurement(None, NO_HELP)
 
 
 def _rivals(groups: Sequence[Sequence[Trial]]) -> list[Trial]:
@@ -59,22 +57,42 @@ def _rivals(groups: Sequence[Sequence[Trial]]) -> list[Trial]:
     return first + close
 
 
-def _choices(bench: Bench, figures: Figures) -> list[Ends]:
-    """Pairs not yet measured: of pins first, then those that reach to the tabs."""
+def _choices(bench: Bench, figures: Figures) -> tuple[list[Ends], list[Ends]]:
+    """Pairs of terminals not yet measured, and pairs that reach to the tabs."""
     terminals = (*bench.pins, ARTICLE, SHIELD)
     tabs = [node for node in bench.network.nodes if node not in bench.pins]
     done = {frozenset(pair) for pair in figures.ends}
     outer = [pair for pair in combinations(terminals, 2) if frozenset(pair) not in done]
     inner = [pair for pair in combinations((*terminals, *tabs), 2) if pair[1] in tabs]
-    return outer + inner
+    return outer, inner
 
 
-def _predicted(bench: Bench, trial: Trial, choices: Sequence[Ends]) -> Array:
+def _best(
+    bench: Bench, rivals: Sequence[Trial], choices: Sequence[Ends], doubt: float
+) -> NextMeasurement | None:
+    """The choice that parts most rivals, the closest by most; None where none parts any."""
     import numpy as np
 
-    ends = exchanged(choices, trial.suspect)
-    given = model(bench.solved, bench.network, bench.spread, ends, [trial.suspect])
-    return predict(given, np.array([trial.strength]))[:, 0]
+    if not choices:
+        return None
+    predicted = _predicted(bench, rivals, choices)
+    gaps = _gaps(predicted, doubt)
+    parted = gaps > APART
+    closest = np.where(parted, gaps, np.inf).min(axis=(0, 1))
+    best = max(range(len(choices)), key=lambda place: (parted[..., place].sum(), closest[place]))
+    if not parted[..., best].any():
+        return None
+    expected = [(trial, float(each[best])) for trial, each in zip(rivals, predicted, strict=True)]
+    return NextMeasurement(choices[best], _sentence(choices[best], expected))
+
+
+def _predicted(bench: Bench, rivals: Sequence[Trial], choices: Sequence[Ends]) -> Array:
+    """What each rival (rows) expects of each choice, ohm."""
+    import numpy as np
+
+    suspected = [each.suspect for each in rivals]
+    given = model(bench.solved, bench.network, bench.spread, choices, suspected)
+    return predict(given, np.array([each.strength for each in rivals]))
 
 
 def _relative_doubt(figures: Figures) -> float:
@@ -84,19 +102,14 @@ def _relative_doubt(figures: Figures) -> float:
     return float(np.median(figures.sigma / np.maximum(figures.ohm, figures.sigma)))
 
 
-def _score(predicted: Sequence[float], doubt: float) -> tuple[int, float]:
-    """How many pairs of explanations a measurement parts, and by how much the closest of them."""
-    gaps = [_gap(one, other, doubt) for one, other in combinations(predicted, 2)]
-    parted = [gap for gap in gaps if gap > APART]
-    return len(parted), min(parted, default=0.0)
+def _gaps(predicted: Array, doubt: float) -> Array:
+    """Standard uncertainties between each two rivals in each choice; two overloads are alike."""
+    import numpy as np
 
-
-def _gap(one: float, other: float, doubt: float) -> float:
-    """Standard uncertainties between two expected figures; two that overload are alike."""
-    low, high = sorted((max(one, 0.0), max(other, 0.0)))
-    if low >= CEILING:
-        return 0.0
-    return (high - low) / (doubt * max(high if high < CEILING else low, 1.0))
+    shown = np.clip(predicted, 1.0, CEILING)
+    low = np.minimum(shown[:, None], shown[None])
+    high = np.maximum(shown[:, None], shown[None])
+    return (high - low) / (doubt * np.where(high < CEILING, high, low))
 
 
 def _sentence(pair: Ends, expected: Sequence[tuple[Trial, float]]) -> str:

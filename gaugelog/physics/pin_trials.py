@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.defects import Defect, Suspect, found, suspects
 from gaugelog.physics.network import Network, Resistor
-from gaugelog.physics.pin_fit import LEAST, Ends, Figures, fit, model
+from gaugelog.physics.pin_fit import LEAST, Figures, Fit, fit, model
 from gaugelog.physics.pin_network import ARTICLE, SHIELD, pin_network, pins_of
 from gaugelog.physics.transfer import Array, Transfer, solve
 
@@ -16,6 +16,8 @@ APART = 3.0
 """Standard uncertainties that two figures must be apart to be told apart."""
 SIZE_COST = 9.0
 """What a defect of free size must gain in misfit over one without: three sigma."""
+MOST_ANSWERS = 10
+"""Answers that a diagnosis gives."""
 
 
 @dataclass(frozen=True)
@@ -76,63 +78,50 @@ def ranked(bench: Bench, figures: Figures) -> list[Trial]:
 
     Source: generalised least squares.
     """
-    straight = [each for each in bench.suspected if not each.swap]
-    trials = _tried(bench, figures, straight, figures.ends)
-    for each in bench.suspected:
-        if each.swap:
-            trials += _tried(bench, figures, [each], exchanged(figures.ends, each))
+    given = model(bench.solved, bench.network, bench.spread, figures.ends, bench.suspected)
+    result = fit(given, figures)
+    trials = [_trial(bench, result, place) for place in range(len(bench.suspected))]
     sound = trials[0].misfit
     kept = [each for each in trials if not each.suspect.sized or each.misfit < sound]
     return sorted(kept, key=lambda each: each.misfit)
 
 
 def grouped(trials: Sequence[Trial], figures: Figures) -> list[list[Trial]]:
-    """Trials that the figures cannot tell from a better one, together with it.
+    """The best answers: each the best trial left, with those that no figure parts from it.
 
     Source: three standard uncertainties in every figure (common practice).
     """
+    import numpy as np
+
     groups: list[list[Trial]] = []
-    for trial in trials:
-        home = next((group for group in groups if _alike(group[0], trial, figures)), None)
-        if home is None:
-            groups.append([trial])
-        else:
-            home.append(trial)
+    left = list(trials)
+    while left and len(groups) < MOST_ANSWERS:
+        alike = _alike(left, figures)
+        groups.append([each for each, same in zip(left, alike, strict=True) if same])
+        left = [each for each, same in zip(left, np.logical_not(alike), strict=True) if same]
     # Where nothing need be wrong, that is said first, whatever the noise favours.
     return [sorted(group, key=lambda each: each.defect.kind != "nothing") for group in groups]
 
 
-def exchanged(ends: Sequence[Ends], suspect: Suspect) -> tuple[Ends, ...]:
-    """The terminals that a meter really touches where a suspect has two wires swapped.
-
-    Source: the swap itself.
-    """
-    swap = suspect.swap
-    return tuple((swap.get(start, start), swap.get(end, end)) for start, end in ends)
-
-
-def _tried(
-    bench: Bench, figures: Figures, suspected: Sequence[Suspect], ends: Sequence[Ends]
-) -> list[Trial]:
-    given = model(bench.solved, bench.network, bench.spread, ends, suspected)
-    result = fit(given, figures)
-    return [
-        Trial(
-            suspect,
-            found(suspect, float(result.size[place]) if suspect.sized else None, bench.nominal),
-            result.predicted[:, place],
-            float(result.misfit[place]) + (SIZE_COST if suspect.sized else 0.0),
-            float(result.strength[place]),
-        )
-        for place, suspect in enumerate(suspected)
-    ]
+def _trial(bench: Bench, result: Fit, place: int) -> Trial:
+    suspect = bench.suspected[place]
+    size = float(result.size[place]) if suspect.sized else None
+    return Trial(
+        suspect,
+        found(suspect, size, bench.nominal),
+        result.predicted[place],
+        float(result.misfit[place]) + (SIZE_COST if suspect.sized else 0.0),
+        float(result.strength[place]),
+    )
 
 
-def _alike(first: Trial, second: Trial, figures: Figures) -> bool:
-    """Whether no figure parts them by three standard uncertainties, nor all figures together."""
+def _alike(trials: Sequence[Trial], figures: Figures) -> Array:
+    """Which trials no figure parts from the first by three sigma, nor all figures together."""
     import numpy as np
 
-    apart = np.abs(first.predicted - second.predicted) / figures.sigma
-    one, other = first.predicted < figures.ohm, second.predicted < figures.ohm
-    apart = np.where(figures.overload, np.where(one == other, 0.0, np.inf), apart)
-    return bool((apart <= APART).all()) and second.misfit - first.misfit <= SIZE_COST
+    predicted = np.array([each.predicted for each in trials])
+    misfit = np.array([each.misfit for each in trials])
+    apart = np.abs(predicted - predicted[0]) > APART * figures.sigma
+    under = predicted < figures.ohm
+    parted = np.where(figures.overload, under != under[0], apart).any(axis=1)
+    return ~parted & (misfit - misfit[0] <= SIZE_COST)

@@ -39,9 +39,9 @@ class Transfer:
         import numpy as np
 
         columns = np.zeros((len(self.place), len(ends)))
-        for column, (start, end) in enumerate(ends):
-            columns[self.place[start], column] += 1.0
-            columns[self.place[end], column] -= 1.0
+        order = np.arange(len(ends))
+        columns[[self.place[start] for start, _ in ends], order] += 1.0
+        columns[[self.place[end] for _, end in ends], order] -= 1.0
         return columns
 
     def between(self, rows: Array, columns: Array) -> Array:

@@ -33,7 +33,6 @@ CHECKS = (
     pin_trials.bench_of,
     pin_trials.ranked,
     pin_trials.grouped,
-    pin_trials.exchanged,
     pin_next.next_measurement,
 )
 SIZES = {"open": math.inf, "across": 470.0, "joint": 25.0, "value": 120.0}
@@ -75,7 +74,7 @@ def test_every_suspect_moves_the_figures_as_the_simulator_says(tmp_path: Path) -
         for ends in ENDS
     ]
     expected = np.reshape(resistances(asked, tmp_path), (len(tried), len(ENDS)))
-    closed = np.minimum(predicted.T, pin_fit.CEILING)
+    closed = np.minimum(predicted, pin_fit.CEILING)
     assert np.minimum(expected, pin_fit.CEILING) == pytest.approx(closed, rel=1e-6)
     finite = transfer.changed_resistance(given.present, given.own, strengths)
     assert wanted == pytest.approx(finite, rel=1e-3)
@@ -114,7 +113,7 @@ def test_a_swap_reads_as_the_simulator_says(tmp_path: Path) -> None:
             )
         )
         expected = resistances([(rewired, *ends) for ends in ENDS], tmp_path)
-        touched = pin_trials.exchanged(ENDS, each)
+        touched = each.touched(ENDS)
         found = [resistance_between(network, *ends) for ends in touched]
         assert expected == pytest.approx(found, rel=1e-9)
 
@@ -186,12 +185,11 @@ def test_the_ranking_is_a_brute_force_ranking() -> None:
 
 
 def _brute(bench: Bench, figures: Figures, suspect: Suspect) -> float:
-    touched = pin_trials.exchanged(ENDS, suspect)
+    touched = suspect.touched(ENDS)
     network = bench.network
     if suspect.family == "open":
         network = network.changed(suspect.where[0], transfer.AIR)
-    moved = Figures(touched, figures.ohm, figures.sigma, figures.overload)
-    return _misfit_at(bench, moved, network, touched, suspect)
+    return _misfit_at(bench, figures, network, touched, suspect)
 
 
 def _misfit_at(
