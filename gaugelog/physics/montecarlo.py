@@ -113,17 +113,17 @@ def agreement_notices(found: Budget, simulated: Simulation, digits: int = 2) -> 
     """A notice where budget and simulation disagree on either end of the coverage interval.
 
     They agree when both ends differ by no more than δ for so many digits of the uncertainty, the
-    scatter of the simulation's own ends allowed for. Source: JCGM 101:2008, 8.1.
+    scatter of the simulation's own ends allowed for; the budget's middle is moved by its shift.
+    Source: JCGM 101:2008, 8.1.
     """
     half = found.expanded(simulated.confidence)
     allowed = numerical_tolerance(found.uncertainty, digits) + 3 * _scatter(simulated)
-    below = abs(found.value - half - simulated.low)
-    above = abs(found.value + half - simulated.high)
-    if max(below, above) <= allowed:
+    middle = found.value + found.shift
+    if max(abs(middle - half - simulated.low), abs(middle + half - simulated.high)) <= allowed:
         return ()
     message = (
-        f"Budget and simulation disagree: {found.value - half:.4g} to {found.value + half:.4g} "
-        f"against {simulated.low:.4g} to {simulated.high:.4g}; trust the simulation."
+        f"Budget and simulation disagree: {middle - half:.5g} to {middle + half:.5g} "
+        f"against {simulated.low:.5g} to {simulated.high:.5g}; trust the simulation."
     )
     return (Notice("uncertainty budget", message, f"{JCGM_101}, 8.1"),)
 
