@@ -38,6 +38,20 @@ def output_ratio(arm_1: Number, arm_2: Number, arm_3: Number, arm_4: Number) -> 
     return arm_1 / (arm_1 + arm_2) - arm_4 / (arm_3 + arm_4)
 
 
+def current_output(arm_1: Number, arm_2: Number, arm_3: Number, arm_4: Number) -> Number:
+    """Exact output of four arms on a constant current: (R1 R3 − R2 R4)/(R1 + R2 + R3 + R4).
+
+    Units: ohm in, volt per ampere of supply out.
+    Source: Dally and Riley, Experimental Stress Analysis, constant-current bridge (from memory).
+
+    >>> current_output(352.0, 350.0, 350.0, 350.0)
+    0.4992867332382311
+    """
+    for name, value in zip(ARM_NAMES, (arm_1, arm_2, arm_3, arm_4), strict=True):
+        positive(name, value)
+    return (arm_1 * arm_3 - arm_2 * arm_4) / (arm_1 + arm_2 + arm_3 + arm_4)
+
+
 def linear_ratio(
     arms: tuple[Number, Number, Number, Number], changes: tuple[Number, Number, Number, Number]
 ) -> Number:

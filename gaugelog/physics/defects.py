@@ -133,7 +133,7 @@ def ohm(value: float) -> str:
     '2.1 MΩ'
     """
     for scale, unit in ((1e9, "GΩ"), (1e6, "MΩ"), (1e3, "kΩ")):
-        if value >= scale:
+        if float(f"{value:.4g}") >= scale:
             return f"{value / scale:.3g} {unit}"
     return f"{value:.1f} Ω"
 

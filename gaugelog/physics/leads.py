@@ -100,6 +100,19 @@ def temperature_strain(
     return (own - beside) * warming / not_zero("setting", setting)
 
 
+def sensitivity_drift(
+    layout: str, grid: Number, wire: Number, coefficient: Number, rise: Number
+) -> Number:
+    """Relative change of sensitivity when the wires warm: their loss grows with them.
+
+    What is left of the apparent strain in half and full bridges, whose zero does not move. Units:
+    ohm, 1/K, K in, ratio out. Source: as `desensitisation`, at two temperatures.
+    """
+    growth = 1 + finite("coefficient", coefficient) * finite("rise", rise)
+    warm = desensitisation(layout, grid, wire * growth)
+    return warm / desensitisation(layout, grid, wire) - 1
+
+
 def initial_offset(
     grid: Number, wires: Number, completion: Number, neighbour: Number = 0.0
 ) -> Number:

@@ -18,6 +18,7 @@ CHECKS = (
     arrangements.arrangement,
     arrangements.bridge_factor,
     bridge.output_ratio,
+    bridge.current_output,
     bridge.linear_ratio,
     bridge.strain_output,
     bridge.indicated_strain,
@@ -51,6 +52,20 @@ def test_any_four_arms_put_out_what_a_circuit_simulator_says(tmp_path: Path) -> 
     for (one, two, three, four), volts in zip(arms, found, strict=True):
         expected = volts["plus"] - volts["minus"]
         assert expected == pytest.approx(bridge.output_ratio(one, two, three, four), abs=1e-9)
+
+
+@needs("ngspice")
+def test_on_a_constant_current_the_arms_put_out_what_a_circuit_simulator_says(
+    tmp_path: Path,
+) -> None:
+    draw = np.random.default_rng(9)
+    arms = [tuple(draw.uniform(50, 5000) for _ in range(4)) for _ in range(100)]
+    found = voltages(
+        [Bench(four_arms((a, b, c, d)), current=("high", "low")) for a, b, c, d in arms], tmp_path
+    )
+    for (one, two, three, four), volts in zip(arms, found, strict=True):
+        expected = volts["plus"] - volts["minus"]
+        assert expected == pytest.approx(bridge.current_output(one, two, three, four), rel=1e-9)
 
 
 @needs("ngspice")

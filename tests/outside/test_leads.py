@@ -19,6 +19,7 @@ CHECKS = (
     leads.effective_factor,
     leads.added_gauge_strain,
     leads.temperature_strain,
+    leads.sensitivity_drift,
     leads.initial_offset,
     leads.initial_strain,
     leads.initial_offset_strain,
@@ -93,6 +94,10 @@ def test_the_loss_is_the_simulators_slope(layout: str, tmp_path: Path) -> None:
     assert expected == pytest.approx(leads.desensitisation(layout, grid, wire), rel=2e-5)
     assert 1 - expected == pytest.approx(leads.sensitivity_loss(layout, grid, wire), abs=2e-5)
     assert 1 / expected == pytest.approx(leads.correction_factor(layout, grid, wire), rel=2e-5)
+    warm = _output(layout, grid, wire * 1.15, 1e-3, tmp_path)
+    warm -= _output(layout, grid, wire * 1.15, -1e-3, tmp_path)
+    drift = leads.sensitivity_drift(layout, grid, wire, 0.005, 30.0)
+    assert warm / with_wires - 1 == pytest.approx(drift, abs=2e-6)
 
 
 @needs("ngspice")

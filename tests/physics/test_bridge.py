@@ -31,6 +31,15 @@ def test_the_output_depends_on_ratios_of_arms_alone(
 
 
 @given(OHM, OHM, OHM, OHM)
+def test_a_constant_current_drives_the_ratio_through_the_bridges_resistance(
+    one: float, two: float, three: float, four: float
+) -> None:
+    seen = (one + two) * (three + four) / (one + two + three + four)
+    found = bridge.current_output(one, two, three, four)
+    assert bridge.output_ratio(one, two, three, four) * seen == pytest.approx(found, abs=1e-9)
+
+
+@given(OHM, OHM, OHM, OHM)
 def test_exchanging_neighbours_turns_the_sign(
     one: float, two: float, three: float, four: float
 ) -> None:
@@ -109,6 +118,7 @@ def test_every_formula_takes_floats_arrays_and_uncertain_numbers(name: str) -> N
 
 def test_four_arms_take_floats_arrays_and_uncertain_numbers() -> None:
     assert_takes_every_kind(bridge.output_ratio, 351.0, 349.0, 352.0, 350.0)
+    assert_takes_every_kind(bridge.current_output, 351.0, 349.0, 352.0, 350.0)
 
 
 def test_a_notice_counts_the_worst_of_an_array() -> None:

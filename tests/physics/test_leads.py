@@ -90,6 +90,14 @@ def test_equal_wires_leave_no_offset(grid: float, wire: float, more: float) -> N
     assert leads.initial_offset(grid, wire + more, grid, wire) >= -1e-15
 
 
+@given(LAYOUT, GRID, st.floats(0.1, 50.0), st.floats(0.1, 60.0))
+def test_warm_wires_take_more_unless_the_supply_is_sensed(
+    layout: str, grid: float, wire: float, rise: float
+) -> None:
+    drift = leads.sensitivity_drift(layout, grid, wire, 0.00393, rise)
+    assert (drift == 0.0) if LAYOUTS[layout].sensed else (-0.2 < drift < 0.0)
+
+
 def test_only_two_wires_are_noticed() -> None:
     assert () == leads.desensitisation_notices("quarter three-wire", 120.0, 6.0)
     assert () == leads.desensitisation_notices("quarter two-wire", 120.0, 0.0)
@@ -125,6 +133,9 @@ def test_every_formula_takes_floats_arrays_and_uncertain_numbers() -> None:
         )
     assert_takes_every_kind(leads.added_gauge_strain, 350.0, 4.0, 0.00393, 10.0, 2.0)
     assert_takes_every_kind(leads.temperature_strain, 350.0, 4.0, 3.8, 0.00393, 10.0, 2.0)
+    assert_takes_every_kind(
+        lambda *given: leads.sensitivity_drift("full four-wire", *given), 350.0, 4.0, 0.00393, 10.0
+    )
     assert_takes_every_kind(leads.initial_offset, 351.2, 1.0, 350.0, 1.1)
     assert_takes_every_kind(leads.initial_strain, 351.2, 1.0, 2.0)
     assert_takes_every_kind(conductors.at_temperature, 4.0, 35.0, 0.00393, 20.0)
