@@ -91,10 +91,10 @@ def _keys() -> Iterator[Finding]:
     if not os.access(home, os.W_OK):
         yield Finding("trouble", "Keys", f"{home} can't be written", "Mend its permissions.")
         return
-    if os.name == "posix" and home.stat().st_mode & 0o077:
-        yield Finding(
-            "trouble", "Keys", f"{home} can be read by others", f"Run: chmod -R go= {home}"
-        )
+    open_files = [file for file in home.rglob("*.p12") if file.stat().st_mode & 0o077]
+    if os.name == "posix" and open_files:
+        what = f"{open_files[0]} can be read by others"
+        yield Finding("trouble", "Keys", what, f"Run: chmod -R go= {home}")
         return
     yield Finding("ok", "Keys", f"kept in {home}")
 

@@ -80,6 +80,7 @@ def show(
 ) -> None:
     """Show entries: the newest, one by number, or those about a subject."""
     from gaugelog.work.history import entries_about
+    from gaugelog.work.telling import labels
 
     logbook = open_logbook(ctx)
     found = entries_about(logbook, about)[-last:]
@@ -88,18 +89,22 @@ def show(
     elif about.isdigit():
         put_json(_entry_json(found[0]))
     else:
+        with logbook.reading() as view:
+            names = labels(view)
         put_table(
             "Journal",
             [">entry", "time (UTC)", "by", "what", "about"],
-            [_entry_row(entry) for entry in found],
+            [_entry_row(entry, names) for entry in found],
             empty="No entry is about that.",
         )
 
 
-def _entry_row(entry: Entry) -> list[str]:
+def _entry_row(entry: Entry, names: dict[str, str]) -> list[str]:
+    from gaugelog.work.telling import about_line, what_line
+
     header = entry.header
-    about = ", ".join(entry.body.about) if entry.body else "body withheld"
-    return [str(header.seq), header.time[:19].replace("T", " "), header.actor, header.kind, about]
+    when = header.time[:16].replace("T", " ")
+    return [str(header.seq), when, header.actor, what_line(entry), about_line(entry, names)]
 
 
 def _entry_json(entry: Entry) -> dict[str, Any]:

@@ -50,7 +50,9 @@ def next_(
 def _tell_step(found: NextStep) -> None:
     put(f"{found.point}, zone {found.zone}: {found.state}")
     if found.step is None:
-        put(*found.blocks, *([] if found.blocks else [f"Next: gaugelog submit {found.point}"]))
+        put(*found.blocks)
+        if found.title != "none":
+            put(f"Next: gaugelog submit {found.point}")
         return
     step = found.step
     hold = ", a HOLD: a second person decides" if step.hold else ""

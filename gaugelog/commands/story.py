@@ -41,7 +41,7 @@ class Story:
     logbook: Logbook | None = None
 
     def acts(self, home: Path) -> list[tuple[str, Callable[[], None]]]:
-        """Everything that is played, in order: a title and the deed. `home` is the demo's folder."""
+        """Everything that is played, in order: a title and the deed; `home` is the demo's."""
         first = [
             ("start the logbook, enrol people", lambda: self._start(home)),
             ("receive stock, enter meters", self._stock),

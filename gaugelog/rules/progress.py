@@ -57,7 +57,9 @@ class NextStep:
     @property
     def title(self) -> str:
         """The step's title, or what to do at the end of the route."""
-        return self.step.title if self.step is not None else "submit the record"
+        if self.step is not None:
+            return self.step.title
+        return "none" if self.state in {"accepted", "awaiting review"} else "submit the record"
 
 
 def worst_state(states: Sequence[str]) -> str:
@@ -92,7 +94,7 @@ def next_step(
     state = state_of(view, point)
     found = open_step(view.known(), point.model_dump())
     if found is None:
-        blocks = () if state not in {"awaiting review", "accepted"} else (f"It is {state}.",)
+        blocks = ("Wait for the review.",) if state == "awaiting review" else ()
         return NextStep(point.label, point.zone, state, count, count, None, "", "", (), blocks)
     windows = tuple(_windows(view, point, found, observed or now.utc, now))
     return NextStep(
