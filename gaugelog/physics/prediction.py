@@ -12,14 +12,14 @@ from collections.abc import Collection
 from gaugelog.physics._maths import Number
 from gaugelog.physics.arrangements import arrangement, bridge_factor
 from gaugelog.physics.bridge import indicated_strain
-from gaugelog.physics.circuit import (
+from gaugelog.physics.circuit import Circuit
+from gaugelog.physics.layouts import (
     HALF_MINUS,
     HALF_PLUS,
     SIGNAL_MINUS,
     SIGNAL_PLUS,
     SUPPLY_MINUS,
     SUPPLY_PLUS,
-    Circuit,
 )
 from gaugelog.physics.network import (
     Network,

@@ -14,7 +14,7 @@ from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.physics.arrangements import ARRANGEMENTS
-from gaugelog.physics.circuit import layout_for
+from gaugelog.physics.layouts import layout_for
 from gaugelog.physics.leads import sensitivity_loss
 from gaugelog.physics.validity import OutOfDomain
 

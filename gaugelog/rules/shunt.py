@@ -5,8 +5,9 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from gaugelog.physics.circuit import SENSE_MINUS, SIGNAL_PLUS, SUPPLY_MINUS, Circuit
+from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.conformity import Judgement, Limits, Words, judge, undecided
+from gaugelog.physics.layouts import SENSE_MINUS, SIGNAL_PLUS, SUPPLY_MINUS
 from gaugelog.physics.prediction import added_strain
 
 RULE = "shunt 1"

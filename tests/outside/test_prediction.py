@@ -11,7 +11,7 @@ from pathlib import Path
 import numpy as np
 import pytest
 
-from gaugelog.physics import circuit, prediction
+from gaugelog.physics import circuit, layouts, prediction
 from gaugelog.physics.arrangements import ARRANGEMENTS
 from gaugelog.physics.circuit import Circuit, Element
 from gaugelog.physics.network import Network, Resistor
@@ -20,8 +20,8 @@ from tests.outside.cases import Case, case
 from tests.outside.spice import Bench, resistances, voltages
 
 CHECKS = (
-    circuit.layout,
-    circuit.layout_for,
+    layouts.layout,
+    layouts.layout_for,
     circuit.circuit_of,
     prediction.network_of,
     prediction.output,
@@ -103,7 +103,7 @@ def _trial(draw: np.random.Generator, name: str) -> Trial:
             drawn.append(Resistor(f"a{what}", start, end, total))
     first, second = draw.permutation(len(corners))[:2]
     pair = sorted(corners)[first], sorted(corners)[second]
-    built = Circuit(circuit.layout(name), (arms[1], arms[2], arms[3], arms[4]), wires)
+    built = Circuit(layouts.layout(name), (arms[1], arms[2], arms[3], arms[4]), wires)
     return Trial(built, Network(tuple(drawn)), float(10 ** draw.uniform(3.5, 7)), pair)
 
 
@@ -175,7 +175,7 @@ def test_each_arrangement_loses_what_the_simulator_says(
     ideal = factor * (one - two + three - four) / 4
     expected = (readings[0] - readings[1]) / (2 * step) / ideal
     wired = circuit.circuit_of(name, wires, grid, factor, wire)
-    assert picture == circuit.layout_for(name, wires).name
+    assert picture == layouts.layout_for(name, wires).name
     assert expected == pytest.approx(prediction.sensitivity(wired, name, poisson), rel=1e-6)
     strained = prediction.strained_output(wired, name, step, poisson)
     assert readings[0] == pytest.approx(strained, abs=1e-12)

@@ -9,7 +9,8 @@ from hypothesis import strategies as st
 from gaugelog.physics import prediction
 from gaugelog.physics.arrangements import ARRANGEMENTS
 from gaugelog.physics.bridge import actual_strain, indicated_strain, output_ratio
-from gaugelog.physics.circuit import LAYOUTS, Circuit, Element, circuit_of, layout, layout_for
+from gaugelog.physics.circuit import Circuit, Element, circuit_of
+from gaugelog.physics.layouts import LAYOUTS, layout, layout_for
 from gaugelog.physics.validity import OutOfDomain
 from tests.physics.kinds import assert_takes_every_kind
 

@@ -9,7 +9,8 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from gaugelog.physics import conductors, leads
-from gaugelog.physics.circuit import LAYOUTS, circuit_of
+from gaugelog.physics.circuit import circuit_of
+from gaugelog.physics.layouts import LAYOUTS
 from gaugelog.physics.prediction import sensitivity
 from gaugelog.physics.validity import OutOfDomain
 from tests.physics.kinds import assert_takes_every_kind
