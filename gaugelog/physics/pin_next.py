@@ -8,8 +8,7 @@ from itertools import combinations
 
 from gaugelog.physics.defects import ohm
 from gaugelog.physics.pin_fit import CEILING, Ends, Figures, model, predict
-from gaugelog.physics.pin_network import ARTICLE, SHIELD
-from gaugelog.physics.pin_trials import APART, Bench, Trial
+from gaugelog.physics.pin_trials import APART, Bench, Trial, terminals_of
 from gaugelog.physics.transfer import Array
 
 RIVAL = 25.0
@@ -58,13 +57,11 @@ def _rivals(groups: Sequence[Sequence[Trial]]) -> list[Trial]:
 
 
 def _choices(bench: Bench, figures: Figures) -> tuple[list[Ends], list[Ends]]:
-    """Pairs of terminals not yet measured, and pairs that reach to the tabs."""
-    terminals = (*bench.pins, ARTICLE, SHIELD)
-    tabs = [node for node in bench.network.nodes if node not in bench.pins]
+    """Pairs not yet measured: of pins and bare metal, then those that reach to the tabs."""
     done = {frozenset(pair) for pair in figures.ends}
-    outer = [pair for pair in combinations(terminals, 2) if frozenset(pair) not in done]
-    inner = [pair for pair in combinations((*terminals, *tabs), 2) if pair[1] in tabs]
-    return outer, inner
+    pairs = [pair for pair in combinations(terminals_of(bench), 2) if frozenset(pair) not in done]
+    inner = [pair for pair in pairs if pair[1].endswith(" tab")]
+    return [pair for pair in pairs if pair not in inner], inner
 
 
 def _best(

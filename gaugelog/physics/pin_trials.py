@@ -73,6 +73,15 @@ def bench_of(circuit: Circuit, part_spread: float, wire_spread: float, plugged: 
     )
 
 
+def terminals_of(bench: Bench) -> tuple[str, ...]:
+    """Where a meter can be put: pins, bare metal, shield, and the tabs at the article.
+
+    Source: the circuit's layout.
+    """
+    tabs = (node for node in bench.network.nodes if node.endswith(" tab"))
+    return (*bench.pins, ARTICLE, SHIELD, *tabs)
+
+
 def ranked(bench: Bench, figures: Figures) -> list[Trial]:
     """Every suspect put to the figures, best first; no size that explains less than nothing.
 

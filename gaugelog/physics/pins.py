@@ -13,9 +13,8 @@ from dataclasses import dataclass
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.defects import Defect
 from gaugelog.physics.pin_fit import CEILING, Figures
-from gaugelog.physics.pin_network import ARTICLE, SHIELD
 from gaugelog.physics.pin_next import NextMeasurement, next_measurement
-from gaugelog.physics.pin_trials import SIZE_COST, bench_of, grouped, ranked
+from gaugelog.physics.pin_trials import SIZE_COST, bench_of, grouped, ranked, terminals_of
 from gaugelog.physics.validity import OutOfDomain, not_negative, positive
 
 POOR_MISFIT = 4.0
@@ -26,7 +25,8 @@ POOR_MISFIT = 4.0
 class PinReading:
     """A resistance between two terminals, ohm, with its standard uncertainty in ohm.
 
-    An `overload` reads as above `ohm`. Terminals are pins, `ARTICLE` and `SHIELD`.
+    An `overload` reads as above `ohm`. Terminals are pins, `ARTICLE`, `SHIELD`, and where they
+    can be reached the tabs.
     """
 
     between: tuple[str, str]
@@ -85,7 +85,7 @@ def diagnose(
     not_negative("part_spread", part_spread)
     not_negative("wire_spread", wire_spread)
     bench = bench_of(circuit, part_spread, wire_spread, plugged)
-    figures = _figures((*bench.pins, ARTICLE, SHIELD), readings)
+    figures = _figures(terminals_of(bench), readings)
     groups = grouped(ranked(bench, figures), figures)
     answers = tuple(
         Answer(tuple(trial.defect for trial in group), group[0].misfit) for group in groups

@@ -31,10 +31,12 @@ CHECKS = (
     pin_fit.fit,
     pin_fit.predict,
     pin_trials.bench_of,
+    pin_trials.terminals_of,
     pin_trials.ranked,
     pin_trials.grouped,
     pin_next.next_measurement,
 )
+TABS = ("supply+ tab", "supply- tab", "signal+ tab", "signal- tab")
 SIZES = {"open": math.inf, "across": 470.0, "joint": 25.0, "value": 120.0}
 ENDS: tuple[Ends, ...] = (
     ("supply+", "supply-"),
@@ -96,6 +98,7 @@ def _tied(network: Network) -> Network:
 @needs("ngspice")
 def test_a_swap_reads_as_the_simulator_says(tmp_path: Path) -> None:
     bench = _bench("full Poisson")
+    assert {*TABS, *bench.pins, "ARTICLE", "SHIELD"} == {*pin_trials.terminals_of(bench)}
     swaps = [each for each in bench.suspected if each.family == "swapped"]
     assert 6 == len(swaps)
     network = bench.network.changed("grid 1", 300.0)

@@ -13,11 +13,22 @@ from gaugelog.physics import defects, pin_network, pins
 from gaugelog.physics.circuit import circuit_of
 from gaugelog.physics.defects import Defect
 from gaugelog.physics.network import Network, Resistor
+from gaugelog.physics.pin_network import ARTICLE, SHIELD
 from gaugelog.physics.pins import Diagnosis, PinReading, diagnose
 from tests.foreign import needs
 from tests.outside.cases import case
 from tests.outside.spice import resistances
-from tests.physics.planted import FLOOR, METER, OVERLOAD, Planted, between, plant, read, shows
+from tests.physics.planted import (
+    FLOOR,
+    METER,
+    OVERLOAD,
+    Planted,
+    between,
+    exact,
+    plant,
+    read,
+    shows,
+)
 
 CHECKS = (
     pin_network.pin_network,
@@ -171,3 +182,28 @@ def test_the_next_measurement_parts_what_the_first_could_not(tmp_path: Path) -> 
         [(_without_open(whole.changed("grid 1", math.inf)), *wanted.between)], tmp_path
     )
     assert f"about {defects.ohm(expected[0])}" in wanted.sentence
+
+
+def test_following_the_named_measurements_leads_to_the_defect() -> None:
+    """From one reading of a pair on, each next reading is the one that the last answer named."""
+    draw = np.random.default_rng(14)
+    ends = Counter[str]()
+    for _ in range(60):
+        planted = plant(draw)
+        if planted.defect.kind in ("open", "joint", "short") and shows(planted):
+            ends[_followed(planted)] += 1
+    assert 25 <= sum(ends.values())
+    assert 0.9 <= ends["first"] / sum(ends.values())
+
+
+def _followed(planted: Planted) -> str:
+    """Where the defect stands once the answers name no further measurement."""
+    pairs = [pair for pair in planted.pairs if ARTICLE not in pair and SHIELD not in pair]
+    readings = [exact(pair, planted.true_ohm(*pair)) for pair in pairs[: len(pairs) // 2 + 1]]
+    for _ in range(10):
+        diagnosis = diagnose(planted.circuit, readings)
+        wanted = diagnosis.next_measurement
+        if wanted is None or wanted.between is None:
+            break
+        readings.append(exact(wanted.between, planted.true_ohm(*wanted.between)))
+    return "first" if _place(diagnosis, planted.defect) == 0 else planted.defect.kind

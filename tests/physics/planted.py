@@ -65,6 +65,12 @@ def read(planted: Planted, draw: np.random.Generator) -> list[PinReading]:
     return [_reading(pair, planted.true_ohm(*pair), draw) for pair in planted.pairs]
 
 
+def exact(pair: tuple[str, str], ohm: float) -> PinReading:
+    """What a meter without noise would show."""
+    shown = min(ohm, OVERLOAD)
+    return PinReading(pair, shown, METER * shown + FLOOR, overload=ohm >= OVERLOAD)
+
+
 def _reading(pair: tuple[str, str], ohm: float, draw: np.random.Generator) -> PinReading:
     if ohm >= OVERLOAD:
         return PinReading(pair, OVERLOAD, METER * OVERLOAD, overload=True)

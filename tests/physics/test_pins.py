@@ -20,7 +20,7 @@ from gaugelog.physics.pin_network import (
 )
 from gaugelog.physics.pins import Diagnosis, PinReading, diagnose
 from gaugelog.physics.validity import OutOfDomain
-from tests.physics.planted import FLOOR, METER, OVERLOAD, Planted
+from tests.physics.planted import OVERLOAD, Planted, exact
 
 SIX = circuit_of("full bending", 6, 350.0, 2.0, 3.0)
 THREE = circuit_of("quarter three-wire", 3, 120.0, 2.0, 1.5)
@@ -29,12 +29,7 @@ THREE = circuit_of("quarter three-wire", 3, 120.0, 2.0, 1.5)
 def _diagnosed(circuit: Circuit, network: Network, **swap: str) -> Diagnosis:
     """What exact readings of every pair of terminals are taken to mean."""
     planted = Planted(circuit, network, network, swap, Defect("nothing"))
-    return diagnose(circuit, [_exact(pair, planted.true_ohm(*pair)) for pair in planted.pairs])
-
-
-def _exact(pair: tuple[str, str], ohm: float) -> PinReading:
-    shown = min(ohm, OVERLOAD)
-    return PinReading(pair, shown, METER * shown + FLOOR, overload=ohm >= OVERLOAD)
+    return diagnose(circuit, [exact(pair, planted.true_ohm(*pair)) for pair in planted.pairs])
 
 
 def test_a_sound_circuit_has_nothing_wrong() -> None:
@@ -124,7 +119,7 @@ def test_a_module_plugged_in_shows_its_own_arms() -> None:
     assert {"supply-", "supply+", "signal+", "signal-", "completion"} == set(pins)
     planted = Planted(THREE, whole, whole, {}, Defect("nothing"))
     pairs = [(one, other) for place, one in enumerate(pins) for other in pins[place + 1 :]]
-    readings = [_exact(pair, planted.true_ohm(*pair)) for pair in pairs]
+    readings = [exact(pair, planted.true_ohm(*pair)) for pair in pairs]
     diagnosis = diagnose(THREE, readings, plugged=True)
     assert Defect("missing completion", ("resistor 2",)) == diagnosis.answers[0].defects[0]
 
