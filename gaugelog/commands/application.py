@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from pathlib import Path
 from typing import Annotated
 
@@ -31,6 +32,14 @@ stdout, talk to stderr. Try `gaugelog demo` first.
 """
 
 
+SET_UP, WORK, LOOK = "Set up", "Plan and work", "Look, check, compute"
+_PANELS = {
+    **dict.fromkeys(("person", "stock", "instrument"), SET_UP),
+    **dict.fromkeys(("plan", "step"), WORK),
+    "journal": LOOK,
+}
+
+
 def application() -> typer.Typer:
     """The whole command line as one Typer application."""
     app = typer.Typer(
@@ -38,19 +47,17 @@ def application() -> typer.Typer:
         help=_HELP,
         no_args_is_help=True,
         pretty_exceptions_enable=False,
+        rich_markup_mode="markdown",
         context_settings={"help_option_names": ["-h", "--help"]},
     )
     app.callback()(_root)
-    app.command("start")(start.start)
+    app.command("start", rich_help_panel=SET_UP)(start.start)
     for name, group in _GROUPS.items():
-        app.add_typer(group, name=name)
-    for command in (review.submit, review.accept):
-        app.command(command.__name__)(command)
-    app.command("return")(review.give_back)
-    app.command("record")(record.record)
-    app.command("calc")(calc.calc)
-    app.command("doctor")(doctor.doctor)
-    app.command("demo")(demo.demo)
+        app.add_typer(group, name=name, rich_help_panel=_PANELS[name])
+    for name, command in _AT_WORK.items():
+        app.command(name, rich_help_panel=WORK)(command)
+    for command in (calc.calc, doctor.doctor, demo.demo):
+        app.command(command.__name__, rich_help_panel=LOOK)(command)
     return app
 
 
@@ -61,6 +68,12 @@ _GROUPS: dict[str, typer.Typer] = {
     "plan": plan.group,
     "step": step.group,
     "journal": journal.group,
+}
+_AT_WORK: dict[str, Callable[..., None]] = {
+    "submit": review.submit,
+    "accept": review.accept,
+    "return": review.give_back,
+    "record": record.record,
 }
 
 
@@ -82,6 +95,8 @@ def _root(
     debug: Annotated[
         bool, typer.Option("--debug", help="Show the traceback of an unexpected error.")
     ] = False,
-    version: Annotated[bool, typer.Option("--version", is_eager=True, callback=_version)] = False,
+    version: Annotated[
+        bool, typer.Option("--version", is_eager=True, callback=_version, help="Tell the version.")
+    ] = False,
 ) -> None:
     ctx.obj = Place(logbook)

@@ -120,6 +120,14 @@ def _entry_json(entry: Entry) -> dict[str, Any]:
 
 
 @group.command()
+def rebuild(ctx: typer.Context) -> None:
+    """Throw the ledger's tables away and fold them anew from the journal, which is untouched."""
+    logbook = open_logbook(ctx)
+    logbook.rebuild()
+    say("The ledger is rebuilt. Next: gaugelog journal check")
+
+
+@group.command()
 def export(
     ctx: typer.Context,
     folder: Annotated[Path, typer.Argument(help="A new or empty folder.")],

@@ -1,0 +1,88 @@
+"""A played demo to try commands on, made once for each worker; keys cheap to unlock."""
+
+from __future__ import annotations
+
+import os
+import shutil
+from collections.abc import Callable
+from dataclasses import dataclass
+from pathlib import Path
+
+import pytest
+
+from gaugelog.commands import run, session, story
+from gaugelog.journal.keys import KeyFolder
+
+CHEAP_ROUNDS = 1000
+
+
+@dataclass(frozen=True)
+class Outcome:
+    """What a command gave: its exit code, data and talk."""
+
+    code: int
+    out: str
+    err: str
+
+
+Command = Callable[..., Outcome]
+
+
+@pytest.fixture(autouse=True)
+def _cheap_keys(monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setattr(
+        session,
+        "key_folder",
+        lambda logbook_id: KeyFolder(session.keys_home() / logbook_id, CHEAP_ROUNDS),
+    )
+    for module in ("person", "start"):
+        monkeypatch.setattr(f"gaugelog.commands.{module}.key_folder", session.key_folder)
+    for variable in ("GAUGELOG_LOGBOOK", "GAUGELOG_PERSON", "GAUGELOG_KEYS"):
+        monkeypatch.delenv(variable, raising=False)
+
+
+@pytest.fixture
+def command(capsys: pytest.CaptureFixture[str]) -> Command:
+    """Run a command line in this process; `secrets` are given on a file descriptor."""
+
+    def typed(*words: str, secrets: str = "") -> Outcome:
+        capsys.readouterr()
+        if not secrets:
+            code = run(list(words))
+        else:
+            reading, writing = os.pipe()
+            os.write(writing, secrets.encode())
+            os.close(writing)
+            code = run([*words, "--secret-fd", str(reading)])
+            os.close(reading)
+        told = capsys.readouterr()
+        return Outcome(code, told.out, told.err)
+
+    return typed
+
+
+@pytest.fixture(scope="session")
+def _played(tmp_path_factory: pytest.TempPathFactory) -> Path:
+    folder = tmp_path_factory.mktemp("played") / "demo"
+    whole = KeyFolder.__init__
+
+    def cheap(self: KeyFolder, path: Path, kdf_rounds: int = CHEAP_ROUNDS) -> None:
+        whole(self, path, CHEAP_ROUNDS)
+
+    with pytest.MonkeyPatch.context() as patch:
+        patch.setattr(KeyFolder, "__init__", cheap)
+        assert run(["demo", str(folder)]) == 0
+    return folder
+
+
+@pytest.fixture
+def demo(_played: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> Path:
+    """A copy of a played demo's folder; its logbook is the current folder, its keys are found."""
+    folder = tmp_path / "demo"
+    shutil.copytree(_played, folder)
+    monkeypatch.chdir(folder / "logbook")
+    monkeypatch.setenv(session.KEYS_VARIABLE, str(folder / "keys"))
+    return folder
+
+
+PASSPHRASE = story.PASSPHRASE
