@@ -46,7 +46,7 @@ def next_measurement(
         found = _best(bench, rivals, choices, doubt)
         if found is not None:
             return found
-    return NextMeasurement(None, NO_HELP)
+    return NextMeasurement(None, NO_HELP) if len(groups[0]) > 1 else None
 
 
 def _rivals(groups: Sequence[Sequence[Trial]]) -> list[Trial]:
