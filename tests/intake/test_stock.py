@@ -1,0 +1,92 @@
+"""Stock files: a row a pack, a row a consumable; every fault of every file at once."""
+
+from __future__ import annotations
+
+from pathlib import Path
+
+from gaugelog.intake.stock import load_stock
+from tests.intake.conftest import DEMO, change, counter, faults_of
+
+
+def _copy(name: str, folder: Path) -> Path:
+    target = folder / name
+    target.write_bytes((DEMO / name).read_bytes())
+    return target
+
+
+def test_packs_of_one_lot_become_one_lot() -> None:
+    stock = load_stock([DEMO / "lots.csv", DEMO / "consumables.csv"], counter())
+    assert [lot.label for lot in stock.lots] == ["L-3504"]
+    assert [pack.label for pack in stock.lots[0].packs] == ["K7-03", "K7-04"]
+    assert [len(pack.pieces) for pack in stock.lots[0].packs] == [5, 5]
+    assert len(stock.consumables) == 5
+
+
+def test_every_piece_has_an_id_of_its_own() -> None:
+    stock = load_stock([DEMO / "lots.csv"], counter())
+    pieces = [piece for pack in stock.lots[0].packs for piece in pack.pieces]
+    assert len(pieces) == len(set(pieces))
+
+
+def test_figures_that_differ_within_a_lot_are_told(tmp_path: Path) -> None:
+    file = _copy("lots.csv", tmp_path)
+    change(
+        file,
+        "K7-04,5,Lindmoor Foil Works,6 mm linear foil 350,350,0.3,2.08",
+        "K7-04,5,A,B,350,0.3,2.1",
+    )
+    found = faults_of(lambda: load_stock([file], counter()))
+    assert {fault.where for fault in found} == {"lots.csv, row 3, column lot"}
+    assert len(found) == 3
+
+
+def test_all_faults_of_all_files_are_named_at_once(tmp_path: Path) -> None:
+    lots, others = _copy("lots.csv", tmp_path), _copy("consumables.csv", tmp_path)
+    change(lots, "K7-03,5", "K7-03,five")
+    change(lots, "K7-04,5", "K7-03,0")
+    change(others, "AD-612,adhesive", "AD 612,glue")
+    change(others, "2027-09-30", "30.9.2027")
+    where = [fault.where for fault in faults_of(lambda: load_stock([lots, others], counter()))]
+    assert where == [
+        "lots.csv, row 2, column pieces",
+        "lots.csv, row 3, column pieces",
+        "lots.csv, row 3, column pack",
+        "consumables.csv, row 2, column kind",
+        "consumables.csv, row 2, column consumable",
+        "consumables.csv, row 3, column expires",
+    ]
+
+
+def test_negative_and_zero_figures_are_told(tmp_path: Path) -> None:
+    file = _copy("lots.csv", tmp_path)
+    change(file, "350,350,0.3,2.08", "350,-350,0,2.08")
+    columns = {
+        fault.where.rsplit(" ", 1)[1] for fault in faults_of(lambda: load_stock([file], counter()))
+    }
+    assert {"resistance_ohm", "resistance_tolerance_percent"} <= columns
+
+
+def test_a_missing_file_is_told(tmp_path: Path) -> None:
+    found = faults_of(lambda: load_stock([tmp_path / "none.csv"], counter()))
+    assert "can't be read" in found[0].what
+
+
+def test_semicolons_are_told_with_what_to_do(tmp_path: Path) -> None:
+    file = tmp_path / "lots.csv"
+    file.write_text("lot;pack;pieces\nA;B;3\n", encoding="utf-8")
+    found = faults_of(lambda: load_stock([file], counter()))
+    assert "semicolons" in found[0].what
+
+
+def test_another_encoding_is_told_with_its_line(tmp_path: Path) -> None:
+    file = _copy("consumables.csv", tmp_path)
+    file.write_bytes(file.read_bytes() + "X-1,other,Bräu,name,2026-01-01,,,\n".encode("latin-1"))
+    found = faults_of(lambda: load_stock([file], counter()))
+    assert found[0].where == "consumables.csv, line 7"
+
+
+def test_a_byte_order_mark_and_windows_lines_do_no_harm(tmp_path: Path) -> None:
+    file = tmp_path / "consumables.csv"
+    text = (DEMO / "consumables.csv").read_text(encoding="utf-8").replace("\n", "\r\n")
+    file.write_bytes(b"\xef\xbb\xbf" + text.encode())
+    assert len(load_stock([file], counter()).consumables) == 5
