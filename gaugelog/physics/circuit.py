@@ -52,7 +52,7 @@ class Circuit:
     wires: Mapping[str, Number] = field(hash=False)
 
     def __post_init__(self) -> None:
-        """Refuse wires that the layout lacks or does not have, and an empty arm."""
+        """Refuse wires that the layout lacks or does not have, an empty arm, a name used twice."""
         odd = set(self.wires) ^ set(self.layout.wires)
         if odd:
             raise OutOfDomain(
@@ -65,6 +65,10 @@ class Circuit:
         for number, arm in enumerate(self.arms, start=1):
             if not arm:
                 raise OutOfDomain("arms", f"must each hold an element; arm {number} is empty.")
+        names = [element.name for element in self.elements]
+        twice = sorted({name for name in names if names.count(name) > 1})
+        if twice:
+            raise OutOfDomain("arms", f"must name each element once; {', '.join(twice)} recurs.")
 
     @property
     def elements(self) -> tuple[Element, ...]:

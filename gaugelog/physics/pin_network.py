@@ -8,6 +8,7 @@ from itertools import combinations
 
 from gaugelog.physics._maths import Number
 from gaugelog.physics.circuit import Circuit
+from gaugelog.physics.layouts import HALF_MINUS, HALF_PLUS
 from gaugelog.physics.network import Network, resistance_between
 from gaugelog.physics.prediction import network_of
 from gaugelog.physics.validity import OutOfDomain
@@ -87,4 +88,5 @@ def three_quarters_rule(circuit: Circuit) -> ThreeQuarters | None:
 
 def _is_module_pin(node: str) -> bool:
     """Whether a node is a pin of the module that no wire of the circuit reaches."""
-    return not node.endswith(" tab") and not node.startswith("arm ")
+    inner = node.endswith(" tab") or node.startswith("arm ")
+    return not inner and node not in (HALF_PLUS, HALF_MINUS)

@@ -31,8 +31,8 @@ from gaugelog.physics.network import (
 )
 from gaugelog.physics.validity import OutOfDomain, not_zero, positive
 
-STEP = 1e-6
-"""Strain by which `sensitivity` steps to either side: small, yet far above rounding."""
+STEP = 1e-5
+"""Strain, or relative change, of a step to either side: small, yet far above rounding."""
 
 
 def network_of(circuit: Circuit, arms: Collection[int] = (1, 2, 3, 4)) -> Network:
@@ -120,7 +120,7 @@ def added_strain(
 def sensitivity(circuit: Circuit, name: str, poisson: Number = 0.0) -> Number:
     """Output per strain of the circuit as wired, over that of ideal equal arms without leads.
 
-    1 means nothing is lost; its inverse corrects a reading. By a symmetric step of 1 µm/m.
+    1 means nothing is lost; its inverse corrects a reading. By a symmetric step of 10 µm/m.
     Source: nodal analysis (Kirchhoff's laws).
     """
     rise = strained_output(circuit, name, STEP, poisson) - strained_output(

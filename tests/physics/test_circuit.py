@@ -185,9 +185,16 @@ def test_what_does_not_fit_is_refused_by_name(call: object, sentence: str) -> No
         call()
 
 
+def test_an_element_stands_in_a_circuit_once() -> None:
+    whole = circuit_of("full bending", 4, 350.0, 2.0)
+    with pytest.raises(OutOfDomain, match="arms must name each element once; grid 1 recurs"):
+        Circuit(whole.layout, (whole.arms[0] * 2, *whole.arms[1:]), whole.wires)
+
+
 def test_a_circuit_without_a_grid_has_no_sensitivity() -> None:
     arm = (Element("resistor", "completion", 350.0),)
     wires = dict.fromkeys(LAYOUTS["full four-wire"].wires, 0.0)
-    bare = Circuit(LAYOUTS["full four-wire"], (arm, arm, arm, arm), wires)
+    two, three, four = ((Element(f"resistor {n}", "completion", 350.0),) for n in (2, 3, 4))
+    bare = Circuit(LAYOUTS["full four-wire"], (arm, two, three, four), wires)
     with pytest.raises(OutOfDomain, match="circuit has no grid"):
         prediction.sensitivity(bare, "full bending")

@@ -124,6 +124,11 @@ def test_a_module_plugged_in_shows_its_own_arms() -> None:
     assert Defect("missing completion", ("resistor 2",)) == diagnosis.answers[0].defects[0]
 
 
+def test_the_ends_of_a_buffered_half_bridge_are_no_pins() -> None:
+    five = circuit_of("half bending", 5, 350.0, 2.0, 3.0)
+    assert {*five.wires, "signal-"} == set(pins_of(five, plugged=True))
+
+
 def test_a_trim_in_series_may_be_what_is_open() -> None:
     arm = (*SIX.arms[0], Element("trim 1", "trim", 0.4))
     circuit = Circuit(SIX.layout, (arm, *SIX.arms[1:]), SIX.wires)
