@@ -40,7 +40,7 @@ def test_strain_beside_a_hole_is_that_of_airys_function(distance: float, poisson
     assert expected == pytest.approx(holeedge.hole_edge_strain(1.0, distance, poisson), abs=2e-5)
 
 
-def test_stress_falls_from_the_edge_as_the_textbook() -> None:
+def test_stress_falls_from_the_edge_as_the_textbook_says() -> None:
     """Timoshenko and Goodier: 3, 1.22 and 1.07 σ at 1, 2 and 3 radii (from memory).
 
     Without lateral contraction (ν = 0) strain goes as that stress.
