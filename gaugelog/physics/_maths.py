@@ -32,6 +32,11 @@ def is_uncertain(value: Number) -> bool:
     return type(value).__module__.partition(".")[0] == "uncertainties"
 
 
+def is_zero(value: Number) -> bool:
+    """Whether `value` is a plain zero, so that a term with it can be left out."""
+    return isinstance(value, int | float) and value == 0
+
+
 def nominal(value: Number) -> Number:
     """The value without its uncertainty: a float for an uncertain number, else as it came."""
     if is_uncertain(value):

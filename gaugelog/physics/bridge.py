@@ -6,7 +6,7 @@ e/E = R1/(R1 + R2) − R4/(R3 + R4). Multiply by 1000 for mV/V.
 
 from __future__ import annotations
 
-from gaugelog.physics._maths import Number, sqrt
+from gaugelog.physics._maths import Number, is_zero, sqrt
 from gaugelog.physics.arrangements import Shares, arrangement, bridge_factor
 from gaugelog.physics.validity import (
     Notice,
@@ -111,6 +111,8 @@ def actual_strain(
     _, two, three, _ = arrangement(name).shares(poisson)
     skew = _initial_skew(initial)
     quotient = _full_quotient(ratio, skew) if three else _half_quotient(ratio, skew)
+    if is_zero(two):
+        return (quotient - 1) / factor
     return (quotient - 1) / (1 - two * quotient) / factor
 
 
@@ -158,9 +160,10 @@ def _seen(strain: Number, factor: Number, name: str, poisson: Number) -> Number:
 
 def _changed_arms(shares: Shares, change: Number) -> Shares:
     """Each arm as a multiple of its resting value; none may be driven below nothing."""
-    for share in shares:
-        above("strain times factor", change * share, -1.0)
-    one, two, three, four = (1 + change * share for share in shares)
+    one, two, three, four = (
+        1.0 if is_zero(share) else 1 + above("strain times factor", change * share, -1.0)
+        for share in shares
+    )
     return one, two, three, four
 
 

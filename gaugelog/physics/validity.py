@@ -7,7 +7,6 @@ beside it say so, in words a person can be shown.
 
 from __future__ import annotations
 
-import importlib
 import math
 from collections.abc import Collection
 from dataclasses import dataclass
@@ -43,55 +42,53 @@ class Notice:
 
 def finite(name: str, value: _T) -> _T:
     """`value` if every part of it is a finite number, else `OutOfDomain` naming it."""
-    if not _all(_isfinite(name, value)):
-        raise OutOfDomain(name, f"must be a finite number, not {shown(value)}.")
+    _finite_ends(name, value)
     return value
 
 
 def positive(name: str, value: _T) -> _T:
     """`value` if it is finite and above zero everywhere."""
-    finite(name, value)
-    return _require(name, value, nominal(value) > 0, "must be greater than zero")
+    least, _ = _finite_ends(name, value)
+    return _require(name, value, least > 0, "must be greater than zero")
 
 
 def positive_or_infinite(name: str, value: _T) -> _T:
     """`value` if it is above zero; infinity is allowed (an insulation without any leak)."""
-    _isfinite(name, value)
-    return _require(name, value, nominal(value) > 0, "must be greater than zero")
+    least, _ = _ends(name, value)
+    return _require(name, value, least > 0, "must be greater than zero")
 
 
 def not_negative(name: str, value: _T) -> _T:
     """`value` if it is finite and zero or more everywhere."""
-    finite(name, value)
-    return _require(name, value, nominal(value) >= 0, "must not be negative")
+    least, _ = _finite_ends(name, value)
+    return _require(name, value, least >= 0, "must not be negative")
 
 
 def not_zero(name: str, value: _T) -> _T:
     """`value` if it is finite and nowhere zero (a factor of either sign)."""
-    finite(name, value)
-    return _require(name, value, nominal(value) != 0, "must not be zero")
+    least, most = _finite_ends(name, value)
+    beside = least > 0 or most < 0 or (is_array(value) and bool((nominal(value) != 0).all()))
+    return _require(name, value, beside, "must not be zero")
 
 
 def between(name: str, value: _T, low: float, high: float) -> _T:
     """`value` if it is finite and from `low` to `high`, both included."""
-    finite(name, value)
-    plain = nominal(value)
-    inside = (plain >= low) & (plain <= high)
+    least, most = _finite_ends(name, value)
+    inside = least >= low and most <= high
     return _require(name, value, inside, f"must lie between {low:g} and {high:g}")
 
 
 def strictly_between(name: str, value: _T, low: float, high: float) -> _T:
     """`value` if it is finite and between `low` and `high`, neither included."""
-    finite(name, value)
-    plain = nominal(value)
-    inside = (plain > low) & (plain < high)
+    least, most = _finite_ends(name, value)
+    inside = least > low and most < high
     return _require(name, value, inside, f"must lie between {low:g} and {high:g}")
 
 
 def above(name: str, value: _T, low: float) -> _T:
     """`value` if it is finite and greater than `low` everywhere (a temperature, say)."""
-    finite(name, value)
-    return _require(name, value, nominal(value) > low, f"must be greater than {low:g}")
+    least, _ = _finite_ends(name, value)
+    return _require(name, value, least > low, f"must be greater than {low:g}")
 
 
 def one_of(name: str, value: _T, allowed: Collection[_T]) -> _T:
@@ -118,23 +115,34 @@ def shown(value: Number) -> str:
     return f"{value:g}" if isinstance(value, float) else str(value)
 
 
-def _require(name: str, value: _T, holds: Number, must: str) -> _T:
-    if not _all(holds):
+def _require(name: str, value: _T, holds: bool, must: str) -> _T:
+    if not holds:
         raise OutOfDomain(name, f"{must}, not {shown(value)}.")
     return value
 
 
-def _all(holds: Number) -> bool:
-    return bool(holds.all()) if is_array(holds) else bool(holds)
+def _finite_ends(name: str, value: Number) -> tuple[float, float]:
+    least, most = _ends(name, value)
+    if not (math.isfinite(least) and math.isfinite(most)):
+        raise OutOfDomain(name, f"must be a finite number, not {shown(value)}.")
+    return least, most
 
 
-def _isfinite(name: str, value: Number) -> Number:
-    """Element by element whether `value` is finite; refuses what is no number at all."""
+def _ends(name: str, value: Number) -> tuple[float, float]:
+    """Least and greatest of `value`, not-a-number where any part is; refuses what is no number.
+
+    Two passes over an array without a copy: a formula is checked for little beside its own cost.
+    """
     try:
-        if is_uncertain(value):
-            return math.isfinite(value.nominal_value) and math.isfinite(value.std_dev)
         if is_array(value):
-            return importlib.import_module("numpy").isfinite(nominal(value))
-        return math.isfinite(value)
+            plain = nominal(value)
+            return float(plain.min()), float(plain.max())
+        if is_uncertain(value) and not math.isfinite(value.std_dev):
+            return math.nan, math.nan
+        plain = nominal(value)
+        math.isfinite(plain)
     except TypeError:
         raise OutOfDomain(name, f"must be a number, not {shown(value)}.") from None
+    except ValueError:
+        raise OutOfDomain(name, "must hold at least one value.") from None
+    return plain, plain

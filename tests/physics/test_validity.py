@@ -84,3 +84,26 @@ def test_the_largest_magnitude_leaves_sign_and_uncertainty_aside() -> None:
     assert 3.0 == validity.largest(np.array([1.0, -3.0]))
     assert 3.0 == validity.largest(ufloat(-3.0, 1.0))
     assert 3.0 == validity.largest(-3)
+
+
+def test_an_array_that_crosses_zero_may_still_avoid_it() -> None:
+    crossing = np.array([-1.0, 1.0])
+    assert crossing is validity.not_zero("gap", crossing)
+    with pytest.raises(OutOfDomain, match="gap must not be zero"):
+        validity.not_zero("gap", np.array([-1.0, 0.0, 1.0]))
+
+
+@pytest.mark.parametrize("values", [np.array(["350"]), np.array([None]), ["350"], object()])
+def test_what_is_no_number_is_refused_in_arrays_too(values: Any) -> None:
+    with pytest.raises(OutOfDomain, match="gap must be a "):
+        validity.finite("gap", values)
+
+
+def test_an_empty_array_is_refused() -> None:
+    with pytest.raises(OutOfDomain, match="gap must hold at least one value"):
+        validity.positive("gap", np.array([]))
+
+
+def test_an_uncertain_number_without_a_finite_uncertainty_is_refused() -> None:
+    with pytest.raises(OutOfDomain, match="gap must be a finite number"):
+        validity.positive("gap", ufloat(1.0, float("nan")))
