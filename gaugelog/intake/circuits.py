@@ -2,74 +2,78 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Callable, Mapping
+from dataclasses import dataclass
 
 from gaugelog.errors import Faulty
+from gaugelog.intake.campaign import WIRES
 from gaugelog.intake.fields import Fields, Gathered, distinct
-from gaugelog.intake.files import rows_of
+from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.intake.typed import parse_quantity
 from gaugelog.ledger.circuits import CircuitPlanned, Element, Leads
 
-COLUMNS = (
-    "circuit",
-    "arrangement",
-    "arm1",
-    "arm2",
-    "arm3",
-    "arm4",
-    "wires",
-    "length_m",
-    "wire_ohm_per_m",
-    "module",
-    "channel",
+COLUMNS = Columns(
+    needed=(
+        "circuit",
+        "arrangement",
+        "arm1",
+        "arm2",
+        "arm3",
+        "arm4",
+        "wires",
+        "length_m",
+        "wire_ohm_per_m",
+        "module",
+        "channel",
+    ),
+    others=("cable", "marks"),
 )
-OPTIONAL = ("cable", "marks")
 
 ARRANGEMENTS = ("quarter three-wire",)
 """The arrangements that this version plans."""
 
+_UNKNOWN = "-"
+_PLUS = re.compile(r"\s\+\s")
 _ARM_REMEDY = "Like: grid BR-1; module 350 ohm; completion 350 ohm + trim 0.5 ohm."
+
+
+@dataclass(frozen=True, slots=True)
+class Named:
+    """Ids by label (casefolded) of what circuits name; None where that file could not be read."""
+
+    grids: Mapping[str, str] | None
+    channels: Mapping[tuple[str, str], str] | None
+    """By the labels of module and channel."""
 
 
 def read_circuits(
     name: str,
     data: bytes,
     campaign: str,
-    grids: Mapping[str, str],
-    channels: Mapping[tuple[str, str], str],
+    named: Named,
     *,
     new_id: Callable[[], str],
     faults: Gathered,
 ) -> list[CircuitPlanned]:
-    """Understand `circuits.csv`; `grids` and `channels` give ids by label (casefolded).
-
-    Faults are gathered, and then what is given means nothing.
-    """
-    rows = [
-        Fields(f"{name}, row {number}", cells, faults, joint=", column ")
-        for number, cells in rows_of(name, data, COLUMNS, OPTIONAL)
-    ]
-    found = [_circuit(row, campaign, grids, channels, new_id) for row in rows]
+    """Understand `circuits.csv`; faults are gathered, and then what is given means nothing."""
+    rows = rows_of(name, data, COLUMNS, faults)
+    found = [_circuit(row, campaign, named, new_id) for row in rows]
     distinct(rows, "circuit", [circuit.label for circuit in found])
     return found
 
 
-def _circuit(
-    row: Fields,
-    campaign: str,
-    grids: Mapping[str, str],
-    channels: Mapping[tuple[str, str], str],
-    new_id: Callable[[], str],
-) -> CircuitPlanned:
+def _circuit(row: Fields, campaign: str, named: Named, new_id: Callable[[], str]) -> CircuitPlanned:
     arms = (
-        _arm(row, "arm1", grids),
-        _arm(row, "arm2", grids),
-        _arm(row, "arm3", grids),
-        _arm(row, "arm4", grids),
+        _arm(row, "arm1", named),
+        _arm(row, "arm2", named),
+        _arm(row, "arm3", named),
+        _arm(row, "arm4", named),
     )
-    used = tuple(element.grid for arm in arms for element in arm if element.grid is not None)
-    if len(set(used)) != len(used):
-        row.fault("arm1", "names a grid twice in one circuit.")
+    used = [element.grid for arm in arms for element in arm if element.grid is not None]
+    known = [grid for grid in used if grid != _UNKNOWN]
+    if len(set(known)) != len(known):
+        row.fault("arm1", "or another arm names a grid twice in one circuit.")
     return CircuitPlanned(
         id=new_id(),
         label=row.label("circuit"),
@@ -77,27 +81,28 @@ def _circuit(
         arrangement=row.choice("arrangement", ARRANGEMENTS),
         arms=arms,
         leads=_leads(row),
-        channel=_channel(row, channels),
-        grids=tuple(dict.fromkeys(used)),
+        channel=_channel(row, named),
+        grids=tuple(dict.fromkeys(known)),
     )
 
 
-def _channel(row: Fields, channels: Mapping[tuple[str, str], str]) -> str:
+def _channel(row: Fields, named: Named) -> str:
     module, channel = row.label("module"), row.label("channel")
-    found = channels.get((module.casefold(), channel.casefold()))
-    if found is None and module and channel:
-        known = ", ".join(f"{one}/{two}" for one, two in channels) or "none"
-        row.fault(
-            "channel", f"campaign.toml has no channel {module}/{channel}.", f"It has {known}."
-        )
-    return found or "-"
+    if named.channels is None or not module or not channel:
+        return _UNKNOWN
+    found = named.channels.get((module.casefold(), channel.casefold()))
+    if found is None:
+        known = ", ".join(f"{one}/{two}" for one, two in named.channels) or "none"
+        what = f"campaign.toml has no channel {module}/{channel}."
+        row.fault("channel", what, f"It has {known}.")
+    return found or _UNKNOWN
 
 
 def _leads(row: Fields) -> Leads:
     return Leads(
         wires=row.whole("wires", 2, 8),
-        length=row.positive("length_m", "m"),
-        resistance_per_length=row.positive("wire_ohm_per_m", "ohm/m"),
+        length=row.number("length_m", "m", positive=True),
+        resistance_per_length=row.number("wire_ohm_per_m", "ohm/m", positive=True),
         cable=row.label("cable", needed=False),
         marks=_marks(row),
     )
@@ -110,28 +115,32 @@ def _marks(row: Fields) -> dict[str, str]:
         if not part.strip():
             continue
         name, equals, mark = (piece.strip() for piece in part.partition("="))
-        if not (name and equals and mark):
-            row.fault("marks", f"“{part.strip()[:40]}” is no wire=mark.", "Like: signal+=white.")
-            continue
+        shown = part.strip()[:40]
+        if not (equals and mark):
+            row.fault("marks", f"“{shown}” is no wire=mark.", "Like: signal+=white.")
+        elif name not in WIRES:
+            row.fault("marks", f"“{shown}” names no wire.", f"Wires: {', '.join(WIRES)}.")
+        elif name in marks:
+            row.fault("marks", f"{name} stands twice.")
         marks[name] = mark
     return marks
 
 
-def _arm(row: Fields, name: str, grids: Mapping[str, str]) -> tuple[Element, ...]:
+def _arm(row: Fields, name: str, named: Named) -> tuple[Element, ...]:
     return tuple(
         element
-        for part in row.text(name).split(" + ")
-        if (element := _element(row, name, part.strip(), grids)) is not None
+        for part in _PLUS.split(row.text(name))
+        if (element := _element(row, name, part.strip(), named)) is not None
     )
 
 
-def _element(row: Fields, name: str, text: str, grids: Mapping[str, str]) -> Element | None:
+def _element(row: Fields, name: str, text: str, named: Named) -> Element | None:
     if not text:
         return None
     kind, _, rest = text.partition(" ")
-    kind, rest = kind.casefold(), rest.strip()
+    kind, rest = kind.casefold().replace("gauge", "grid").replace("gage", "grid"), rest.strip()
     if kind in {"grid", "dummy"}:
-        return _grid(row, name, kind, rest, grids)
+        return _grid(row, name, kind, rest, named)
     if kind not in {"completion", "trim", "module"}:
         row.fault(name, f"“{text[:40]}” is no element of an arm.", _ARM_REMEDY)
         return None
@@ -148,10 +157,8 @@ def _element(row: Fields, name: str, text: str, grids: Mapping[str, str]) -> Ele
     )
 
 
-def _grid(
-    row: Fields, name: str, kind: str, label: str, grids: Mapping[str, str]
-) -> Element | None:
-    found = grids.get(label.casefold())
+def _grid(row: Fields, name: str, kind: str, label: str, named: Named) -> Element | None:
+    found = _UNKNOWN if named.grids is None else named.grids.get(label.casefold())
     if found is None:
         row.fault(name, f"grids.csv has no grid “{label[:40]}”.", _ARM_REMEDY)
         return None

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable
 from typing import Literal, cast, get_args
 
-from gaugelog.intake.fields import Fields, Gathered
+from gaugelog.intake.fields import Fields, Gathered, nothing_at
 from gaugelog.intake.files import toml_of
 from gaugelog.intake.typed import CHECK_UNITS
 from gaugelog.ledger.campaign import CheckCriterion, Conditional, CriteriaAgreed
@@ -33,7 +33,7 @@ def read_criteria(
 ) -> CriteriaAgreed:
     """Understand `criteria.toml`; faults are gathered, and then what is given means nothing."""
     top = Fields(name, toml_of(name, data), faults, joint=", ")
-    decision = top.table("decision") or Fields(f"{name}, decision", {}, [])
+    decision = top.table("decision") or nothing_at(name)
     tables = top.tables("check")
     found = CriteriaAgreed(
         id=new_id(),
@@ -41,7 +41,7 @@ def read_criteria(
         title=top.text("title"),
         edition=top.text("edition"),
         agreed_by=top.text("agreed_by", needed=False),
-        coverage=str(decision.whole("coverage", 1, 3)),
+        coverage=_coverage(decision),
         conditional_pass=_word(decision, "conditional_pass"),
         conditional_fail=_word(decision, "conditional_fail"),
         checks=tuple(_check(each) for each in tables),
@@ -50,6 +50,13 @@ def read_criteria(
     top.done()
     _twice(tables, found.checks)
     return found
+
+
+def _coverage(decision: Fields) -> str:
+    found = decision.number("coverage", "1")
+    if decision.sound("coverage") and not 1 <= found.si() <= 3:
+        decision.fault("coverage", f"“{found.value}” must be from 1 to 3.")
+    return found.value
 
 
 def _word(decision: Fields, name: str) -> Conditional:
@@ -66,11 +73,11 @@ def _check(each: Fields) -> CheckCriterion:
         surroundings=cast(
             "Literal['laboratory', 'field', 'any']", each.choice("surroundings", where, "any")
         ),
-        at_least=each.maybe_quantity("at_least", units),
-        at_most=each.maybe_quantity("at_most", units),
+        at_least=each.maybe_quantity("at_least", units, positive=True),
+        at_most=each.maybe_quantity("at_most", units, positive=True),
         physics=each.texts("physics"),
-        expected=each.maybe_quantity("expected", units),
-        largest_test_voltage=each.maybe_quantity("largest_test_voltage", ("V",)),
+        expected=each.maybe_quantity("expected", units, positive=True),
+        largest_test_voltage=each.maybe_quantity("largest_test_voltage", ("V",), positive=True),
         source=each.text("source"),
     )
     _sides(each, found)
@@ -79,24 +86,26 @@ def _check(each: Fields) -> CheckCriterion:
 
 
 def _sides(each: Fields, found: CheckCriterion) -> None:
-    if found.at_least is None and found.at_most is None and not found.physics:
+    least, most = found.at_least, found.at_most
+    given = any(each.has(name) for name in ("at_least", "at_most", "physics"))
+    if not given:
         each.fault("at_least", "is missing, and so are at_most and physics.", "Give one of them.")
-    if found.at_least is not None and found.at_most is not None:
-        if ("%" in {found.at_least.unit, found.at_most.unit}) and (
-            found.at_least.unit != found.at_most.unit
-        ):
+    if least is not None and most is not None:
+        if "%" in {least.unit, most.unit} and least.unit != most.unit:
             each.fault("at_most", "mixes per cent with ohms.", "Give both in one unit.")
-        elif found.at_least.si() > found.at_most.si():
+        elif least.si() > most.si():
             each.fault("at_most", "lies below at_least.")
-    for item in found.physics:
+    for item in found.physics if each.sound("kind") else ():
         if item not in PHYSICS[found.check]:
             known = ", ".join(PHYSICS[found.check])
-            each.fault("physics", f"“{item}” adds nothing here.", f"Known: {known}.")
+            each.fault("physics", f"“{item[:60]}” adds nothing here.", f"Known: {known}.")
 
 
 def _twice(tables: list[Fields], checks: tuple[CheckCriterion, ...]) -> None:
     seen: dict[tuple[str, str, str], str] = {}
     for each, item in zip(tables, checks, strict=True):
+        if not each.sound("kind", "stage", "surroundings"):
+            continue
         key = (item.check, item.stage, item.surroundings)
         if key in seen:
             each.fault("kind", "stands twice for this stage.", f"First at {seen[key]}.")

@@ -3,19 +3,18 @@
 from __future__ import annotations
 
 import re
-import unicodedata
-from collections.abc import Mapping, Sequence
+from collections.abc import Collection, Mapping, Sequence
 from datetime import date, datetime
 from typing import Any
 
 from gaugelog.errors import Fault, Faulty
-from gaugelog.intake.typed import parse_quantity
+from gaugelog.intake.texts import LONGEST, Untidy, tidied
+from gaugelog.intake.typed import has_comma, number_of, parse_quantity
 from gaugelog.ledger.base import Quantity
+from gaugelog.visible import visible
 
-LONGEST = 500
 _LABEL = re.compile(r"[^\s,;/\"'<>|\\]{1,40}")
-_NUMBER = re.compile(r"[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?")
-_NOTHING = Quantity(value="0", unit="1")
+_WHOLE = re.compile(r"[+-]?\d{1,18}", re.ASCII)
 _NO_DAY = "1970-01-01"
 
 Gathered = list[Fault]
@@ -25,17 +24,25 @@ class Fields:
     """Values by name at a place. Each taking method gives the value, or a stand-in and a fault.
 
     Stand-ins only let the reading go on to the next fault: whoever gathered faults raises them
-    and builds nothing.
+    and builds nothing. A name in `absent` is missing without a fault of its own, because its
+    whole column is. `sound` says whether values had no fault, for what compares them.
     """
 
     def __init__(
-        self, place: str, values: Mapping[str, Any], faults: Gathered, joint: str = "."
+        self,
+        place: str,
+        values: Mapping[str, Any],
+        faults: Gathered,
+        joint: str = ".",
+        absent: Collection[str] = (),
     ) -> None:
         self.place = place
-        self.faults = faults
         self._values = values
+        self._faults = faults
         self._joint = joint
+        self._absent = absent
         self._taken: set[str] = set()
+        self._unsound: set[str] = set(absent)
 
     def where(self, name: str) -> str:
         """The place of one value, as a fault names it."""
@@ -43,12 +50,24 @@ class Fields:
 
     def fault(self, name: str, what: str, remedy: str = "") -> None:
         """Note a fault at one value."""
-        self.faults.append(Fault(self.where(name), what, remedy))
+        self._unsound.add(name)
+        self._faults.append(Fault(self.where(name), what, remedy))
+
+    def pass_on(self, name: str, fault: Fault) -> None:
+        """Note a fault of something that a value names, which has a place of its own."""
+        self._unsound.add(name)
+        self._faults.append(fault)
+
+    def sound(self, *names: str) -> bool:
+        """Whether none of these values had a fault so far."""
+        return self._unsound.isdisjoint(names)
 
     def has(self, name: str) -> bool:
         """Whether there is a value that is not empty."""
         value = self._values.get(name)
-        return value is not None and value != ""
+        if isinstance(value, str):
+            return value.strip() != ""
+        return value is not None and value != []
 
     def text(self, name: str, *, needed: bool = True, longest: int = LONGEST) -> str:
         """A text, without surrounding space, in Unicode form NFC."""
@@ -58,109 +77,107 @@ class Fields:
         if not isinstance(value, str):
             self.fault(name, f"is {_kind(value)}, not text.", "Put it in quotes.")
             return ""
-        if len(value) > longest:
-            self.fault(name, f"has {len(value)} characters; {longest} are kept at most.")
-            return ""
-        try:
-            value.encode("utf-8")
-        except UnicodeEncodeError:
-            self.fault(name, "has half of a character pair.", "Type it again.")
-            return ""
-        return unicodedata.normalize("NFC", value.strip())
+        return self._tidied(name, value, longest)
 
     def label(self, name: str, *, needed: bool = True) -> str:
         """A short name without spaces, commas, slashes or quotes, as it stands on tags."""
         text = self.text(name, needed=needed)
-        if text and _LABEL.fullmatch(text) is None:
+        if text and (_LABEL.fullmatch(text) is None or visible(text) != text):
             remedy = "Use up to 40 letters, digits, dots, hyphens; no space, comma, slash, quote."
             self.fault(name, f"“{text[:60]}” can't be a label.", remedy)
         return text
 
     def choice(self, name: str, options: Sequence[str], default: str | None = None) -> str:
-        """One of `options`."""
+        """One of `options`, whatever the letter case; “gage” is read as “gauge”."""
         text = self.text(name, needed=default is None)
         if not text:
             return default if default is not None else options[0]
-        if text not in options:
-            self.fault(name, f"“{text[:60]}” is not one of {', '.join(options)}.")
-            return options[0]
-        return text
+        meant = text.casefold().replace("gage", "gauge")
+        for option in options:
+            if option.casefold() == meant:
+                return option
+        known = ", ".join(option for option in options if option)
+        self.fault(name, f"“{text[:60]}” is not one of {known}.")
+        return options[0]
 
-    def quantity(self, name: str, units: Sequence[str]) -> Quantity:
+    def quantity(self, name: str, units: Sequence[str], *, positive: bool = False) -> Quantity:
         """A quantity typed with its unit, `"206 GPa"`."""
-        found = self.maybe_quantity(name, units)
+        found = self.maybe_quantity(name, units, positive=positive)
         if found is None and not self.has(name):
-            self.fault(name, "is missing.", f"Units: {', '.join(units)}.")
-        return found or _NOTHING
+            self._missing(name, f"Units: {', '.join(units)}.")
+        return found or Quantity(value="1", unit=units[0])
 
-    def maybe_quantity(self, name: str, units: Sequence[str]) -> Quantity | None:
+    def maybe_quantity(
+        self, name: str, units: Sequence[str], *, positive: bool = False
+    ) -> Quantity | None:
         """A quantity that may be left out."""
         value = self._take(name, False)
         if value is None:
             return None
-        if tuple(units) == ("1",) and isinstance(value, (int, float, str)):
-            return self.maybe_number(name, "1")
+        if tuple(units) == ("1",):
+            return self.maybe_number(name, "1", positive=positive)
         if not isinstance(value, str):
-            example = f'"{value} {units[0]}"'
+            example = f'"{_short(value)} {units[0]}"'
             self.fault(name, f"is {_kind(value)}, without a unit.", f"Write it as {example}.")
             return None
         try:
-            return parse_quantity(value, units)
+            found = parse_quantity(value, units)
         except Faulty as error:
             for fault in error.faults:
                 self.fault(name, fault.what, fault.remedy)
             return None
+        return self._above_nothing(name, found) if positive else found
 
-    def number(self, name: str, unit: str) -> Quantity:
+    def number(self, name: str, unit: str, *, positive: bool = False) -> Quantity:
         """A plain decimal number in a unit that the column's name says."""
-        found = self.maybe_number(name, unit)
+        found = self.maybe_number(name, unit, positive=positive)
         if found is None and not self.has(name):
-            self.fault(name, "is missing.")
-        return found or Quantity(value="0", unit=unit)
-
-    def positive(self, name: str, unit: str) -> Quantity:
-        """A plain decimal number above 0."""
-        found = self.maybe_number(name, unit)
-        if found is not None and float(found.value) <= 0:
-            self.fault(name, f"“{found.value}” must be above 0.")
-        if found is None and not self.has(name):
-            self.fault(name, "is missing.")
+            self._missing(name)
         return found or Quantity(value="1", unit=unit)
 
-    def maybe_number(self, name: str, unit: str) -> Quantity | None:
+    def maybe_number(self, name: str, unit: str, *, positive: bool = False) -> Quantity | None:
         """A plain decimal number that may be left out."""
-        text = str(self._take(name, False) or "").strip().replace("−", "-")
-        if not text:
-            return None
-        if _NUMBER.fullmatch(text) is None:
-            remedy = "Use a decimal point." if "," in text else "Type a number without its unit."
-            self.fault(name, f"“{text[:40]}” is no number.", remedy)
-            return None
-        if abs(float(text)) > 1e30:
-            self.fault(name, f"“{text[:40]}” is out of all bounds.")
-            return None
-        return Quantity(value=text.removeprefix("+"), unit=unit)
-
-    def whole(self, name: str, least: int, most: int, default: int | None = None) -> int:
-        """A whole number from `least` to `most`."""
-        value = self._take(name, default is None)
+        value = self._take(name, False)
         if value is None:
-            return default if default is not None else least
-        try:
-            number = int(str(value).strip())
-        except ValueError:
-            self.fault(name, f"“{str(value)[:40]}” is no whole number.")
-            return least
-        if isinstance(value, bool) or not least <= number <= most:
-            self.fault(name, f"must be from {least} to {most}.")
-            return least
-        return number
+            return None
+        if isinstance(value, bool) or not isinstance(value, (int, float, str)):
+            self.fault(name, f"is {_kind(value)}, not a number.")
+            return None
+        text = _short(value)
+        number = number_of(text)
+        if number is None:
+            remedy = "Use a decimal point." if has_comma(text) else "Type a number without a unit."
+            self.fault(name, f"“{text[:40]}” is no number of this trade.", remedy)
+            return None
+        found = Quantity(value=number, unit=unit)
+        return self._above_nothing(name, found) if positive else found
+
+    def whole(self, name: str, least: int, most: int) -> int:
+        """A whole number from `least` to `most`."""
+        found = self.maybe_whole(name, least, most)
+        if found is None and not self.has(name):
+            self._missing(name)
+        return least if found is None else found
+
+    def maybe_whole(self, name: str, least: int, most: int) -> int | None:
+        """A whole number that may be left out."""
+        value = self._take(name, False)
+        if value is None:
+            return None
+        text = _short(value)
+        if isinstance(value, bool) or _WHOLE.fullmatch(text) is None:
+            self.fault(name, f"“{text[:40]}” is no whole number.")
+            return None
+        if not least <= int(text) <= most:
+            self.fault(name, f"“{text}” must be from {least} to {most}.")
+            return None
+        return int(text)
 
     def day(self, name: str) -> str:
         """A date, `2026-12-01`."""
         found = self.maybe_day(name)
         if found is None and not self.has(name):
-            self.fault(name, "is missing.", "A date like 2026-12-01.")
+            self._missing(name, "A date like 2026-12-01.")
         return found or _NO_DAY
 
     def maybe_day(self, name: str) -> str | None:
@@ -170,10 +187,12 @@ class Fields:
             return None
         if isinstance(value, date) and not isinstance(value, datetime):
             return value.isoformat()
+        text = _short(value)
         try:
-            return date.fromisoformat(str(value).strip()).isoformat()
+            # Only the form with hyphens: 20261201 and 2026-W49-2 read like slips.
+            return datetime.strptime(text, "%Y-%m-%d").date().isoformat()
         except ValueError:
-            self.fault(name, f"“{str(value)[:40]}” is no date.", "Write it like 2026-12-01.")
+            self.fault(name, f"“{text[:40]}” is no date.", "Write it like 2026-12-01.")
             return None
 
     def flag(self, name: str, default: bool) -> bool:
@@ -194,20 +213,20 @@ class Fields:
         if not isinstance(value, list) or not all(isinstance(item, str) for item in value):
             self.fault(name, "is no list of texts.", 'Write it like ["one", "two"].')
             return ()
-        for item in value:
-            if len(item) > LONGEST:
-                self.fault(name, f"holds a text of {len(item)} characters; {LONGEST} at most.")
-        return tuple(unicodedata.normalize("NFC", item.strip()) for item in value)
+        return tuple(text for item in value if (text := self._tidied(name, item, LONGEST)))
 
-    def pairs(self, name: str) -> dict[str, str]:
-        """A table of texts by name, or nothing."""
+    def pairs(self, name: str, known: Sequence[str]) -> dict[str, str]:
+        """A table of texts by name, each name one of `known`, or nothing."""
         value = self._take(name, False)
         if value is None:
             return {}
         if not isinstance(value, dict) or not all(isinstance(item, str) for item in value.values()):
             self.fault(name, "is no table of texts.", f'Write it like {name} = {{ a = "1" }}.')
             return {}
-        return {str(key): item for key, item in value.items()}
+        for key in value:
+            if key not in known:
+                self.fault(name, f"“{key[:40]}” is not one of {', '.join(known)}.")
+        return {key: self._tidied(name, item, LONGEST) for key, item in value.items()}
 
     def table(self, name: str, *, needed: bool = True) -> Fields | None:
         """A table within."""
@@ -217,7 +236,7 @@ class Fields:
         if not isinstance(value, dict):
             self.fault(name, "is no table.")
             return None
-        return Fields(self.where(name), value, self.faults, self._joint)
+        return Fields(self.where(name), value, self._faults)
 
     def tables(self, name: str, *, needed: bool = True) -> list[Fields]:
         """A list of tables within, numbered from 1 in places."""
@@ -228,7 +247,7 @@ class Fields:
             self.fault(name, "is no list of tables.", f"Begin each with [[{name}]].")
             return []
         return [
-            Fields(f"{self.where(name)}[{number}]", item, self.faults, self._joint)
+            Fields(f"{self.where(name)}[{number}]", item, self._faults)
             for number, item in enumerate(value, start=1)
         ]
 
@@ -243,9 +262,30 @@ class Fields:
         self._taken.add(name)
         if not self.has(name):
             if needed:
-                self.fault(name, "is missing.")
+                self._missing(name)
             return None
         return self._values[name]
+
+    def _missing(self, name: str, remedy: str = "") -> None:
+        if name not in self._absent:
+            self.fault(name, "is missing.", remedy)
+
+    def _tidied(self, name: str, text: str, longest: int) -> str:
+        try:
+            return tidied(text, longest)
+        except Untidy as error:
+            self.fault(name, error.what, error.remedy)
+            return ""
+
+    def _above_nothing(self, name: str, found: Quantity) -> Quantity:
+        if found.si() <= 0:
+            self.fault(name, f"“{found}” must be above 0.")
+        return found
+
+
+def nothing_at(place: str) -> Fields:
+    """Fields that hold nothing and gather nowhere, where a table is missing and said to be."""
+    return Fields(place, {}, [])
 
 
 def distinct(fields: Sequence[Fields], name: str, labels: Sequence[str]) -> None:
@@ -256,6 +296,19 @@ def distinct(fields: Sequence[Fields], name: str, labels: Sequence[str]) -> None
         if label and key in seen:
             each.fault(name, f"“{label}” stands twice.", f"First at {seen[key]}.")
         seen.setdefault(key, each.place)
+
+
+def in_order(each: Fields, low: str, high: str, figures: tuple[float, float], what: str) -> None:
+    """Note a fault at `high` where both were understood and the second figure is the lower."""
+    if each.sound(low, high) and figures[1] < figures[0]:
+        each.fault(high, what)
+
+
+def _short(value: object) -> str:
+    """A scalar as text; a whole number too long to print stays too long to be right."""
+    if isinstance(value, int) and abs(value) > 10**18:
+        return "a number of more than 18 digits"
+    return str(value).strip()
 
 
 def _kind(value: object) -> str:

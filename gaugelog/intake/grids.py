@@ -6,33 +6,36 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Literal, cast
 
-from gaugelog.intake.fields import Fields, Gathered, distinct
-from gaugelog.intake.files import rows_of
+from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
+from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.ledger.points import Place, PlannedGrid, PointPlanned
 
-COLUMNS = (
-    "point",
-    "article",
-    "zone",
-    "purpose",
-    "load",
-    "strain_min_um_per_m",
-    "strain_max_um_per_m",
-    "temperature_min_degC",
-    "temperature_max_degC",
-    "permitted_error_um_per_m",
-    "datum",
-    "x_mm",
-    "y_mm",
-    "side",
-    "axis",
-    "axis_deg",
-    "place_tolerance_mm",
-    "axis_tolerance_deg",
-    "lot",
-    "route",
+COLUMNS = Columns(
+    needed=(
+        "point",
+        "article",
+        "zone",
+        "purpose",
+        "load",
+        "strain_min_um_per_m",
+        "strain_max_um_per_m",
+        "temperature_min_degC",
+        "temperature_max_degC",
+        "permitted_error_um_per_m",
+        "datum",
+        "x_mm",
+        "y_mm",
+        "side",
+        "axis",
+        "axis_deg",
+        "place_tolerance_mm",
+        "axis_tolerance_deg",
+        "lot",
+        "route",
+    ),
+    others=("z_mm", "quantity", "duration_h", "cycles"),
 )
-OPTIONAL = ("z_mm", "quantity", "duration_h", "cycles")
+ABSOLUTE_ZERO = -273.15
 
 
 @dataclass(frozen=True, slots=True)
@@ -47,10 +50,7 @@ def read_grids(
     name: str, data: bytes, campaign: str, new_id: Callable[[], str], faults: Gathered
 ) -> list[GridPlan]:
     """Understand `grids.csv`; faults are gathered, and then what is given means nothing."""
-    rows = [
-        Fields(f"{name}, row {number}", cells, faults, joint=", column ")
-        for number, cells in rows_of(name, data, COLUMNS, OPTIONAL)
-    ]
+    rows = rows_of(name, data, COLUMNS, faults)
     found = [GridPlan(row, _point(row, campaign, new_id)) for row in rows]
     distinct(rows, "point", [plan.point.label for plan in found])
     return found
@@ -72,9 +72,9 @@ def _point(row: Fields, campaign: str, new_id: Callable[[], str]) -> PointPlanne
         strain_max=row.number("strain_max_um_per_m", "um/m"),
         temperature_min=row.number("temperature_min_degC", "degC"),
         temperature_max=row.number("temperature_max_degC", "degC"),
-        duration=row.maybe_number("duration_h", "h"),
-        cycles=row.whole("cycles", 0, 10**12, 0) if row.has("cycles") else None,
-        permitted_error=row.positive("permitted_error_um_per_m", "um/m"),
+        duration=row.maybe_number("duration_h", "h", positive=True),
+        cycles=row.maybe_whole("cycles", 0, 10**12),
+        permitted_error=row.number("permitted_error_um_per_m", "um/m", positive=True),
         place=_place(row),
         lot=row.label("lot") or "-",
         route=row.text("route") or "-",
@@ -85,10 +85,28 @@ def _point(row: Fields, campaign: str, new_id: Callable[[], str]) -> PointPlanne
 
 
 def _in_order(row: Fields, point: PointPlanned) -> None:
-    if point.strain_min.si() > point.strain_max.si():
-        row.fault("strain_max_um_per_m", "lies below the smallest strain.")
-    if point.temperature_min.si() > point.temperature_max.si():
-        row.fault("temperature_max_degC", "lies below the lowest temperature.")
+    strains = (point.strain_min.si(), point.strain_max.si())
+    in_order(
+        row,
+        "strain_min_um_per_m",
+        "strain_max_um_per_m",
+        strains,
+        "lies below the smallest strain.",
+    )
+    temperatures = (point.temperature_min.si(), point.temperature_max.si())
+    in_order(
+        row,
+        "temperature_min_degC",
+        "temperature_max_degC",
+        temperatures,
+        "lies below the lowest temperature.",
+    )
+    for name, figure in (
+        ("temperature_min_degC", temperatures[0]),
+        ("temperature_max_degC", temperatures[1]),
+    ):
+        if row.sound(name) and figure <= ABSOLUTE_ZERO:
+            row.fault(name, "lies below absolute zero.")
 
 
 def _place(row: Fields) -> Place:
@@ -100,6 +118,6 @@ def _place(row: Fields) -> Place:
         side=row.text("side"),
         axis=row.text("axis"),
         angle=row.number("axis_deg", "deg"),
-        tolerance=row.positive("place_tolerance_mm", "mm"),
-        angle_tolerance=row.positive("axis_tolerance_deg", "deg"),
+        tolerance=row.number("place_tolerance_mm", "mm", positive=True),
+        angle_tolerance=row.number("axis_tolerance_deg", "deg", positive=True),
     )

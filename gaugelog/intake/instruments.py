@@ -50,7 +50,7 @@ def _instrument(each: Fields, new_id: Callable[[], str]) -> InstrumentAdded:
         due=each.day("due"),
         ranges=read,
     )
-    if found.due < found.calibrated_on:
+    if each.sound("due", "calibrated_on") and found.due < found.calibrated_on:
         each.fault("due", "lies before the calibration.")
     each.done()
     return found
@@ -67,12 +67,12 @@ def _range(span: Fields) -> InstrumentRange:
         gain=span.quantity("gain", ("%",)),
         offset=span.quantity("offset", units),
         resolution=span.quantity("resolution", units),
-        test_voltage=span.maybe_quantity("test_voltage", ("V",)),
+        test_voltage=span.maybe_quantity("test_voltage", ("V",), positive=True),
     )
-    if not span.faults and found.high.si() <= found.low.si():
+    if span.sound("low", "high") and found.high.si() <= found.low.si():
         span.fault("high", "must be above low.")
     for name in ("gain", "offset", "resolution"):
-        if getattr(found, name).si() < 0:
+        if span.sound(name) and getattr(found, name).si() < 0:
             span.fault(name, "must not be below 0.")
     span.done()
     return found

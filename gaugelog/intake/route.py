@@ -1,31 +1,20 @@
-"""Routes from TOML: shipped ones by their label, a planner's own by their path."""
+"""Routes from TOML: shipped ones by their label, a planner's own by their file."""
 
 from __future__ import annotations
 
 import hashlib
-from collections.abc import Callable
+from collections.abc import Callable, Iterator
 from importlib import resources
-from pathlib import Path
-from typing import Literal, cast, get_args
+from pathlib import Path, PurePosixPath
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct
 from gaugelog.intake.files import read_bytes, toml_of
-from gaugelog.intake.typed import CHECK_UNITS
-from gaugelog.ledger.base import UNITS
-from gaugelog.ledger.routes import (
-    InputKind,
-    RouteAdopted,
-    RouteStep,
-    SkipRule,
-    StepInput,
-    StepSubject,
-    Window,
-)
-from gaugelog.ledger.stock import ConsumableKind
+from gaugelog.intake.steps import LONG, read_step
+from gaugelog.ledger.routes import RouteAdopted, RouteStep, StepInput
 
-_TIMES = ("s", "min", "h", "d")
-_LONG = 4000
+NewId = Callable[[], str]
+_Pair = tuple[Fields, RouteStep]
 
 
 def shipped_routes() -> dict[str, bytes]:
@@ -38,137 +27,107 @@ def shipped_routes() -> dict[str, bytes]:
     }
 
 
-def load_route(
-    named: str, folder: Path, new_id: Callable[[], str]
-) -> tuple[RouteAdopted, str, bytes]:
-    """The route called `named`, with its file's name and bytes.
+def route_file(named: str, folder: Path) -> tuple[str, bytes]:
+    """Name and bytes of the file of the route called `named`.
 
     A name that ends in .toml is a file of the planner's in `folder`; any other is shipped. Raises
-    Faulty naming every fault of the file.
+    Faulty when there is none, or it lies outside the folder.
     """
-    if named.endswith(".toml"):
-        path = folder / named
-        if Path(named).is_absolute() or ".." in Path(named).parts:
-            raise Faulty([Fault(named, "lies outside the plan's folder.", "Copy it into it.")])
-        name, data = path.name, read_bytes(path)
-    else:
-        shipped = shipped_routes()
-        if named not in shipped:
-            known = ", ".join(shipped)
-            remedy = f"Shipped: {known}; a file of your own ends in .toml."
-            raise Faulty([Fault("route", f"no route is called “{named}”.", remedy)])
-        name, data = f"{named}.toml", shipped[named]
+    if not named.casefold().endswith(".toml"):
+        return _shipped(named)
+    own = PurePosixPath(named)
+    if own.is_absolute() or ".." in own.parts or "\\" in named or ":" in named:
+        remedy = "Copy it into the plan's folder and name it from there."
+        raise Faulty([Fault("route", f"“{named}” lies outside the plan's folder.", remedy)])
+    return str(own), read_bytes(folder / own)
+
+
+def _shipped(named: str) -> tuple[str, bytes]:
+    for label, data in shipped_routes().items():
+        if label.casefold() == named.casefold():
+            # Told apart from a planner's own copy of the same name.
+            return f"{label}.toml (shipped)", data
+    known = ", ".join(shipped_routes())
+    remedy = f"Shipped: {known}; a file of your own ends in .toml."
+    raise Faulty([Fault("route", f"no route is called “{named}”.", remedy)])
+
+
+def load_route(named: str, folder: Path, new_id: NewId) -> tuple[RouteAdopted, str, bytes]:
+    """The route called `named`, with its file's name and bytes. Raises Faulty with every fault."""
+    name, data = route_file(named, folder)
     return read_route(name, data, new_id), name, data
 
 
-def read_route(name: str, data: bytes, new_id: Callable[[], str]) -> RouteAdopted:
+def read_route(name: str, data: bytes, new_id: NewId) -> RouteAdopted:
     """Understand a route file. Raises Faulty naming every fault at once."""
     faults: Gathered = []
     top = Fields(name, toml_of(name, data), faults, joint=", ")
     tables = top.tables("step")
-    steps = tuple(_step(each) for each in tables)
+    steps = tuple(read_step(each) for each in tables)
     distinct(tables, "id", [step.id for step in steps])
-    _check_references(tables, steps)
+    _check_order(list(zip(tables, steps, strict=True)))
     route = RouteAdopted(
         id=new_id(),
         label=top.label("label"),
         title=top.text("title"),
         edition=top.text("edition"),
         family=top.text("family"),
-        basis=top.text("basis", longest=_LONG),
+        basis=top.text("basis", longest=LONG),
         steps=steps,
         file=hashlib.sha256(data).hexdigest(),
     )
+    _check_gauge(top, route)
     top.done()
     if faults:
         raise Faulty(faults)
     return route
 
 
-def _step(each: Fields) -> RouteStep:
-    inputs = each.tables("input", needed=False)
-    read = tuple(_input(item) for item in inputs)
-    distinct(inputs, "name", [item.name for item in read])
-    step = RouteStep(
-        id=each.label("id"),
-        title=each.text("title"),
-        subject=cast("StepSubject", each.choice("subject", get_args(StepSubject))),
-        stage=each.text("stage", needed=False),
-        instruction=each.text("instruction", longest=_LONG),
-        cautions=each.texts("cautions"),
-        inputs=read,
-        hold=each.flag("hold", False),
-        refused_to=each.text("refused_to", needed=False),
-        windows=tuple(_window(item) for item in each.tables("window", needed=False)),
-        skip=cast("SkipRule", each.choice("skip", get_args(SkipRule), "never")),
-        reaches=cast(
-            "Literal['', 'ready to coat']", each.choice("reaches", ("", "ready to coat"), "")
-        ),
-    )
-    _check_step(each, step)
-    each.done()
-    return step
+def _check_order(pairs: list[_Pair]) -> None:
+    """What a step names must come before it; what it reads must not have been read before."""
+    earlier: set[str] = set()
+    read: dict[tuple[str, str], str] = {}
+    for each, step in pairs:
+        for name, other in _named(step):
+            if each.sound(name) and other not in earlier:
+                each.fault(name, f"“{other[:40]}” is no earlier step.", "Name one before this.")
+        for item in _readings(step):
+            key = (item.check, step.stage)
+            if item.check and step.stage and key in read:
+                what = f"reads {item.check} at the stage {step.stage} again after step {read[key]}."
+                each.fault("stage", what, "Give it a stage of its own.")
+            read.setdefault(key, step.id)
+        earlier.add(step.id)
 
 
-def _check_step(each: Fields, step: RouteStep) -> None:
-    readings = [item for item in step.inputs if item.kind == "reading"]
-    meters = [item for item in step.inputs if item.kind == "instrument"]
-    if step.hold and step.inputs:
-        each.fault(
-            "input", "is asked for at a hold.", "A hold is decided; ask in a step before it."
-        )
-    if step.hold and not step.refused_to:
-        each.fault("refused_to", "is missing.", "Name the step that a refusal goes back to.")
-    if step.hold and step.skip != "never":
-        each.fault("skip", "must be never at a hold.")
-    if readings and not step.stage:
-        each.fault("stage", "is missing.", "A step with a reading names its stage.")
-    if readings and not meters:
-        each.fault("input", "has a reading but no instrument.", "Ask for the instrument too.")
+def _named(step: RouteStep) -> Iterator[tuple[str, str]]:
+    if step.refused_to:
+        yield "refused_to", step.refused_to
+    for window in step.windows:
+        if window.after:
+            yield "window", window.after
 
 
-def _input(item: Fields) -> StepInput:
-    kind = cast("InputKind", item.choice("kind", get_args(InputKind)))
-    check = item.choice("check", tuple(CHECK_UNITS), "")
-    unit = item.text("unit", needed=False)
-    if kind == "reading" and not check:
-        item.fault("check", "is missing.", f"Checks: {', '.join(CHECK_UNITS)}.")
-    if kind == "quantity" and unit not in UNITS:
-        item.fault("unit", f"“{unit}” is no unit.", f"Units: {', '.join(UNITS)}.")
-    type_ = item.text("type", needed=False)
-    if kind == "consumable" and type_ and type_ not in get_args(ConsumableKind):
-        known = ", ".join(get_args(ConsumableKind))
-        item.fault("type", f"“{type_}” is no kind of consumable.", f"Kinds: {known}.")
-    found = StepInput(
-        name=item.label("name"),
-        kind=kind,
-        prompt=item.text("prompt"),
-        unit=unit,
-        check=check,
-        type=type_,
-        required=item.flag("required", True),
-    )
-    item.done()
-    return found
+def _readings(step: RouteStep) -> list[StepInput]:
+    return [item for item in step.inputs if item.kind == "reading"]
 
 
-def _window(item: Fields) -> Window:
-    found = Window(
-        bound=cast(
-            "Literal['not before', 'within']", item.choice("bound", ("not before", "within"))
-        ),
-        duration=item.quantity("duration", _TIMES),
-        after=item.text("after"),
-    )
-    item.done()
-    return found
-
-
-def _check_references(tables: list[Fields], steps: tuple[RouteStep, ...]) -> None:
-    places = {step.id: place for place, step in enumerate(steps)}
-    for place, (each, step) in enumerate(zip(tables, steps, strict=True)):
-        named = [("refused_to", step.refused_to)] if step.refused_to else []
-        named += [("window", window.after) for window in step.windows]
-        for name, other in named:
-            if places.get(other, place) >= place:
-                each.fault(name, f"“{other}” is no earlier step.", "Name a step that comes before.")
+def _check_gauge(top: Fields, route: RouteAdopted) -> None:
+    """One step takes the gauge, before anything is read on it."""
+    if not route.steps:
+        return
+    takes = [
+        place
+        for place, step in enumerate(route.steps)
+        for item in step.inputs
+        if item.kind == "gauge"
+    ]
+    if len(takes) != 1:
+        what = f"asks for the gauge {len(takes)} times."
+        top.fault("step", what, 'One step has one input of kind "gauge", so it is known which.')
+        return
+    if route.steps[takes[0]].subject != "grid":
+        top.fault(f"step[{takes[0] + 1}].subject", "takes the gauge, so it must be grid.")
+    for place, step in enumerate(route.steps[: takes[0]], start=1):
+        if _readings(step):
+            top.fault(f"step[{place}].input", "has a reading before the gauge is taken.")

@@ -8,8 +8,9 @@ from pathlib import Path
 from typing import cast, get_args
 
 from gaugelog.errors import Faulty
-from gaugelog.intake.fields import Fields, Gathered, distinct
-from gaugelog.intake.files import read_bytes, rows_of, text_of
+from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
+from gaugelog.intake.files import read_bytes, text_of
+from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.stock import (
     ConsumableKind,
@@ -19,31 +20,35 @@ from gaugelog.ledger.stock import (
     PackReceived,
 )
 
-LOT_COLUMNS = (
-    "lot",
-    "pack",
-    "pieces",
-    "maker",
-    "type",
-    "resistance_ohm",
-    "resistance_tolerance_percent",
-    "gauge_factor",
-    "gauge_factor_tolerance_percent",
-    "transverse_sensitivity_percent",
-    "grid_length_mm",
-    "grid_width_mm",
-    "received_on",
+LOT_COLUMNS = Columns(
+    needed=(
+        "lot",
+        "pack",
+        "pieces",
+        "maker",
+        "type",
+        "resistance_ohm",
+        "resistance_tolerance_percent",
+        "gauge_factor",
+        "gauge_factor_tolerance_percent",
+        "transverse_sensitivity_percent",
+        "grid_length_mm",
+        "grid_width_mm",
+        "received_on",
+    ),
+    others=(
+        "expansion_class_ppm_per_K",
+        "temperature_min_degC",
+        "temperature_max_degC",
+        "strain_limit_um_per_m",
+        "test_voltage_max_V",
+        "expires",
+    ),
 )
-LOT_OPTIONAL = (
-    "expansion_class_ppm_per_K",
-    "temperature_min_degC",
-    "temperature_max_degC",
-    "strain_limit_um_per_m",
-    "test_voltage_max_V",
-    "expires",
+CONSUMABLE_COLUMNS = Columns(
+    needed=("consumable", "kind", "maker", "name", "received_on"),
+    others=("expires", "pot_life_min", "wire_resistance_ohm_per_m"),
 )
-CONSUMABLE_COLUMNS = ("consumable", "kind", "maker", "name", "received_on")
-CONSUMABLE_OPTIONAL = ("expires", "pot_life_min", "wire_resistance_ohm_per_m")
 
 MOST_PIECES = 500
 NewId = Callable[[], str]
@@ -58,44 +63,42 @@ class Stock:
 
 
 def load_stock(files: Sequence[Path], new_id: NewId) -> Stock:
-    """Understand stock files; which kind a file is shows in its first column.
+    """Understand stock files; which kind a file is shows in its heading.
 
     Raises Faulty naming every fault of every file at once.
     """
     faults: Gathered = []
-    lots: list[LotReceived] = []
-    consumables: list[ConsumableReceived] = []
+    lots: list[Fields] = []
+    consumables: list[Fields] = []
     for path in files:
         try:
             data = read_bytes(path)
-            if text_of(path.name, data).lstrip().startswith("consumable"):
-                consumables += _consumables(path.name, data, new_id, faults)
+            if _holds_consumables(text_of(path.name, data)):
+                consumables += rows_of(path.name, data, CONSUMABLE_COLUMNS, faults)
             else:
-                lots += _lots(path.name, data, new_id, faults)
+                lots += rows_of(path.name, data, LOT_COLUMNS, faults)
         except Faulty as error:
             faults += error.faults
+    stock = Stock(_lots(lots, new_id), _consumables(consumables, new_id))
     if faults:
         raise Faulty(faults)
-    return Stock(tuple(lots), tuple(consumables))
+    return stock
 
 
-def _fields(name: str, number: int, cells: dict[str, str], faults: Gathered) -> Fields:
-    return Fields(f"{name}, row {number}", cells, faults, joint=", column ")
+def _holds_consumables(text: str) -> bool:
+    heading = text.partition("\n")[0].casefold()
+    return "consumable" in heading
 
 
-def _lots(name: str, data: bytes, new_id: NewId, faults: Gathered) -> list[LotReceived]:
-    rows = [
-        _fields(name, number, cells, faults)
-        for number, cells in rows_of(name, data, LOT_COLUMNS, LOT_OPTIONAL)
-    ]
-    packs: dict[str, list[tuple[Fields, PackReceived]]] = {}
-    labels: list[str] = []
+def _lots(rows: list[Fields], new_id: NewId) -> tuple[LotReceived, ...]:
+    packs: list[PackReceived] = []
+    by_lot: dict[str, list[tuple[Fields, LotReceived, PackReceived]]] = {}
     for row in rows:
-        pack = _pack(row, new_id)
-        labels.append(pack.label)
-        packs.setdefault(row.label("lot"), []).append((row, pack))
-    distinct(rows, "pack", labels)
-    return [_lot(label, found, new_id) for label, found in packs.items()]
+        lot, pack = _lot_data(row), _pack(row, new_id)
+        packs.append(pack)
+        by_lot.setdefault(lot.label.casefold(), []).append((row, lot, pack))
+    distinct(rows, "pack", [pack.label for pack in packs])
+    return tuple(_lot(found, new_id) for found in by_lot.values())
 
 
 def _pack(row: Fields, new_id: NewId) -> PackReceived:
@@ -105,61 +108,96 @@ def _pack(row: Fields, new_id: NewId) -> PackReceived:
     )
 
 
-def _lot(label: str, found: list[tuple[Fields, PackReceived]], new_id: NewId) -> LotReceived:
-    lots = [_lot_data(row, label) for row, _ in found]
-    for row, lot in zip((row for row, _ in found), lots, strict=True):
-        for name in LotReceived.model_fields:
-            if getattr(lot, name) != getattr(lots[0], name):
-                what = f"differs in {name.replace('_', ' ')} from the lot's first row."
-                row.fault("lot", what, "One lot has one certificate: the same figures each row.")
-    packs = tuple(pack for _, pack in found)
-    return lots[0].model_copy(update={"id": new_id(), "packs": packs})
+def _lot(found: list[tuple[Fields, LotReceived, PackReceived]], new_id: NewId) -> LotReceived:
+    """One lot from the rows of its packs, which must all carry its certificate's figures."""
+    (first_row, first, _), others = found[0], found[1:]
+    for row, lot, _ in others:
+        for column, figure in _CERTIFIED.items():
+            if row.sound(column) and first_row.sound(column) and figure(lot) != figure(first):
+                what = f"differs from {first_row.place}, which is of the same lot."
+                row.fault(column, what, "One lot has one certificate: the same figures each row.")
+    packs = tuple(pack for _, _, pack in found)
+    return first.model_copy(update={"id": new_id(), "packs": packs})
 
 
-def _lot_data(row: Fields, label: str) -> LotReceived:
-    grid = GridData(
-        number=1,
-        gauge_factor=row.positive("gauge_factor", "1"),
-        gauge_factor_tolerance=row.positive("gauge_factor_tolerance_percent", "%"),
-        transverse_sensitivity=row.number("transverse_sensitivity_percent", "%"),
-        angle=Quantity(value="0", unit="deg"),
-    )
-    return LotReceived(
+def _plain(quantity: Quantity | None) -> float | None:
+    return None if quantity is None else quantity.si()
+
+
+_CERTIFIED: dict[str, Callable[[LotReceived], object]] = {
+    "maker": lambda lot: lot.maker,
+    "type": lambda lot: lot.type,
+    "resistance_ohm": lambda lot: _plain(lot.nominal_resistance),
+    "resistance_tolerance_percent": lambda lot: _plain(lot.resistance_tolerance),
+    "gauge_factor": lambda lot: _plain(lot.grids[0].gauge_factor),
+    "gauge_factor_tolerance_percent": lambda lot: _plain(lot.grids[0].gauge_factor_tolerance),
+    "transverse_sensitivity_percent": lambda lot: _plain(lot.grids[0].transverse_sensitivity),
+    "grid_length_mm": lambda lot: _plain(lot.grid_length),
+    "grid_width_mm": lambda lot: _plain(lot.grid_width),
+    "received_on": lambda lot: lot.received_on,
+    "expansion_class_ppm_per_K": lambda lot: _plain(lot.expansion_class),
+    "temperature_min_degC": lambda lot: _plain(lot.temperature_min),
+    "temperature_max_degC": lambda lot: _plain(lot.temperature_max),
+    "strain_limit_um_per_m": lambda lot: _plain(lot.strain_limit),
+    "test_voltage_max_V": lambda lot: _plain(lot.test_voltage_max),
+    "expires": lambda lot: lot.expires,
+}
+"""What every row of a lot must say alike, by its column."""
+
+
+def _lot_data(row: Fields) -> LotReceived:
+    """A lot as one row gives it, without its packs."""
+    lot = LotReceived(
         id="-",
-        label=label,
+        label=row.label("lot"),
         maker=row.text("maker"),
         type=row.text("type"),
-        nominal_resistance=row.positive("resistance_ohm", "ohm"),
-        resistance_tolerance=row.positive("resistance_tolerance_percent", "%"),
-        grid_length=row.positive("grid_length_mm", "mm"),
-        grid_width=row.positive("grid_width_mm", "mm"),
-        grids=(grid,),
+        nominal_resistance=row.number("resistance_ohm", "ohm", positive=True),
+        resistance_tolerance=row.number("resistance_tolerance_percent", "%", positive=True),
+        grid_length=row.number("grid_length_mm", "mm", positive=True),
+        grid_width=row.number("grid_width_mm", "mm", positive=True),
+        grids=(_grid(row),),
         expansion_class=row.maybe_number("expansion_class_ppm_per_K", "ppm/K"),
         temperature_min=row.maybe_number("temperature_min_degC", "degC"),
         temperature_max=row.maybe_number("temperature_max_degC", "degC"),
-        strain_limit=row.maybe_number("strain_limit_um_per_m", "um/m"),
-        test_voltage_max=row.maybe_number("test_voltage_max_V", "V"),
+        strain_limit=row.maybe_number("strain_limit_um_per_m", "um/m", positive=True),
+        test_voltage_max=row.maybe_number("test_voltage_max_V", "V", positive=True),
         expires=row.maybe_day("expires"),
         received_on=row.day("received_on"),
         packs=(),
     )
+    _check_dates(row, lot.received_on, lot.expires)
+    if lot.temperature_min is not None and lot.temperature_max is not None:
+        figures = (lot.temperature_min.si(), lot.temperature_max.si())
+        what = "lies below the lowest temperature."
+        in_order(row, "temperature_min_degC", "temperature_max_degC", figures, what)
+    return lot
 
 
-def _consumables(
-    name: str, data: bytes, new_id: NewId, faults: Gathered
-) -> list[ConsumableReceived]:
-    rows = [
-        _fields(name, number, cells, faults)
-        for number, cells in rows_of(name, data, CONSUMABLE_COLUMNS, CONSUMABLE_OPTIONAL)
-    ]
-    found = [_consumable(row, new_id) for row in rows]
+def _grid(row: Fields) -> GridData:
+    return GridData(
+        number=1,
+        gauge_factor=row.number("gauge_factor", "1", positive=True),
+        gauge_factor_tolerance=row.number("gauge_factor_tolerance_percent", "%", positive=True),
+        transverse_sensitivity=row.number("transverse_sensitivity_percent", "%"),
+        angle=Quantity(value="0", unit="deg"),
+    )
+
+
+def _check_dates(row: Fields, received_on: str, expires: str | None) -> None:
+    if row.sound("received_on", "expires") and expires is not None and expires < received_on:
+        row.fault("expires", "lies before the day it was received.", "Refuse it, or mend the date.")
+
+
+def _consumables(rows: list[Fields], new_id: NewId) -> tuple[ConsumableReceived, ...]:
+    found = tuple(_consumable(row, new_id) for row in rows)
     distinct(rows, "consumable", [item.label for item in found])
     return found
 
 
 def _consumable(row: Fields, new_id: NewId) -> ConsumableReceived:
     kind = row.choice("kind", get_args(ConsumableKind))
-    return ConsumableReceived(
+    found = ConsumableReceived(
         id=new_id(),
         label=row.label("consumable"),
         type=cast("ConsumableKind", kind),
@@ -167,6 +205,8 @@ def _consumable(row: Fields, new_id: NewId) -> ConsumableReceived:
         name=row.text("name"),
         expires=row.maybe_day("expires"),
         received_on=row.day("received_on"),
-        pot_life=row.maybe_number("pot_life_min", "min"),
-        wire_resistance=row.maybe_number("wire_resistance_ohm_per_m", "ohm/m"),
+        pot_life=row.maybe_number("pot_life_min", "min", positive=True),
+        wire_resistance=row.maybe_number("wire_resistance_ohm_per_m", "ohm/m", positive=True),
     )
+    _check_dates(row, found.received_on, found.expires)
+    return found

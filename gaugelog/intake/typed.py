@@ -7,51 +7,22 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 from gaugelog.errors import Fault, Faulty
-from gaugelog.ledger.base import SYMBOLS, UNITS, Quantity
+from gaugelog.intake.units import converted, tidy, unit_of
+from gaugelog.ledger.base import SYMBOLS, Quantity
 from gaugelog.ledger.readings import Qualifier
 
 LONGEST = 60
+LARGEST_POWER = 30
+"""Powers of ten beyond which no number of the trade lies, either way."""
 
-_READING = re.compile(
-    r"^(?P<sign>[<>=]?)\s*(?P<number>[^\s<>=A-Za-zΩµ%°]+(?:[eE][+-]?\d+)?)\s*(?P<unit>.*)$"
+_TYPED = re.compile(
+    r"(?P<sign>[<>=]?) ?(?P<number>[-+]?[\d.,]+(?:[eE][+-]?\d+)?) ?(?P<unit>(?:[^<>=\d][^<>=]*)?)",
+    re.ASCII,
 )
-_NUMBER = re.compile(r"[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?")
-_COMMA = re.compile(r"[+-]?\d+,\d+")
+_NUMBER = re.compile(r"[+-]?(?P<digits>\d+(\.\d*)?|\.\d+)([eE][+-]?\d{1,3})?", re.ASCII)
+_COMMA = re.compile(r"[+-]?\d+,\d+", re.ASCII)
 _OVERLOAD = frozenset({"ol", "o.l", "o.l.", "overload", "over", "0l"})
-_MILLI_OR_MEGA = frozenset({"mohm", "mω", "mohms"})
-
-_SPELLINGS: dict[str, str] = {
-    **{unit.casefold(): unit for unit in UNITS if unit not in {"mV", "MPa", "m", "mm", "V"}},
-    **{symbol: unit for unit, symbol in SYMBOLS.items() if symbol},
-    "Ω": "ohm",
-    "ohms": "ohm",
-    "kΩ": "kohm",
-    "MΩ": "Mohm",
-    "GΩ": "Gohm",
-    "TΩ": "Tohm",
-    "Mohm": "Mohm",
-    "MOhm": "Mohm",
-    "megohm": "Mohm",
-    "megaohm": "Mohm",
-    "gigaohm": "Gohm",
-    "kiloohm": "kohm",
-    "teraohm": "Tohm",
-    "mV": "mV",
-    "MPa": "MPa",
-    "m": "m",
-    "mm": "mm",
-    "V": "V",
-    "v": "V",
-    "um/m": "um/m",
-    "µm/m": "um/m",
-    "ue": "um/m",
-    "microstrain": "um/m",
-    "C": "degC",
-    "°C": "degC",
-    "deg C": "degC",
-    "% RH": "%RH",
-    "%rh": "%RH",
-}
+_MILLI_OR_MEGA = frozenset({"mohm", "mohms", "mω"})
 
 CHECK_UNITS: dict[str, tuple[str, ...]] = {
     "resistance": ("ohm", "kohm"),
@@ -75,67 +46,99 @@ def parse_reading(text: str, check: str) -> TypedReading:
     >>> str(parse_reading("> 20 Gohm", "insulation").quantity)
     '20 GΩ'
     """
-    typed = text.strip()
-    if typed.casefold() in _OVERLOAD:
+    typed, units = text.strip(), CHECK_UNITS[check]
+    if _is_overload(typed, units):
         return TypedReading("overload", None, typed)
-    units = CHECK_UNITS[check]
-    match = _READING.match(_tidy(typed))
-    if len(typed) > LONGEST or match is None:
-        raise _fault(typed, "is no reading.", f"Type it like {_example(units)}.")
-    found = _quantity(match["number"], match["unit"], units, typed)
+    match = _match(typed, "reading", units)
+    found = _quantity(match, units, typed)
+    if found.si() < 0:
+        raise _fault(typed, f"is below 0, which no {check} is.", "Measure again; mind the leads.")
     return TypedReading(_qualifier(match["sign"]), found, typed)
 
 
 def parse_quantity(text: str, units: Sequence[str]) -> Quantity:
     """Understand a quantity in one of `units`. Raises Faulty with one plain sentence.
 
+    A few foreign units are converted to one of `units`: inches, degrees Fahrenheit, ksi.
+
     >>> str(parse_quantity("21.5 °C", ("degC",)))
     '21.5 °C'
     """
     typed = text.strip()
-    match = _READING.match(_tidy(typed))
-    if len(typed) > LONGEST or match is None or match["sign"]:
+    match = _match(typed, "quantity", units)
+    if match["sign"]:
         raise _fault(typed, "is no quantity.", f"Type it like {_example(units)}.")
-    return _quantity(match["number"], match["unit"], units, typed)
+    return _quantity(match, units, typed)
 
 
-def unit_of(text: str) -> str | None:
-    """The unit meant by a spelling, or None; letter case counts where it changes the meaning."""
-    plain = text.strip()
-    if plain in UNITS:
-        return plain
-    return _SPELLINGS.get(plain) or _SPELLINGS.get(plain.casefold())
+def number_of(text: str) -> str | None:
+    """A plain decimal number without its plus sign, or None when it is none or beyond reason.
+
+    >>> number_of("+12.50"), number_of("twelve"), number_of("1e99")
+    ('12.50', None, None)
+    """
+    plain = text.strip().replace("−", "-")
+    match = _NUMBER.fullmatch(plain) if len(plain) <= LONGEST else None
+    if match is None:
+        return None
+    is_zero = not match["digits"].strip("0.")
+    if not is_zero and not 10.0**-LARGEST_POWER <= abs(float(plain)) <= 10.0**LARGEST_POWER:
+        return None
+    return plain.removeprefix("+")
 
 
-def _quantity(number: str, unit: str, units: Sequence[str], typed: str) -> Quantity:
-    if _COMMA.fullmatch(number):
-        point = number.replace(",", ".")
-        raise _fault(typed, "has a decimal comma.", f"Type a decimal point: {point} {unit}".strip())
-    if _NUMBER.fullmatch(number) is None:
-        raise _fault(typed, "is no number.", f"Type it like {_example(units)}.")
-    return Quantity(value=number.removeprefix("+"), unit=_unit(unit, units, typed))
+def has_comma(text: str) -> bool:
+    """Whether a number is written with a decimal comma."""
+    return _COMMA.fullmatch(text.strip()) is not None
 
 
-def _unit(unit: str, units: Sequence[str], typed: str) -> str:
-    plain = unit.strip()
-    if not plain:
+def _match(typed: str, what: str, units: Sequence[str]) -> re.Match[str]:
+    match = _TYPED.fullmatch(tidy(typed)) if len(typed) <= LONGEST else None
+    if match is None:
+        raise _fault(typed, f"is no {what}.", f"Type it like {_example(units)}.")
+    return match
+
+
+def _is_overload(typed: str, units: Sequence[str]) -> bool:
+    """A meter shows OL, often with the unit of its range."""
+    word, _, unit = typed.partition(" ")
+    return word.casefold() in _OVERLOAD and (not unit or unit_of(unit) in units)
+
+
+def _quantity(match: re.Match[str], units: Sequence[str], typed: str) -> Quantity:
+    number, unit = match["number"], match["unit"].strip()
+    if has_comma(number):
+        point = f"{number.replace(',', '.')} {unit}".strip()
+        raise _fault(typed, "has a decimal comma.", f"Type a decimal point: {point}.")
+    value = number_of(number)
+    if value is None:
+        raise _fault(typed, "is no number of this trade.", f"Type it like {_example(units)}.")
+    _demand_plain(unit, units, typed)
+    found = _unit(unit, units)
+    quantity = Quantity(value=value, unit=found) if found else converted(value, unit, units)
+    if quantity is None:
+        allowed = ", ".join(_shown(each) for each in units)
+        raise _fault(typed, f"has the unit {unit}.", f"Units here: {allowed}.")
+    return quantity
+
+
+def _demand_plain(unit: str, units: Sequence[str], typed: str) -> None:
+    if not unit and tuple(units) != ("1",):
         raise _fault(typed, "has no unit.", f"Type it like {_example(units)}.")
-    if plain[:1] == "m" and plain.casefold() in _MILLI_OR_MEGA:
+    bare = unit.replace(" ", "")
+    if bare[:1] == "m" and bare.casefold() in _MILLI_OR_MEGA:
         raise _fault(
             typed,
-            f"has the unit {plain}: milli or mega?",
+            f"has the unit {unit}: milli or mega?",
             "Type Mohm for a million ohms, or the value in ohm.",
         )
-    found = "%RH" if plain == "%" and "%RH" in units else unit_of(plain)
-    if found is None or found not in units:
-        allowed = ", ".join(_shown(each) for each in units)
-        raise _fault(typed, f"has the unit {plain}.", f"Units here: {allowed}.")
-    return found
 
 
-def _tidy(text: str) -> str:
-    # A minus as typography has it, and a non-breaking space, are meant plainly.
-    return text.replace("−", "-").replace("\u00a0", " ").replace("≥", ">").replace("≤", "<")
+def _unit(unit: str, units: Sequence[str]) -> str | None:
+    if not unit:
+        return "1"
+    found = "%RH" if unit == "%" and "%RH" in units else unit_of(unit)
+    return found if found in units else None
 
 
 def _qualifier(sign: str) -> Qualifier:
@@ -149,7 +152,9 @@ def _shown(unit: str) -> str:
 def _example(units: Sequence[str]) -> str:
     if "Gohm" in units:
         return "12.5 GΩ"
-    return "350.4 Ω" if units[0] == "ohm" else f"12.5 {_shown(units[0])}".strip()
+    if units[0] == "1":
+        return "12.5"
+    return "350.4 Ω" if units[0] == "ohm" else f"12.5 {_shown(units[0])}"
 
 
 def _fault(typed: str, what: str, remedy: str) -> Faulty:
