@@ -153,6 +153,8 @@ def parse_body(data: bytes) -> Body:
 
 def _texts(value: dict[str, Any], name: str) -> tuple[str, ...]:
     items = value.pop(name, None)
+    if items == []:
+        return ()
     if not isinstance(items, list) or not all(isinstance(item, str) for item in items):
         raise BadEntry(f"Its body gives no list of texts as {name}.")
     return tuple(items)

@@ -98,6 +98,9 @@ class Header:
 
 _TIME = r"[0-9]{4}-[0-9]{2}-[0-9]{2}T[0-9]{2}:[0-9]{2}:[0-9]{2}\.[0-9]{6}Z"
 
+# Fifteen digits are well within what JSON keeps exactly; longer numbers are read slowly.
+_COUNT = "[1-9][0-9]{0,14}"
+
 _SHAPES: dict[str, str | int] = {
     "actor": _NAME,
     "body": _HEX,
@@ -132,26 +135,29 @@ def parse_header(data: bytes) -> Header:
 
 
 def _read_whole(match: re.Match[str]) -> Header:
-    found = match.groupdict()
-    heads = json.loads(found["heads"]) if found["heads"] != "[]" else ()
+    # The groups come in the order of the names, as they stand in the bytes.
+    (
+        actor, body, boot, certificate, chain, count, deed, heads, index, kind, offset, previous,
+        seq, time, uptime_ms, version,
+    ) = match.groups()  # fmt: skip
     return Header(
         format=FORMAT,
-        chain=intern(found["chain"]),
-        seq=int(found["seq"]),
-        heads=tuple(_head(item) for item in heads),
-        deed=found["deed"],
-        index=int(found["index"]),
-        count=int(found["count"]),
-        time=found["time"],
-        offset=intern(found["offset"]),
-        boot=intern(found["boot"]),
-        uptime_ms=int(found["uptime_ms"]),
-        actor=intern(found["actor"]),
-        certificate=intern(found["certificate"]),
-        kind=intern(found["kind"]),
-        version=int(found["version"]),
-        body=found["body"],
-        previous=found["previous"],
+        chain=intern(chain),
+        seq=int(seq),
+        heads=() if heads == "[]" else tuple(_head(item) for item in json.loads(heads)),
+        deed=deed,
+        index=int(index),
+        count=int(count),
+        time=time,
+        offset=intern(offset),
+        boot=intern(boot),
+        uptime_ms=int(uptime_ms),
+        actor=intern(actor),
+        certificate=intern(certificate),
+        kind=intern(kind),
+        version=int(version),
+        body=body,
+        previous=previous,
     )
 
 
@@ -172,22 +178,18 @@ def _read_slowly(data: bytes) -> dict[str, Any]:
 
 
 def _whole_pattern() -> re.Pattern[str]:
-    # Fifteen digits are well within what JSON keeps exactly; longer numbers are read slowly.
-    shapes = {
-        name: "0|[1-9][0-9]{0,14}" if shape == 0 else "[1-9][0-9]{0,14}"
-        for name, shape in _SHAPES.items()
-        if isinstance(shape, int)
-    }
-    parts = {
-        name: f'"{name}":(?P<{name}>{shapes[name]})'
-        if isinstance(shape, int)
-        else f'"{name}":"(?P<{name}>{shape})"'
-        for name, shape in _SHAPES.items()
-    }
-    head = f'\\{{"chain":"{_NAME}","hash":"{_HEX}","seq":[1-9][0-9]{{0,14}}\\}}'
-    parts["heads"] = f'"heads":(?P<heads>\\[(?:{head}(?:,{head})*)?\\])'
+    parts = {name: f'"{name}":{_group(shape)}' for name, shape in _SHAPES.items()}
+    head = f'\\{{"chain":"{_NAME}","hash":"{_HEX}","seq":{_COUNT}\\}}'
+    parts["heads"] = f'"heads":(\\[(?:{head}(?:,{head})*)?\\])'
+    parts["format"] = f'"format":"{_SHAPES["format"]}"'
     inside = ",".join(parts[name] for name in sorted(parts))
     return re.compile(f"\\{{{inside}\\}}")
+
+
+def _group(shape: str | int) -> str:
+    if isinstance(shape, str):
+        return f'"({shape})"'
+    return f"({_COUNT})" if shape else f"(0|{_COUNT})"
 
 
 _WHOLE = _whole_pattern()

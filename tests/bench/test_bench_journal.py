@@ -24,7 +24,7 @@ from tests.journal.samples import CHAIN, SampleJournal, signer
 pytestmark = pytest.mark.bench
 
 _ECDSA = ec.ECDSA(SHA256())
-_DEEDS = 12_000
+_DEEDS = 24_000
 
 
 def _reading(place: int) -> Fact:

@@ -2,33 +2,38 @@
 
 from __future__ import annotations
 
-from concurrent.futures import Future
-from concurrent.futures.process import BrokenProcessPool
+import io
 
 import pytest
 from cryptography.hazmat.primitives.serialization import Encoding, PublicFormat
+from hypothesis import given
+from hypothesis import strategies as st
 
 from gaugelog.journal.check import verifier
-from gaugelog.journal.check.verifier import Signed, Verifier, bad_ones
+from gaugelog.journal.check.verifier import Helper, Signed, Verifier
+from gaugelog.journal.verifying import Signature, fits, packed, serve, unpacked, verdicts
 from tests.journal.samples import signer
 
 
-def signed(position: int, *, good: bool = True) -> Signed:
-    """A signature, or one that does not fit."""
+def signature(text: str, *, good: bool = True) -> Signature:
+    """A signature over a text, or one that does not fit."""
     own = signer("technician")
     public = own.private_key.public_key()
     key = public.public_bytes(Encoding.DER, PublicFormat.SubjectPublicKeyInfo)
-    data = str(position).encode()
-    return Signed(key, own.sign(data if good else b"other"), data, position, f"entry {position}")
+    data = text.encode()
+    return Signature(key, own.sign(data if good else b"other"), data)
 
 
-def found_bad(count: int, bad: set[int]) -> set[int]:
+def found_bad(count: int, bad: set[int], *, helped: bool = True) -> set[int]:
     """The positions that a verifier calls bad among `count` signatures."""
     told: list[Signed] = []
     judge = Verifier(told.append)
+    if helped:
+        judge.call_for_help()
     try:
-        for position in range(count):
-            judge.add(signed(position, good=position not in bad))
+        for place in range(count):
+            one = signature(str(place), good=place not in bad)
+            judge.add(Signed(place, f"entry {place}", one))
         judge.finish()
     finally:
         judge.close()
@@ -39,20 +44,44 @@ def found_bad(count: int, bad: set[int]) -> set[int]:
 @pytest.fixture
 def small(monkeypatch: pytest.MonkeyPatch) -> None:
     monkeypatch.setattr(verifier, "_BATCH", 5)
-    monkeypatch.setattr(verifier, "_WORTH_A_HELPER", 2)
 
 
-def test_signatures_that_do_not_fit_are_found_by_place() -> None:
-    assert [1, 3] == bad_ones([signed(place, good=place % 2 == 0) for place in range(4)])
+def test_signatures_that_do_not_fit_are_told_by_place() -> None:
+    batch = [signature(str(place), good=place % 2 == 0) for place in range(4)]
+    assert bytes([0, 1, 0, 1]) == verdicts(batch)
 
 
 def test_bytes_that_are_no_signature_do_not_fit() -> None:
-    assert [0] == bad_ones([signed(1)._replace(signature=b"junk")])
+    assert not fits(signature("a")._replace(signature=b"junk"))
 
 
-@pytest.mark.parametrize("count", [0, 1, 4])
-def test_a_few_are_verified_without_help(count: int) -> None:
-    assert set(range(count)) == found_bad(count, set(range(count)))
+@given(st.lists(st.tuples(st.binary(), st.binary(), st.binary()), max_size=5))
+def test_a_batch_reads_back_from_its_bytes(parts: list[tuple[bytes, bytes, bytes]]) -> None:
+    batch = [Signature(*part) for part in parts]
+    assert batch == list(unpacked(packed(batch)[4:]))
+
+
+def test_batches_are_answered_until_there_are_no_more() -> None:
+    first, second = [signature("a"), signature("b", good=False)], [signature("c")]
+    outgoing = io.BytesIO()
+    serve(io.BytesIO(packed(first) + packed(second) + b"\x00"), outgoing)
+    assert bytes([0, 1, 0]) == outgoing.getvalue()
+
+
+def test_a_second_process_gives_the_same_verdicts() -> None:
+    helper = Helper()
+    try:
+        promises = [helper.promise([signature(str(place), good=place > 1)]) for place in range(3)]
+        assert [b"\x01", b"\x01", b"\x00"] == [promise.result(20) for promise in promises]
+    finally:
+        helper.close()
+
+
+@pytest.mark.usefixtures("small")
+@pytest.mark.parametrize("count", [0, 1, 5, 12])
+@pytest.mark.parametrize("helped", [True, False])
+def test_any_number_is_verified_with_and_without_help(count: int, helped: bool) -> None:
+    assert set(range(count)) == found_bad(count, set(range(count)), helped=helped)
 
 
 @pytest.mark.usefixtures("small")
@@ -69,34 +98,21 @@ def test_more_than_may_wait_are_verified_here_at_once(monkeypatch: pytest.Monkey
 
 
 @pytest.mark.usefixtures("small")
-def test_without_processes_all_is_done_here(monkeypatch: pytest.MonkeyPatch) -> None:
-    def no_process(*_: object, **__: object) -> None:
-        raise OSError("no more processes")
-
-    monkeypatch.setattr(verifier, "ProcessPoolExecutor", no_process)
+def test_where_no_process_can_be_started_all_is_done_here(monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setattr("sys.executable", "/nowhere/python")
     assert {7, 29} == found_bad(30, {7, 29})
-
-
-class _Dying:
-    """A helper that takes work and dies of it."""
-
-    def __init__(self, *_: object, **__: object) -> None:
-        self.taken = 0
-
-    def submit(self, *_: object) -> Future[list[int]]:
-        self.taken += 1
-        if self.taken > 3:
-            raise BrokenProcessPool("dead")
-        promise: Future[list[int]] = Future()
-        promise.set_running_or_notify_cancel()
-        promise.set_exception(BrokenProcessPool("dead"))
-        return promise
-
-    def shutdown(self, *, cancel_futures: bool) -> None:
-        assert cancel_futures
+    monkeypatch.setattr("sys.executable", "")
+    assert {7, 29} == found_bad(30, {7, 29})
 
 
 @pytest.mark.usefixtures("small")
 def test_what_a_helper_that_died_left_undone_is_done_here(monkeypatch: pytest.MonkeyPatch) -> None:
-    monkeypatch.setattr(verifier, "ProcessPoolExecutor", _Dying)
+    ask = Helper._ask
+
+    def die_after_the_first(self: Helper, data: bytes, count: int) -> bytes:
+        answer = ask(self, data, count)
+        self._process.kill()
+        return answer
+
+    monkeypatch.setattr(Helper, "_ask", die_after_the_first)
     assert {1, 13, 28} == found_bad(30, {1, 13, 28})

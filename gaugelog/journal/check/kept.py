@@ -93,7 +93,7 @@ class Clocks:
         """Hold the entry's time against the one before it in its chain."""
         if look.header is None or look.header.index != 1:
             return
-        moment = look.header.moment
+        moment = look.moment(look.header)
         before = self._last.get(look.filed.chain)
         self._last[look.filed.chain] = moment
         jump = jump_between(before, moment) if before else None

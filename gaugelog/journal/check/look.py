@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 
 from gaugelog.journal.check.report import Findings, Trouble
+from gaugelog.journal.clock import Moment
 from gaugelog.journal.entry import Body, Entry, Head, Header
 from gaugelog.journal.header import BadEntry, parse_header
 from gaugelog.journal.order import merged
@@ -28,11 +29,18 @@ class Look:
     header_trouble: str = ""
     body: Body | None = None
     position: int = 0
+    _moment: Moment | None = None
 
     @property
     def entry(self) -> Entry:
         """The entry."""
         return self.filed.entry
+
+    def moment(self, header: Header) -> Moment:
+        """When the entry was written; read once for all steps that ask."""
+        if self._moment is None:
+            self._moment = header.moment
+        return self._moment
 
     @property
     def where(self) -> str:

@@ -108,7 +108,8 @@ class _Walk:
 
     def go(self, progress: Progress | None) -> None:
         """Show each entry to each step, then let each step say the rest."""
-        total = self._total() if progress else 0
+        total = self._total()
+        self._deeds.expect(total)
         for look in looks(self._reader, self._findings):
             self._show(look)
             self.count += 1

@@ -8,6 +8,10 @@ from gaugelog.journal.check.report import Findings, Trouble
 from gaugelog.journal.check.verifier import Signed, Verifier
 from gaugelog.journal.entry import Header
 from gaugelog.journal.header import BadEntry
+from gaugelog.journal.verifying import Signature
+
+_MANY = 4000
+"""Entries from which on a second process saves more time than it takes to start."""
 
 _OUTSIDE = "Someone wrote here without the key. " + RESTORE
 
@@ -49,6 +53,11 @@ class Deeds:
                 self._cut_short(look, look.header)
         self._verifier.finish()
 
+    def expect(self, entries: int) -> None:
+        """Make ready for so many entries."""
+        if entries >= _MANY:
+            self._verifier.call_for_help()
+
     def close(self) -> None:
         """Let go of what the verifying needed."""
         self._verifier.close()
@@ -74,8 +83,8 @@ class Deeds:
         if key is None:
             self._trouble(look, "Its signature can't be verified: its certificate is not known.")
             return
-        data = look.entry.header_bytes
-        self._verifier.add(Signed(key, signature, data, look.position, look.where))
+        made = Signature(key, signature, look.entry.header_bytes)
+        self._verifier.add(Signed(look.position, look.where, made))
 
     def _bad_signature(self, signed: Signed) -> None:
         what = "Its signature does not fit it: it was altered, or signed by another key."
@@ -125,7 +134,7 @@ class Validity:
         header = look.header
         if header is None or not header.is_last:
             return
-        when = header.moment.utc
+        when = look.moment(header).utc
         what = self._certificates.standing(header.certificate, header.actor, when, header.deed)
         if what:
             self._findings.trouble(look.position, Trouble(6, look.where, what, _OUTSIDE))

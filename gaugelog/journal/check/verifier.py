@@ -1,4 +1,4 @@
-"""Verifies many signatures: a few at once where they come up, many with the help of a process.
+"""Verifies many signatures: a few where they come up, many with the help of a second process.
 
 Threads would have to pass Python's lock to and fro for each signature while the walk goes on,
 which takes longer than doing one after the other. A second process has a lock of its own.
@@ -6,37 +6,71 @@ which takes longer than doing one after the other. A second process has a lock o
 
 from __future__ import annotations
 
-import multiprocessing
+import subprocess
+import sys
 from collections import deque
 from collections.abc import Callable, Sequence
-from concurrent.futures import Future, ProcessPoolExecutor
-from concurrent.futures.process import BrokenProcessPool
-from functools import lru_cache
+from concurrent.futures import Future, ThreadPoolExecutor
 from typing import NamedTuple
 
-from cryptography.exceptions import InvalidSignature
-from cryptography.hazmat.primitives.asymmetric import ec
-from cryptography.hazmat.primitives.hashes import SHA256
-from cryptography.hazmat.primitives.serialization import load_der_public_key
+from gaugelog.journal.verifying import Signature, packed, verdicts
 
-_ECDSA = ec.ECDSA(SHA256())
-
-_BATCH = 256
-_WORTH_A_HELPER = 8
-"""Batches from which on a second process saves more time than it takes to start."""
-
-_MOST_PENDING = 64
+_BATCH = 512
+_MOST_PENDING = 32
 """Batches that may wait for the helper; beyond that they are verified here, to bound memory."""
+
+_SWITCH_SECONDS = 0.0005
+"""How soon the walk gives up Python's lock to the thread that talks with the helper."""
 
 
 class Signed(NamedTuple):
-    """A signature (ECDSA with SHA-256, DER) over `data` by a public key (DER), and whose it is."""
+    """A signature of an entry: its place in the walk, its name for people, and the signature."""
 
-    key: bytes
-    signature: bytes
-    data: bytes
     position: int
     where: str
+    signature: Signature
+
+
+class Helper:
+    """A second process that verifies, a batch at a time in the order given."""
+
+    def __init__(self) -> None:
+        """Start the process. Raises OSError when there can be none."""
+        if getattr(sys, "frozen", False) or not sys.executable:
+            raise OSError("there is no interpreter to start")
+        self._process = subprocess.Popen(
+            [sys.executable, "-m", "gaugelog.journal.verifying"],
+            stdin=subprocess.PIPE,
+            stdout=subprocess.PIPE,
+            stderr=subprocess.DEVNULL,
+        )
+        # One thread talks with the process. After each write and read it must win Python's lock
+        # from the walk: hence large batches, packed beforehand, and a lock that is given up soon.
+        self._talker = ThreadPoolExecutor(1)
+        self._interval = sys.getswitchinterval()
+        sys.setswitchinterval(_SWITCH_SECONDS)
+
+    def promise(self, batch: Sequence[Signature]) -> Future[bytes]:
+        """The verdicts on a batch, once the process has come to it."""
+        return self._talker.submit(self._ask, packed(batch), len(batch))
+
+    def close(self) -> None:
+        """End the process."""
+        sys.setswitchinterval(self._interval)
+        self._process.kill()
+        self._talker.shutdown(cancel_futures=True)
+        self._process.communicate()
+
+    def _ask(self, data: bytes, count: int) -> bytes:
+        incoming, outgoing = self._process.stdin, self._process.stdout
+        if incoming is None or outgoing is None:
+            raise OSError("the helper has no pipes")
+        incoming.write(data)
+        incoming.flush()
+        answer = outgoing.read(count)
+        if len(answer) != count:
+            raise OSError("the helper has ended")
+        return answer
 
 
 class Verifier:
@@ -45,95 +79,62 @@ class Verifier:
     def __init__(self, bad: Callable[[Signed], None]) -> None:
         self._bad = bad
         self._batch: list[Signed] = []
-        self._pending: deque[tuple[list[Signed], Future[list[int]] | None]] = deque()
-        self._helper: ProcessPoolExecutor | None = None
-        self._may_help = True
+        self._pending: deque[tuple[list[Signed], Future[bytes] | None]] = deque()
+        self._helper: Helper | None = None
+
+    def call_for_help(self) -> None:
+        """Start a second process, which is worth it for some thousand signatures."""
+        try:
+            self._helper = Helper()
+        except OSError:  # no processes here: it is only a help
+            self._helper = None
 
     def add(self, signed: Signed) -> None:
         """Take one signature."""
         self._batch.append(signed)
         if len(self._batch) >= _BATCH:
-            self._send()
+            self._put_aside()
 
     def finish(self) -> None:
         """Verify what is left. The helper works from the front, this process from the back."""
-        self._tell(self._batch, bad_ones(self._batch))
+        self._tell(self._batch)
         self._batch = []
         while self._pending:
-            batch, promise = self._pending.pop()
-            if promise is None or promise.cancel():
-                self._tell(batch, bad_ones(batch))
-            else:
-                self._tell(batch, _answer(batch, promise))
+            self._tell(*self._pending.pop())
 
     def close(self) -> None:
         """Let the helper go."""
         if self._helper is not None:
-            self._helper.shutdown(cancel_futures=True)
+            self._helper.close()
 
-    def _send(self) -> None:
+    def _put_aside(self) -> None:
         batch, self._batch = self._batch, []
+        while self._pending and _is_answered(self._pending[0][1]):
+            self._tell(*self._pending.popleft())
         if len(self._pending) >= _MOST_PENDING:
-            self._tell(batch, bad_ones(batch))
-            self._drop_answered()
+            self._tell(batch)
             return
-        self._pending.append((batch, self._promise(batch)))
-        if len(self._pending) == _WORTH_A_HELPER and self._helper is None and self._may_help:
-            self._start_helper()
+        promise = self._helper.promise(_signatures(batch)) if self._helper else None
+        self._pending.append((batch, promise))
 
-    def _drop_answered(self) -> None:
-        while self._pending and (promise := self._pending[0][1]) is not None and promise.done():
-            batch, _ = self._pending.popleft()
-            self._tell(batch, _answer(batch, promise))
+    def _tell(self, batch: Sequence[Signed], promise: Future[bytes] | None = None) -> None:
+        for signed, verdict in zip(batch, _verdicts(batch, promise), strict=True):
+            if verdict:
+                self._bad(signed)
 
-    def _start_helper(self) -> None:
+
+def _verdicts(batch: Sequence[Signed], promise: Future[bytes] | None) -> bytes:
+    if promise is not None and not promise.cancel():
         try:
-            context = multiprocessing.get_context("spawn")
-            self._helper = ProcessPoolExecutor(1, mp_context=context)
-        except (OSError, ImportError, ValueError):  # no processes here: it is only a help
-            self._may_help = False
-            return
-        waiting = [batch for batch, _ in self._pending]
-        self._pending = deque((batch, self._promise(batch)) for batch in waiting)
-
-    def _promise(self, batch: list[Signed]) -> Future[list[int]] | None:
-        if self._helper is None or not self._may_help:
-            return None
-        try:
-            return self._helper.submit(bad_ones, batch)
-        except (BrokenProcessPool, RuntimeError, OSError):
-            self._may_help = False
-            return None
-
-    def _tell(self, batch: Sequence[Signed], bad: Sequence[int]) -> None:
-        for place in bad:
-            self._bad(batch[place])
+            return promise.result()
+        except (OSError, ValueError):
+            pass  # the helper died; its work is done here
+    return verdicts(_signatures(batch))
 
 
-def bad_ones(batch: Sequence[Signed]) -> list[int]:
-    """The places in the batch of the signatures that do not fit."""
-    return [place for place, signed in enumerate(batch) if not _fits(signed)]
+def _signatures(batch: Sequence[Signed]) -> list[Signature]:
+    return [signed.signature for signed in batch]
 
 
-def _answer(batch: Sequence[Signed], promise: Future[list[int]]) -> list[int]:
-    try:
-        return promise.result()
-    except (BrokenProcessPool, OSError):
-        # The helper died; its work is done here.
-        return bad_ones(batch)
-
-
-def _fits(signed: Signed) -> bool:
-    try:
-        _loaded(signed.key).verify(signed.signature, signed.data, _ECDSA)
-    except (InvalidSignature, ValueError):
-        return False
-    return True
-
-
-@lru_cache(maxsize=256)
-def _loaded(key: bytes) -> ec.EllipticCurvePublicKey:
-    loaded = load_der_public_key(key)
-    if not isinstance(loaded, ec.EllipticCurvePublicKey):
-        raise TypeError("key is not on an elliptic curve.")
-    return loaded
+def _is_answered(promise: Future[bytes] | None) -> bool:
+    return promise is not None and promise.done()

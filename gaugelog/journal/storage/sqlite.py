@@ -321,13 +321,11 @@ def _roll_back(connection: sqlite3.Connection) -> None:
 
 
 def _entry(header: object, body: object, signature: object) -> Entry:
-    return Entry(
-        _bytes(header),
-        None if body is None else _bytes(body),
-        None if signature is None else _bytes(signature),
-    )
+    return Entry(_bytes(header) or b"", _bytes(body), _bytes(signature))
 
 
-def _bytes(value: object) -> bytes:
+def _bytes(value: object) -> bytes | None:
+    if value is None or isinstance(value, bytes):
+        return value
     # A column that was tampered with can hold any type; as bytes it fails the check like bytes.
-    return value if isinstance(value, bytes) else str(value).encode("utf-8", "surrogatepass")
+    return str(value).encode("utf-8", "surrogatepass")
