@@ -9,21 +9,12 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-from gaugelog.physics.defects import Suspect
 from gaugelog.physics.network import Network
-from gaugelog.physics.transfer import AIR, Array, Transfer, changed_resistance, strength
+from gaugelog.physics.suspects import Ends, Suspect
+from gaugelog.physics.transfer import Array, Transfer, changed_resistance, strength
 
-Ends = tuple[str, str]
-"""Two nodes, or two terminals, by name."""
-
-CEILING = 1e9
-"""Resistance from which a path counts as none, ohm."""
-LEAST = 1e-3
-"""Smallest resistance a path is given, ohm."""
 OVERLOAD_DOUBT = 0.01
 """Relative standard uncertainty of the bound that an overload reading stands for."""
-VALUE_SPAN = 10.0
-"""How many times too large or too small a wrong element may be."""
 
 
 @dataclass(frozen=True)
@@ -93,7 +84,7 @@ def model(
     shape = (-1, len(ends), len(suspected))
     own = solved.along(changes)
     present = np.array([each.present for each in suspected])
-    least, most = np.array([_bounds(each) for each in suspected]).T
+    least, most = np.array([(each.least, each.most) for each in suspected]).T
     return Model(
         sound=solved.along(figures).reshape(-1, len(ends))[which],
         moved=solved.between(figures, changes).reshape(shape)[which, :, np.arange(len(which))],
@@ -149,15 +140,6 @@ def _touchings(
             touched += each.touched(ends)
         which.append(ways[way])
     return which, solved.incidence(touched)
-
-
-def _bounds(suspect: Suspect) -> tuple[float, float]:
-    """Least and greatest resistance the change may lead to, ohm."""
-    return {
-        "across": (LEAST, CEILING),
-        "joint": (suspect.present, suspect.present + CEILING),
-        "value": (suspect.present / VALUE_SPAN, suspect.present * VALUE_SPAN),
-    }.get(suspect.family, (AIR, AIR))
 
 
 def _first_strength(given: Model, figures: Figures) -> Array:

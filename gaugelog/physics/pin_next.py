@@ -7,8 +7,9 @@ from dataclasses import dataclass
 from itertools import combinations
 
 from gaugelog.physics.defects import ohm
-from gaugelog.physics.pin_fit import CEILING, Ends, Figures, model, predict
+from gaugelog.physics.pin_fit import Figures, model, predict
 from gaugelog.physics.pin_trials import APART, Bench, Trial, terminals_of
+from gaugelog.physics.suspects import CEILING, Ends
 from gaugelog.physics.transfer import Array
 
 RIVAL = 25.0

@@ -6,10 +6,11 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 from gaugelog.physics.circuit import Circuit
-from gaugelog.physics.defects import Defect, Suspect, found, suspects
+from gaugelog.physics.defects import Defect, found
 from gaugelog.physics.network import Network, Resistor
-from gaugelog.physics.pin_fit import LEAST, Figures, Fit, fit, model
+from gaugelog.physics.pin_fit import Figures, Fit, fit, model
 from gaugelog.physics.pin_network import ARTICLE, SHIELD, pin_network, pins_of
+from gaugelog.physics.suspects import LEAST, Suspect, suspects
 from gaugelog.physics.transfer import Array, Transfer, solve
 
 APART = 3.0

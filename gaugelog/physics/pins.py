@@ -12,9 +12,10 @@ from dataclasses import dataclass
 
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.defects import Defect
-from gaugelog.physics.pin_fit import CEILING, Figures
+from gaugelog.physics.pin_fit import Figures
 from gaugelog.physics.pin_next import NextMeasurement, next_measurement
 from gaugelog.physics.pin_trials import SIZE_COST, bench_of, grouped, ranked, terminals_of
+from gaugelog.physics.suspects import CEILING
 from gaugelog.physics.validity import OutOfDomain, not_negative, positive
 
 POOR_MISFIT = 4.0

@@ -7,10 +7,10 @@ import pytest
 
 from gaugelog.physics import transfer
 from gaugelog.physics.circuit import circuit_of
-from gaugelog.physics.pin_fit import CEILING
 from gaugelog.physics.pin_network import ARTICLE, SHIELD, pin_network
 from gaugelog.physics.pin_trials import bench_of
 from gaugelog.physics.pins import diagnose
+from gaugelog.physics.suspects import CEILING
 from tests.bench.compare import compare
 from tests.physics.planted import Planted, plant, read
 

@@ -11,12 +11,20 @@ import pytest
 from numpy.typing import NDArray
 from scipy.optimize import minimize_scalar
 
-from gaugelog.physics import defects, pin_fit, pin_network, pin_next, pin_trials, transfer
+from gaugelog.physics import (
+    defects,
+    pin_fit,
+    pin_network,
+    pin_next,
+    pin_trials,
+    suspects,
+    transfer,
+)
 from gaugelog.physics.circuit import circuit_of
-from gaugelog.physics.defects import Suspect
 from gaugelog.physics.network import Network, Resistor, resistance_between
-from gaugelog.physics.pin_fit import Ends, Figures
+from gaugelog.physics.pin_fit import Figures
 from gaugelog.physics.pin_trials import SIZE_COST, Bench
+from gaugelog.physics.suspects import CEILING, Ends, Suspect
 from tests.foreign import needs
 from tests.outside.spice import resistances
 
@@ -24,7 +32,7 @@ CHECKS = (
     transfer.solve,
     transfer.strength,
     transfer.changed_resistance,
-    defects.suspects,
+    suspects.suspects,
     defects.found,
     defects.ohm,
     pin_fit.model,
@@ -62,7 +70,7 @@ def _changed(network: Network, suspect: Suspect, size: float) -> Network:
 def test_every_suspect_moves_the_figures_as_the_simulator_says(tmp_path: Path) -> None:
     """Each open, path, joint and wrong value of a full bridge is built into the simulator."""
     bench = _bench()
-    every = defects.suspects(bench.network, bench.pins, frozenset())
+    every = suspects.suspects(bench.network, bench.pins, frozenset())
     metal = {pin_network.ARTICLE, pin_network.SHIELD}
     tried = [each for each in every if each.family in SIZES and not metal & {*each.ends}]
     assert 60 > len(tried) > 30
@@ -76,8 +84,8 @@ def test_every_suspect_moves_the_figures_as_the_simulator_says(tmp_path: Path) -
         for ends in ENDS
     ]
     expected = np.reshape(resistances(asked, tmp_path), (len(tried), len(ENDS)))
-    closed = np.minimum(predicted, pin_fit.CEILING)
-    assert np.minimum(expected, pin_fit.CEILING) == pytest.approx(closed, rel=1e-6)
+    closed = np.minimum(predicted, CEILING)
+    assert np.minimum(expected, CEILING) == pytest.approx(closed, rel=1e-6)
     finite = transfer.changed_resistance(given.present, given.own, strengths)
     assert wanted == pytest.approx(finite, rel=1e-3)
 

@@ -9,8 +9,9 @@ from itertools import combinations
 
 import numpy as np
 
-from gaugelog.physics.circuit import Circuit, circuit_of
+from gaugelog.physics.circuit import Circuit, Element, circuit_of
 from gaugelog.physics.defects import Defect
+from gaugelog.physics.layouts import LAYOUTS
 from gaugelog.physics.network import Network, Resistor, resistance_between
 from gaugelog.physics.pin_network import ARTICLE, SHIELD, pin_network, pins_of
 from gaugelog.physics.pins import PinReading
@@ -93,10 +94,25 @@ def shows(planted: Planted) -> bool:
 
 def plant(draw: np.random.Generator) -> Planted:
     """A random circuit with a random defect."""
+    circuit = _random_circuit(draw)
+    return PLANTERS[draw.integers(len(PLANTERS))](circuit, _as_made(circuit, draw), draw)
+
+
+def _random_circuit(draw: np.random.Generator) -> Circuit:
+    """Any layout; one in four has wires of unequal length, one in four a trim in arm 1."""
     name, wires = CIRCUITS[draw.integers(len(CIRCUITS))]
     grid = float(draw.choice([120.0, 350.0, 1000.0]))
     circuit = circuit_of(name, wires, grid, 2.0, float(10 ** draw.uniform(-1, 1)))
-    return PLANTERS[draw.integers(len(PLANTERS))](circuit, _as_made(circuit, draw), draw)
+    if name == "opposite arms" and draw.random() < 0.5:
+        own = LAYOUTS["opposite four-wire"]
+        circuit = Circuit(own, circuit.arms, {pin: circuit.wires[pin] for pin in own.wires})
+    if draw.random() < 0.25:
+        lengths = {pin: ohm * float(draw.uniform(0.5, 2)) for pin, ohm in circuit.wires.items()}
+        circuit = Circuit(circuit.layout, circuit.arms, lengths)
+    if draw.random() < 0.25:
+        trimmed = (*circuit.arms[0], Element("trim 1", "trim", float(draw.uniform(0.2, 5.0))))
+        circuit = Circuit(circuit.layout, (trimmed, *circuit.arms[1:]), circuit.wires)
+    return circuit
 
 
 def _as_made(circuit: Circuit, draw: np.random.Generator) -> Network:
