@@ -151,8 +151,10 @@ class Certificates:
 def certificates_of(reader: Reader) -> Certificates:
     """Who may sign, as known at the end of one view of the journal."""
     certificates = Certificates()
-    for entry in reader.of_kinds(CERTIFICATE_KINDS):
-        certificates.apply(entry)
+    # Kind by kind, which comes to the same as the ledger's order once all of them are known.
+    for kind in CERTIFICATE_KINDS:
+        for entry in reader.of_kinds([kind]):
+            certificates.apply(entry)
     return certificates
 
 

@@ -7,6 +7,8 @@ from dataclasses import replace
 from datetime import timedelta
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from gaugelog.journal.certificates import (
     certificate_issued,
@@ -276,6 +278,16 @@ def test_a_known_head_of_another_chain_that_is_not_here_is_trouble(journal: Samp
     step, where, what = only_trouble(replace(journal, storage=alone))
     assert (3, f"entry 4 of chain {CHAIN}") == (step, where)
     assert "It knew entry 1 of chain laptop, which is not here." == what
+
+
+@given(st.lists(st.tuples(st.sampled_from([CHAIN, "a", "z"]), st.integers(1, 3)), max_size=8))
+def test_whatever_was_appended_to_whichever_chain_is_sound(turns: list[tuple[str, int]]) -> None:
+    journal = SampleJournal().start()
+    for chain, count in turns:
+        replace(journal, chain=chain).keep(*[note(str(place)) for place in range(count)])
+    report = report_of(journal)
+    assert report.ok, report.troubles
+    assert 3 + sum(count for _, count in turns) == report.entries
 
 
 def test_an_empty_journal_is_trouble() -> None:

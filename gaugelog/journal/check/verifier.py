@@ -38,8 +38,9 @@ class Helper:
         """Start the process. Raises OSError when there can be none."""
         if getattr(sys, "frozen", False) or not sys.executable:
             raise OSError("there is no interpreter to start")
+        # -P: never import from the current folder, which may be a logbook of anyone's.
         self._process = subprocess.Popen(
-            [sys.executable, "-m", "gaugelog.journal.verifying"],
+            [sys.executable, "-P", "-m", "gaugelog.journal.verifying"],
             stdin=subprocess.PIPE,
             stdout=subprocess.PIPE,
             stderr=subprocess.DEVNULL,

@@ -2,172 +2,30 @@
 
 from __future__ import annotations
 
-import json
 import random
 import sqlite3
 import threading
 import time
-from collections.abc import Collection, Iterator
+from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
-from typing import Any
 
 from gaugelog.errors import StorageTrouble
-from gaugelog.journal.entry import Entry, Head, sha256
-from gaugelog.journal.storage.port import (
-    GIVE_UP_SECONDS,
-    Filed,
-    OnWait,
-    demand_next,
-    no_sheet,
-    still_busy,
-)
-from gaugelog.journal.storage.schema import GUARDS, TABLES, plain
+from gaugelog.journal.storage.port import GIVE_UP_SECONDS, OnWait, still_busy
+from gaugelog.journal.storage.schema import GUARDS, TABLES
+from gaugelog.journal.storage.sqlite_tables import SqliteReader, SqliteWriter
 from gaugelog.journal.storage.troubles import told_plainly
 
+__all__ = ["SqliteReader", "SqliteStorage", "SqliteWriter"]
+
+_SETTINGS = (
+    "journal_mode = WAL",
+    "synchronous = FULL",
+    "foreign_keys = ON",
+    "recursive_triggers = ON",
+)
 _BUSY_MS = 5000
 _POLL_SECONDS = 0.01
-
-
-class SqliteReader:
-    """One unchanging view of the file; see `Reader`.
-
-    `connection` is the open transaction, for those who read their own tables in the same view.
-    """
-
-    def __init__(self, connection: sqlite3.Connection) -> None:
-        self.connection = connection
-
-    def head(self, chain: str) -> Head | None:
-        """The last entry of a chain, or None."""
-        found = self._first(
-            "SELECT header, body, signature FROM entry WHERE chain = ? ORDER BY seq DESC LIMIT 1",
-            chain,
-        )
-        return _entry(*found).head if found else None
-
-    def chains(self) -> list[str]:
-        """The ids of all chains, sorted; a look-up for each, not a walk through all entries."""
-        found: list[str] = []
-        last = self._first("SELECT min(chain) FROM entry")
-        while last is not None and last[0] is not None:
-            found.append(str(last[0]))
-            last = self._first("SELECT min(chain) FROM entry WHERE chain > ?", last[0])
-        return found
-
-    def entries(self, chain: str | None = None, after: int = 0) -> Iterator[Entry]:
-        """Entries numbered above `after`, by chain and number."""
-        if chain is None:
-            for name in self.chains():
-                yield from self.entries(name, after)
-            return
-        for row in self.connection.execute(
-            "SELECT header, body, signature FROM entry WHERE chain = ? AND seq > ? ORDER BY seq",
-            (chain, after),
-        ):
-            yield _entry(*row)
-
-    def filed(self, chain: str) -> Iterator[Filed]:
-        """All entries of a chain as they are filed."""
-        for seq, deed, index, kind, *row in self.connection.execute(
-            "SELECT seq, deed, deed_index, kind, header, body, signature FROM entry WHERE chain = ?"
-            " ORDER BY seq",
-            (chain,),
-        ):
-            yield Filed(chain, seq, deed, index, kind, _entry(*row))
-
-    def entry(self, chain: str, seq: int) -> Entry | None:
-        """One entry, or None."""
-        found = self._first(
-            "SELECT header, body, signature FROM entry WHERE chain = ? AND seq = ?", chain, seq
-        )
-        return _entry(*found) if found else None
-
-    def deed(self, deed_id: str) -> list[Entry]:
-        """The entries of a deed in their order."""
-        rows = self.connection.execute(
-            "SELECT header, body, signature FROM entry WHERE deed = ? ORDER BY deed_index",
-            (deed_id,),
-        )
-        return [_entry(*row) for row in rows]
-
-    def of_kinds(self, kinds: Collection[str]) -> Iterator[Entry]:
-        """The entries of some kinds, by chain and number."""
-        for row in self.connection.execute(
-            "SELECT header, body, signature FROM entry"
-            " WHERE kind IN (SELECT value FROM json_each(?)) ORDER BY chain, seq",
-            (json.dumps(sorted(kinds)),),
-        ):
-            yield _entry(*row)
-
-    def sheet(self, digest: str) -> bytes | None:
-        """An identity sheet, or None."""
-        found = self._first("SELECT data FROM sheet WHERE digest = ?", digest)
-        return _bytes(found[0]) if found else None
-
-    def sheets(self) -> list[str]:
-        """The digests of all identity sheets."""
-        rows = self.connection.execute("SELECT digest FROM sheet ORDER BY digest")
-        return [str(row[0]) for row in rows]
-
-    def missing_guards(self) -> list[str]:
-        """Which triggers are gone or say something else than they should."""
-        found = dict(
-            self.connection.execute("SELECT name, sql FROM sqlite_schema WHERE type = 'trigger'")
-        )
-        return [
-            f"The trigger {name} is {'altered' if name in found else 'missing'}."
-            for name, statement in GUARDS.items()
-            if plain(str(found.get(name))) != plain(statement)
-        ]
-
-    def _first(self, statement: str, *values: str | int) -> tuple[Any, ...] | None:
-        found: tuple[Any, ...] | None = self.connection.execute(statement, values).fetchone()
-        return found
-
-
-class SqliteWriter(SqliteReader):
-    """The one writer; see `Writer`. Others write their own tables through `connection`."""
-
-    def __init__(self, connection: sqlite3.Connection) -> None:
-        super().__init__(connection)
-        self.erased = False
-
-    def insert(self, entry: Entry) -> None:
-        """Keep a new entry as the next of its chain."""
-        demand_next(self, entry)
-        header = entry.header
-        self.connection.execute(
-            "INSERT INTO entry (chain, seq, previous, deed, deed_index, kind, header, body,"
-            " signature) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)",
-            (
-                header.chain,
-                header.seq,
-                bytes.fromhex(header.previous),
-                header.deed,
-                header.index,
-                header.kind,
-                entry.header_bytes,
-                entry.body_bytes,
-                entry.signature,
-            ),
-        )
-
-    def put_sheet(self, data: bytes) -> str:
-        """Keep an identity sheet; returns its digest."""
-        digest = sha256(data)
-        self.connection.execute(
-            "INSERT INTO sheet (digest, data) VALUES (?, ?) ON CONFLICT DO NOTHING", (digest, data)
-        )
-        return digest
-
-    def erase_sheet(self, digest: str) -> None:
-        """Erase an identity sheet; its bytes are overwritten, not just forgotten."""
-        self.connection.execute("PRAGMA secure_delete = ON")
-        done = self.connection.execute("DELETE FROM sheet WHERE digest = ?", (digest,))
-        if done.rowcount == 0:
-            raise no_sheet(digest)
-        self.erased = True
 
 
 class SqliteStorage:
@@ -212,7 +70,8 @@ class SqliteStorage:
                 _roll_back(connection)
                 raise
             if writer.erased:
-                # What was erased must not live on in the write-ahead log.
+                # What was erased must not live on in the write-ahead log. While another process
+                # holds an older view, SQLite keeps it until that view is closed.
                 connection.execute("PRAGMA wal_checkpoint(TRUNCATE)")
 
     def close(self) -> None:
@@ -252,13 +111,12 @@ def _connect(path: Path, mode: str) -> sqlite3.Connection:
         timeout=_BUSY_MS / 1000,
         check_same_thread=False,
     )
-    for setting in (
-        "journal_mode = WAL",
-        "synchronous = FULL",
-        "foreign_keys = ON",
-        "recursive_triggers = ON",
-    ):
-        connection.execute(f"PRAGMA {setting}")
+    try:
+        for setting in _SETTINGS:
+            connection.execute(f"PRAGMA {setting}")
+    except sqlite3.Error:
+        connection.close()
+        raise
     return connection
 
 
@@ -318,14 +176,3 @@ def _roll_back(connection: sqlite3.Connection) -> None:
     # Some errors, such as a full disk, have SQLite roll back by itself.
     if connection.in_transaction:
         connection.execute("ROLLBACK")
-
-
-def _entry(header: object, body: object, signature: object) -> Entry:
-    return Entry(_bytes(header) or b"", _bytes(body), _bytes(signature))
-
-
-def _bytes(value: object) -> bytes | None:
-    if value is None or isinstance(value, bytes):
-        return value
-    # A column that was tampered with can hold any type; as bytes it fails the check like bytes.
-    return str(value).encode("utf-8", "surrogatepass")
