@@ -10,7 +10,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from math import sqrt
 
-from gaugelog.physics._maths import Number
+from gaugelog.physics._maths import Number, magnitude
 from gaugelog.physics._maths import sqrt as root
 from gaugelog.physics.validity import finite, not_negative, positive
 
@@ -77,7 +77,7 @@ def instrument_uncertainty(
     not_negative("gain_fraction", gain_fraction)
     not_negative("offset", offset)
     not_negative("resolution", resolution)
-    width = abs(finite("value", value)) * gain_fraction + offset
+    width = magnitude(finite("value", value)) * gain_fraction + offset
     return root(width**2 / 3 + resolution**2 / 12)
 
 
@@ -122,5 +122,5 @@ def difference_uncertainty(
 
 
 def _by_one_meter(difference: Number, accuracy: Accuracy) -> Number:
-    gain = accuracy.gain_fraction * abs(difference)
+    gain = accuracy.gain_fraction * magnitude(difference)
     return root(gain**2 / 3 + accuracy.resolution**2 / 6)

@@ -9,14 +9,18 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass
-from math import sqrt
+from math import pi, sqrt
 
-from gaugelog.physics._maths import Number, cos, sin
+from gaugelog.physics._maths import Number
 from gaugelog.physics.arrangements import arrangement, bridge_factor
 from gaugelog.physics.bridge import actual_strain, indicated_strain, strain_output
 from gaugelog.physics.leads import desensitisation
+from gaugelog.physics.plane import PlaneStrain, strain_along
 from gaugelog.physics.shunt import simulated_strain
 from gaugelog.physics.strain import strain_from_resistances
+from gaugelog.physics.temperature import factor_at, output_at_setting
+from gaugelog.physics.transverse import CALIBRATION_POISSON
+from gaugelog.physics.transverse import indicated_strain as felt_strain
 from gaugelog.physics.validity import finite, not_zero, positive
 
 TERMS: dict[str, tuple[str, str]] = {
@@ -24,10 +28,10 @@ TERMS: dict[str, tuple[str, str]] = {
     "factor_slope": ("relative change of the gauge factor per kelvin", "1/K"),
     "celsius": ("temperature of the grid when read", "°C"),
     "transverse": ("transverse sensitivity of the grid", ""),
-    "biaxiality": ("strain across the grid over strain along it", ""),
+    "biaxiality": ("strain across the axis asked for over strain along it", ""),
     "misalignment": ("angle between the grid and the axis asked for", "rad"),
-    "shear": ("shear strain in the grid's axes over strain along it", ""),
-    "thermal": ("thermal output at the planned temperature", "strain"),
+    "shear": ("shear strain in those axes over strain along the axis", ""),
+    "thermal": ("thermal output at the planned temperature and the factor that is set", "strain"),
     "thermal_slope": ("slope of the thermal output there", "strain/K"),
     "scatter": ("scatter of one gauge's thermal output in its lot", "strain"),
     "resistance": ("resistance of one grid", "ohm"),
@@ -61,7 +65,7 @@ class PlannedCircuit:
     setting: float = 2.0
     poisson: float = 0.3
     reference_celsius: float = 23.0
-    factor_poisson: float = 0.285
+    factor_poisson: float = CALIBRATION_POISSON
     resistance: float = 350.0
     shunt: float | None = None
 
@@ -90,9 +94,10 @@ def expected_reading(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Nu
     """What the instrument shows at the planned strain, as strain at its setting.
 
     `terms` has a value for every name in `TERMS`. Units: ratio out. Source: the formulas of
-    `bridge`, `leads`, `leakage`, `shunt` and `strain`, each with its own source.
+    `bridge`, `leads`, `plane`, `shunt`, `strain`, `temperature` and `transverse`, each with its
+    own source.
     """
-    felt = circuit.strain * _alignment(terms) * _transverse(circuit, terms)
+    felt = circuit.strain * _response(circuit, terms)
     seen = felt + _apparent(circuit, terms)
     ratio = strain_output(seen, _factor_as_wired(circuit, terms), *_bridge(circuit))
     shown = indicated_strain(ratio, circuit.setting, *_bridge(circuit))
@@ -110,7 +115,7 @@ def estimated_strain(
     ratio = shown * circuit.setting * bridge_factor(*_bridge(circuit)) / 4
     seen = actual_strain(ratio, _factor_as_wired(circuit, terms), *_bridge(circuit))
     felt = seen - _apparent(circuit, terms)
-    return felt / _transverse(circuit, terms) / _alignment(terms)
+    return felt / _response(circuit, terms)
 
 
 def _bridge(circuit: PlannedCircuit) -> tuple[str, float]:
@@ -119,21 +124,21 @@ def _bridge(circuit: PlannedCircuit) -> tuple[str, float]:
 
 def _factor_as_wired(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
     """Gauge factor at the grid's temperature, less what the wires take."""
-    warmed = 1 + terms["factor_slope"] * (terms["celsius"] - circuit.reference_celsius)
     left = desensitisation(circuit.layout, terms["resistance"], terms["wire"])
-    return terms["factor"] * warmed * left
+    return _warm_factor(circuit, terms) * left
 
 
-def _transverse(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
-    """What the grid feels over the strain along it: (1 + Kt εt/εa)/(1 − ν0 Kt)."""
-    sensitivity = terms["transverse"]
-    return (1 + sensitivity * terms["biaxiality"]) / (1 - circuit.factor_poisson * sensitivity)
+def _warm_factor(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
+    rise = terms["celsius"] - circuit.reference_celsius
+    return factor_at(terms["factor"], terms["factor_slope"], rise)
 
 
-def _alignment(terms: Mapping[str, Number]) -> Number:
-    """Strain along a grid set askew over that along the axis asked for."""
-    cosine, sine = cos(terms["misalignment"]), sin(terms["misalignment"])
-    return cosine**2 + terms["biaxiality"] * sine**2 + terms["shear"] * sine * cosine
+def _response(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
+    """What the grid feels, set askew and feeling across, over the strain along the axis."""
+    field = PlaneStrain(1.0, terms["biaxiality"], terms["shear"])
+    askew = terms["misalignment"]
+    along, across = strain_along(field, askew), strain_along(field, askew + pi / 2)
+    return felt_strain(along, across, terms["transverse"], circuit.factor_poisson)
 
 
 def _apparent(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
@@ -141,7 +146,8 @@ def _apparent(circuit: PlannedCircuit, terms: Mapping[str, Number]) -> Number:
     factor = bridge_factor(*_bridge(circuit))
     grids = arrangement(circuit.arrangement).outside
     signs = sum(1 if arm % 2 else -1 for arm in grids)
-    warm = terms["thermal"] + terms["thermal_slope"] * (terms["celsius"] - circuit.celsius)
+    stated = terms["thermal"] + terms["thermal_slope"] * (terms["celsius"] - circuit.celsius)
+    warm = output_at_setting(stated, circuit.setting, _warm_factor(circuit, terms))
     one_arm = terms["scatter"] * sqrt(len(grids)) + _wire_strain(terms) + _leak_strain(terms)
     return (warm * signs + one_arm) / factor
 

@@ -10,7 +10,7 @@ from math import pi
 
 from gaugelog.physics._maths import Number, nominal, sin
 from gaugelog.physics._order import all_of, smaller
-from gaugelog.physics.validity import OutOfDomain, above, finite, not_negative, positive
+from gaugelog.physics.validity import OutOfDomain, finite, not_negative, positive
 
 
 def polar_modulus(outer: Number, inner: Number = 0.0) -> Number:
@@ -26,14 +26,6 @@ def polar_modulus(outer: Number, inner: Number = 0.0) -> Number:
     return pi * (outer**4 - inner**4) / (16 * outer)
 
 
-def shear_modulus(modulus: Number, poisson: Number) -> Number:
-    """Shear modulus of an isotropic material: G = E/(2(1 + ν)).
-
-    Units: Pa. Source: Gere, Mechanics of Materials, relation of E and G (from memory).
-    """
-    return positive("modulus", modulus) / (2 * (1 + above("poisson", poisson, -1.0)))
-
-
 def shear_stress(torque: Number, outer: Number, inner: Number = 0.0) -> Number:
     """Shear stress at the surface of a shaft: τ = T/Wp.
 
@@ -45,7 +37,8 @@ def shear_stress(torque: Number, outer: Number, inner: Number = 0.0) -> Number:
 def shear_strain(torque: Number, stiffness: Number, outer: Number, inner: Number = 0.0) -> Number:
     """Shear strain at the surface of a shaft: γ = T/(G Wp).
 
-    `stiffness` is the shear modulus G. Units: N m, Pa, m in, ratio (engineering shear) out.
+    `stiffness` is the shear modulus G (`stress.shear_modulus`). Units: N m, Pa, m in, ratio
+    (engineering shear) out.
     Source: Gere, Mechanics of Materials, torsion formula (from memory).
     """
     return shear_stress(torque, outer, inner) / positive("stiffness", stiffness)

@@ -41,12 +41,13 @@ def _bare() -> tuple[float, float, float, float]:
         PLAN, {n: each.value for n, each in all_inputs(PLAN, INPUTS).items()}
     )
     ratio = (reading * x["gain"] + x["repeatability"]) * 2.1 / 4
-    factor = x["factor"] * (1 + x["factor_slope"] * (x["celsius"] - 23)) * 350 / (350 + x["wire"])
-    seen = ((1 + 2 * ratio) / (1 - 2 * ratio) - 1) / factor
-    felt = seen - x["thermal"] - x["scatter"]
-    felt /= (1 + x["transverse"] * x["biaxiality"]) / (1 - 0.285 * x["transverse"])
-    sine, cosine = numpy.sin(x["misalignment"]), numpy.cos(x["misalignment"])
-    strain = felt / (cosine**2 + x["biaxiality"] * sine**2)
+    factor = x["factor"] * (1 + x["factor_slope"] * (x["celsius"] - 23))
+    seen = ((1 + 2 * ratio) / (1 - 2 * ratio) - 1) / (factor * 350 / (350 + x["wire"]))
+    felt = seen - x["thermal"] * 2.1 / factor - x["scatter"]
+    mean, half = (1 + x["biaxiality"]) / 2, (1 - x["biaxiality"]) / 2
+    turn = half * numpy.cos(2 * x["misalignment"])
+    response = (mean + turn + x["transverse"] * (mean - turn)) / (1 - 0.285 * x["transverse"])
+    strain = felt / response
     low, high = numpy.quantile(strain, (0.025, 0.975))
     return float(strain.mean()), float(strain.std(ddof=1)), float(low), float(high)
 

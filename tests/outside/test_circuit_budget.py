@@ -56,20 +56,19 @@ INPUTS = {name: normal(value, u) for name, (value, u) in SPREADS.items()}
 
 def _shown(strain: Any, x: dict[str, Any], cos: Any, sin: Any) -> Any:
     """Textbook chain from surface to display, a two-wire quarter bridge (Dally and Riley)."""
-    along = strain * (
-        (1 + x["biaxiality"]) / 2
-        + (1 - x["biaxiality"]) / 2 * cos(2 * x["misalignment"])
-        + x["shear"] / 2 * sin(2 * x["misalignment"])
-    )
-    sensed = along * (1 + x["transverse"] * x["biaxiality"]) / (1 - 0.285 * x["transverse"])
+    cosine, sine = cos(x["misalignment"]), sin(x["misalignment"])
+    slide = x["shear"] * sine * cosine
+    along = strain * (cosine**2 + x["biaxiality"] * sine**2 + slide)
+    across = strain * (sine**2 + x["biaxiality"] * cosine**2 - slide)
+    sensed = (along + x["transverse"] * across) / (1 - 0.285 * x["transverse"])
     grid, factor = x["resistance"], x["factor"]
+    warm = factor * (1 + x["factor_slope"] * (x["celsius"] - 23.0))
     feigned = (
-        x["thermal"]
+        x["thermal"] * 2.1 / warm
         + x["scatter"]
         + x["wire_drift"] / grid / factor
         - grid * x["leak"] / (1 + grid * x["leak"]) / factor
     )
-    warm = factor * (1 + x["factor_slope"] * (x["celsius"] - 23.0))
     change = warm * (sensed + feigned) * grid / (grid + 2 * x["wire"])
     output = (1 + change) / (2 + change) - 1 / 2
     return (4 * output / 2.1 - x["zero"]) / x["gain"]
