@@ -9,6 +9,7 @@ from math import pi, sin
 
 from gaugelog.physics._maths import Number, hypot, magnitude, sqrt
 from gaugelog.physics.bridge import ARM_NAMES
+from gaugelog.physics.temperature import ABSOLUTE_ZERO
 from gaugelog.physics.validity import (
     OutOfDomain,
     above,
@@ -19,8 +20,6 @@ from gaugelog.physics.validity import (
 
 BOLTZMANN = 1.380649e-23
 """Boltzmann constant, J/K (exact since the SI of 2019)."""
-ABSOLUTE_ZERO = -273.15
-"""In °C (exact by definition)."""
 PEAK_TO_PEAK = 6.6
 """Peak to peak over effective value, so that normal noise stays inside 99.9 % of the time."""
 

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from gaugelog.physics._maths import Number, magnitude, nominal, sqrt, where
 from gaugelog.physics._order import all_of, any_of
+from gaugelog.physics.temperature import ABSOLUTE_ZERO
 from gaugelog.physics.validity import (
     Notice,
     OutOfDomain,
@@ -19,8 +20,6 @@ from gaugelog.physics.validity import (
 
 REFERENCE_CELSIUS = 25.0
 """Temperature at which factors are usually given, °C (common practice)."""
-ABSOLUTE_ZERO = -273.15
-"""In °C (exact by definition)."""
 STRAIN_NOTED = 0.003
 """Strain up to which a bonded semiconductor grid is used without worry (common practice)."""
 SEMICONDUCTOR_SOURCE = "Window and Holister, Strain Gauge Technology (from memory)"

@@ -11,6 +11,7 @@ import pytest
 from scipy import constants, integrate, signal, stats
 
 from gaugelog.physics import noise
+from gaugelog.physics.temperature import ABSOLUTE_ZERO
 from tests.foreign import needs
 
 CHECKS = (
@@ -73,7 +74,7 @@ def test_a_bridge_behind_a_filter_sounds_as_a_simulator_says(tmp_path: Path) -> 
 def test_the_boltzmann_constant_is_scipys() -> None:
     """SciPy, scipy.constants (CODATA); absolute zero likewise."""
     assert constants.k == noise.BOLTZMANN
-    assert -constants.zero_Celsius == noise.ABSOLUTE_ZERO
+    assert -constants.zero_Celsius == ABSOLUTE_ZERO
 
 
 def test_a_kilohm_makes_four_nanovolts_a_root_hertz() -> None:
