@@ -60,6 +60,7 @@ def read_campaign(name: str, data: bytes, new_id: NewId, faults: Gathered) -> Ca
         label=job.label("label"),
         title=job.text("title"),
         client=job.text("client"),
+        installer=job.text("installer"),
         contract=job.text("contract", needed=False),
         document=job.text("document", needed=False),
         site=job.text("site", needed=False),

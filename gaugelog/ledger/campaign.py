@@ -104,6 +104,8 @@ class CampaignPlanned(FactBody):
     label: str
     title: str
     client: str
+    installer: str = ""
+    """The organisation that does the work, with its address."""
     contract: str = ""
     document: str = ""
     site: str = ""

@@ -84,6 +84,7 @@ def _campaign(plan: Planned) -> CampaignShown:
         label=job.label,
         title=job.title,
         client=job.client,
+        installer=job.installer,
         contract=job.contract,
         document=job.document,
         site=job.site,

@@ -41,6 +41,7 @@ class CampaignShown(Shown):
     label: str
     title: str
     client: str
+    installer: str = ""
     contract: str = ""
     document: str = ""
     site: str = ""
