@@ -16,7 +16,9 @@ LARGEST_POWER = 30
 """Powers of ten beyond which no number of the trade lies, either way."""
 
 _TYPED = re.compile(
-    r"(?P<sign>[<>=]?) ?(?P<number>[-+]?[\d.,]+(?:[eE][+-]?\d+)?) ?(?P<unit>(?:[^<>=\d][^<>=]*)?)",
+    r"(?P<sign>[<>=]?) ?"
+    r"(?P<number>[-+]?[\d.,]+(?:[eE][+-]?\d+)?) ?"
+    r"(?P<unit>(?:[A-Za-zΩµ%°/][^<>=]*|1/K)?)",
     re.ASCII,
 )
 _NUMBER = re.compile(r"[+-]?(?P<digits>\d+(\.\d*)?|\.\d+)([eE][+-]?\d{1,3})?", re.ASCII)

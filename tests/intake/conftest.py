@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import csv
+import io
 import itertools
 import shutil
 from collections.abc import Callable
@@ -44,3 +46,30 @@ def change(file: Path, old: str, new: str) -> None:
     text = file.read_text(encoding="utf-8")
     assert old in text
     file.write_text(text.replace(old, new, 1), encoding="utf-8")
+
+
+def set_cell(file: Path, row: int, column: str, value: str) -> None:
+    """Change one cell of a CSV file; row 1 is the heading."""
+    table = list(csv.reader(io.StringIO(file.read_text(encoding="utf-8"))))
+    table[row - 1][table[0].index(column)] = value
+    with file.open("w", encoding="utf-8", newline="") as target:
+        csv.writer(target, lineterminator="\n").writerows(table)
+
+
+def lines_of(act: Callable[[], object]) -> list[str]:
+    """The faults that `act` names, each as a person reads it."""
+    return [str(fault) for fault in faults_of(act)]
+
+
+def places_of(act: Callable[[], object]) -> list[str]:
+    """The places of the faults that `act` names, in order."""
+    return [fault.where for fault in faults_of(act)]
+
+
+def told(act: Callable[[], object]) -> tuple[Fault, ...] | None:
+    """The faults that `act` names, or None when it understands; any other error is a defect."""
+    try:
+        act()
+    except Faulty as error:
+        return error.faults
+    return None

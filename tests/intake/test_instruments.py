@@ -29,11 +29,11 @@ def test_all_faults_are_named_at_once(tmp_path: Path) -> None:
     change(file, 'test_voltage = "50 V"', 'test_voltage = "50 V"\ncolour = "red"')
     found = faults_of(lambda: load_instruments(file, counter()))
     assert {fault.where for fault in found} == {
-        "instruments.toml, instrument[1], range[1], gain",
-        "instruments.toml, instrument[1], due",
-        "instruments.toml, instrument[2], label",
-        "instruments.toml, instrument[2], range[1], resolution",
-        "instruments.toml, instrument[2], range[1], colour",
+        "instruments.toml, instrument[1].range[1].gain",
+        "instruments.toml, instrument[1].due",
+        "instruments.toml, instrument[2].label",
+        "instruments.toml, instrument[2].range[1].resolution",
+        "instruments.toml, instrument[2].range[1].colour",
     }
 
 

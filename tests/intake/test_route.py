@@ -87,11 +87,12 @@ hold = true
         fault.where for fault in faults_of(lambda: read_route("r.toml", text.encode(), counter()))
     }
     assert where == {
-        "r.toml, step[1], subject",
-        "r.toml, step[1], window",
-        "r.toml, step[2], id",
-        "r.toml, step[2], input",
-        "r.toml, step[2], input[1], check",
-        "r.toml, step[2], refused_to",
-        "r.toml, step[2], stage",
+        "r.toml, step[1].subject",
+        "r.toml, step",
+        "r.toml, step[1].window",
+        "r.toml, step[2].id",
+        "r.toml, step[2].input",
+        "r.toml, step[2].input[1].check",
+        "r.toml, step[2].refused_to",
+        "r.toml, step[2].stage",
     }
