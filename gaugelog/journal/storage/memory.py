@@ -13,6 +13,7 @@ from gaugelog.journal.storage.port import (
     GIVE_UP_SECONDS,
     Filed,
     OnWait,
+    deed_taken,
     demand_next,
     no_sheet,
     still_busy,
@@ -92,11 +93,14 @@ class MemoryWriter(MemoryReader):
 
     def insert(self, entry: Entry) -> None:
         """Keep a new entry as the next of its chain."""
-        demand_next(self, entry)
         header = entry.header
+        demand_next(self.head(header.chain), entry)
+        deed = self._shelf.deeds.setdefault(header.deed, [])
+        if any(other.header.index == header.index for other in deed):
+            raise deed_taken(entry)
         filed = Filed(header.chain, header.seq, header.deed, header.index, header.kind, entry)
         self._shelf.chains.setdefault(header.chain, []).append(filed)
-        self._shelf.deeds.setdefault(header.deed, []).append(entry)
+        deed.append(entry)
 
     def put_sheet(self, data: bytes) -> str:
         """Keep an identity sheet; returns its digest."""

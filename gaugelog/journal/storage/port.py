@@ -11,6 +11,7 @@ from typing import NamedTuple, Protocol
 
 from gaugelog.errors import StorageTrouble
 from gaugelog.journal.entry import Entry, Head
+from gaugelog.journal.head import NO_HASH
 
 OnWait = Callable[[float], None]
 """Told the seconds waited so far, again and again while another process writes."""
@@ -106,21 +107,23 @@ class Storage(Protocol):
         ...
 
 
-def demand_next(reader: Reader, entry: Entry) -> None:
-    """Refuse an entry that is not the next of its chain. Raises StorageTrouble."""
+def demand_next(head: Head | None, entry: Entry) -> None:
+    """Refuse an entry that does not follow the last one of its chain. Raises StorageTrouble."""
     header = entry.header
-    head = reader.head(header.chain)
-    seq, previous = (head.seq, head.hash) if head else (0, bytes(32))
+    seq, previous = (head.seq, head.hash) if head else (0, NO_HASH)
     if header.seq != seq + 1 or header.previous != previous.hex():
         raise StorageTrouble(
             f"Entry {header.seq} does not follow entry {seq}, the last of its chain.",
             "Read the journal again and append to its head.",
         )
-    if any(other.header.index == header.index for other in reader.deed(header.deed)):
-        raise StorageTrouble(
-            f"Deed {header.deed} has its entry {header.index} already.",
-            "Give each deed an id of its own.",
-        )
+
+
+def deed_taken(entry: Entry) -> StorageTrouble:
+    """The trouble of an entry whose place in its deed is taken."""
+    return StorageTrouble(
+        f"Deed {entry.header.deed} has its entry {entry.header.index} already.",
+        "Give each deed an id of its own.",
+    )
 
 
 def no_sheet(digest: str) -> StorageTrouble:

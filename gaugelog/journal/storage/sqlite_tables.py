@@ -8,7 +8,7 @@ from collections.abc import Collection, Iterator
 from typing import Any
 
 from gaugelog.journal.entry import Entry, Head, sha256
-from gaugelog.journal.storage.port import Filed, demand_next, no_sheet
+from gaugelog.journal.storage.port import Filed, deed_taken, demand_next, no_sheet
 from gaugelog.journal.storage.schema import GUARDS, plain
 
 
@@ -115,26 +115,23 @@ class SqliteWriter(SqliteReader):
     def __init__(self, connection: sqlite3.Connection) -> None:
         super().__init__(connection)
         self.erased = False
+        self._heads: dict[str, Head | None] = {}
+
+    def head(self, chain: str) -> Head | None:
+        """The last entry of a chain; looked up once, for nobody else writes meanwhile."""
+        if chain not in self._heads:
+            self._heads[chain] = super().head(chain)
+        return self._heads[chain]
 
     def insert(self, entry: Entry) -> None:
         """Keep a new entry as the next of its chain."""
-        demand_next(self, entry)
         header = entry.header
-        self.connection.execute(
-            "INSERT INTO entry (chain, seq, previous, deed, deed_index, kind, header, body,"
-            " signature) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)",
-            (
-                header.chain,
-                header.seq,
-                bytes.fromhex(header.previous),
-                header.deed,
-                header.index,
-                header.kind,
-                entry.header_bytes,
-                entry.body_bytes,
-                entry.signature,
-            ),
-        )
+        demand_next(self.head(header.chain), entry)
+        try:
+            self.connection.execute(_INSERT, _row(entry))
+        except sqlite3.IntegrityError as error:
+            raise deed_taken(entry) from error
+        self._heads[header.chain] = entry.head
 
     def put_sheet(self, data: bytes) -> str:
         """Keep an identity sheet; returns its digest."""
@@ -151,6 +148,27 @@ class SqliteWriter(SqliteReader):
         if done.rowcount == 0:
             raise no_sheet(digest)
         self.erased = True
+
+
+_INSERT = """
+INSERT INTO entry (chain, seq, previous, deed, deed_index, kind, header, body, signature)
+VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)
+"""
+
+
+def _row(entry: Entry) -> tuple[str | int | bytes | None, ...]:
+    header = entry.header
+    return (
+        header.chain,
+        header.seq,
+        bytes.fromhex(header.previous),
+        header.deed,
+        header.index,
+        header.kind,
+        entry.header_bytes,
+        entry.body_bytes,
+        entry.signature,
+    )
 
 
 def _entry(header: object, body: object, signature: object) -> Entry:
