@@ -141,6 +141,7 @@ def test_principal_strains_are_the_eigenvalues_of_the_tensor() -> None:
     found = plane.principal_strains(PlaneStrain(x, y, shear))
     assert np.allclose(found.largest, values[:, 1], rtol=0, atol=1e-15)
     assert np.allclose(found.smallest, values[:, 0], rtol=0, atol=1e-15)
+    assert found.angle is not None
     directions = np.array([np.cos(found.angle), np.sin(found.angle)]).T
     parallel = np.abs(np.einsum("ij,ij->i", directions, vectors[:, :, 1]))
     assert np.allclose(parallel, 1.0, rtol=0, atol=1e-9)
