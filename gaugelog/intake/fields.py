@@ -312,5 +312,12 @@ def _short(value: object) -> str:
 
 
 def _kind(value: object) -> str:
-    names = {bool: "true or false", int: "a number", float: "a number", list: "a list"}
-    return names.get(type(value), "a table" if isinstance(value, dict) else "a date or time")
+    names = {
+        str: "text",
+        bool: "true or false",
+        int: "a number",
+        float: "a number",
+        list: "a list",
+        dict: "a table",
+    }
+    return names.get(type(value), "a date or time")

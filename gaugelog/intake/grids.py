@@ -9,6 +9,7 @@ from typing import Literal, cast
 from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
 from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.ledger.points import Place, PlannedGrid, PointPlanned
+from gaugelog.physics.temperature import ABSOLUTE_ZERO
 
 COLUMNS = Columns(
     needed=(
@@ -35,7 +36,6 @@ COLUMNS = Columns(
     ),
     others=("z_mm", "quantity", "duration_h", "cycles"),
 )
-ABSOLUTE_ZERO = -273.15
 
 
 @dataclass(frozen=True, slots=True)
