@@ -9,6 +9,7 @@ from gaugelog.intake.fields import Fields, Gathered, nothing_at
 from gaugelog.intake.files import toml_of
 from gaugelog.intake.typed import CHECK_UNITS
 from gaugelog.ledger.campaign import CheckCriterion, Conditional, CriteriaAgreed
+from gaugelog.ledger.checks import CHECKS
 
 STAGES = (
     "received",
@@ -21,11 +22,6 @@ STAGES = (
     "after load",
     "periodic",
 )
-PHYSICS: dict[str, tuple[str, ...]] = {
-    "resistance": ("lot tolerance",),
-    "insulation": ("permitted error",),
-}
-"""What physics may add to a check's limit."""
 
 
 def read_criteria(
@@ -65,7 +61,7 @@ def _word(decision: Fields, name: str) -> Conditional:
 
 def _check(each: Fields) -> CheckCriterion:
     kind = each.choice("kind", tuple(CHECK_UNITS))
-    units = (*CHECK_UNITS[kind], "%") if kind == "resistance" else CHECK_UNITS[kind]
+    units = (*CHECK_UNITS[kind], *(("%",) if CHECKS[kind].relative else ()))
     where = ("laboratory", "field", "any")
     found = CheckCriterion(
         check=kind,
@@ -96,8 +92,8 @@ def _sides(each: Fields, found: CheckCriterion) -> None:
         elif least.si() > most.si():
             each.fault("at_most", "lies below at_least.")
     for item in found.physics if each.sound("kind") else ():
-        if item not in PHYSICS[found.check]:
-            known = ", ".join(PHYSICS[found.check])
+        if item not in CHECKS[found.check].physics:
+            known = ", ".join(CHECKS[found.check].physics) or "none"
             each.fault("physics", f"“{item[:60]}” adds nothing here.", f"Known: {known}.")
 
 

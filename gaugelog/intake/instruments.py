@@ -15,6 +15,7 @@ QUANTITY_UNITS: dict[str, tuple[str, ...]] = {
     "insulation": ("ohm", "kohm", "Mohm", "Gohm", "Tohm"),
     "voltage": ("V", "mV", "uV"),
     "bridge output": ("mV/V",),
+    "strain": ("um/m",),
     "temperature": ("degC",),
     "humidity": ("%RH",),
 }

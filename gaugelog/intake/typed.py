@@ -9,6 +9,7 @@ from dataclasses import dataclass
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.units import converted, tidy, unit_of
 from gaugelog.ledger.base import SYMBOLS, Quantity
+from gaugelog.ledger.checks import CHECKS, SIGNED
 from gaugelog.ledger.readings import Qualifier
 
 LONGEST = 60
@@ -26,10 +27,7 @@ _COMMA = re.compile(r"[+-]?\d+,\d+", re.ASCII)
 _OVERLOAD = frozenset({"ol", "o.l", "o.l.", "overload", "over", "0l"})
 _MILLI_OR_MEGA = frozenset({"mohm", "mohms", "mω"})
 
-CHECK_UNITS: dict[str, tuple[str, ...]] = {
-    "resistance": ("ohm", "kohm"),
-    "insulation": ("ohm", "kohm", "Mohm", "Gohm", "Tohm"),
-}
+CHECK_UNITS: dict[str, tuple[str, ...]] = {name: kind.units for name, kind in CHECKS.items()}
 """The units a reading of each check may be typed in."""
 
 
@@ -53,7 +51,7 @@ def parse_reading(text: str, check: str) -> TypedReading:
         return TypedReading("overload", None, typed)
     match = _match(typed, "reading", units)
     found = _quantity(match, units, typed)
-    if found.si() < 0:
+    if found.si() < 0 and check not in SIGNED:
         raise _fault(typed, f"is below 0, which no {check} is.", "Measure again; mind the leads.")
     return TypedReading(_qualifier(match["sign"]), found, typed)
 

@@ -6,11 +6,9 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.ledger.base import Quantity
+from gaugelog.ledger.checks import CHECKS, SIGNED
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange
 from gaugelog.physics.change import Accuracy
-
-CHECK_QUANTITY = {"resistance": "resistance", "insulation": "insulation"}
-"""The quantity an instrument must measure for a check."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -38,7 +36,7 @@ def range_for(
     An overload is on the range that reaches farthest. Raises Faulty when the instrument does not
     measure that, or no range reaches the value.
     """
-    quantity = CHECK_QUANTITY[check]
+    quantity = CHECKS[check].quantity
     fitting = [item for item in instrument.ranges if item.quantity == quantity]
     if not fitting:
         raise Faulty(
@@ -47,7 +45,7 @@ def range_for(
     fitting.sort(key=lambda item: item.high.si())
     if value is None or qualifier == "overload":
         return RangeTaken(instrument.id, fitting[-1])
-    size = value.si()
+    size = abs(value.si()) if check in SIGNED else value.si()
     for item in fitting:
         if item.low.si() <= size <= item.high.si():
             return RangeTaken(instrument.id, item)
