@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from pathlib import Path
 
 import pytest
@@ -96,3 +97,11 @@ hold = true
         "r.toml, step[2].refused_to",
         "r.toml, step[2].stage",
     }
+
+
+@pytest.mark.parametrize("label", sorted(SHIPPED))
+def test_each_instruction_is_two_to_four_short_sentences(label: str) -> None:
+    for step in read_route("r", SHIPPED[label], counter()).steps:
+        sentences = re.split(r"(?<=[.?!])\s+", step.instruction)
+        assert 2 <= len(sentences) <= 4, step.id
+        assert max(len(sentence.split()) for sentence in sentences) <= 20, step.id
