@@ -56,13 +56,20 @@ def _of_criterion(basis: Basis, check: str, item: CheckCriterion) -> Iterator[Li
             source=item.source,
             rules=False,
         )
-    if "permitted error" in item.physics and check == "insulation":
-        yield _for_permitted_error(basis)
+    if "permitted error" in item.physics:
+        yield _for_permitted_error(basis, check)
     if "lot tolerance" in item.physics and check == "resistance":
         yield _for_lot_tolerance(basis, item)
 
 
-def _for_permitted_error(basis: Basis) -> LimitFound:
+def _for_permitted_error(basis: Basis, check: str) -> LimitFound:
+    if check != "insulation":
+        return LimitFound(
+            origin="permitted error",
+            at_most=basis.point.permitted_error,
+            source="the point's permitted error",
+            rules=False,
+        )
     nominal = basis.lot.nominal_resistance.si()
     factor = basis.lot.grids[0].gauge_factor.si()
     needed = float(insulation_needed(nominal, factor, basis.point.permitted_error.si()))

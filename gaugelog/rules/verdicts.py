@@ -7,6 +7,7 @@ from math import nan
 
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.campaign import CriteriaAgreed
+from gaugelog.ledger.checks import SIGNED
 from gaugelog.ledger.readings import LimitFound, Qualifier, Verdict
 from gaugelog.physics.change import difference_uncertainty, relative_change
 from gaugelog.physics.conformity import Judgement, Limits, Words, judge, undecided
@@ -49,6 +50,8 @@ class Judged:
 def judge_value(basis: Basis, check: str, stage: str, taken: Taken) -> Judged:
     """Judge a reading by its own value against the limits of its check and stage."""
     limits = limits_for(basis, check, stage)
+    if check in SIGNED:
+        limits = _both_ways(limits)
     allowed = strictest(limits)
     uncertainty = taken.on.uncertainty(taken.si)
     if allowed is None:
@@ -132,7 +135,7 @@ def _verdict(
     known = uncertainty is not None and found.guard_band == found.guard_band  # not NaN
     return Verdict(
         word=found.word.value,
-        blocks=_blocks(found.word, criteria),
+        blocks=blocks(found.word, criteria),
         probability=None if found.probability is None else decimal_text(found.probability, 4),
         standard_uncertainty=quantity(uncertainty or 0.0, unit, 4) if known else None,
         guard_band=quantity(found.guard_band, unit, 4) if known else None,
@@ -142,7 +145,8 @@ def _verdict(
     )
 
 
-def _blocks(word: Words, criteria: CriteriaAgreed) -> bool:
+def blocks(word: Words, criteria: CriteriaAgreed) -> bool:
+    """Whether a word keeps the work from going on, by what the criteria say of it."""
     if word is Words.PASS:
         return False
     if word is Words.CONDITIONAL_PASS:

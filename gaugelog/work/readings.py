@@ -7,7 +7,14 @@ from dataclasses import dataclass
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.typed import TypedReading
 from gaugelog.journal.ids import new_id
-from gaugelog.ledger.campaign import CampaignRow, CriteriaAgreed, CriteriaRow
+from gaugelog.ledger.campaign import (
+    CampaignRow,
+    Channel,
+    ChannelRow,
+    CriteriaAgreed,
+    CriteriaRow,
+)
+from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.ledger.points import PointPlanned, PointRow
 from gaugelog.ledger.readings import LimitFound, ReadingRow, ReadingTaken
@@ -17,7 +24,9 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.accuracy import RangeTaken, range_for
 from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.plausible import demand_plausible
+from gaugelog.rules.predicted import Expected, judge_prediction
 from gaugelog.rules.verdicts import Judged, Taken, judge_change, judge_value
+from gaugelog.rules.wired import planned_circuit, wired
 
 RECEIVED = "received"
 """The stage that a change of resistance is counted from."""
@@ -106,6 +115,8 @@ def _limit_line(limit: LimitFound) -> str:
 
 
 def _judge(seen: Observation, basis: Basis, check: str, taken: Taken) -> tuple[Judged, str | None]:
+    if CHECKS[check].judged == "prediction":
+        return judge_prediction(_expected(seen, basis), check, seen.step.stage, taken), None
     if not _judges_change(basis, check, seen.step.stage):
         return judge_value(basis, check, seen.step.stage, taken), None
     row = _latest(seen, check, RECEIVED)
@@ -116,6 +127,16 @@ def _judge(seen: Observation, basis: Basis, check: str, taken: Taken) -> tuple[J
         )
     before = _taken_before(seen.view, ReadingTaken.model_validate_json(row.data))
     return judge_change(basis, seen.step.stage, before, taken), row.id
+
+
+def _expected(seen: Observation, basis: Basis) -> Expected:
+    """What the circuit of this step predicts from: its plan, its readings, its channel."""
+    planned = planned_circuit(seen.view, seen.subject)
+    channel = seen.view.get(ChannelRow, planned.channel)
+    if channel is None:
+        raise Refused("The channel of this circuit is not known.", "Check the journal.")
+    spec = Channel.model_validate_json(channel.data)
+    return Expected(basis, planned, wired(seen.view, planned), spec)
 
 
 def _judges_change(basis: Basis, check: str, stage: str) -> bool:

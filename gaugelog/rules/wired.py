@@ -1,0 +1,119 @@
+"""A planned circuit as wired: its own grids' resistances as read, its own leads."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from gaugelog.errors import Refused
+from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.readings import ReadingRow, ReadingTaken
+from gaugelog.ledger.stock import GaugeRow, GridData, LotReceived, LotRow
+from gaugelog.ledger.view import View
+from gaugelog.physics.circuit import Circuit
+from gaugelog.physics.circuit import Element as Part
+from gaugelog.physics.layouts import layout_for
+from gaugelog.rules.accuracy import range_for
+
+
+@dataclass(frozen=True, slots=True)
+class Wired:
+    """A circuit from what was read: for predictions. Uncertainties are standard ones, ohm.
+
+    `factor` is the gauge factor of its grids, `resistance` their nominal value; `read` names the
+    grids whose resistance was read, the others stand at their nominal value.
+    """
+
+    circuit: Circuit
+    factor: float
+    resistance: float
+    uncertainties: dict[str, float]
+    read: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class _Grid:
+    label: str
+    resistance: float
+    uncertainty: float
+    factor: float
+    nominal: float
+    read: bool
+
+
+def planned_circuit(view: View, circuit: str) -> CircuitPlanned:
+    """The circuit with this id as planned. Raises Refused when there is none."""
+    row = view.get(CircuitRow, circuit)
+    if row is None:
+        raise Refused("The circuit of this step is not known.", "Check the journal.")
+    return CircuitPlanned.model_validate_json(row.data)
+
+
+def wired(view: View, planned: CircuitPlanned) -> Wired:
+    """The circuit with the last resistance read of each of its grids, and its reel's wires.
+
+    Raises Refused when a grid has no gauge yet.
+    """
+    grids = {grid: _grid(view, grid) for grid in planned.grids}
+    one, two, three, four = (
+        tuple(
+            _part(element, grids, f"arm {number}.{place}") for place, element in enumerate(arm, 1)
+        )
+        for number, arm in enumerate(planned.arms, start=1)
+    )
+    layout = layout_for(planned.arrangement, planned.leads.wires)
+    wire = planned.leads.resistance_per_length.si() * planned.leads.length.si()
+    first = next(iter(grids.values()))
+    return Wired(
+        Circuit(layout, (one, two, three, four), dict.fromkeys(layout.wires, wire)),
+        first.factor,
+        first.nominal,
+        {grid.label: grid.uncertainty for grid in grids.values()},
+        tuple(grid.label for grid in grids.values() if grid.read),
+    )
+
+
+def _part(element: Element, grids: dict[str, _Grid], name: str) -> Part:
+    if element.grid is not None:
+        grid = grids[element.grid]
+        return Part(grid.label, element.kind, grid.resistance, grid.factor)
+    if element.resistance is None:
+        raise Refused(f"{name} has neither a grid nor a resistance.", "Load the plan again.")
+    return Part(name, element.kind, element.resistance.si())
+
+
+def _grid(view: View, grid: str) -> _Grid:
+    row = view.get(GridRow, grid)
+    point = view.get(PointRow, row.point) if row is not None else None
+    gauge = view.get(GaugeRow, point.gauge) if point is not None and point.gauge else None
+    lot_row = view.get(LotRow, gauge.lot) if gauge is not None else None
+    if row is None or lot_row is None:
+        raise Refused("A grid of this circuit has no gauge yet.", "Do its first steps first.")
+    lot = LotReceived.model_validate_json(lot_row.data)
+    factor = _data(lot, row.number).gauge_factor.si()
+    nominal = lot.nominal_resistance.si()
+    reading = _last_resistance(view, grid)
+    if reading is None or reading.value is None:
+        spread = nominal * lot.resistance_tolerance.si() / 3**0.5
+        return _Grid(row.label, nominal, spread, factor, nominal, False)
+    value = reading.value.si()
+    return _Grid(row.label, value, _uncertainty(view, reading, value), factor, nominal, True)
+
+
+def _data(lot: LotReceived, number: int) -> GridData:
+    return next((grid for grid in lot.grids if grid.number == number), lot.grids[0])
+
+
+def _last_resistance(view: View, grid: str) -> ReadingTaken | None:
+    rows = view.all(ReadingRow, subject=grid, check="resistance", latest=1)
+    sound = [row for row in rows if not row.blocks]
+    return ReadingTaken.model_validate_json(sound[-1].data) if sound else None
+
+
+def _uncertainty(view: View, reading: ReadingTaken, value: float) -> float:
+    row = view.get(InstrumentRow, reading.instrument)
+    if row is None:
+        return 0.0
+    body = InstrumentAdded.model_validate_json(row.data)
+    return range_for(body, "resistance", reading.value, reading.qualifier).uncertainty(value)
