@@ -10,7 +10,17 @@ from gaugelog.intake.instruments import QUANTITY_UNITS
 from gaugelog.intake.typed import CHECK_UNITS
 from gaugelog.intake.units import unit_of
 from gaugelog.ledger.base import UNITS
-from gaugelog.ledger.routes import InputKind, RouteStep, SkipRule, StepInput, StepSubject, Window
+from gaugelog.ledger.routes import (
+    AIR,
+    HUMIDITY,
+    SURFACE,
+    InputKind,
+    RouteStep,
+    SkipRule,
+    StepInput,
+    StepSubject,
+    Window,
+)
 from gaugelog.ledger.stock import ConsumableKind
 
 LONG = 4000
@@ -19,6 +29,7 @@ LONG = 4000
 _TIMES = ("s", "min", "h", "d")
 _Bound = Literal["not before", "within"]
 _TYPES: dict[str, tuple[str, ...]] = {
+    "quantity": (AIR, HUMIDITY, SURFACE),
     "consumable": get_args(ConsumableKind),
     "instrument": tuple(QUANTITY_UNITS),
 }
@@ -126,7 +137,7 @@ def _check_type(item: Fields, found: StepInput) -> None:
     if found.kind == "consumable" and not item.has("type"):
         item.fault("type", "is missing.", f"Kinds: {', '.join(types)}.")
     elif found.type and not types:
-        item.fault("type", "belongs to a consumable or an instrument only.")
+        item.fault("type", "belongs to a consumable, an instrument or a quantity only.")
     elif found.type and found.type not in types:
         item.fault("type", f"“{found.type[:40]}” is not one of {', '.join(types)}.")
 

@@ -47,7 +47,15 @@ LOT_COLUMNS = Columns(
 )
 CONSUMABLE_COLUMNS = Columns(
     needed=("consumable", "kind", "maker", "name", "received_on"),
-    others=("expires", "pot_life_min", "wire_resistance_ohm_per_m"),
+    others=(
+        "expires",
+        "pot_life_min",
+        "temperature_min_degC",
+        "temperature_max_degC",
+        "humidity_min_percent",
+        "humidity_max_percent",
+        "wire_resistance_ohm_per_m",
+    ),
 )
 
 MOST_PIECES = 500
@@ -206,6 +214,10 @@ def _consumable(row: Fields, new_id: NewId) -> ConsumableReceived:
         expires=row.maybe_day("expires"),
         received_on=row.day("received_on"),
         pot_life=row.maybe_number("pot_life_min", "min", positive=True),
+        temperature_min=row.maybe_number("temperature_min_degC", "degC"),
+        temperature_max=row.maybe_number("temperature_max_degC", "degC"),
+        humidity_min=row.maybe_number("humidity_min_percent", "%RH"),
+        humidity_max=row.maybe_number("humidity_max_percent", "%RH"),
         wire_resistance=row.maybe_number("wire_resistance_ohm_per_m", "ohm/m", positive=True),
     )
     _check_dates(row, found.received_on, found.expires)

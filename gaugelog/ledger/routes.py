@@ -14,6 +14,9 @@ StepSubject = Literal["place", "grid", "circuit"]
 InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
 SkipRule = Literal["never", "planner", "with reason"]
 
+AIR, HUMIDITY, SURFACE = "air temperature", "relative humidity", "surface temperature"
+"""What a quantity may stand for: rules on dew point and adhesive windows look for these."""
+
 
 class Window(Part):
     """A bound on when the step may be done, counted from when an earlier step was observed."""
@@ -34,7 +37,8 @@ class StepInput(Part):
     check: str = ""
     """For a reading: the check kind, `resistance` or `insulation` …"""
     type: str = ""
-    """For a consumable: its kind. For an instrument: what it measures."""
+    """For a consumable: its kind. For an instrument: what it measures. For a quantity: what it
+    stands for, where a rule looks for it."""
     required: bool = True
 
 

@@ -76,6 +76,11 @@ class ConsumableReceived(FactBody):
     expires: DateText | None = None
     received_on: DateText
     pot_life: Quantity | None = None
+    temperature_min: Quantity | None = None
+    temperature_max: Quantity | None = None
+    humidity_min: Quantity | None = None
+    humidity_max: Quantity | None = None
+    """The surroundings its data sheet allows while it is used."""
     wire_resistance: Quantity | None = None
     """Resistance of one conductor per metre, for a cable."""
 

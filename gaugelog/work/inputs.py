@@ -12,7 +12,7 @@ from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered
-from gaugelog.ledger.stock import LotRow
+from gaugelog.ledger.stock import ConsumableReceived, LotRow
 from gaugelog.ledger.view import View
 
 LONGEST_TEXT = 2000
@@ -26,6 +26,7 @@ class Understood:
     entered: dict[str, Entered] = field(default_factory=dict)
     readings: dict[str, TypedReading] = field(default_factory=dict)
     instrument: InstrumentAdded | None = None
+    consumables: list[ConsumableReceived] = field(default_factory=list)
 
 
 @dataclass(frozen=True, slots=True)
@@ -103,6 +104,7 @@ def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Und
     if lot.expires and date.fromisoformat(lot.expires) < asked.day:
         raise _fault(f"{lot.label} expired on {lot.expires}.", "Take a lot that is in date.")
     found.entered[item.name] = Entered(typed=text, id=lot.id)
+    found.consumables.append(ConsumableReceived.model_validate_json(lot.data))
 
 
 def _instrument(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:

@@ -14,6 +14,7 @@ from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepSkipped
 from gaugelog.ledger.view import View
+from gaugelog.rules.air import air_troubles
 from gaugelog.rules.progress import NextStep, demand_step, state_of
 from gaugelog.rules.progress import next_step as progress
 from gaugelog.rules.who import demand_role, demand_second_person, roles_of
@@ -184,6 +185,7 @@ def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> Step
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
     got = understand(Asked(view, row, doing.step, doing.observed), typed)
+    _demand_air(doing, got)
     readings = _readings(doing, got, reason)
     for reading in readings:
         others = (reading.id, reading.instrument)
@@ -193,6 +195,19 @@ def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> Step
         return StepOutcome(False, shown, _blocked_lines(row, doing.step))
     _keep_done(doing, got, readings, note)
     return StepOutcome(True, shown, (f"{row.label}: “{doing.step.title}” is done.",))
+
+
+def _demand_air(doing: _Doing, got: Understood) -> None:
+    quantities = {
+        name: entry.quantity for name, entry in got.entered.items() if entry.quantity is not None
+    }
+    troubles = air_troubles(doing.step, quantities, got.consumables)
+    if troubles:
+        raise Refused(
+            f"{doing.row.label}: “{doing.step.title}” can't be done in this air: "
+            f"{' '.join(troubles)}",
+            "Warm the surface, dry the air or wait; then measure again.",
+        )
 
 
 def _blocked_lines(row: PointRow, step: RouteStep) -> tuple[str, ...]:
