@@ -10,6 +10,7 @@ from gaugelog.errors import Faulty
 from gaugelog.intake.campaign import WIRES
 from gaugelog.intake.fields import Fields, Gathered, distinct
 from gaugelog.intake.tables import Columns, rows_of
+from gaugelog.intake.texts import listed
 from gaugelog.intake.typed import parse_quantity
 from gaugelog.ledger.circuits import CircuitPlanned, Element, Leads
 
@@ -92,7 +93,7 @@ def _channel(row: Fields, named: Named) -> str:
         return _UNKNOWN
     found = named.channels.get((module.casefold(), channel.casefold()))
     if found is None:
-        known = ", ".join(f"{one}/{two}" for one, two in named.channels) or "none"
+        known = listed([f"{one}/{two}" for one, two in named.channels])
         what = f"campaign.toml has no channel {module}/{channel}."
         row.fault("channel", what, f"It has {known}.")
     return found or _UNKNOWN

@@ -8,7 +8,7 @@ from datetime import date, datetime
 from typing import Any
 
 from gaugelog.errors import Fault, Faulty
-from gaugelog.intake.texts import LONGEST, Untidy, tidied
+from gaugelog.intake.texts import LONGEST, Untidy, listed, tidied
 from gaugelog.intake.typed import has_comma, number_of, parse_quantity
 from gaugelog.ledger.base import Quantity
 from gaugelog.visible import visible
@@ -253,7 +253,7 @@ class Fields:
 
     def done(self) -> None:
         """Note a fault for each value that nobody asked for."""
-        known = ", ".join(sorted(self._taken))
+        known = listed(sorted(self._taken), most=30)
         for name in self._values:
             if name not in self._taken:
                 self.fault(str(name)[:60], "is not known here.", f"Known: {known}.")

@@ -16,6 +16,7 @@ from gaugelog.intake.criteria import read_criteria
 from gaugelog.intake.fields import Fields, Gathered
 from gaugelog.intake.files import read_bytes
 from gaugelog.intake.grids import GridPlan, read_grids
+from gaugelog.intake.texts import listed
 from gaugelog.ledger.campaign import CampaignPlanned, CriteriaAgreed
 from gaugelog.ledger.circuits import CircuitPlanned
 from gaugelog.ledger.points import PointPlanned
@@ -124,8 +125,7 @@ class _Reading:
         for known, lot in self.lots.items():
             if known.casefold() == label.casefold():
                 return lot
-        stock = f"In stock: {', '.join(self.lots) or 'none'}."
-        row.fault("lot", f"no lot {label} was received.", stock)
+        row.fault("lot", f"no lot {label} was received.", f"In stock: {listed(self.lots)}.")
         return None
 
 
@@ -149,10 +149,11 @@ def _article(row: Fields, point: PointPlanned, campaign: CampaignPlanned) -> str
     for article in campaign.articles:
         if article.label.casefold() == point.article.casefold():
             zones = [zone.label for zone in article.zones]
-            if row.has("zone") and point.zone.casefold() not in map(str.casefold, zones):
-                known = f"Zones: {', '.join(zones)}."
-                row.fault("zone", f"{article.label} has no zone {point.zone}.", known)
+            named = row.has("zone") and row.sound("zone")
+            if named and point.zone.casefold() not in map(str.casefold, zones):
+                what = f"{article.label} has no zone {point.zone}."
+                row.fault("zone", what, f"Zones: {listed(zones)}.")
             return article.id
-    known = ", ".join(article.label for article in campaign.articles)
+    known = listed([article.label for article in campaign.articles])
     row.fault("article", f"campaign.toml has no article {point.article}.", f"It has {known}.")
     return None

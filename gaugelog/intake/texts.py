@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 import unicodedata
+from collections.abc import Collection
+from itertools import islice
 
 from gaugelog.visible import visible
 
@@ -26,7 +28,21 @@ def tidied(text: str, longest: int = LONGEST) -> str:
     """
     if len(text) > longest:
         raise Untidy(f"has {len(text)} characters; {longest} are kept at most.")
+    if text.isascii() and text.isprintable():
+        return text.strip()
     for char in text:
         if unicodedata.category(char) in {"Cc", "Cs"} and char not in "\n\r\t":
             raise Untidy(f"holds the character {visible(char)}, which never shows.", "Remove it.")
     return unicodedata.normalize("NFC", text.replace("\r\n", "\n").strip())
+
+
+def listed(names: Collection[str], most: int = 12) -> str:
+    """Names one after the other; of many the first few, and how many there are.
+
+    >>> listed(["a", "b"]), listed(["a", "b", "c"], most=2), listed([])
+    ('a, b', 'a, b … (3 in all)', 'none')
+    """
+    shown = ", ".join(islice(names, most))
+    if not names:
+        return "none"
+    return shown if len(names) <= most else f"{shown} … ({len(names)} in all)"

@@ -6,7 +6,8 @@ from pathlib import Path
 
 import pytest
 
-from tests.intake.conftest import change, faults_of, understood
+from gaugelog.intake.plan import load_plan
+from tests.intake.conftest import change, counter, faults_of, lines_of, set_cell, understood
 
 
 def test_the_demos_plan_is_understood(plan: Path) -> None:
@@ -119,3 +120,20 @@ def test_a_slip_in_the_criteria_is_named_to_its_key(
     assert f"criteria.toml, {place}" in {
         fault.where for fault in faults_of(lambda: understood(plan))
     }
+
+
+def test_a_label_that_is_faulty_is_looked_up_nowhere(plan: Path) -> None:
+    for column in ("article", "zone", "lot", "route"):
+        set_cell(plan / "grids.csv", 2, column, "")
+    where = [fault.where for fault in faults_of(lambda: understood(plan))]
+    assert sorted(where) == sorted(
+        f"grids.csv, row 2, column {column}" for column in ("article", "zone", "lot", "route")
+    )
+
+
+def test_of_many_names_that_would_fit_only_the_first_are_listed(plan: Path) -> None:
+    set_cell(plan / "grids.csv", 2, "lot", "L-0000")
+    lots = {f"L-{number}": "id" for number in range(3000, 4000)}
+    (line,) = lines_of(lambda: load_plan(plan, lots=lots, new_id=counter()))
+    assert "L-3011 … (1000 in all)" in line
+    assert len(line) < 250
