@@ -109,6 +109,7 @@ def _material(each: Fields | None) -> Material:
         expansion=fields.quantity("expansion", ("ppm/K",)),
         density=fields.maybe_quantity("density", ("kg/m3",), positive=True),
         heat_sink=fields.text("heat_sink", needed=False),
+        heat_sink_limit=fields.maybe_quantity("heat_sink_limit", ("kW/m2", "W/m2"), positive=True),
         conducting=fields.flag("conducting", True),
         source=fields.text("source"),
     )

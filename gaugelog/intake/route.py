@@ -74,6 +74,8 @@ def read_route(name: str, data: bytes, new_id: NewId) -> RouteAdopted:
         family=top.text("family"),
         basis=top.text("basis", longest=LONG),
         steps=steps,
+        process_temperature=top.maybe_quantity("process_temperature", ("degC",)),
+        abrades=top.flag("abrades", True),
         file=hashlib.sha256(data).hexdigest(),
     )
     _check_gauge(top, route)

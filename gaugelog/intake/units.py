@@ -64,6 +64,7 @@ _FOREIGN: dict[str, tuple[str, str]] = {
     "ppm/degC": ("ppm/delta_degC", "ppm/K"),
     "ppm/°C": ("ppm/delta_degC", "ppm/K"),
     "lb/in3": ("pound/inch**3", "kg/m3"),
+    "W/in2": ("watt/inch**2", "kW/m2"),
     "g/cm3": ("gram/centimeter**3", "kg/m3"),
     "t/m3": ("tonne/meter**3", "kg/m3"),
     "ohm/ft": ("ohm/foot", "ohm/m"),

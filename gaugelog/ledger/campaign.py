@@ -31,6 +31,8 @@ class Material(Part):
     expansion: Quantity
     density: Quantity | None = None
     heat_sink: str = ""
+    heat_sink_limit: Quantity | None = None
+    """A power density of its own, where the class does not serve."""
     conducting: bool = True
     source: str
 

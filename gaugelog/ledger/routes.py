@@ -76,6 +76,9 @@ class RouteAdopted(FactBody):
     basis: str
     """What the order of work follows."""
     steps: tuple[RouteStep, ...]
+    process_temperature: Quantity | None = None
+    """The hottest the article gets on this route."""
+    abrades: bool = True
     file: str
     """Digest of the route's file among the evidence."""
 

@@ -1,0 +1,39 @@
+"""Whether the plan fits: each finding with its figure and source, refusals first."""
+
+from __future__ import annotations
+
+from gaugelog.ledger.campaign import CampaignRow
+from gaugelog.ledger.view import View
+from gaugelog.rules.fit.arrangement import arrangement_findings
+from gaugelog.rules.fit.finding import Level, PlanFinding
+from gaugelog.rules.fit.leads import lead_findings
+from gaugelog.rules.fit.output import output_findings
+from gaugelog.rules.fit.plan import Plan
+from gaugelog.rules.fit.points import point_findings
+from gaugelog.rules.fit.stock import stock_findings
+from gaugelog.rules.fit.supply import supply_findings
+from gaugelog.rules.fit.surface import surface_findings
+from gaugelog.rules.fit.warmth import warmth_findings
+from gaugelog.rules.fit.wiring import wiring_findings
+
+__all__ = ["Level", "PlanFinding", "check_plan"]
+
+_SUBJECTS = (
+    point_findings,
+    stock_findings,
+    wiring_findings,
+    arrangement_findings,
+    lead_findings,
+    supply_findings,
+    output_findings,
+    warmth_findings,
+    surface_findings,
+)
+_ORDER: dict[Level, int] = {"refusal": 0, "warning": 1, "ok": 2}
+
+
+def check_plan(view: View, campaign: CampaignRow) -> list[PlanFinding]:
+    """Everything found about a plan: refusals first, then warnings, then what is well."""
+    plan = Plan(view, campaign)
+    found = [finding for subject in _SUBJECTS for finding in subject(plan)]
+    return sorted(found, key=lambda finding: _ORDER[finding.level])

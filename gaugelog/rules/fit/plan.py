@@ -1,0 +1,71 @@
+"""A plan's rows read once, and how they hang together."""
+
+from __future__ import annotations
+
+from collections import Counter
+from dataclasses import dataclass
+
+from gaugelog.ledger.campaign import Article, CampaignPlanned, CampaignRow, Channel, ChannelRow
+from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow
+from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
+from gaugelog.ledger.routes import RouteAdopted, RouteRow
+from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
+from gaugelog.ledger.view import View
+
+
+@dataclass(frozen=True, slots=True)
+class PlannedChannel:
+    """A channel with the label people use, `M1/3`, and its module."""
+
+    label: str
+    module: str
+    channel: Channel
+
+
+class Plan:
+    """Points, grids, lots, routes, circuits and channels of one campaign, by id."""
+
+    def __init__(self, view: View, campaign: CampaignRow) -> None:
+        body = CampaignPlanned.model_validate_json(campaign.data)
+        self.articles = {article.id: article for article in body.articles}
+        self.points = [
+            PointPlanned.model_validate_json(row.data)
+            for row in view.all(PointRow, campaign=campaign.id)
+        ]
+        self.lots = {row.id: LotReceived.model_validate_json(row.data) for row in view.all(LotRow)}
+        self.routes = {
+            row.id: RouteAdopted.model_validate_json(row.data) for row in view.all(RouteRow)
+        }
+        self.point_of_grid = {grid.id: point for point in self.points for grid in point.grids}
+        self.grids = [grid for grid in view.all(GridRow) if grid.id in self.point_of_grid]
+        self.circuits = [
+            CircuitPlanned.model_validate_json(row.data)
+            for row in view.all(CircuitRow, campaign=campaign.id)
+        ]
+        self.channels = {
+            row.id: PlannedChannel(row.label, row.module, Channel.model_validate_json(row.data))
+            for row in view.all(ChannelRow, campaign=campaign.id)
+        }
+        self.shelf = Counter(gauge.lot for gauge in view.all(GaugeRow, state="on shelf"))
+
+    def lot_of_grid(self, grid: str) -> LotReceived | None:
+        """The lot that a grid is planned from, or None when it is not in stock."""
+        point = self.point_of_grid.get(grid)
+        return None if point is None else self.lots.get(point.lot)
+
+    def lots_of(self, circuit: CircuitPlanned) -> list[LotReceived]:
+        """The lots of a circuit's grids, as far as they are in stock."""
+        return [lot for grid in circuit.grids if (lot := self.lot_of_grid(grid)) is not None]
+
+    def points_of(self, circuit: CircuitPlanned) -> list[PointPlanned]:
+        """The points whose grids a circuit holds, each once."""
+        found = {
+            point.id: point
+            for grid in circuit.grids
+            if (point := self.point_of_grid.get(grid)) is not None
+        }
+        return list(found.values())
+
+    def article_of(self, point: PointPlanned) -> Article | None:
+        """The article a point lies on."""
+        return self.articles.get(point.article)

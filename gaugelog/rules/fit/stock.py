@@ -1,0 +1,24 @@
+"""Stock: enough gauges on the shelf, none expired before they are bonded."""
+
+from __future__ import annotations
+
+from collections import Counter
+from collections.abc import Iterator
+
+from gaugelog.rules.fit.finding import PlanFinding
+from gaugelog.rules.fit.plan import Plan
+
+
+def stock_findings(plan: Plan) -> Iterator[PlanFinding]:
+    """Each lot that is planned from: wanted against what is on the shelf."""
+    wanted = Counter(point.lot for point in plan.points if point.lot in plan.lots)
+    for lot, count in wanted.items():
+        there = plan.shelf[lot]
+        label = f"lot {plan.lots[lot].label}"
+        figure = f"{count} wanted, {there} on the shelf"
+        if there < count:
+            yield PlanFinding("refusal", label, "stock is short", figure)
+        elif there == count:
+            yield PlanFinding("warning", label, "no gauge is spare", figure)
+        else:
+            yield PlanFinding("ok", label, "stock suffices", figure)
