@@ -96,7 +96,7 @@ def through_hole_coefficients(
     (0.158, 0.454)
     """
     radius = positive("hole_diameter", hole_diameter) / 2
-    at_most("hole_diameter", radius, "twice the grid's near end", grid.near)
+    at_most("hole_diameter", hole_diameter, "twice the grid's near end", 2 * grid.near)
     between("poisson", poisson, -1.0, 0.5)
     along = _average(grid, 0.0, radius, poisson)
     across = _average(grid, pi / 2, radius, poisson)

@@ -79,6 +79,10 @@ def test_the_next_higher_listed_temperature_limits_the_work(celsius: float, seco
     assert seconds == working_time(celsius, POT)
 
 
+def test_two_temperatures_may_take_the_same_time() -> None:
+    assert 7200.0 == cure_time(30.0, ((24.0, 7200.0), (30.0, 7200.0)))
+
+
 def test_time_left_turns_negative_when_it_is_over() -> None:
     assert 300.0 == time_left(1800.0, 1500.0)
     assert -300.0 == time_left(1200.0, 1500.0)

@@ -83,7 +83,10 @@ def test_an_array_of_points_has_the_relief_of_each() -> None:
         (lambda: relieved_strain(1.0, 0.0, 0.0, 0.5, -1.0), "poisson must be greater than -1"),
         (lambda: DrillGrid(0.6, 0.4, 0.3), "near must be smaller than far"),
         (lambda: DrillGrid(0.3, 0.6, 0.0), "width must be greater than zero"),
-        (lambda: through_hole_coefficients(0.8, TYPE_A, 0.3), "hole_diameter must not exceed"),
+        (
+            lambda: through_hole_coefficients(0.8, TYPE_A, 0.3),
+            "hole_diameter must not exceed twice the grid's near end, not 0.8",
+        ),
         (lambda: through_hole_coefficients(0.4, TYPE_A, 0.6), "poisson must lie between"),
     ],
 )

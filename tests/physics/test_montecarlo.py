@@ -19,6 +19,7 @@ from gaugelog.physics.estimates import (
     triangular,
 )
 from gaugelog.physics.montecarlo import (
+    Simulation,
     agreement_notices,
     draw_outputs,
     numerical_tolerance,
@@ -89,6 +90,18 @@ def test_a_dominant_rectangle_makes_the_budget_disagree() -> None:
     inputs = {"a": normal(0.0, 1.0), "b": Estimate(0.0, 10.0, Shape.RECTANGULAR)}
     notices = agreement_notices(budget(_sum, inputs), simulate(_sum, inputs, draws=200_000))
     assert "trust the simulation" in notices[0].message
+
+
+@pytest.mark.parametrize(("scatters", "notices"), [(2.9, 0), (3.1, 1)])
+def test_the_scatter_of_a_simulations_ends_is_allowed_for(scatters: float, notices: int) -> None:
+    """Its ends scatter by √(p(1 − p)/n)/f, some 2.67 u/√n at 95 % (order statistics)."""
+    found = budget(lambda a: a, {"a": normal(0.0, 1.0)})
+    half = found.expanded(0.95)
+    end = half + 0.05 + scatters * 2.671 / math.sqrt(10_000)
+    told = agreement_notices(found, Simulation(0.0, 1.0, -half, end, 0.95, 10_000, 1))
+    assert notices == len(told)
+    if told:
+        assert "-1.96 to 1.96 against -1.96 to 2.09" in told[0].message
 
 
 def test_a_misaligned_grid_shifts_as_its_budget_says() -> None:
