@@ -42,6 +42,8 @@ class Deed:
     moment: Moment
     id: str
     facts: list[Fact] = field(default_factory=list)
+    repeated: tuple[Entry, ...] = ()
+    """What this very deed kept before, where the caller asks again for lack of an answer."""
 
     def keep(
         self, body: FactBody, about: Iterable[str], *, evidence: Iterable[str] = (), sheet: str = ""
@@ -155,6 +157,7 @@ class Logbook:
                     f"{signer.person} can't sign: {standing}", "Have the person enrolled anew."
                 )
             making = Deed(self._view(writer), writer, self.chain, signer, moment, deed or new_id())
+            making.repeated = tuple(writer.deed(making.id))
             yield making
             if making.facts:
                 kept = append(writer, self.chain, making.facts, signer, moment, making.id)

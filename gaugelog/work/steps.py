@@ -92,6 +92,8 @@ def do(
     of the input, Refused when a rule forbids the step now.
     """
     with logbook.deed(signer, deed) as making:
+        if making.repeated:
+            return _told_again(making)
         row = point_row(making.view, point)
         observed = observed_at(at, making.moment)
         found = progress(making.view, row, making.moment, observed)
@@ -179,6 +181,13 @@ def observed_at(text: str, now: Moment) -> datetime:
     if when > now.utc + timedelta(minutes=1):
         raise Faulty([Fault("at", f"{text} lies in the future.", "Give when it was observed.")])
     return when
+
+
+def _told_again(making: Deed) -> StepOutcome:
+    """The outcome of a deed that was kept before: nothing is entered twice."""
+    kinds = {entry.header.kind for entry in making.repeated}
+    settled = not kinds.isdisjoint({StepDone.kind, HoldDecided.kind})
+    return StepOutcome(settled, (), ("This was kept before; nothing is entered twice.",))
 
 
 def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
