@@ -10,7 +10,8 @@ from pathlib import Path
 import pytest
 
 from gaugelog.commands import run
-from gaugelog.commands.calc.engine import parse_pairs, source_of, work_out
+from gaugelog.commands.calc.engine import parse_pairs, work_out
+from gaugelog.commands.calc.sources import source_of
 from gaugelog.commands.calc.subjects import SUBJECTS
 from gaugelog.errors import Faulty
 from gaugelog.physics import leads
@@ -42,10 +43,13 @@ def test_every_fault_is_named_at_once() -> None:
     assert [fault.where for fault in caught.value.faults] == ["colour", "layout", "resistance"]
 
 
-def test_a_value_that_cannot_be_is_told_by_its_formula() -> None:
+def test_a_value_that_cannot_be_is_told_beside_its_name() -> None:
     with pytest.raises(Faulty, match="nothing was worked out") as caught:
-        work_out(SUBJECTS["leakage"], {"resistance": "-3 ohm", "permitted": "5 ue"})
-    assert "resistance" in caught.value.faults[0].what or "grid" in caught.value.faults[0].what
+        work_out(SUBJECTS["leakage"], {"resistance": "-3 ohm", "permitted": "0 ue"})
+    assert [
+        "resistance: must be greater than zero, not -3 Ω.",
+        "permitted: must be other than zero, not 0 µm/m.",
+    ] == [str(fault) for fault in caught.value.faults]
 
 
 def test_every_formula_of_an_answer_names_its_source() -> None:

@@ -12,7 +12,11 @@ from gaugelog.commands.talk import put, put_json, put_table, say
 from gaugelog.errors import Fault, Faulty
 
 if TYPE_CHECKING:
-    from gaugelog.commands.calc.engine import Subject, Worked
+    from collections.abc import Mapping
+
+    from gaugelog.commands.calc.model import Argument, Family, Subject, Worked
+
+    Subjects = Mapping[str, Subject | Family]
 
 
 def calc(
@@ -33,7 +37,6 @@ def calc(
 
     `gaugelog calc` lists the subjects; `gaugelog calc SUBJECT` its arguments.
     """
-    from gaugelog.commands.calc import each as many
     from gaugelog.commands.calc.engine import parse_pairs, work_out
     from gaugelog.commands.calc.subjects import SUBJECTS
 
@@ -42,62 +45,95 @@ def calc(
         return
     chosen = _chosen(subject, SUBJECTS)
     typed = parse_pairs(pairs or [])
+    _check_plot(subject, plot, each)
     if each is not None:
-        found = many.work_out_each(chosen, each, typed)
-        put_json([worked.as_json() for worked in found]) if json else many.write_each(found)
-        return
-    if not typed:
-        _tell_arguments(chosen)
-        return
-    worked = work_out(chosen, typed)
-    put_json(worked.as_json()) if json else _tell(worked)
-    if plot is not None:
-        _plot(worked, plot)
+        _tell_each(chosen, each, typed, json)
+    elif _asks_only(chosen, typed):
+        _tell_arguments(chosen, typed)
+    else:
+        worked = work_out(chosen, typed)
+        put_json(worked.as_json()) if json else _tell(worked)
+        if plot is not None:
+            _plot(worked, plot)
 
 
-def _chosen(name: str, subjects: dict[str, Subject]) -> Subject:
+def _chosen(name: str, subjects: Subjects) -> Subject | Family:
     if name not in subjects:
-        raise Faulty([Fault(name, "is no subject.", f"Known: {', '.join(subjects)}.")])
+        raise Faulty(
+            [Fault(name, "is no subject.", f"Known: {', '.join(subjects)}.")],
+            "nothing was worked out",
+        )
     return subjects[name]
 
 
-def _list_subjects(subjects: dict[str, Subject]) -> None:
+def _list_subjects(subjects: Subjects) -> None:
     rows = [[item.name, item.title] for item in subjects.values()]
     put_table("gaugelog calc SUBJECT NAME=VALUE…", ["subject", "what"], rows, empty="")
 
 
-def _tell_arguments(subject: Subject) -> None:
-    rows = []
-    for item in subject.arguments:
-        example = item.dimension.example if item.dimension else ", ".join(item.choices)
-        default = "needed" if item.default is None else (item.default or "may be left out")
-        rows.append([item.name, item.help, example, default])
-    put_table(
-        f"{subject.name}: {subject.title}",
-        ["argument", "what", "like", "if left out"],
-        rows,
-        empty="",
-    )
+def _asks_only(chosen: Subject | Family, typed: Mapping[str, str]) -> bool:
+    """Whether nothing is given but the kind, so that what can be given is wanted."""
+    by = getattr(chosen, "by", None)
+    return not typed or (by is not None and set(typed) == {by} and typed[by] in _kinds(chosen))
+
+
+def _kinds(chosen: Subject | Family) -> Mapping[str, Subject]:
+    return getattr(chosen, "kinds", {"": chosen})
+
+
+def _tell_arguments(chosen: Subject | Family, typed: Mapping[str, str]) -> None:
+    wanted = typed.get(getattr(chosen, "by", ""), "")
+    columns = ["argument", "what", "like", "if left out"]
+    if not wanted and getattr(chosen, "by", None):
+        put_table(f"{chosen.name}: {chosen.title}", columns, [_row(chosen.arguments[0])], empty="")
+    for word, kind in _kinds(chosen).items():
+        if wanted in ("", word):
+            title = f'{chosen.name} {chosen.arguments[0].name}="{word}"' if word else kind.name
+            rows = [_row(item) for item in kind.arguments]
+            put_table(f"{title}: {kind.title}", columns, rows, empty="")
+
+
+def _row(item: Argument) -> list[str]:
+    default = "needed" if item.default is None else (item.default or "may be left out")
+    return [item.name, item.help, item.like, default]
+
+
+def _tell_each(chosen: Subject | Family, file: Path, typed: dict[str, str], json: bool) -> None:
+    from gaugelog.commands.calc import each
+
+    found = each.work_out_each(chosen, file, typed)
+    put_json([worked.as_json() for worked in found]) if json else each.write_each(found)
 
 
 def _tell(worked: Worked) -> None:
-    from gaugelog.commands.calc.engine import name_of, source_of
+    from gaugelog.commands.calc.sources import name_of, source_of
 
     put(f"{worked.subject.title}", "")
     names = [*worked.inputs, *(figure.name for figure in worked.answer.figures)]
     width = max(len(name) for name in names)
     put(*(f"  {name:<{width}}   {shown}" for name, shown in worked.inputs.items()), "")
     put(*(f"  {item.name:<{width}} = {item.shown}" for item in worked.answer.figures), "")
+    by_source: dict[str, list[str]] = {}
     for formula in worked.answer.formulas:
-        put(f"  by {name_of(formula)}: {source_of(formula)}")
+        by_source.setdefault(source_of(formula), []).append(name_of(formula))
+    put(*(f"  by {', '.join(formulas)}: {source}." for source, formulas in by_source.items()))
     for warning in worked.answer.warnings:
         put(f"  ! {warning}")
+
+
+def _check_plot(subject: str, plot: Path | None, each: Path | None) -> None:
+    if plot is not None and (subject != "rosette" or each is not None):
+        raise Faulty(
+            [Fault("--plot", "draws one rosette.", "Leave it out.")], "nothing was worked out"
+        )
 
 
 def _plot(worked: Worked, file: Path) -> None:
     from gaugelog.commands.calc.mohr import draw
 
-    if worked.subject.name != "rosette":
-        raise Faulty([Fault("--plot", "draws only a rosette.", "Leave it out.")])
-    file.write_text(draw(worked), encoding="utf-8")
+    try:
+        file.write_text(draw(worked), encoding="utf-8")
+    except (OSError, ValueError) as error:
+        reason = getattr(error, "strerror", None) or "its name can't be one"
+        raise Faulty([Fault(str(file), f"can't be written: {reason}.")], "no plot") from error
     say(f"Mohr's circle and the directions are drawn in {file}.")

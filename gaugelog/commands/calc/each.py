@@ -4,64 +4,64 @@ from __future__ import annotations
 
 import csv
 import sys
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 from pathlib import Path
 from typing import TextIO
 
-from gaugelog.commands.calc.engine import Subject, Worked, work_out
+from gaugelog.commands.calc.engine import work_out
+from gaugelog.commands.calc.model import Family, Subject, Worked
 from gaugelog.errors import Fault, Faulty
 
 _FORMULA_STARTS = ("=", "+", "-", "@", "\t", "\r")
 
 
-def work_out_each(subject: Subject, file: Path, common: dict[str, str]) -> list[Worked]:
-    """Work out every row; `common` serves arguments that are no column.
+def work_out_each(subject: Subject | Family, file: Path, common: dict[str, str]) -> list[Worked]:
+    """Work out every row; `common` serves arguments that are no column, and empty cells.
 
     Raises Faulty with every fault of every row at once.
     """
     faults: list[Fault] = []
     found: list[Worked] = []
-    for number, row in _rows(file):
-        where = f"{file.name}, row {number}, column "
+    for where, row in _rows(subject, file, faults):
         try:
             found.append(work_out(subject, {**common, **row}, where))
         except Faulty as error:
             faults.extend(error.faults)
     if faults:
-        raise Faulty(faults)
+        raise Faulty(faults, "nothing was worked out")
     return found
 
 
-def _rows(file: Path) -> Iterator[tuple[int, dict[str, str]]]:
-    try:
-        text = file.read_text(encoding="utf-8-sig")
-    except OSError as error:
-        raise Faulty([Fault(file.name, f"can't be read: {error.strerror}.")]) from error
-    except UnicodeDecodeError as error:
-        raise Faulty(
-            [Fault(file.name, "is not UTF-8 text.", "Save it as CSV in UTF-8.")]
-        ) from error
-    reader = csv.DictReader(text.splitlines())
-    if not reader.fieldnames:
-        raise Faulty([Fault(file.name, "is empty.", "A first row of argument names is needed.")])
-    for row in reader:
-        if None in row:
-            raise Faulty(
-                [Fault(f"{file.name}, row {reader.line_num}", "has more cells than the first row.")]
-            )
-        yield reader.line_num, {name: value or "" for name, value in row.items()}
+def _rows(
+    subject: Subject | Family, file: Path, faults: list[Fault]
+) -> Iterator[tuple[str, dict[str, str]]]:
+    """Each row's filled cells by column, and its place."""
+    from gaugelog.intake.files import read_bytes
+    from gaugelog.intake.tables import Columns, rows_of
+
+    known = tuple(dict.fromkeys(argument.name for argument in subject.arguments))
+    for row in rows_of(file.name, read_bytes(file), Columns((), known), faults):
+        cells = {name: row.text(name, needed=False) for name in known}
+        yield row.where(""), {name: cell for name, cell in cells.items() if cell}
 
 
-def write_each(found: list[Worked], out: TextIO = sys.stdout) -> None:
-    """Write inputs as understood and results as CSV; text that starts like a formula is guarded."""
-    if not found:
-        return
-    first = found[0]
+def write_each(found: Sequence[Worked], out: TextIO = sys.stdout) -> None:
+    """Write inputs as understood and results as CSV; text that starts like a formula is guarded.
+
+    A row that lacks what another has (an input left out, a figure of another kind) leaves the
+    cell empty.
+    """
+    inputs = dict.fromkeys(name for worked in found for name in worked.inputs)
+    figures = dict.fromkeys(figure.name for worked in found for figure in worked.answer.figures)
     writer = csv.writer(out, lineterminator="\r\n")
-    writer.writerow([*first.inputs, *(figure.name for figure in first.answer.figures), "warnings"])
+    writer.writerow([_guarded(name) for name in [*inputs, *figures, "warnings"]])
     for worked in found:
-        shown = [figure.shown for figure in worked.answer.figures]
-        cells = [*worked.inputs.values(), *shown, "; ".join(worked.answer.warnings)]
+        shown = {figure.name: figure.shown for figure in worked.answer.figures}
+        cells = [
+            *(worked.inputs.get(name, "") for name in inputs),
+            *(shown.get(name, "") for name in figures),
+            "; ".join(worked.answer.warnings),
+        ]
         writer.writerow([_guarded(cell) for cell in cells])
 
 

@@ -1,192 +1,133 @@
-"""A subject of the bench calculator: its arguments, and how an answer is computed and told."""
+"""How an answer is worked out: arguments understood, every slip told at once, then the formulas."""
 
 from __future__ import annotations
 
-import inspect
+import math
 import re
-from collections.abc import Callable, Mapping, Sequence
-from dataclasses import dataclass
+from collections.abc import Iterator, Mapping, Sequence
 from typing import Any
 
-from gaugelog.commands.calc.quantities import Dimension, NotUnderstood, Understood, show, understand
+from gaugelog.commands.calc.dimensions import Dimension
+from gaugelog.commands.calc.model import Answer, Argument, Family, Subject, Values, Worked
+from gaugelog.commands.calc.quantities import NotUnderstood, Understood, understand
 from gaugelog.errors import Fault, Faulty, GaugelogError
 
 _NOTHING = "nothing was worked out"
+_UNIT_BEHIND = re.compile(r"^[\s\d.eE+−-]*")
+_BARE = re.compile(r"\s*[+−-]?[\d.]+(?:[eE][+-]?\d+)?\s*")
 
 
-@dataclass(frozen=True)
-class Argument:
-    """One argument of a subject.
-
-    With `dimension` None it is a word, one of `choices` where there are some. `many` takes a
-    comma-separated list. `default` is used when it is left out; None makes it required.
-    """
-
-    name: str
-    help: str
-    dimension: Dimension | None = None
-    default: str | None = None
-    choices: tuple[str, ...] = ()
-    many: bool = False
-
-
-@dataclass(frozen=True)
-class Figure:
-    """One result: a value in the dimension's base unit, or a word."""
-
-    name: str
-    value: float | str
-    dimension: Dimension | None = None
-    digits: int = 5
-
-    @property
-    def shown(self) -> str:
-        """The figure as people read it, with its unit."""
-        if isinstance(self.value, str) or self.dimension is None:
-            return f"{self.value:.{self.digits}g}" if isinstance(self.value, float) else self.value
-        return show(self.value, self.dimension, self.digits)
-
-
-@dataclass(frozen=True)
-class Answer:
-    """What a subject answers: figures, the formulas that gave them, warnings."""
-
-    figures: tuple[Figure, ...]
-    formulas: tuple[Formula, ...]
-    warnings: tuple[str, ...] = ()
-
-
-Formula = Callable[..., Any]
-"""A public function of `physics/`."""
-
-Values = Mapping[str, Any]
-"""Argument name to float (base unit), tuple of floats, word, or None."""
-
-
-@dataclass(frozen=True)
-class Subject:
-    """A subject of `gaugelog calc`."""
-
-    name: str
-    title: str
-    arguments: tuple[Argument, ...]
-    compute: Callable[[Values], Answer]
-
-
-@dataclass(frozen=True)
-class Worked:
-    """An answer with the inputs as they were understood."""
-
-    subject: Subject
-    inputs: dict[str, str]
-    answer: Answer
-
-    def as_json(self) -> dict[str, Any]:
-        """Inputs, figures (base unit and as shown), formulas, sources, warnings."""
-        return {
-            "subject": self.subject.name,
-            "inputs": self.inputs,
-            "results": [
-                {
-                    "name": figure.name,
-                    "value": figure.value,
-                    "unit": (figure.dimension.base or "1") if figure.dimension else "",
-                    "shown": figure.shown,
-                }
-                for figure in self.answer.figures
-            ],
-            "formulas": [
-                {"name": name_of(formula), "source": source_of(formula)}
-                for formula in self.answer.formulas
-            ],
-            "warnings": list(self.answer.warnings),
-        }
-
-
-def work_out(subject: Subject, typed: Mapping[str, str], where: str = "") -> Worked:
+def work_out(chosen: Subject | Family, typed: Mapping[str, str], where: str = "") -> Worked:
     """Understand `typed` and compute. Raises Faulty with every fault of the input at once."""
-    faults = [*_strangers(subject, typed, where)]
-    values: dict[str, Any] = {}
-    inputs: dict[str, str] = {}
+    subject, inputs = _kind(chosen, typed, where)
+    own = {name: text for name, text in typed.items() if name not in inputs}
+    faults = [*_strangers(subject, own, where)]
+    values: dict[str, Any] = dict(inputs)
     for argument in subject.arguments:
-        place = f"{where}{argument.name}"
-        text = typed.get(argument.name, "").strip() or argument.default
-        if text is None:
-            faults.append(Fault(place, "is missing.", f"It is {argument.help}."))
-            continue
         try:
-            values[argument.name], inputs[argument.name] = _read(argument, text)
+            values[argument.name], shown = _given(argument, own)
         except NotUnderstood as error:
-            faults.append(Fault(place, f"{error}."))
+            remedy = "" if own.get(argument.name) else f"It is {argument.help}."
+            faults.append(Fault(f"{where}{argument.name}", f"{error}.", remedy))
+        else:
+            inputs |= {argument.name: shown} if shown else {}
     if faults:
         raise Faulty(faults, _NOTHING)
-    return Worked(subject, inputs, _computed(subject, values, where))
+    return Worked(subject, inputs, values, _computed(subject, values, where))
+
+
+def _kind(
+    chosen: Subject | Family, typed: Mapping[str, str], where: str
+) -> tuple[Subject, dict[str, str]]:
+    """The subject meant, and for a family the word that chose it."""
+    if isinstance(chosen, Subject):
+        return chosen, {}
+    try:
+        word, _ = _given(chosen.chooser, typed)
+    except NotUnderstood as error:
+        remedy = f"Choose one of {', '.join(chosen.kinds)}."
+        raise Faulty([Fault(f"{where}{chosen.by}", f"{error}.", remedy)], _NOTHING) from error
+    return chosen.kinds[word], {chosen.by: word}
+
+
+def _given(argument: Argument, typed: Mapping[str, str]) -> tuple[Any, str]:
+    """The value of an argument and how it was understood; None and nothing where left out."""
+    text = typed.get(argument.name, "").strip() or argument.default
+    if text is None:
+        raise NotUnderstood("is missing")
+    return _read(argument, text) if text else (None, "")
 
 
 def _computed(subject: Subject, values: Values, where: str) -> Answer:
     try:
-        return subject.compute(values)
-    except Faulty:
-        raise
+        answer = subject.compute(values)
+    except Faulty as error:
+        raise Faulty([_placed(fault, where) for fault in error.faults], _NOTHING) from error
     except GaugelogError as error:
-        raise Faulty(
-            [Fault(where.rstrip(", ") or subject.name, error.message, error.remedy)], _NOTHING
-        ) from error
+        raise Faulty([_fault_of(error, subject, where)], _NOTHING) from error
+    except (ArithmeticError, ValueError) as error:
+        raise Faulty([_beyond(subject, where)], _NOTHING) from error
+    for figure in answer.figures:
+        if isinstance(figure.value, float) and not math.isfinite(figure.value):
+            raise Faulty([_beyond(subject, where)], _NOTHING)
+    return answer
 
 
-def _strangers(subject: Subject, typed: Mapping[str, str], where: str) -> list[Fault]:
+def _placed(fault: Fault, where: str) -> Fault:
+    return Fault(f"{where}{fault.where}", fault.what, fault.remedy)
+
+
+def _fault_of(error: GaugelogError, subject: Subject, where: str) -> Fault:
+    """A formula's refusal at the argument it means, by the name that people typed."""
+    meant = getattr(error, "argument", "")
+    name = subject.renamed.get(meant, meant)
+    if name and error.message.startswith(meant):
+        what = error.message.removeprefix(meant).strip()
+        return Fault(f"{where}{name}", what, error.remedy)
+    return Fault(f"{where}{subject.name}", error.message, error.remedy)
+
+
+def _beyond(subject: Subject, where: str) -> Fault:
+    remedy = "Check the size of each value and its unit."
+    return Fault(f"{where}{subject.name}", "no figure comes out of values like these.", remedy)
+
+
+def _strangers(subject: Subject, typed: Mapping[str, str], where: str) -> Iterator[Fault]:
     known = [argument.name for argument in subject.arguments]
-    return [
-        Fault(f"{where}{name}", "is no argument here.", f"Known: {', '.join(known)}.")
-        for name in typed
-        if name not in known
-    ]
+    for name, text in typed.items():
+        # A column that another kind of row needs stays empty in this one.
+        if name not in known and (text.strip() or not where):
+            yield Fault(f"{where}{name}", "is no argument here.", f"Known: {', '.join(known)}.")
 
 
 def _read(argument: Argument, text: str) -> tuple[Any, str]:
-    if text == "" and argument.default == "":
-        return None, "not given"
+    if argument.read is not None:
+        return argument.read(text)
     if argument.dimension is None:
         return _word(argument, text)
-    if not argument.many:
-        found = understand(text, argument.dimension)
-        return found.value, found.shown
-    many = [_one_of_many(part, text, argument.dimension) for part in text.split(",")]
-    return tuple(item.value for item in many), ", ".join(item.shown for item in many)
+    parts = text.split(",") if argument.many else [text]
+    found = [_one(part, text, argument.dimension) for part in parts]
+    for each in found:
+        if argument.bound is not None and not argument.bound.holds(each.value):
+            raise NotUnderstood(f"{argument.bound.must}, not {each.shown}")
+    shown = ", ".join(each.shown for each in found)
+    return (tuple(each.value for each in found) if argument.many else found[0].value), shown
 
 
-def _one_of_many(part: str, text: str, dimension: Dimension) -> Understood:
+def _one(part: str, text: str, dimension: Dimension) -> Understood:
     # "400, 300, -200 ue": a unit at the end of the list serves every number before it.
-    unit = re.sub(r"^[\s\d.eE+−-]*", "", text.rsplit(",", 1)[-1])
-    bare = re.fullmatch(r"\s*[+−-]?[\d.]+(?:[eE][+-]?\d+)?\s*", part) is not None
+    unit = _UNIT_BEHIND.sub("", text.rsplit(",", 1)[-1])
+    bare = "," in text and _BARE.fullmatch(part) is not None
     return understand(f"{part.strip()} {unit}" if bare else part, dimension)
 
 
 def _word(argument: Argument, text: str) -> tuple[str, str]:
-    if argument.choices and text not in argument.choices:
-        raise NotUnderstood(f"“{text}” is not one of {', '.join(argument.choices)}")
-    return text, text
-
-
-def name_of(formula: Formula) -> str:
-    """The formula's name with its module, `leads.three_wire_loss`."""
-    return f"{formula.__module__.rsplit('.', 1)[-1]}.{formula.__qualname__}"
-
-
-def source_of(formula: Formula) -> str:
-    """The `Source:` paragraph of the formula's docstring on one line."""
-    found = re.search(r"Source:\s*(.+?)(?:\n\s*\n|\Z)", inspect.getdoc(formula) or "", re.DOTALL)
-    if found is None:
-        return "see its docstring"
-    text = " ".join(found[1].split())
-    # "as `desensitisation`" sends the reader to a sibling: follow it.
-    sibling = re.match(r"as `(\w+)`", text)
-    other = getattr(inspect.getmodule(formula), sibling[1], None) if sibling else None
-    return (
-        text
-        if other is None or sibling is None
-        else source_of(other).rstrip(".") + text[sibling.end() :]
-    )
+    if not argument.choices:
+        return text, text
+    for choice in argument.choices:
+        if choice.casefold() == " ".join(text.split()).casefold():
+            return choice, choice
+    raise NotUnderstood(f"“{text}” is not one of {', '.join(argument.choices)}")
 
 
 def parse_pairs(pairs: Sequence[str]) -> dict[str, str]:

@@ -4,63 +4,23 @@ from __future__ import annotations
 
 import math
 import re
+import unicodedata
 from dataclasses import dataclass
 from functools import cache
 from typing import Any
 
-
-@dataclass(frozen=True)
-class Dimension:
-    """A kind of quantity: the SI unit it is kept in, the unit it is shown in, an example.
-
-    `base` and `shown` are unit names of the pint registry; `symbol` is how people write `shown`.
-    """
-
-    name: str
-    base: str
-    shown: str
-    symbol: str
-    example: str
-
-
-RESISTANCE = Dimension("resistance", "ohm", "ohm", "Ω", "350 ohm")
-INSULATION = Dimension("insulation", "ohm", "megaohm", "MΩ", "12.5 Gohm")
-RESISTANCE_PER_LENGTH = Dimension("resistance per length", "ohm/m", "ohm/m", "Ω/m", "0.123 ohm/m")
-STRAIN = Dimension("strain", "", "micrometer/meter", "µm/m", "350 ue")
-LENGTH = Dimension("length", "m", "mm", "mm", "3 mm")
-DISTANCE = Dimension("distance", "m", "m", "m", "50 m")
-AREA = Dimension("area", "m^2", "mm^2", "mm²", "0.5 mm2 or 28 AWG")
-VOLTAGE = Dimension("voltage", "V", "V", "V", "5 V")
-RATIO = Dimension("ratio", "", "", "", "2.1 or 5 %")
-OUTPUT = Dimension("bridge output", "", "millivolt/volt", "mV/V", "0.85 mV/V")
-TEMPERATURE = Dimension("temperature", "degC", "degC", "°C", "20 degC or 68 degF")
-DIFFERENCE = Dimension("temperature difference", "kelvin", "kelvin", "K", "35 K")
-EXPANSION = Dimension("expansion", "1/kelvin", "ppm/kelvin", "ppm/K", "11.7 ppm/K")
-ANGLE = Dimension("angle", "radian", "degree", "°", "45 deg")
-STRESS = Dimension("stress", "pascal", "megapascal", "MPa", "206 GPa")
-FORCE = Dimension("force", "newton", "newton", "N", "30 kN")
-TORQUE = Dimension("torque", "newton*meter", "newton*meter", "N·m", "500 N*m")
-POWER_DENSITY = Dimension("power density", "W/m^2", "kW/m^2", "kW/m²", "2 W/in^2")
-POWER = Dimension("power", "watt", "milliwatt", "mW", "20 mW")
-FREQUENCY = Dimension("frequency", "hertz", "hertz", "Hz", "10 kHz")
-SPEED = Dimension("speed", "m/s", "m/s", "m/s", "5000 m/s")
-DENSITY = Dimension("density", "kg/m^3", "kg/m^3", "kg/m³", "7850 kg/m^3")
-TIME = Dimension("time", "second", "minute", "min", "30 min")
-HUMIDITY = Dimension("relative humidity", "", "percent", "%", "55 %")
+from gaugelog.commands.calc.dimensions import AREA, TEMPERATURE, Dimension
+from gaugelog.errors import GaugelogError
 
 _ALIASES: dict[str, str] = {
-    "ue": "micrometer/meter",
-    "µe": "micrometer/meter",
-    "με": "micrometer/meter",
-    "µε": "micrometer/meter",
-    "ustrain": "micrometer/meter",
-    "microstrain": "micrometer/meter",
     "mm2": "mm^2",
     "mm²": "mm^2",
     "in2": "inch^2",
     "W/in2": "W/in^2",
     "W/m2": "W/m^2",
+    "kW/m2": "kW/m^2",
     "kg/m3": "kg/m^3",
+    "g/cm3": "g/cm^3",
     "°C": "degC",
     "°F": "degF",
     "C": "degC",
@@ -71,11 +31,18 @@ _ALIASES: dict[str, str] = {
     "%RH": "percent",
     "%rh": "percent",
     "Nm": "newton*meter",
+    "kNm": "kilonewton*meter",
     "N·m": "newton*meter",
+    "kN·m": "kilonewton*meter",
 }
-_NUMBER = re.compile(r"^\s*([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)\s*(.*?)\s*$")
+_NUMBER = re.compile(r"^\s*([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)\s*(.*?)\s*$", re.ASCII)
+_DECIMAL_COMMA = re.compile(r"^\s*[+-]?\d+,\d")
 _WIRE = re.compile(r"^AWG$", re.IGNORECASE)
 _UNSAID_PREFIX = re.compile(r"^(mohm|mOhm|MOHM)$")
+_MICROSTRAIN = re.compile(r"^(?:ue|µe|µε|ustrain|microstrain)(?=$|/)")
+_FACTOR = r"[^\W\d_]*[°%]?[^\W\d_]*(?:(?:\*\*|\^)?-?\d(?:\.\d)?|[²³])?"
+_UNIT = re.compile(rf"(?:1?\s*/\s*)?{_FACTOR}(?:\s*[*/·]\s*{_FACTOR}| {_FACTOR})*")
+"""Factors with a small exponent: what a unit is made of, and nothing that takes long to read."""
 
 
 class NotUnderstood(ValueError):
@@ -96,29 +63,39 @@ def understand(text: str, dimension: Dimension) -> Understood:
 
     Raises NotUnderstood for a missing, wrong or ambiguous unit, or a number that is none.
     """
-    match = _NUMBER.match(text.replace("−", "-"))
+    plain = unicodedata.normalize("NFC", text).replace("−", "-").replace("μ", "µ")
+    match = _NUMBER.match(plain)
     if match is None:
         raise NotUnderstood(
             f"“{text}” is not a number with a unit; type it like {dimension.example}"
         )
+    if _DECIMAL_COMMA.match(plain):
+        raise NotUnderstood(f"“{text}” has a comma; type a decimal point")
     value = _value(float(match[1]), match[2], dimension)
-    if not math.isfinite(value):
+    if not math.isfinite(value * _scale(dimension.base, dimension.shown)):
         raise NotUnderstood(f"“{text}” is too large a number")
+    if dimension is TEMPERATURE and value < -273.15:
+        raise NotUnderstood(f"“{text}” lies below absolute zero")
     return Understood(text, value, show(value, dimension))
 
 
 def show(value: float, dimension: Dimension, digits: int = 6) -> str:
     """`value` (base unit) in the dimension's shown unit, to `digits` significant digits."""
-    number = value * _scale(dimension)
-    return f"{number:.{digits}g} {dimension.symbol}".strip()
+    number, symbol = value * _scale(dimension.base, dimension.shown), dimension.symbol
+    for unit, larger in dimension.larger:
+        reached = value * _scale(dimension.base, unit)
+        # A rounding away from one whole unit still shows as one.
+        if abs(reached) >= 1 - 1e-9:
+            number, symbol = reached, larger
+    gap = "" if symbol == "°" else " "
+    return f"{number:.{digits}g}{gap}{symbol}".strip()
 
 
 @cache
-def _scale(dimension: Dimension) -> float:
-    if dimension.base == dimension.shown:
+def _scale(base: str, unit: str) -> float:
+    if base == unit:
         return 1.0
-    registry = _registry()
-    return float(registry.Quantity(1.0, dimension.base or "dimensionless").to(dimension.shown).m)
+    return float(_registry().Quantity(1.0, base or "dimensionless").to(unit).m)
 
 
 def _value(number: float, unit: str, dimension: Dimension) -> float:
@@ -138,23 +115,40 @@ def _wire_area(number: float, dimension: Dimension) -> float:
 
     if dimension is not AREA:
         raise NotUnderstood(f"AWG is a wire size, not a {dimension.name}")
-    return math.pi / 4 * awg_diameter(number) ** 2
+    try:
+        return math.pi / 4 * awg_diameter(number) ** 2
+    except GaugelogError as error:
+        raise NotUnderstood(f"AWG sizes go from −3 (0000) to 50, not {number:g}") from error
 
 
 def _convert(number: float, unit: str, dimension: Dimension) -> float:
-    registry = _registry()
-    spelled = _ALIASES.get(unit, unit)
-    if dimension is not TEMPERATURE:
-        # A slope per degree means a difference of temperature, never a point on a scale.
-        spelled = re.sub(r"\bdeg([CF])\b", r"delta_deg\1", spelled.replace("°", "deg"))
     try:
-        quantity = registry.Quantity(number, spelled)
+        if not _may_be(unit, dimension):
+            raise ValueError(unit)
+        quantity = _registry().Quantity(number, _spelled(unit, dimension))
         return float(quantity.to(dimension.base or "dimensionless").m)
     except Exception as error:
         # pint raises a family of its own and builtins alike; the person needs one sentence.
         raise NotUnderstood(
             f"“{unit}” is no unit of {dimension.name}; type it like {dimension.example}"
         ) from error
+
+
+def _may_be(unit: str, dimension: Dimension) -> bool:
+    """Whether a text has the form of a unit, and for a bare ratio is one of this very kind."""
+    if len(unit) > 40 or not (unit in _ALIASES or _UNIT.fullmatch(unit)):
+        return False
+    return not dimension.only or re.fullmatch(dimension.only, unit) is not None
+
+
+def _spelled(unit: str, dimension: Dimension) -> str:
+    """A unit as the registry spells it."""
+    spelled = _MICROSTRAIN.sub("micrometer/meter", _ALIASES.get(unit, unit)).replace("·", "*")
+    spelled = f"1{spelled}" if spelled.startswith("/") else spelled
+    if dimension is TEMPERATURE:
+        return spelled
+    # A slope per degree means a difference of temperature, never a point on a scale.
+    return re.sub(r"\bdeg([CF])\b", r"delta_deg\1", spelled.replace("°", "deg"))
 
 
 @cache

@@ -2,16 +2,28 @@
 
 from __future__ import annotations
 
-from gaugelog.commands.calc.engine import Subject
-from gaugelog.commands.calc.subjects import bridge, conformity, leads, leakage, shunt
+from gaugelog.commands.calc.model import Family, Subject
+from gaugelog.commands.calc.subjects import (
+    bridge,
+    conformity,
+    leads,
+    leakage,
+    rosette,
+    shunt,
+    thermal,
+    transverse,
+)
 
-SUBJECTS: dict[str, Subject] = {
+SUBJECTS: dict[str, Subject | Family] = {
     subject.name: subject
     for subject in (
         bridge.SUBJECT,
         leads.SUBJECT,
         shunt.SUBJECT,
         leakage.SUBJECT,
+        thermal.SUBJECT,
+        transverse.SUBJECT,
+        rosette.SUBJECT,
         conformity.SUBJECT,
     )
 }

@@ -1,78 +1,103 @@
-"""`gaugelog calc bridge`: output of an arrangement under strain, and strain from an output."""
+"""`gaugelog calc bridge`: output under strain, strain from an output, four arms and their null."""
 
 from __future__ import annotations
 
-from gaugelog.commands.calc.engine import Answer, Argument, Figure, Subject, Values
-from gaugelog.commands.calc.quantities import OUTPUT, RATIO, STRAIN
+from gaugelog.commands.calc.bounds import NOT_ZERO, POISSON, POSITIVE
+from gaugelog.commands.calc.choosing import need, only_one
+from gaugelog.commands.calc.dimensions import OUTPUT, PERCENT, RATIO, RESISTANCE, STRAIN
+from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
+from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.errors import Fault, Faulty
-
-ARRANGEMENTS = (
-    "quarter two-wire",
-    "quarter three-wire",
-    "half with dummy",
-    "half bending",
-    "half Poisson",
-    "opposite arms",
-    "full bending",
-    "full torsion",
-    "full Poisson",
-)
+from gaugelog.physics import arrangements, balance, bridge
 
 
 def _compute(values: Values) -> Answer:
-    given = [name for name in ("strain", "output") if values[name] is not None]
-    if len(given) != 1:
-        raise Faulty([Fault("strain, output", "give one of the two; the other is worked out.")])
-    return _from_strain(values) if given == ["strain"] else _from_output(values)
+    ways = {"strain": _from_strain, "output": _from_output, "arms": _from_arms}
+    given = only_one(values, *ways)
+    if given != "arms":
+        need(values, "arrangement", why="with strain and output")
+        _check_poisson(values)
+    return ways[given](values)
+
+
+def _check_poisson(values: Values) -> None:
+    if arrangements.arrangement(values["arrangement"]).needs_poisson and values["poisson"] is None:
+        raise Faulty([Fault("poisson", "is missing.", "A grid lies across: give Poisson's ratio.")])
+
+
+def _placed(values: Values) -> tuple[str, float]:
+    return values["arrangement"], values["poisson"] or 0.0
 
 
 def _from_strain(values: Values) -> Answer:
-    from gaugelog.physics import arrangements, bridge
-
-    strain, factor = values["strain"], values["factor"]
-    name, poisson, initial = values["arrangement"], values["poisson"], values["initial"]
-    output = bridge.strain_output(strain, factor, name, poisson, initial)
-    shown = bridge.indicated_strain(output - initial, factor, name, poisson)
-    notices = bridge.indicated_strain_notices(strain, factor, name, poisson)
-    return Answer(
-        (
-            Figure("output", output, OUTPUT, 7),
-            Figure("bridge factor", arrangements.bridge_factor(name, poisson), RATIO),
-            Figure("strain a linear scale shows", shown, STRAIN),
-        ),
-        (bridge.strain_output, arrangements.bridge_factor, bridge.indicated_strain),
-        tuple(notice.message for notice in notices),
-    )
+    sheet, strain, factor = Sheet(), values["strain"], values["factor"]
+    place, initial = _placed(values), values["initial"]
+    output = sheet.by(bridge.strain_output, strain, factor, *place, initial)
+    shown = sheet.by(bridge.indicated_strain, output - initial, factor, *place)
+    sheet.put("output", output, OUTPUT, 7)
+    sheet.put("bridge factor", sheet.by(arrangements.bridge_factor, *place), RATIO)
+    sheet.put("strain a linear scale shows", shown, STRAIN, 6)
+    if shown and not initial:
+        part = sheet.by(bridge.nonlinearity_of_actual, strain, factor, *place)
+        sheet.put("non-linearity, of the strain", part, PERCENT, 4)
+    sheet.warn(bridge.indicated_strain_notices(strain, factor, *place))
+    return sheet.answer()
 
 
 def _from_output(values: Values) -> Answer:
-    from gaugelog.physics import bridge
+    sheet, output, factor = Sheet(), values["output"], values["factor"]
+    place, initial = _placed(values), values["initial"]
+    shown = sheet.by(bridge.indicated_strain, output - initial, factor, *place)
+    actual = sheet.by(bridge.actual_strain, output, factor, *place, initial)
+    sheet.put("strain a linear scale shows", shown, STRAIN, 6)
+    sheet.put("actual strain", actual, STRAIN, 6)
+    sheet.warn(bridge.indicated_strain_notices(actual, factor, *place))
+    return sheet.answer()
 
-    output, factor = values["output"], values["factor"]
-    name, poisson, initial = values["arrangement"], values["poisson"], values["initial"]
-    shown = bridge.indicated_strain(output - initial, factor, name, poisson)
-    actual = bridge.actual_strain(output, factor, name, poisson, initial)
-    notices = bridge.indicated_strain_notices(actual, factor, name, poisson)
-    return Answer(
-        (
-            Figure("strain a linear scale shows", shown, STRAIN),
-            Figure("actual strain", actual, STRAIN),
-        ),
-        (bridge.indicated_strain, bridge.actual_strain),
-        tuple(notice.message for notice in notices),
-    )
+
+def _from_arms(values: Values) -> Answer:
+    if len(values["arms"]) != 4:
+        raise Faulty([Fault("arms", f"must be four, not {len(values['arms'])}.")])
+    sheet, arms, adjusted = Sheet(), values["arms"], int(values["adjust"])
+    sheet.put("output", sheet.by(bridge.output_ratio, *arms), OUTPUT, 7)
+    shown = sheet.by(bridge.indicated_strain, bridge.output_ratio(*arms), values["factor"])
+    sheet.put("as strain of one grid, linear scale", shown, STRAIN, 6)
+    wanted = sheet.by(balance.balancing_arm, arms, adjusted)
+    sheet.put(f"arm {adjusted} that nulls it", wanted, RESISTANCE, 7)
+    if wanted > arms[adjusted - 1]:
+        trim = sheet.by(balance.balancing_trim, arms, adjusted)
+        sheet.put(f"resistor in series in arm {adjusted}", trim, RESISTANCE)
+    elif wanted < arms[adjusted - 1]:
+        across = sheet.by(balance.balancing_parallel, arms, adjusted)
+        sheet.put(f"resistor across arm {adjusted}", across, RESISTANCE)
+    return sheet.answer()
 
 
 SUBJECT = Subject(
     "bridge",
-    "Bridge output of an arrangement under strain, or strain from an output",
+    "Bridge output under strain, strain from an output, or four arms and what nulls them",
     (
-        Argument("arrangement", "how the grids lie in the bridge", choices=ARRANGEMENTS),
-        Argument("factor", "gauge factor", RATIO, "2.0"),
+        Argument(
+            "arrangement",
+            "how the grids lie in the bridge",
+            default="",
+            choices=tuple(arrangements.ARRANGEMENTS),
+        ),
+        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
         Argument("strain", "strain along the grid", STRAIN, ""),
         Argument("output", "measured output", OUTPUT, ""),
-        Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "0"),
+        Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "", bound=POISSON),
         Argument("initial", "output before loading", OUTPUT, "0 mV/V"),
+        Argument(
+            "arms",
+            "four resistances round the bridge, 1 and 3 opposite",
+            RESISTANCE,
+            "",
+            many=True,
+            bound=POSITIVE,
+            example="351.2, 350, 350, 350 ohm",
+        ),
+        Argument("adjust", "arm to null with", choices=("1", "2", "3", "4"), default="2"),
     ),
     _compute,
 )
