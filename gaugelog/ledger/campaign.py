@@ -227,7 +227,7 @@ class ChannelRow(SQLModel, table=True):
     """The `Channel` as JSON."""
 
 
-def apply_campaign_planned(_known: Known, _at: At, fact: CampaignPlanned) -> Iterator[Change]:
+def apply_campaign_planned(_known: Known, at: At, fact: CampaignPlanned) -> Iterator[Change]:
     """The campaign and its channels are known; its plan is still being loaded."""
     yield Put(
         "campaign",
@@ -237,7 +237,7 @@ def apply_campaign_planned(_known: Known, _at: At, fact: CampaignPlanned) -> Ite
             "title": fact.title,
             "client": fact.client,
             "surroundings": fact.surroundings,
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "criteria": "",
             "revision": 0,
             "state": "loading",
@@ -260,7 +260,7 @@ def _channel(campaign: str, module: Module, channel: Channel) -> Row:
     }
 
 
-def apply_criteria_agreed(_known: Known, _at: At, fact: CriteriaAgreed) -> Iterator[Change]:
+def apply_criteria_agreed(_known: Known, at: At, fact: CriteriaAgreed) -> Iterator[Change]:
     """The criteria are known."""
     yield Put(
         "criteria",
@@ -269,12 +269,12 @@ def apply_criteria_agreed(_known: Known, _at: At, fact: CriteriaAgreed) -> Itera
             "campaign": fact.campaign,
             "title": fact.title,
             "edition": fact.edition,
-            "data": fact.model_dump_json(),
+            "data": at.data,
         },
     )
 
 
-def apply_plan_loaded(known: Known, _at: At, fact: PlanLoaded) -> Iterator[Change]:
+def apply_plan_loaded(known: Known, at: At, fact: PlanLoaded) -> Iterator[Change]:
     """The draft is whole; the one it replaces goes."""
     if fact.replaces is not None and known.get("campaign", fact.replaces) is not None:
         yield from _drop_draft(known, have(known, "campaign", fact.replaces))
@@ -285,7 +285,7 @@ def apply_plan_loaded(known: Known, _at: At, fact: PlanLoaded) -> Iterator[Chang
             "criteria": fact.criteria,
             "revision": fact.revision,
             "state": "draft",
-            "plan": fact.model_dump_json(),
+            "plan": at.data,
         },
     )
 

@@ -64,7 +64,7 @@ class CircuitRow(SQLModel, table=True):
     """The whole of `CircuitPlanned` as JSON."""
 
 
-def apply_circuit_planned(known: Known, _at: At, fact: CircuitPlanned) -> Iterator[Change]:
+def apply_circuit_planned(known: Known, at: At, fact: CircuitPlanned) -> Iterator[Change]:
     """The circuit is planned, and its grids know it."""
     yield Put(
         "circuit",
@@ -74,7 +74,7 @@ def apply_circuit_planned(known: Known, _at: At, fact: CircuitPlanned) -> Iterat
             "campaign": fact.campaign,
             "channel": fact.channel,
             "arrangement": fact.arrangement,
-            "data": fact.model_dump_json(),
+            "data": at.data,
         },
     )
     for grid in fact.grids:

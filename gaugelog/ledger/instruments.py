@@ -71,7 +71,7 @@ def apply_instrument_added(_known: Known, at: At, fact: InstrumentAdded) -> Iter
             "type": fact.type,
             "serial": fact.serial,
             "due": fact.due,
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "seq": at.seq,
         },
     )

@@ -127,7 +127,7 @@ def apply_point_planned(_known: Known, at: At, fact: PointPlanned) -> Iterator[C
             "gauge": "",
             "generation": 1,
             "blocked": "[]",
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "seq": at.seq,
         },
     )

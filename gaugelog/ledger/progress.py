@@ -79,6 +79,14 @@ def move(known: Known, point: Row, reached: str = "") -> Iterator[Change]:
         yield Put("grid", grid)
 
 
+def mark(known: Known, point: Row) -> Iterator[Change]:
+    """Grids that a blocking reading concerns are non-conforming; the others stay as they are."""
+    blocked = json.loads(point["blocked"])
+    for grid_id in grids_of(point["data"]) if blocked else ():
+        if any(_concerns(key, grid_id, point) for key in blocked):
+            yield Put("grid", {**have(known, "grid", grid_id), "state": "non-conforming"})
+
+
 def _concerns(key: str, grid_id: str, point: Row) -> bool:
     subject = key.split("/", 1)[0]
     return subject == grid_id or subject not in grids_of(point["data"])

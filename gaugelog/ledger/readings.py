@@ -9,7 +9,7 @@ from typing import ClassVar, Literal
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity, TimeText
-from gaugelog.ledger.progress import move
+from gaugelog.ledger.progress import mark
 from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 Word = Literal["pass", "conditional pass", "conditional fail", "fail", "undecided"]
@@ -104,7 +104,10 @@ class ReadingRow(SQLModel, table=True):
 
 
 def apply_reading_taken(known: Known, at: At, fact: ReadingTaken) -> Iterator[Change]:
-    """The reading is the latest of its check; whether it blocks decides the grids' state."""
+    """The reading is the latest of its check; one that blocks makes its grids non-conforming.
+
+    What a reading that passes means for the state is told by the step that is done with it.
+    """
     if fact.repeats is not None:
         yield Put("reading", {**have(known, "reading", fact.repeats), "latest": 0})
     yield Put(
@@ -126,17 +129,21 @@ def apply_reading_taken(known: Known, at: At, fact: ReadingTaken) -> Iterator[Ch
             "observed_by": fact.observed_by,
             "entered_at": at.time,
             "entered_by": at.actor,
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "seq": at.seq,
         },
     )
     point = have(known, "point", fact.point)
-    point["blocked"] = _blocked(point["blocked"], fact)
-    yield Put("point", point)
-    yield from move(known, point)
+    blocked = _blocked(point["blocked"], fact)
+    if blocked != point["blocked"]:
+        point["blocked"] = blocked
+        yield Put("point", point)
+        yield from mark(known, point)
 
 
 def _blocked(before: str, fact: ReadingTaken) -> str:
     key = f"{fact.subject}/{fact.check}/{fact.stage}"
+    if fact.verdict.blocks == (f'"{key}"' in before):
+        return before
     others = [each for each in json.loads(before) if each != key]
     return json.dumps([*others, key] if fact.verdict.blocks else others)

@@ -96,7 +96,7 @@ class RouteRow(SQLModel, table=True):
     """The whole of `RouteAdopted` as JSON."""
 
 
-def apply_route_adopted(_known: Known, _at: At, fact: RouteAdopted) -> Iterator[Change]:
+def apply_route_adopted(_known: Known, at: At, fact: RouteAdopted) -> Iterator[Change]:
     """The route is known."""
     yield Put(
         "route",
@@ -105,6 +105,6 @@ def apply_route_adopted(_known: Known, _at: At, fact: RouteAdopted) -> Iterator[
             "label": fact.label,
             "title": fact.title,
             "edition": fact.edition,
-            "data": fact.model_dump_json(),
+            "data": at.data,
         },
     )

@@ -49,6 +49,8 @@ class At:
     actor: str
     boot: str = ""
     uptime_ms: int = 0
+    data: str = ""
+    """The fact as JSON, as it was kept."""
 
 
 Apply = Callable[[Known, At, Any], Iterator[Change]]

@@ -139,7 +139,7 @@ def apply_lot_received(_known: Known, at: At, fact: LotReceived) -> Iterator[Cha
             "label": fact.label,
             "maker": fact.maker,
             "type": fact.type,
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "seq": at.seq,
         },
     )
@@ -170,7 +170,7 @@ def apply_consumable_received(_known: Known, at: At, fact: ConsumableReceived) -
             "type": fact.type,
             "name": fact.name,
             "expires": fact.expires or "",
-            "data": fact.model_dump_json(),
+            "data": at.data,
             "seq": at.seq,
         },
     )

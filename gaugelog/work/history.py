@@ -24,7 +24,7 @@ def check_logbook(logbook: Logbook, printed: Sequence[str] = ()) -> Report:
     with logbook.storage.reading() as reader:
 
         def rebuilt() -> list[Trouble]:
-            return fold.compare(reader.connection, reader.entries())
+            return fold.compare(reader)
 
         return check(reader, logbook.evidence, printed=heads, rebuild=rebuilt)
 

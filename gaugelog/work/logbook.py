@@ -174,7 +174,7 @@ class Logbook:
     def rebuild(self) -> None:
         """Throw the ledger's tables away and fold them anew from the journal."""
         with self.storage.writing(self._on_wait) as writer:
-            fold.rebuild(writer.connection, writer.entries())
+            fold.rebuild(writer)
 
     def _view(self, reader: SqliteReader) -> View:
         return View(reader.connection, reader.sheet)

@@ -13,6 +13,7 @@ from hypothesis import strategies as st
 from gaugelog.errors import Faulty, Refused
 from gaugelog.journal.entry import Entry, Fact
 from gaugelog.ledger import fold, schema
+from gaugelog.ledger.buffer import Buffer
 from gaugelog.work import reviews, steps
 from gaugelog.work.history import check_logbook
 from tests.work.job import WALK, Job, released_job
@@ -22,10 +23,7 @@ FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
 
 def _differences(job: Job) -> list[str]:
     with job.book.storage.reading() as reader:
-        return [
-            f"{trouble.where}: {trouble.what}"
-            for trouble in fold.compare(reader.connection, reader.entries())
-        ]
+        return [f"{trouble.where}: {trouble.what}" for trouble in fold.compare(reader)]
 
 
 @pytest.fixture
@@ -92,7 +90,7 @@ def test_kinds_of_a_newer_program_change_nothing(walked: Job) -> None:
 def test_a_withheld_body_changes_nothing(walked: Job) -> None:
     with walked.book.storage.reading() as reader:
         entry = next(e for e in reader.entries() if e.header.kind == "reading.taken")
-    assert list(fold.apply(fold.Buffer(), replace_body(entry))) == []
+    assert list(fold.apply(Buffer(), replace_body(entry))) == []
 
 
 def replace_body(entry: Entry) -> Entry:

@@ -8,7 +8,7 @@ from gaugelog.errors import Faulty
 from gaugelog.intake.typed import parse_reading
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.campaign import CheckCriterion, CriteriaAgreed
-from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange
+from gaugelog.ledger.instruments import InstrumentRange
 from gaugelog.ledger.points import Place, PlannedGrid, PointPlanned
 from gaugelog.ledger.stock import GridData, LotReceived
 from gaugelog.rules.accuracy import RangeTaken
@@ -37,7 +37,7 @@ CRITERIA = CriteriaAgreed(
     title="t",
     edition="1",
     coverage="2",
-    conditional_pass="goes on",  # noqa: S106
+    conditional_pass="goes on",
     conditional_fail="blocks",
     checks=(
         _criterion("insulation", "bonded", at_least=q("10", "Gohm")).model_copy(
