@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from decimal import Decimal
 
 from gaugelog.ledger.base import UNITS, Quantity
 
@@ -15,13 +16,15 @@ def decimal_text(value: float, digits: int = DIGITS) -> str:
 
     >>> decimal_text(0.1 + 0.2)
     '0.3'
+    >>> decimal_text(3.4e-08, 4)
+    '0.000000034'
     """
     if not math.isfinite(value):
         raise ValueError(f"{value} can't be kept as a decimal number")
-    text = f"{value:.{digits}g}"
+    text = f"{value + 0.0:.{digits}g}"  # + 0.0: zero has no sign
     if "e" not in text:
         return text
-    return f"{float(text):f}".rstrip("0").rstrip(".") if 1e-9 < abs(value) < 1e15 else text
+    return format(Decimal(text), "f") if 1e-9 < abs(value) < 1e15 else text
 
 
 def quantity(value_si: float, unit: str, digits: int = DIGITS) -> Quantity:

@@ -14,6 +14,9 @@ from gaugelog.ledger import fold
 from gaugelog.ledger.people import PersonRow
 from gaugelog.work.logbook import Logbook
 
+_LONGEST_NUMBER = 15
+"""Digits of an entry's number; a longer one is no entry's."""
+
 
 def check_logbook(logbook: Logbook, printed: Sequence[str] = ()) -> Report:
     """Check journal, evidence and ledger; `printed` are heads as they stand on paper.
@@ -37,10 +40,10 @@ def entries_about(logbook: Logbook, what: str) -> list[Entry]:
     with logbook.storage.reading() as reader:
         if not what:
             return list(reader.entries())
-        if what.isdigit():
-            found = reader.entry(logbook.chain, int(what))
+        if what.isdecimal():
+            found = reader.entry(logbook.chain, int(what)) if len(what) <= _LONGEST_NUMBER else None
             if found is None:
-                raise Refused(f"There is no entry {what}.", "See `gaugelog journal head`.")
+                raise Refused(f"There is no entry {what[:20]}.", "See `gaugelog journal head`.")
             return [found]
     with logbook.reading() as view:
         person = view.get(PersonRow, what)

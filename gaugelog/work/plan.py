@@ -59,7 +59,7 @@ def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
                 "A released plan is changed by a revision, which this version can't make yet; "
                 "start another logbook for another job.",
             )
-        loaded = _loaded(facts, revision=1 + (earlier.revision if earlier else 0))
+        loaded = _loaded(facts, earlier)
         _keep(deed, facts, loaded)
     return loaded
 
@@ -148,13 +148,15 @@ def _planned(view: View) -> CampaignRow:
     return found
 
 
-def _loaded(facts: PlanFacts, revision: int) -> PlanLoaded:
+def _loaded(facts: PlanFacts, earlier: CampaignRow | None) -> PlanLoaded:
     return PlanLoaded(
         campaign=facts.campaign.id,
-        revision=revision,
+        revision=1 + (earlier.revision if earlier else 0),
         criteria=facts.criteria.id,
         points=tuple(point.id for point in facts.points),
         circuits=tuple(circuit.id for circuit in facts.circuits),
+        routes=tuple(route.id for route in facts.routes),
+        replaces=earlier.id if earlier else None,
         files=facts.digests,
     )
 

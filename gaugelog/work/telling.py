@@ -40,7 +40,10 @@ def what_line(entry: Entry) -> str:
     kind = entry.header.kind
     if entry.body_bytes is None or kind not in _TELL:
         return kind
-    return f"{kind}: {_TELL[kind](entry.body.fact)}"
+    try:
+        return f"{kind}: {_TELL[kind](entry.body.fact)}"
+    except (LookupError, TypeError, ValueError):  # as a newer program wrote it
+        return kind
 
 
 def _reading(fact: Fact) -> str:
