@@ -16,7 +16,7 @@ def _copy(folder: Path) -> Path:
 
 def test_the_demos_meters_are_understood() -> None:
     found = load_instruments(DEMO / "instruments.toml", counter())
-    assert [item.label for item in found] == ["RM-2", "IT-5"]
+    assert [item.label for item in found] == ["RM-2", "IT-5", "QB-1"]
     assert str(found[0].ranges[0].offset) == "0.1 Ω"
 
 

@@ -84,7 +84,7 @@ def test_nothing_is_measured_before_its_cure(route: RouteAdopted) -> None:
         assert window.duration.si() >= 60
 
 
-def test_resistance_is_read_as_received_and_bonded_and_insulation_twice(
+def test_checks_are_read_in_the_order_of_the_work(
     route: RouteAdopted,
 ) -> None:
     read = [
@@ -98,6 +98,9 @@ def test_resistance_is_read_as_received_and_bonded_and_insulation_twice(
         ("resistance", "bonded"),
         ("insulation", "bonded"),
         ("insulation", "coated"),
+        ("lead loop", "cabled"),
+        ("zero offset", "on channel"),
+        ("shunt", "on channel"),
     ] == read
 
 

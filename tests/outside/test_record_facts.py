@@ -34,10 +34,10 @@ def test_each_signature_shows_name_time_and_meaning(demo: Path) -> None:  # noqa
     for shown in (
         "Tobe Okoro (TO)",
         "I did or saw the work recorded here and submit it for review.",
-        "2026-11-17 14:18:00 UTC+01:00",
+        "2026-11-17 14:52:00 UTC+01:00",
         "Quilla Reyes (QR)",
         "I reviewed this record against its criteria and accept it.",
-        "2026-11-17 15:20:00 UTC+01:00",
+        "2026-11-17 15:54:00 UTC+01:00",
     ):
         assert shown in text, shown
 

@@ -36,13 +36,20 @@ WALK: tuple[tuple[str, dict[str, str]], ...] = (
     ("t.okoro", {"x": "0 mm", "y": "0 mm", "axis": "0 deg"}),
     ("q.reyes", {}),
     ("t.okoro", {"clean": "yes"}),
-    ("t.okoro", {"adhesive": "AD-612", "air": "20 degC", "humidity": "50 %RH"}),
+    (
+        "t.okoro",
+        {"adhesive": "AD-612", "air": "20 degC", "humidity": "50 %RH", "surface": "19 degC"},
+    ),
     ("t.okoro", {"meter": "RM-2", "resistance": "350.50 ohm"}),
     ("t.okoro", {"solder": "SO-17", "flux-removed": "yes"}),
     ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": ">20 GΩ"}),
     ("q.reyes", {}),
     ("t.okoro", {"coating": "CT-088"}),
     ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "18 GΩ"}),
+    ("t.okoro", {"meter": "RM-2", "loop": "1.98 ohm"}),
+    ("t.okoro", {"module": "QB-1", "zero": "0.36 mV/V"}),
+    ("t.okoro", {"module": "QB-1", "shunt": "-1696 um/m"}),
+    ("t.okoro", {"right-channel": "yes", "direction": "yes", "comes-back": "yes"}),
     ("t.okoro", {"labelled": "yes"}),
 )
 """Who types what at each step of the shipped route, for point FB-1."""
