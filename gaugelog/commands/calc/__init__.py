@@ -91,6 +91,7 @@ def _tell_arguments(chosen: Subject | Family, typed: Mapping[str, str]) -> None:
             title = f'{chosen.name} {chosen.arguments[0].name}="{word}"' if word else kind.name
             rows = [_row(item) for item in kind.arguments]
             put_table(f"{title}: {kind.title}", columns, rows, empty="")
+            put(*([kind.note, ""] if kind.note else []))
 
 
 def _row(item: Argument) -> list[str]:

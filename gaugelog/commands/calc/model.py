@@ -77,7 +77,8 @@ class Answer:
 class Subject:
     """A subject of `gaugelog calc`, or one kind of a family's.
 
-    `renamed` tells which argument a formula means by a name of its own.
+    `renamed` tells which argument a formula means by a name of its own; `note` is told below the
+    list of arguments.
     """
 
     name: str
@@ -85,6 +86,7 @@ class Subject:
     arguments: tuple[Argument, ...]
     compute: Callable[[Values], Answer]
     renamed: Mapping[str, str] = field(default_factory=dict)
+    note: str = ""
 
 
 @dataclass(frozen=True)

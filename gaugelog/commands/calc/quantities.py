@@ -9,7 +9,7 @@ from dataclasses import dataclass
 from functools import cache
 from typing import Any
 
-from gaugelog.commands.calc.dimensions import AREA, TEMPERATURE, Dimension
+from gaugelog.commands.calc.dimensions import AREA, PERCENT, RATIO, TEMPERATURE, Dimension
 from gaugelog.errors import GaugelogError
 
 _ALIASES: dict[str, str] = {
@@ -76,7 +76,8 @@ def understand(text: str, dimension: Dimension) -> Understood:
         raise NotUnderstood(f"“{text}” is too large a number")
     if dimension is TEMPERATURE and value < -273.15:
         raise NotUnderstood(f"“{text}” lies below absolute zero")
-    return Understood(text, value, show(value, dimension))
+    as_typed = PERCENT if dimension is RATIO and match[2] == "%" else dimension
+    return Understood(text, value, show(value, as_typed))
 
 
 def show(value: float, dimension: Dimension, digits: int = 6) -> str:
@@ -88,7 +89,8 @@ def show(value: float, dimension: Dimension, digits: int = 6) -> str:
         if abs(reached) >= 1 - 1e-9:
             number, symbol = reached, larger
     gap = "" if symbol == "°" else " "
-    return f"{number:.{digits}g}{gap}{symbol}".strip()
+    # Nothing has no sign: a product with a negative number would print −0.
+    return f"{number + 0.0:.{digits}g}{gap}{symbol}".strip()
 
 
 @cache

@@ -16,8 +16,9 @@ if TYPE_CHECKING:
 
 SHAPES = ("rectangular", "triangular", "arcsine", "normal")
 HELP = (
-    "VALUE ± WIDTH, then rectangular (taken where nothing is said), triangular, arcsine, normal "
-    "(one standard uncertainty) or k=2 (expanded), and dof=9 where few readings stand behind it"
+    "What is uncertain is typed VALUE ± WIDTH, or ± WIDTH about what is planned; then the shape:\n"
+    "rectangular (taken where nothing is said), triangular, arcsine, normal (one standard\n"
+    "uncertainty) or k=2 (expanded); and dof=9 where few readings stand behind it."
 )
 _SIGN = re.compile(r"±|\+/?-")
 _FACTOR = re.compile(r"(k|dof)=(\d+(?:\.\d+)?)")
