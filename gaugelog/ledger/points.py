@@ -94,6 +94,8 @@ class PointRow(SQLModel, table=True):
     """1 for the first gauge at the place; a replaced gauge is a new generation."""
     blocked: str
     """JSON list of `subject/check/stage` whose latest reading blocks."""
+    workers: str
+    """JSON list of everyone who ever did or skipped a step, also one that was done again since."""
     data: str
     """The whole of `PointPlanned` as JSON."""
     seq: int
@@ -127,6 +129,7 @@ def apply_point_planned(_known: Known, at: At, fact: PointPlanned) -> Iterator[C
             "gauge": "",
             "generation": 1,
             "blocked": "[]",
+            "workers": "[]",
             "data": at.data,
             "seq": at.seq,
         },

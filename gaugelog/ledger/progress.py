@@ -92,6 +92,14 @@ def _concerns(key: str, grid_id: str, point: Row) -> bool:
     return subject == grid_id or subject not in grids_of(point["data"])
 
 
+def note_worker(known: Known, point_id: str, person: str) -> Iterator[Change]:
+    """Note who did or skipped a step of a point; kept for good, also when it is done again."""
+    point = have(known, "point", point_id)
+    workers = json.loads(point["workers"])
+    if person not in workers:
+        yield Put("point", {**point, "workers": json.dumps([*workers, person])})
+
+
 def set_states(known: Known, point: Row, state: str) -> Iterator[Change]:
     """All grids of a point into one state."""
     for grid_id in grids_of(point["data"]):

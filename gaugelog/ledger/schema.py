@@ -24,7 +24,7 @@ from gaugelog.ledger.rows import Row
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 
-LEDGER_VERSION = 1
+LEDGER_VERSION = 2
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (

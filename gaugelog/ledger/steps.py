@@ -9,7 +9,7 @@ from typing import ClassVar, Literal
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity, TimeText
-from gaugelog.ledger.progress import move, reopen, route_of, step_key
+from gaugelog.ledger.progress import move, note_worker, reopen, route_of, step_key, subjects_of
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
 
@@ -104,6 +104,7 @@ class StepRow(SQLModel, table=True):
 
 def apply_step_done(known: Known, at: At, fact: StepDone) -> Iterator[Change]:
     """The step is settled on its subject; a gauge that was entered is in service at the point."""
+    yield from note_worker(known, fact.point, fact.done_by)
     point = have(known, "point", fact.point)
     step = next(item for item in _steps(known, point) if item.id == fact.step)
     yield from _take_gauge(known, point, step, fact)
@@ -116,14 +117,41 @@ def apply_step_done(known: Known, at: At, fact: StepDone) -> Iterator[Change]:
 def _take_gauge(known: Known, point: Row, step: RouteStep, fact: StepDone) -> Iterator[Change]:
     for item in step.inputs:
         gauge = fact.inputs.get(item.name)
-        if item.kind == "gauge" and gauge is not None and gauge.id is not None:
-            yield Put("point", {**point, "gauge": gauge.id})
-            taken = {"state": "in service", "point": fact.point}
-            yield Put("gauge", {**have(known, "gauge", gauge.id), **taken})
+        if item.kind != "gauge" or gauge is None or gauge.id is None:
+            continue
+        generation = point["generation"]
+        if point["gauge"] not in {"", gauge.id}:
+            mounted = _was_mounted(known, point, step)
+            generation += int(mounted)
+            yield _given_up(known, point, mounted)
+        yield Put("point", {**point, "gauge": gauge.id, "generation": generation})
+        taken = {"state": "in service", "point": fact.point}
+        yield Put("gauge", {**have(known, "gauge", gauge.id), **taken})
+
+
+def _was_mounted(known: Known, point: Row, taking: RouteStep) -> bool:
+    """Whether any step on grid or circuit was done after the one that takes the gauge."""
+    steps = _steps(known, point)
+    later = steps[steps.index(taking) + 1 :]
+    keys = (
+        step_key(point["id"], step.id, subject)
+        for step in later
+        if step.subject != "place"
+        for subject in subjects_of(known, point, step)
+    )
+    rows = (known.get("step", key) for key in keys)
+    return any(row is not None for row in rows)
+
+
+def _given_up(known: Known, point: Row, mounted: bool) -> Change:
+    """The gauge that another takes the place of: removed when it was mounted, else on the shelf."""
+    state = {"state": "removed"} if mounted else {"state": "on shelf", "point": ""}
+    return Put("gauge", {**have(known, "gauge", point["gauge"]), **state})
 
 
 def apply_step_skipped(known: Known, at: At, fact: StepSkipped) -> Iterator[Change]:
     """The step is settled without being done."""
+    yield from note_worker(known, fact.point, fact.skipped_by)
     yield Put("step", _row(at, fact, "skipped", fact.skipped_by, at.time, fact.reason))
     yield from move(known, have(known, "point", fact.point))
 

@@ -6,8 +6,8 @@ import json
 
 from gaugelog.errors import Refused
 from gaugelog.ledger.people import PersonRow, Role
+from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.readings import ReadingRow
-from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.view import View
 
 
@@ -31,13 +31,13 @@ def demand_role(view: View, person: str, *roles: Role) -> None:
 
 
 def workers_of(view: View, point: str) -> set[str]:
-    """Everyone who did, skipped or measured something at a point (by its id).
+    """Everyone who ever did, skipped or measured something at a point (by its id).
 
     Deciding a hold is witnessing, not doing a step.
     """
-    steps = view.all(StepRow, point=point)
-    did = {row.by for row in steps if row.outcome not in {"released", "refused"}}
-    return did | {row.observed_by for row in view.all(ReadingRow, point=point)}
+    row = view.get(PointRow, point)
+    did: set[str] = set(json.loads(row.workers)) if row is not None else set()
+    return did | {reading.observed_by for reading in view.all(ReadingRow, point=point)}
 
 
 def demand_second_person(view: View, person: str, point: str, what: str) -> None:

@@ -90,7 +90,7 @@ def _gauge(asked: Asked, item: StepInput, text: str, where: str, found: Understo
         lot = asked.view.get(LotRow, asked.point.lot)
         planned = lot.label if lot is not None else "another lot"
         raise _fault(f"{gauge.label} is not of lot {planned}, which is planned here.")
-    if gauge.state != "on shelf" and gauge.point != asked.point.id:
+    if gauge.state != "on shelf" and gauge.id != asked.point.gauge:
         raise _fault(f"{gauge.label} is {gauge.state}.", "Take one from the shelf.")
     found.entered[item.name] = Entered(typed=text, id=gauge.id)
 

@@ -196,6 +196,11 @@ def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[Po
     rows = view.all(RecordRow, point=row.id)
     if not rows or rows[-1].state != "submitted":
         raise Refused(f"{point} is not under review.", "It must be submitted first.")
+    if rows[-1].submitted_by == signer.person:
+        raise Refused(
+            f"{signer.person} signed this record and can't {what}.",
+            "Have a second person review it; the two signatures are of two people.",
+        )
     return row, rows[-1]
 
 
