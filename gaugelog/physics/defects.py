@@ -74,10 +74,10 @@ def ohm(value: float) -> str:
 
     Source: SI prefixes.
 
-    >>> ohm(2_100_000.0)
-    '2.1 MΩ'
+    >>> ohm(2_100_000.0), ohm(999_600.0)
+    ('2.1 MΩ', '1 MΩ')
     """
-    for scale, unit in ((1e9, "GΩ"), (1e6, "MΩ"), (1e3, "kΩ")):
-        if float(f"{value:.4g}") >= scale:
+    for scale, unit, digits in ((1e9, "GΩ", 3), (1e6, "MΩ", 3), (1e3, "kΩ", 4)):
+        if float(f"{value:.{digits}g}") >= scale:
             return f"{value / scale:.3g} {unit}"
     return f"{value:.1f} Ω"
