@@ -61,6 +61,12 @@ class NextStep:
             return self.step.title
         return "none" if self.state in {"accepted", "awaiting review"} else "submit the record"
 
+    @property
+    def forbidden(self) -> tuple[str, ...]:
+        """What forbids any deed at the point, whatever the time: the blocks without windows."""
+        shut = {window.sentence for window in self.windows}
+        return tuple(block for block in self.blocks if block not in shut)
+
 
 def worst_state(states: Sequence[str]) -> str:
     """The state of a point: that of its worst grid, withdrawn ones left out."""
@@ -177,6 +183,16 @@ def _open_things(view: View, point: PointRow) -> Iterator[str]:
     for key in json.loads(point.blocked):
         subject, check, stage = key.split("/", 2)
         yield f"{check} {stage} of {subject_label(view, subject) or point.label} blocks"
+
+
+def demand_walked(view: View, point: PointRow, step: RouteStep) -> None:
+    """Raise Refused unless the step was settled on some subject, so that it can be done again."""
+    rows = view.all(StepRow, point=point.id, step=step.id)
+    if not any(row.outcome in SETTLED for row in rows):
+        raise Refused(
+            f"“{step.title}” of {point.label} is not done yet.",
+            f"See `gaugelog step next {point.label}`.",
+        )
 
 
 def demand_step(view: View, point: PointRow, step: str) -> RouteStep:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from datetime import UTC, datetime, timedelta, timezone
 
@@ -10,12 +10,13 @@ from gaugelog.errors import ExitCode, Fault, Faulty, Refused
 from gaugelog.journal.clock import Moment
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.progress import SETTLED
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
-from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepSkipped
+from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
 from gaugelog.ledger.view import View
 from gaugelog.rules.air import air_troubles
-from gaugelog.rules.progress import NextStep, demand_step, state_of
+from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
 from gaugelog.rules.who import demand_role, demand_second_person, roles_of
 from gaugelog.work.inputs import Asked, Understood, understand
@@ -24,6 +25,9 @@ from gaugelog.work.readings import Observation, explain, reading_taken
 
 HOLD_MEANING = "I looked at the work myself and let it go on."
 REFUSAL_MEANING = "I looked at the work myself and send it back."
+
+LONGEST_AGO = timedelta(days=3650)
+"""A time further back than this is a slip of the pen, and no job lasts that long."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -92,14 +96,14 @@ def do(
     of the input, Refused when a rule forbids the step now.
     """
     with logbook.deed(signer, deed) as making:
-        if making.repeated:
-            return _told_again(making)
         row = point_row(making.view, point)
+        if making.repeated:
+            return _told_again(making, row)
         observed = observed_at(at, making.moment)
         found = progress(making.view, row, making.moment, observed)
         doing = _Doing(making, row, found, _open(found), observed)
         if doing.step.hold:
-            return _decide(doing, refuse)
+            return _decide(doing, typed, note, refuse)
         if refuse:
             raise Refused(f"“{found.title}” is no hold; there is nothing to refuse.")
         return _do(doing, typed, note, reason)
@@ -117,6 +121,8 @@ def skip(logbook: Logbook, signer: Signer, *, point: str, reason: str) -> StepOu
         found = progress(making.view, row, making.moment)
         if found.step is None:
             raise Refused(f"{row.label} has no step left.")
+        if found.forbidden:
+            raise Refused(f"“{found.title}” can't be skipped now: {' '.join(found.forbidden)}")
         _demand_may_skip(making, found)
         body = StepSkipped(
             point=row.id,
@@ -143,6 +149,7 @@ def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str
         if state in {"planned", "awaiting review", "accepted"}:
             raise Refused(f"{row.label} is {state}; no step can be done again now.")
         wanted = demand_step(making.view, row, step)
+        demand_walked(making.view, row, wanted)
         body = StepReopened(point=row.id, step=step, reason=reason, reopened_by=signer.person)
         making.keep(body, about(making.view, row, row.id))
         return StepOutcome(True, (), (f"Work goes on from “{wanted.title}”.",))
@@ -174,20 +181,40 @@ def observed_at(text: str, now: Moment) -> datetime:
         if len(text.strip()) <= len("14:30:00"):
             text = f"{now.utc.astimezone(zone):%Y-%m-%d} {text.strip()}"
         found = datetime.fromisoformat(text.strip())
-    except ValueError:
+        when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
+    except (ValueError, OverflowError):
         fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")
         raise Faulty([fault]) from None
-    when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
     if when > now.utc + timedelta(minutes=1):
         raise Faulty([Fault("at", f"{text} lies in the future.", "Give when it was observed.")])
+    if when < now.utc - LONGEST_AGO:
+        raise Faulty([Fault("at", f"{text} is too long ago.", "Give when it was observed.")])
     return when
 
 
-def _told_again(making: Deed) -> StepOutcome:
-    """The outcome of a deed that was kept before: nothing is entered twice."""
-    kinds = {entry.header.kind for entry in making.repeated}
-    settled = not kinds.isdisjoint({StepDone.kind, HoldDecided.kind})
-    return StepOutcome(settled, (), ("This was kept before; nothing is entered twice.",))
+def _told_again(making: Deed, row: PointRow) -> StepOutcome:
+    """The outcome of a deed that was kept before: nothing is entered twice.
+
+    Raises Refused when that deed was another person's, or did something else.
+    """
+    bodies = [entry.body for entry in making.repeated]
+    others = {entry.header.actor for entry in making.repeated} - {making.signer.person}
+    if others or any(row.id not in body.about for body in bodies):
+        raise Refused(f"Deed {making.id} was another one.", "Give each deed an id of its own.")
+    kinds = [entry.header.kind for entry in making.repeated]
+    readings = [
+        ReadingTaken.model_validate(body.fact)
+        for kind, body in zip(kinds, bodies, strict=True)
+        if kind == ReadingTaken.kind
+    ]
+    settled = not {StepDone.kind, HoldDecided.kind}.isdisjoint(kinds)
+    return StepOutcome(
+        settled, _shown(readings), ("This was kept before; nothing is entered twice.",)
+    )
+
+
+def _shown(readings: Sequence[ReadingTaken]) -> tuple[ReadingShown, ...]:
+    return tuple(ReadingShown(reading, tuple(explain(reading))) for reading in readings)
 
 
 def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
@@ -199,11 +226,10 @@ def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> Step
     for reading in readings:
         others = (reading.id, reading.instrument)
         doing.making.keep(reading, about(view, row, reading.subject, *others))
-    shown = tuple(ReadingShown(reading, tuple(explain(reading))) for reading in readings)
     if any(reading.verdict.blocks for reading in readings):
-        return StepOutcome(False, shown, _blocked_lines(row, doing.step))
+        return StepOutcome(False, _shown(readings), _blocked_lines(row, doing.step))
     _keep_done(doing, got, readings, note)
-    return StepOutcome(True, shown, (f"{row.label}: “{doing.step.title}” is done.",))
+    return StepOutcome(True, _shown(readings), (f"{row.label}: “{doing.step.title}” is done.",))
 
 
 def _demand_air(doing: _Doing, got: Understood) -> None:
@@ -252,6 +278,7 @@ def _readings(doing: _Doing, got: Understood, reason: str) -> list[ReadingTaken]
 def _keep_done(doing: _Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
     entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
     flags = [window.sentence for window in doing.found.windows if not window.judged]
+    flags += _out_of_order(doing)
     flags += [
         f"{reading.check} {reading.stage}: {reading.verdict.word}"
         for reading in readings
@@ -272,6 +299,14 @@ def _keep_done(doing: _Doing, got: Understood, readings: list[ReadingTaken], not
     doing.making.keep(body, concerned)
 
 
+def _out_of_order(doing: _Doing) -> list[str]:
+    """Says so when a step was observed before one that it follows; times are never mended."""
+    rows = doing.making.view.all(StepRow, point=doing.row.id)
+    when = utc_text(doing.observed)
+    later = [row for row in rows if row.outcome in SETTLED and row.observed_at > when]
+    return [f"Observed before step {later[-1].step}, which it follows."] if later else []
+
+
 def _entered_readings(
     got: Understood, inputs: tuple[StepInput, ...], readings: list[ReadingTaken]
 ) -> dict[str, Entered]:
@@ -282,9 +317,12 @@ def _entered_readings(
     }
 
 
-def _decide(doing: _Doing, refuse: str) -> StepOutcome:
+def _decide(doing: _Doing, typed: Mapping[str, str], note: str, refuse: str) -> StepOutcome:
     making, row, step = doing.making, doing.row, doing.step
     person = making.signer.person
+    if refuse and not refuse.strip():
+        raise Faulty([Fault("refuse", "is empty.", "Say why the hold is refused.")])
+    understand(Asked(making.view, row, step, doing.observed), typed)
     demand_role(making.view, person, "technician", "reviewer")
     demand_second_person(making.view, person, row.id, "decide this hold")
     body = HoldDecided(
@@ -292,7 +330,7 @@ def _decide(doing: _Doing, refuse: str) -> StepOutcome:
         subject=doing.found.subject,
         step=step.id,
         outcome="refused" if refuse else "released",
-        reason=refuse,
+        reason="; ".join(text for text in (refuse.strip(), note.strip()) if text),
         decided_by=person,
         observed_at=utc_text(doing.observed),
         meaning=REFUSAL_MEANING if refuse else HOLD_MEANING,
