@@ -10,6 +10,7 @@ from typing import TypeVar
 from sqlmodel import SQLModel
 
 from gaugelog.errors import Refused
+from gaugelog.journal.canonical import nfc
 from gaugelog.ledger.buffer import Buffer
 from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.ledger.instruments import InstrumentRow
@@ -93,15 +94,25 @@ class View:
         raise Refused(f"Nothing is called {label}.", "Give the label of a point, lot or meter.")
 
     def _labelled(self, model: type[T], label: str) -> T | None:
+        wanted = nfc(label.strip())
+        found = self._like(model, wanted)
+        exact = [row for row in found if row.label == wanted]  # type: ignore[attr-defined]
+        fitting = exact or found
+        if len(fitting) > 1:
+            named = " or ".join(row.label for row in fitting)  # type: ignore[attr-defined]
+            raise Refused(f"{wanted} may be {named}.", "Give the label in its exact spelling.")
+        return fitting[0] if fitting else None
+
+    def _like(self, model: type[T], wanted: str) -> list[T]:
+        """Rows with this label, whatever the case; SQLite knows the case of ASCII letters only."""
+        if not wanted.isascii():
+            folded = wanted.casefold()
+            rows = self.all(model)
+            return [row for row in rows if row.label.casefold() == folded]  # type: ignore[attr-defined]
         query = f"{_select(model)} WHERE label = ? COLLATE NOCASE{_order(model)}"
         names = _columns(model)
-        rows = self._connection.execute(query, (label.strip(),)).fetchall()
-        found = [model(**dict(zip(names, row, strict=True))) for row in rows]
-        exact = [row for row in found if row.label == label.strip()]  # type: ignore[attr-defined]
-        if len(exact or found) > 1:
-            raise Refused(f"Several are called {label}.", "Give the label in its exact spelling.")
-        fitting = exact or found
-        return fitting[0] if fitting else None
+        found = self._connection.execute(query, (wanted,)).fetchall()
+        return [model(**dict(zip(names, row, strict=True))) for row in found]
 
 
 @cache

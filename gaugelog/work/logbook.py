@@ -5,9 +5,9 @@ from __future__ import annotations
 import tomllib
 from collections.abc import Callable, Iterable, Iterator
 from contextlib import contextmanager
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 from pathlib import Path
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, cast
 
 from gaugelog.errors import Refused, StorageTrouble
 from gaugelog.journal.append import append, begin
@@ -21,8 +21,10 @@ from gaugelog.journal.storage.sqlite import SqliteReader, SqliteStorage, SqliteW
 from gaugelog.ledger import fold, schema
 from gaugelog.ledger.base import FactBody
 from gaugelog.ledger.view import View
+from gaugelog.work.kept import fit_to_keep, text_to_keep
 
 if TYPE_CHECKING:
+    from gaugelog.journal.canonical import JsonValue
     from gaugelog.journal.storage.port import OnWait
 
 SIGN = "logbook.toml"
@@ -48,7 +50,10 @@ class Deed:
     def keep(
         self, body: FactBody, about: Iterable[str], *, evidence: Iterable[str] = (), sheet: str = ""
     ) -> None:
-        """Keep a fact of the trade; `about` names every subject concerned."""
+        """Keep a fact of the trade; `about` names every subject concerned.
+
+        Raises Faulty for text that can't be kept.
+        """
         content = body.model_dump(mode="json", exclude_none=True)
         self.keep_fact(
             Fact(
@@ -62,8 +67,9 @@ class Deed:
         )
 
     def keep_fact(self, fact: Fact) -> None:
-        """Keep a fact of the journal's own."""
-        self.facts.append(fact)
+        """Keep a fact of the journal's own. Raises Faulty for text that can't be kept."""
+        content = cast("dict[str, JsonValue]", fit_to_keep(fact.content))
+        self.facts.append(replace(fact, content=content))
 
 
 class Logbook:
@@ -92,7 +98,7 @@ class Logbook:
 
         Raises StorageTrouble when something is in the folder, or it can't be written.
         """
-        settings = {"id": new_id(), "name": name, "chain": new_id()}
+        settings = {"id": new_id(), "name": text_to_keep(name), "chain": new_id()}
         try:
             folder.mkdir(parents=True, exist_ok=True)
             if any(folder.iterdir()):

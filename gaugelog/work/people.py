@@ -28,7 +28,8 @@ from gaugelog.ledger.people import (
     Qualification,
     Role,
 )
-from gaugelog.rules.who import demand_role
+from gaugelog.rules.who import demand_role, roles_of
+from gaugelog.work.kept import text_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 
 _LONGEST = 200
@@ -92,6 +93,8 @@ def enrol(
     check_passphrase(passphrase)
     with logbook.deed(custodian) as deed:
         demand_role(deed.view, custodian.person, "custodian")
+        if "custodian" not in newcomer.roles:
+            _demand_custodian_left(deed, newcomer.person)
         fresh = _certified(logbook, authority, newcomer.person)
         again = deed.view.get(PersonRow, newcomer.person) is not None
         reason = "enrolled anew" if again else "enrolled"
@@ -107,13 +110,14 @@ def revoke(
 ) -> None:
     """Revoke every certificate of a person that is in force; with `erase_name` the sheet too.
 
-    Raises Refused when the person is unknown or the one who acts is no custodian.
+    Raises Refused when the person is unknown or the only custodian, or the one who acts is none.
     """
     if not reason.strip():
         raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the journal.")])
     with logbook.deed(custodian) as deed:
         demand_role(deed.view, custodian.person, "custodian")
         row = _known(deed, person)
+        _demand_custodian_left(deed, person)
         certificates = certificates_of(deed.writer)
         for issued in certificates.of_person(person):
             if not certificates.is_revoked(issued.fingerprint):
@@ -128,6 +132,18 @@ def _known(deed: Deed, person: str) -> PersonRow:
     if row is None:
         raise Refused(f"Nobody is enrolled as {person}.", "See `gaugelog person list`.")
     return row
+
+
+def _demand_custodian_left(deed: Deed, without: str) -> None:
+    """A logbook without a custodian could enrol and revoke nobody, for ever."""
+    custodians = {
+        row.id for row in deed.view.all(PersonRow) if "custodian" in roles_of(deed.view, row.id)
+    }
+    if custodians == {without}:
+        raise Refused(
+            f"{without} is the only custodian; without one nobody could be enrolled or revoked.",
+            "Enrol another custodian first.",
+        )
 
 
 def _erase(deed: Deed, row: PersonRow, reason: str) -> None:
@@ -151,8 +167,8 @@ def _save(keys: KeyFolder, key: UnlockedKey, passphrase: str) -> None:
 def _keep_person(deed: Deed, newcomer: Newcomer) -> None:
     sheet = IdentitySheet(
         person=newcomer.person,
-        name=newcomer.name,
-        initials=newcomer.initials,
+        name=text_to_keep(newcomer.name),
+        initials=text_to_keep(newcomer.initials),
         salt=secrets.token_hex(16),
     )
     digest = deed.writer.put_sheet(canonical(sheet.model_dump(mode="json")))
@@ -195,7 +211,8 @@ def _qualification_faults(text: str) -> Iterable[Fault]:
     if not until:
         return
     try:
-        date.fromisoformat(day)
+        if date.fromisoformat(day).isoformat() != day:
+            raise ValueError
     except ValueError:
         yield Fault("qualification", f"“{day}” is no date.", "Like: bonding until 2027-05-01.")
     if not name.strip():

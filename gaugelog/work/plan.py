@@ -6,7 +6,7 @@ from collections.abc import Iterable
 from dataclasses import dataclass
 from pathlib import Path
 
-from gaugelog.errors import Refused
+from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.plan import PlanFacts, load_plan
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
@@ -19,6 +19,7 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.fit import PlanFinding, check_plan
 from gaugelog.rules.progress import worst_state
 from gaugelog.rules.who import demand_role
+from gaugelog.work.kept import name_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 
 
@@ -46,8 +47,10 @@ def understand(logbook: Logbook, folder: Path) -> PlanFacts:
 def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
     """Keep a plan as the draft; an earlier draft is replaced. Returns what was loaded.
 
-    Raises Refused when the one who acts is no planner, or the plan is released already.
+    Raises Refused when the one who acts is no planner, or the plan is released already; Faulty
+    when a route names an input as no entry can.
     """
+    _demand_plain_names(facts)
     for data in facts.files.values():
         logbook.evidence.put(data)
     with logbook.deed(signer) as deed:
@@ -62,6 +65,23 @@ def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
         loaded = _loaded(facts, earlier)
         _keep(deed, facts, loaded)
     return loaded
+
+
+def _demand_plain_names(facts: PlanFacts) -> None:
+    # An entry keeps inputs by their names, and names in an entry are ASCII.
+    faults = [
+        Fault(
+            f"route {route.label}, step {step.id}, input {item.name}",
+            "has a name with letters beyond a to z.",
+            "Name it plainly; the prompt may be in any language.",
+        )
+        for route in facts.routes
+        for step in route.steps
+        for item in step.inputs
+        if not item.name.isascii()
+    ]
+    if faults:
+        raise Faulty(faults)
 
 
 def check(logbook: Logbook) -> list[PlanFinding]:
@@ -157,7 +177,7 @@ def _loaded(facts: PlanFacts, earlier: CampaignRow | None) -> PlanLoaded:
         circuits=tuple(circuit.id for circuit in facts.circuits),
         routes=tuple(route.id for route in facts.routes),
         replaces=earlier.id if earlier else None,
-        files=facts.digests,
+        files={name_to_keep(name): digest for name, digest in facts.digests.items()},
     )
 
 

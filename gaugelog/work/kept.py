@@ -1,0 +1,47 @@
+"""What people typed, made fit to be kept: text in Unicode normal form C, and text only."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping, Sequence
+from urllib.parse import quote
+
+from gaugelog.errors import Fault, Faulty
+from gaugelog.journal.canonical import JsonValue, nfc
+from gaugelog.visible import visible
+
+
+def fit_to_keep(value: JsonValue) -> JsonValue:
+    """The value with every text in normal form C, as the journal keeps it.
+
+    Some keyboards and file systems write `ü` as two characters, which look the same. Raises
+    Faulty for text that holds bytes of another encoding.
+    """
+    if isinstance(value, str):
+        return text_to_keep(value)
+    if isinstance(value, Mapping):
+        return {name: fit_to_keep(member) for name, member in value.items()}
+    if isinstance(value, Sequence):
+        return [fit_to_keep(member) for member in value]
+    return value
+
+
+def text_to_keep(text: str) -> str:
+    """One text in normal form C. Raises Faulty as `fit_to_keep` does."""
+    if text.isascii():
+        return text
+    try:
+        text.encode("utf-8")
+    except UnicodeEncodeError:
+        what = f"“{visible(text)}” holds bytes that are no UTF-8 text."
+        remedy = "Type it again, in a terminal that is set to UTF-8."
+        raise Faulty([Fault("what was typed", what, remedy)]) from None
+    return nfc(text)
+
+
+def name_to_keep(text: str) -> str:
+    """A name that people chose as a name in an entry, which is ASCII: the rest percent-encoded.
+
+    >>> name_to_keep("rüta.toml")
+    'r%C3%BCta.toml'
+    """
+    return text if text.isascii() else quote(text_to_keep(text), safe=" /")
