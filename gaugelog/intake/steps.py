@@ -12,6 +12,7 @@ from gaugelog.intake.units import unit_of
 from gaugelog.ledger.base import UNITS
 from gaugelog.ledger.routes import (
     AIR,
+    BOND_LINE,
     HUMIDITY,
     SURFACE,
     InputKind,
@@ -29,7 +30,7 @@ LONG = 4000
 _TIMES = ("s", "min", "h", "d")
 _Bound = Literal["not before", "within"]
 _TYPES: dict[str, tuple[str, ...]] = {
-    "quantity": (AIR, HUMIDITY, SURFACE),
+    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE),
     "consumable": get_args(ConsumableKind),
     "instrument": tuple(QUANTITY_UNITS),
 }
@@ -147,6 +148,7 @@ def _window(item: Fields) -> Window:
         bound=cast("_Bound", item.choice("bound", get_args(_Bound))),
         duration=item.quantity("duration", _TIMES, positive=True),
         after=item.text("after"),
+        cure_of=item.text("cure_of", needed=False),
     )
     item.done()
     return found

@@ -11,10 +11,12 @@ from gaugelog.errors import Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
 from gaugelog.intake.files import read_bytes, text_of
 from gaugelog.intake.tables import Columns, rows_of
+from gaugelog.intake.typed import number_of
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.stock import (
     ConsumableKind,
     ConsumableReceived,
+    CurePoint,
     GridData,
     LotReceived,
     PackReceived,
@@ -50,6 +52,7 @@ CONSUMABLE_COLUMNS = Columns(
     others=(
         "expires",
         "pot_life_min",
+        "cure_schedule",
         "temperature_min_degC",
         "temperature_max_degC",
         "humidity_min_percent",
@@ -218,7 +221,29 @@ def _consumable(row: Fields, new_id: NewId) -> ConsumableReceived:
         temperature_max=row.maybe_number("temperature_max_degC", "degC"),
         humidity_min=row.maybe_number("humidity_min_percent", "%RH"),
         humidity_max=row.maybe_number("humidity_max_percent", "%RH"),
+        cure=_cure(row),
         wire_resistance=row.maybe_number("wire_resistance_ohm_per_m", "ohm/m", positive=True),
     )
     _check_dates(row, found.received_on, found.expires)
     return found
+
+
+def _cure(row: Fields) -> tuple[CurePoint, ...]:
+    """`150=60; 175=30`: at 150 °C or above 60 min, at 175 °C or above 30 min."""
+    found: list[CurePoint] = []
+    for part in row.text("cure_schedule", needed=False).split(";"):
+        if not part.strip():
+            continue
+        hot, _, long = (piece.strip() for piece in part.partition("="))
+        celsius, minutes = number_of(hot), number_of(long)
+        if celsius is None or minutes is None or float(minutes) <= 0:
+            remedy = "Like: 150=60; 175=30, each °C=minutes."
+            row.fault("cure_schedule", f"“{part.strip()[:40]}” is no °C=minutes.", remedy)
+            return ()
+        found.append(
+            CurePoint(
+                temperature=Quantity(value=celsius, unit="degC"),
+                duration=Quantity(value=minutes, unit="min"),
+            )
+        )
+    return tuple(sorted(found, key=lambda point: point.temperature.si()))

@@ -14,6 +14,9 @@ StepSubject = Literal["place", "grid", "circuit"]
 InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
 SkipRule = Literal["never", "planner", "with reason"]
 
+BOND_LINE = "bond-line temperature"
+"""What a quantity stands for from which a cure time is taken."""
+
 AIR, HUMIDITY, SURFACE = "air temperature", "relative humidity", "surface temperature"
 """What a quantity may stand for: rules on dew point and adhesive windows look for these."""
 
@@ -25,6 +28,9 @@ class Window(Part):
     duration: Quantity
     after: str
     """Id of the earlier step."""
+    cure_of: str = ""
+    """Id of the step that entered the adhesive: its schedule at the bond-line temperature that
+    `after` entered rules where it asks for longer than `duration`."""
 
 
 class StepInput(Part):

@@ -63,6 +63,13 @@ class LotReceived(FactBody):
     """Digest of the certificate among the evidence, or empty."""
 
 
+class CurePoint(Part):
+    """One line of a cure schedule: at this temperature or above, so long."""
+
+    temperature: Quantity
+    duration: Quantity
+
+
 class ConsumableReceived(FactBody):
     """A lot of adhesive, coating, solder, cable or cleaner as received."""
 
@@ -81,6 +88,7 @@ class ConsumableReceived(FactBody):
     humidity_min: Quantity | None = None
     humidity_max: Quantity | None = None
     """The surroundings its data sheet allows while it is used."""
+    cure: tuple[CurePoint, ...] = ()
     wire_resistance: Quantity | None = None
     """Resistance of one conductor per metre, for a cable."""
 

@@ -17,6 +17,8 @@ from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow, RouteStep
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.view import View
+from gaugelog.physics.validity import OutOfDomain
+from gaugelog.rules.cure import cured
 from gaugelog.rules.windows import WindowFound, judge_window
 
 WORST_FIRST: tuple[GridState, ...] = (
@@ -130,7 +132,7 @@ def subject_label(view: View, subject: str) -> str:
 def _windows(
     view: View, point: PointRow, found: OpenStep, observed: datetime, now: Moment
 ) -> Iterator[WindowFound]:
-    titles = {step.id: step.title for step in route_for(view, point).steps}
+    steps = {step.id: step for step in route_for(view, point).steps}
     for window in found.step.windows:
         rows = [
             row
@@ -140,7 +142,13 @@ def _windows(
         own = [row for row in rows if row.subject == found.subject] or rows
         if own and own[-1].outcome != "skipped":
             latest = max(own, key=lambda row: row.observed_at)
-            yield judge_window(window, titles[window.after], latest, observed, now)
+            earlier = steps[window.after]
+            try:
+                fitted = cured(view, point.id, window, earlier, latest)
+            except OutOfDomain as error:
+                yield WindowFound(False, True, f"The bond line was too cold: {error.message}")
+            else:
+                yield judge_window(fitted, earlier.title, latest, observed, now)
 
 
 def _blocks(view: View, point: PointRow, windows: Sequence[WindowFound]) -> Iterator[str]:

@@ -19,7 +19,7 @@ def test_packs_of_one_lot_become_one_lot() -> None:
     assert [lot.label for lot in stock.lots] == ["L-3504"]
     assert [pack.label for pack in stock.lots[0].packs] == ["K7-03", "K7-04"]
     assert [len(pack.pieces) for pack in stock.lots[0].packs] == [5, 5]
-    assert len(stock.consumables) == 5
+    assert len(stock.consumables) == 6
 
 
 def test_every_piece_has_an_id_of_its_own() -> None:
@@ -84,11 +84,11 @@ def test_another_encoding_is_told_with_its_line(tmp_path: Path) -> None:
     file = _copy("consumables.csv", tmp_path)
     file.write_bytes(file.read_bytes() + "X-1,other,Bräu,name,2026-01-01,,,\n".encode("latin-1"))
     found = faults_of(lambda: load_stock([file], counter()))
-    assert found[0].where == "consumables.csv, line 7"
+    assert found[0].where == "consumables.csv, line 8"
 
 
 def test_a_byte_order_mark_and_windows_lines_do_no_harm(tmp_path: Path) -> None:
     file = tmp_path / "consumables.csv"
     text = (DEMO / "consumables.csv").read_text(encoding="utf-8").replace("\n", "\r\n")
     file.write_bytes(b"\xef\xbb\xbf" + text.encode())
-    assert len(load_stock([file], counter()).consumables) == 5
+    assert len(load_stock([file], counter()).consumables) == 6
