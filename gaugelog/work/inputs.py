@@ -100,7 +100,7 @@ def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Und
     if lot is None:
         raise _fault(f"no consumable lot is called “{text}”.", "See `gaugelog stock list`.")
     if item.type and lot.type != item.type:
-        raise _fault(f"{lot.label} is a {lot.type}, not a {item.type}.")
+        raise _fault(f"{lot.label} is a lot of {lot.type}, not of {item.type}.")
     if lot.expires and date.fromisoformat(lot.expires) < asked.day:
         raise _fault(f"{lot.label} expired on {lot.expires}.", "Take a lot that is in date.")
     found.entered[item.name] = Entered(typed=text, id=lot.id)

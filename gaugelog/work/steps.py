@@ -2,65 +2,35 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping, Sequence
-from dataclasses import dataclass
-from datetime import UTC, datetime, timedelta, timezone
+from collections.abc import Callable, Iterable, Mapping
+from functools import partial
 
-from gaugelog.errors import ExitCode, Fault, Faulty, Refused
-from gaugelog.journal.clock import Moment
+from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.journal.keys import Signer
-from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.progress import SETTLED
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
-from gaugelog.ledger.view import View
 from gaugelog.rules.air import air_troubles
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
-from gaugelog.rules.who import demand_role, demand_second_person, roles_of
+from gaugelog.rules.who import demand_role, roles_of
+from gaugelog.work.doing import (
+    Doing,
+    StepOutcome,
+    about,
+    observed_at,
+    point_row,
+    shown,
+    utc_text,
+)
+from gaugelog.work.holds import decide
 from gaugelog.work.inputs import Asked, Understood, understand
 from gaugelog.work.logbook import Deed, Logbook
-from gaugelog.work.readings import Observation, explain, reading_taken
+from gaugelog.work.readings import Observation, reading_taken
 
-HOLD_MEANING = "I looked at the work myself and let it go on."
-REFUSAL_MEANING = "I looked at the work myself and send it back."
-
-LONGEST_AGO = timedelta(days=3650)
-"""A time further back than this is a slip of the pen, and no job lasts that long."""
-
-
-@dataclass(frozen=True, slots=True)
-class ReadingShown:
-    """A reading that was kept, with its verdict in plain lines."""
-
-    reading: ReadingTaken
-    explained: tuple[str, ...]
-
-
-@dataclass(frozen=True, slots=True)
-class StepOutcome:
-    """What became of a step: whether it is settled, the readings kept, what to say."""
-
-    settled: bool
-    readings: tuple[ReadingShown, ...]
-    lines: tuple[str, ...]
-
-    @property
-    def exit_code(self) -> ExitCode:
-        """OK when the step is settled, TROUBLE when a reading keeps it open."""
-        return ExitCode.OK if self.settled else ExitCode.TROUBLE
-
-
-@dataclass(frozen=True, slots=True)
-class _Doing:
-    """A step in hand: the deed it is done in, the point, how far it is, when it was observed."""
-
-    making: Deed
-    row: PointRow
-    found: NextStep
-    step: RouteStep
-    observed: datetime
+__all__ = ["StepOutcome", "do", "next_step", "redo", "skip", "worklist"]
 
 
 def next_step(logbook: Logbook, point: str) -> NextStep:
@@ -101,9 +71,9 @@ def do(
             return _told_again(making, row)
         observed = observed_at(at, making.moment)
         found = progress(making.view, row, making.moment, observed)
-        doing = _Doing(making, row, found, _open(found), observed)
+        doing = Doing(making, row, found, _open(found), observed)
         if doing.step.hold:
-            return _decide(doing, typed, note, refuse)
+            return decide(doing, typed, note, refuse)
         if refuse:
             raise Refused(f"“{found.title}” is no hold; there is nothing to refuse.")
         return _do(doing, typed, note, reason)
@@ -155,43 +125,6 @@ def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str
         return StepOutcome(True, (), (f"Work goes on from “{wanted.title}”.",))
 
 
-def point_row(view: View, label: str) -> PointRow:
-    """The point with this label. Raises Refused when there is none."""
-    row = view.point(label)
-    if row is None:
-        raise Refused(f"There is no point {label}.", "See `gaugelog plan show`.")
-    return row
-
-
-def about(view: View, row: PointRow, subject: str, *others: str) -> list[str]:
-    """The ids a fact at a point concerns: the point, its grids, the subject, and others."""
-    grids = [grid.id for grid in view.all(GridRow, point=row.id)]
-    return [row.id, subject, *grids, *others]
-
-
-def observed_at(text: str, now: Moment) -> datetime:
-    """When something was observed, UTC: `14:30` or `2026-12-01 14:30` on this machine's clock.
-
-    Raises Faulty when it is no time or lies in the future.
-    """
-    if not text.strip():
-        return now.utc
-    zone = timezone(timedelta(minutes=now.offset_minutes))
-    try:
-        if len(text.strip()) <= len("14:30:00"):
-            text = f"{now.utc.astimezone(zone):%Y-%m-%d} {text.strip()}"
-        found = datetime.fromisoformat(text.strip())
-        when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
-    except (ValueError, OverflowError):
-        fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")
-        raise Faulty([fault]) from None
-    if when > now.utc + timedelta(minutes=1):
-        raise Faulty([Fault("at", f"{text} lies in the future.", "Give when it was observed.")])
-    if when < now.utc - LONGEST_AGO:
-        raise Faulty([Fault("at", f"{text} is too long ago.", "Give when it was observed.")])
-    return when
-
-
 def _told_again(making: Deed, row: PointRow) -> StepOutcome:
     """The outcome of a deed that was kept before: nothing is entered twice.
 
@@ -209,15 +142,11 @@ def _told_again(making: Deed, row: PointRow) -> StepOutcome:
     ]
     settled = not {StepDone.kind, HoldDecided.kind}.isdisjoint(kinds)
     return StepOutcome(
-        settled, _shown(readings), ("This was kept before; nothing is entered twice.",)
+        settled, shown(readings), ("This was kept before; nothing is entered twice.",)
     )
 
 
-def _shown(readings: Sequence[ReadingTaken]) -> tuple[ReadingShown, ...]:
-    return tuple(ReadingShown(reading, tuple(explain(reading))) for reading in readings)
-
-
-def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
+def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
     got = understand(Asked(view, row, doing.step, doing.observed), typed)
@@ -227,12 +156,12 @@ def _do(doing: _Doing, typed: Mapping[str, str], note: str, reason: str) -> Step
         others = (reading.id, reading.instrument)
         doing.making.keep(reading, about(view, row, reading.subject, *others))
     if any(reading.verdict.blocks for reading in readings):
-        return StepOutcome(False, _shown(readings), _blocked_lines(row, doing.step))
+        return StepOutcome(False, shown(readings), _blocked_lines(row, doing.step))
     _keep_done(doing, got, readings, note)
-    return StepOutcome(True, _shown(readings), (f"{row.label}: “{doing.step.title}” is done.",))
+    return StepOutcome(True, shown(readings), (f"{row.label}: “{doing.step.title}” is done.",))
 
 
-def _demand_air(doing: _Doing, got: Understood) -> None:
+def _demand_air(doing: Doing, got: Understood) -> None:
     quantities = {
         name: entry.quantity for name, entry in got.entered.items() if entry.quantity is not None
     }
@@ -252,7 +181,7 @@ def _blocked_lines(row: PointRow, step: RouteStep) -> tuple[str, ...]:
     )
 
 
-def _readings(doing: _Doing, got: Understood, reason: str) -> list[ReadingTaken]:
+def _readings(doing: Doing, got: Understood, reason: str) -> list[ReadingTaken]:
     if got.instrument is None:
         return []
     kinds = {item.name: item for item in doing.step.inputs}
@@ -269,13 +198,27 @@ def _readings(doing: _Doing, got: Understood, reason: str) -> list[ReadingTaken]
         doing.making.signer.person,
         reason,
     )
-    return [
-        reading_taken(seen, kinds[name].check, typed, got.instrument, gauge)
+    return _each(
+        partial(reading_taken, seen, kinds[name].check, typed, got.instrument, gauge)
         for name, typed in got.readings.items()
-    ]
+    )
 
 
-def _keep_done(doing: _Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
+def _each(takings: Iterable[Callable[[], ReadingTaken]]) -> list[ReadingTaken]:
+    """Every reading; what is wrong with several of them is named at once."""
+    found: list[ReadingTaken] = []
+    faults: list[Fault] = []
+    for take in takings:
+        try:
+            found.append(take())
+        except Faulty as error:
+            faults += error.faults
+    if faults:
+        raise Faulty(faults)
+    return found
+
+
+def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
     entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
     flags = [window.sentence for window in doing.found.windows if not window.judged]
     flags += _out_of_order(doing)
@@ -299,7 +242,7 @@ def _keep_done(doing: _Doing, got: Understood, readings: list[ReadingTaken], not
     doing.making.keep(body, concerned)
 
 
-def _out_of_order(doing: _Doing) -> list[str]:
+def _out_of_order(doing: Doing) -> list[str]:
     """Says so when a step was observed before one that it follows; times are never mended."""
     rows = doing.making.view.all(StepRow, point=doing.row.id)
     when = utc_text(doing.observed)
@@ -315,29 +258,6 @@ def _entered_readings(
         name: Entered(typed=reading.typed, id=reading.id)
         for name, reading in zip(names, readings, strict=True)
     }
-
-
-def _decide(doing: _Doing, typed: Mapping[str, str], note: str, refuse: str) -> StepOutcome:
-    making, row, step = doing.making, doing.row, doing.step
-    person = making.signer.person
-    if refuse and not refuse.strip():
-        raise Faulty([Fault("refuse", "is empty.", "Say why the hold is refused.")])
-    understand(Asked(making.view, row, step, doing.observed), typed)
-    demand_role(making.view, person, "technician", "reviewer")
-    demand_second_person(making.view, person, row.id, "decide this hold")
-    body = HoldDecided(
-        point=row.id,
-        subject=doing.found.subject,
-        step=step.id,
-        outcome="refused" if refuse else "released",
-        reason="; ".join(text for text in (refuse.strip(), note.strip()) if text),
-        decided_by=person,
-        observed_at=utc_text(doing.observed),
-        meaning=REFUSAL_MEANING if refuse else HOLD_MEANING,
-    )
-    making.keep(body, about(making.view, row, doing.found.subject))
-    word = f"refused: {refuse}" if refuse else "released"
-    return StepOutcome(True, (), (f"{row.label}: hold “{step.title}” is {word}.",))
 
 
 def _open(found: NextStep) -> RouteStep:
@@ -359,8 +279,3 @@ def _demand_may_skip(making: Deed, found: NextStep) -> None:
     if rule == "planner" and "planner" not in roles_of(making.view, making.signer.person):
         raise Refused(f"“{found.title}” can only be skipped by a planner.")
     demand_role(making.view, making.signer.person, "technician", "planner")
-
-
-def utc_text(when: datetime) -> str:
-    """A UTC time as facts carry it, to the second."""
-    return f"{when:%Y-%m-%dT%H:%M:%SZ}"

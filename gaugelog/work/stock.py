@@ -7,7 +7,7 @@ from typing import Protocol
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.journal.keys import Signer
-from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, LotReceived, LotRow
+from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.who import demand_role
 from gaugelog.work.logbook import Deed, Logbook
@@ -59,6 +59,8 @@ def _doubles(view: View, facts: StockFacts) -> Iterable[Fault]:
                 "was received before.",
                 "Receive a lot once, with all its packs.",
             )
+        else:
+            yield from _double_packs(view, lot)
     consumables = {row.label.casefold() for row in view.all(ConsumableRow)}
     for consumable in facts.consumables:
         if consumable.label.casefold() in consumables:
@@ -66,4 +68,16 @@ def _doubles(view: View, facts: StockFacts) -> Iterable[Fault]:
                 f"lot {consumable.label}",
                 "was received before.",
                 "Give a new delivery its own label.",
+            )
+
+
+def _double_packs(view: View, lot: LotReceived) -> Iterable[Fault]:
+    """Two gauges of one label could never be told apart."""
+    packs = {row.label.rpartition("/")[0].casefold() for row in view.all(GaugeRow)}
+    for pack in lot.packs:
+        if pack.label.casefold() in packs:
+            yield Fault(
+                f"lot {lot.label}, pack {pack.label}",
+                "has the label of a pack that is in stock.",
+                "Give the pack a label of its own, with the lot's before it.",
             )

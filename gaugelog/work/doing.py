@@ -1,0 +1,100 @@
+"""A step in hand: the point and when it was observed; and what became of it."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from datetime import UTC, datetime, timedelta, timezone
+
+from gaugelog.errors import ExitCode, Fault, Faulty, Refused
+from gaugelog.journal.clock import Moment
+from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.readings import ReadingTaken
+from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.view import View
+from gaugelog.rules.progress import NextStep
+from gaugelog.work.logbook import Deed
+from gaugelog.work.readings import explain
+
+LONGEST_AGO = timedelta(days=3650)
+"""A time further back than this is a slip of the pen, and no job lasts that long."""
+
+
+@dataclass(frozen=True, slots=True)
+class ReadingShown:
+    """A reading that was kept, with its verdict in plain lines."""
+
+    reading: ReadingTaken
+    explained: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class StepOutcome:
+    """What became of a step: whether it is settled, the readings kept, what to say."""
+
+    settled: bool
+    readings: tuple[ReadingShown, ...]
+    lines: tuple[str, ...]
+
+    @property
+    def exit_code(self) -> ExitCode:
+        """OK when the step is settled, TROUBLE when a reading keeps it open."""
+        return ExitCode.OK if self.settled else ExitCode.TROUBLE
+
+
+def shown(readings: Sequence[ReadingTaken]) -> tuple[ReadingShown, ...]:
+    """Readings with their verdicts in plain lines."""
+    return tuple(ReadingShown(reading, tuple(explain(reading))) for reading in readings)
+
+
+@dataclass(frozen=True, slots=True)
+class Doing:
+    """A step in hand: the deed it is done in, the point, how far it is, when it was observed."""
+
+    making: Deed
+    row: PointRow
+    found: NextStep
+    step: RouteStep
+    observed: datetime
+
+
+def point_row(view: View, label: str) -> PointRow:
+    """The point with this label. Raises Refused when there is none."""
+    row = view.point(label)
+    if row is None:
+        raise Refused(f"There is no point {label}.", "See `gaugelog plan show`.")
+    return row
+
+
+def about(view: View, row: PointRow, subject: str, *others: str) -> list[str]:
+    """The ids a fact at a point concerns: the point, its grids, the subject, and others."""
+    grids = [grid.id for grid in view.all(GridRow, point=row.id)]
+    return [row.id, subject, *grids, *others]
+
+
+def observed_at(text: str, now: Moment) -> datetime:
+    """When something was observed, UTC: `14:30` or `2026-12-01 14:30` on this machine's clock.
+
+    Raises Faulty when it is no time or lies in the future.
+    """
+    if not text.strip():
+        return now.utc
+    zone = timezone(timedelta(minutes=now.offset_minutes))
+    try:
+        if len(text.strip()) <= len("14:30:00"):
+            text = f"{now.utc.astimezone(zone):%Y-%m-%d} {text.strip()}"
+        found = datetime.fromisoformat(text.strip())
+        when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
+    except (ValueError, OverflowError):
+        fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")
+        raise Faulty([fault]) from None
+    if when > now.utc + timedelta(minutes=1):
+        raise Faulty([Fault("at", f"{text} lies in the future.", "Give when it was observed.")])
+    if when < now.utc - LONGEST_AGO:
+        raise Faulty([Fault("at", f"{text} is too long ago.", "Give when it was observed.")])
+    return when
+
+
+def utc_text(when: datetime) -> str:
+    """A UTC time as facts carry it, to the second."""
+    return f"{when:%Y-%m-%dT%H:%M:%SZ}"

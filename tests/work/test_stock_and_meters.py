@@ -1,0 +1,149 @@
+"""Stock is received once, meters are calibrated anew under their own id; who uses which is held."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import pytest
+
+from gaugelog.errors import Faulty, Refused
+from gaugelog.intake.instruments import load_instruments
+from gaugelog.intake.stock import load_stock
+from gaugelog.journal.ids import new_id
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
+from gaugelog.work import instruments, stock
+from tests.work.job import DEMO, Job
+from tests.work.walking import typed_here, walk_to
+
+
+@dataclass(frozen=True)
+class Delivery:
+    """What was received."""
+
+    lots: tuple[LotReceived, ...] = ()
+    consumables: tuple[ConsumableReceived, ...] = ()
+
+
+def _lot(label: str, pack: str) -> LotReceived:
+    lot = load_stock([DEMO / "lots.csv"], new_id=new_id).lots[0]
+    packs = (lot.packs[0].model_copy(update={"label": pack}),)
+    return lot.model_copy(update={"label": label, "packs": packs})
+
+
+def _consumable(label: str, **changed: object) -> ConsumableReceived:
+    received = load_stock([DEMO / "consumables.csv"], new_id=new_id).consumables
+    adhesive = next(each for each in received if each.type == "adhesive")
+    return adhesive.model_copy(update={"label": label, "id": new_id(), **changed})
+
+
+def _faults(caught: pytest.ExceptionInfo[Faulty]) -> str:
+    return "\n".join(str(fault) for fault in caught.value.faults)
+
+
+def test_what_was_received_before_is_told_all_at_once(job: Job) -> None:
+    again = load_stock([DEMO / "lots.csv", DEMO / "consumables.csv"], new_id=new_id)
+    with pytest.raises(Faulty) as caught:
+        stock.receive(job.book, job.keys["c.ward"], again)
+    assert len(again.lots) + len(again.consumables) == len(caught.value.faults)
+
+
+def test_one_that_is_there_keeps_the_whole_delivery_out(job: Job) -> None:
+    delivery = Delivery((_lot("L-9", "P9"), _lot("l-3504", "P8")))
+    with pytest.raises(Faulty):
+        stock.receive(job.book, job.keys["c.ward"], delivery)
+    with job.book.reading() as view:
+        assert ["L-3504"] == [row.label for row in view.all(LotRow)]
+
+
+def test_two_packs_of_one_label_are_refused(job: Job) -> None:
+    with pytest.raises(Faulty) as caught:
+        stock.receive(job.book, job.keys["c.ward"], Delivery((_lot("L-9", "k7-03"),)))
+    assert "lot L-9, pack k7-03: has the label of a pack that is in stock" in _faults(caught)
+
+
+def test_a_gauge_of_another_lot_than_planned_is_refused(job: Job) -> None:
+    stock.receive(job.book, job.keys["c.ward"], Delivery((_lot("L-9", "P9"),)))
+    walk_to(job, "gauge")
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", {**typed_here(job)[1], "gauge": "P9/1"})
+    assert "P9/1 is not of lot L-3504, which is planned here" in _faults(caught)
+
+
+@pytest.mark.parametrize(
+    ("label", "changed", "told"),
+    [
+        ("AD-1", {"expires": "2026-11-16"}, "AD-1 expired on 2026-11-16"),
+        ("CT-088", {}, "CT-088 is a lot of coating, not of adhesive"),
+        ("AD-99", {}, "no consumable lot is called “AD-99”"),
+    ],
+)
+def test_a_consumable_that_does_not_fit_is_refused(
+    job: Job, label: str, changed: dict[str, object], told: str
+) -> None:
+    if changed:
+        new = _consumable(label, **changed)
+        stock.receive(job.book, job.keys["c.ward"], Delivery((), (new,)))
+    walk_to(job, "bond")
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", {**typed_here(job)[1], "adhesive": label})
+    assert told in _faults(caught)
+
+
+def test_a_lot_may_be_used_on_its_last_day(job: Job) -> None:
+    new = _consumable("AD-2", expires="2026-11-17")
+    stock.receive(job.book, job.keys["c.ward"], Delivery((), (new,)))
+    walk_to(job, "bond")
+    assert job.do("t.okoro", {**typed_here(job)[1], "adhesive": "ad-2"}).settled
+
+
+def _meter(**changed: object) -> InstrumentAdded:
+    meters = load_instruments(DEMO / "instruments.toml", new_id=new_id)
+    meter = next(each for each in meters if each.label == "RM-2")
+    return meter.model_copy(update={"id": new_id(), **changed})
+
+
+def _meters(job: Job) -> dict[str, str]:
+    with job.book.reading() as view:
+        return {row.label: row.id for row in view.all(InstrumentRow)}
+
+
+def test_a_meter_calibrated_anew_keeps_its_id(job: Job) -> None:
+    before = _meters(job)
+    anew = _meter(label="rm-2", calibrated_on="2026-11-16", due="2027-11-16")
+    instruments.add(job.book, job.keys["c.ward"], [anew])
+    assert set(before.values()) == set(_meters(job).values())
+    walk_to(job, "gauge")
+    job.clock.advance(300 * 86400)  # beyond the first certificate's due date
+    assert job.do("t.okoro", typed_here(job)[1]).settled
+
+
+@pytest.mark.parametrize(
+    ("changed", "told"),
+    [
+        ({"due": "2026-11-16"}, "was due for calibration on 2026-11-16"),
+        ({"calibrated_on": "2026-11-18"}, "was calibrated only on 2026-11-18"),
+    ],
+)
+def test_a_meter_outside_its_certificate_is_refused(
+    job: Job, changed: dict[str, object], told: str
+) -> None:
+    instruments.add(job.book, job.keys["c.ward"], [_meter(**changed)])
+    walk_to(job, "gauge")
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", typed_here(job)[1])
+    assert told in _faults(caught)
+
+
+def test_a_value_beyond_every_range_of_the_meter_is_refused(job: Job) -> None:
+    walk_to(job, "insulation")
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", {**typed_here(job)[1], "insulation": ">50 GΩ"})
+    assert "has no range that reaches 50 GΩ" in _faults(caught)
+
+
+def test_a_reviewer_alone_receives_nothing_and_adds_no_meter(job: Job) -> None:
+    with pytest.raises(Refused, match="role planner or technician or custodian"):
+        stock.receive(job.book, job.keys["q.reyes"], Delivery((_lot("L-9", "P9"),)))
+    with pytest.raises(Refused, match="role planner or technician or custodian"):
+        instruments.add(job.book, job.keys["q.reyes"], [_meter()])
