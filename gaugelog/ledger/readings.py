@@ -58,6 +58,8 @@ class ReadingTaken(FactBody):
     typed: str
     qualifier: Qualifier
     value: Quantity | None = None
+    gauge: Id | None = None
+    """The piece it was taken on; none in entries from before this was kept."""
     instrument: Id
     range: str
     test_voltage: Quantity | None = None

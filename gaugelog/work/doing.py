@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from datetime import UTC, datetime, timedelta, timezone
+from datetime import UTC, date, datetime, timedelta, timezone
 
 from gaugelog.errors import ExitCode, Fault, Faulty, Refused
 from gaugelog.journal.clock import Moment
@@ -56,6 +56,11 @@ class Doing:
     found: NextStep
     step: RouteStep
     observed: datetime
+
+    @property
+    def day(self) -> date:
+        """The calendar day of it where the work is done."""
+        return (self.observed + timedelta(minutes=self.making.moment.offset_minutes)).date()
 
 
 def point_row(view: View, label: str) -> PointRow:

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
-from datetime import date, datetime
+from datetime import date
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
@@ -31,18 +31,13 @@ class Understood:
 
 @dataclass(frozen=True, slots=True)
 class Asked:
-    """What inputs are understood against: the view, the point, the step, when it was observed."""
+    """What inputs are understood against: the view, the point, the step, the day of it."""
 
     view: View
     point: PointRow
     step: RouteStep
-    observed: datetime
-    """UTC."""
-
-    @property
-    def day(self) -> date:
-        """The calendar day, for expiry and due dates."""
-        return self.observed.date()
+    day: date
+    """The calendar day where the work is done: lots expire and meters fall due at its end."""
 
 
 def understand(asked: Asked, typed: Mapping[str, str]) -> Understood:

@@ -73,6 +73,7 @@ def reading_taken(
         typed=typed.typed,
         qualifier=typed.qualifier,
         value=typed.quantity,
+        gauge=gauge,
         instrument=instrument.id,
         range=span.range.name,
         test_voltage=span.range.test_voltage,

@@ -149,11 +149,11 @@ def _told_again(making: Deed, row: PointRow) -> StepOutcome:
 def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
-    got = understand(Asked(view, row, doing.step, doing.observed), typed)
+    got = understand(Asked(view, row, doing.step, doing.day), typed)
     _demand_air(doing, got)
     readings = _readings(doing, got, reason)
     for reading in readings:
-        others = (reading.id, reading.instrument)
+        others = [each for each in (reading.id, reading.gauge, reading.instrument) if each]
         doing.making.keep(reading, about(view, row, reading.subject, *others))
     if any(reading.verdict.blocks for reading in readings):
         return StepOutcome(False, shown(readings), _blocked_lines(row, doing.step))
