@@ -10,11 +10,12 @@ from pathlib import Path
 import pytest
 
 from gaugelog.commands import run
+from gaugelog.commands.calc.each import write_each
 from gaugelog.commands.calc.engine import parse_pairs, work_out
 from gaugelog.commands.calc.sources import source_of
 from gaugelog.commands.calc.subjects import SUBJECTS
 from gaugelog.errors import Faulty
-from gaugelog.physics import leads
+from gaugelog.physics import leads, vessels
 
 
 def _figures(subject: str, **typed: str) -> dict[str, str]:
@@ -102,3 +103,102 @@ def test_each_subject_lists_its_arguments(name: str, capsys: pytest.CaptureFixtu
 def test_an_unknown_subject_lists_those_there_are(capsys: pytest.CaptureFixture[str]) -> None:
     assert run(["calc", "astrology"]) == 3
     assert "bridge" in capsys.readouterr().err
+
+
+def test_only_inputs_given_or_taken_by_default_are_told(
+    capsys: pytest.CaptureFixture[str],
+) -> None:
+    assert run(["calc", "leakage", "permitted=5 ue"]) == 0
+    told = capsys.readouterr().out
+    assert "later" not in told
+    assert "resistance" in told
+    assert "by leakage.insulation_needed: " in told
+
+
+def test_rows_of_different_kinds_stand_in_one_table(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    file = tmp_path / "rows.csv"
+    file.write_text(
+        "what,load,area,modulus,distance,width,depth\n"
+        "bar,10 kN,100 mm2,200 GPa,,,\n"
+        "cantilever,10 N,,200 GPa,100 mm,20 mm,5 mm\n",
+        encoding="utf-8",
+    )
+    assert run(["calc", "load", "--each", str(file)]) == 0
+    rows = list(csv.DictReader(io.StringIO(capsys.readouterr().out)))
+    assert ["500 µm/m", ""] == [row["strain along the bar"] for row in rows]
+    assert ["", "60 µm/m"] == [row["strain along the beam"] for row in rows]
+
+
+def test_what_no_column_gives_is_given_for_all_rows_and_for_empty_cells(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    file = tmp_path / "rows.csv"
+    file.write_text("insulation,resistance\n10 Mohm,\n10 Mohm,120 ohm\n", encoding="utf-8")
+    assert run(["calc", "leakage", "resistance=350 ohm", "--each", str(file)]) == 0
+    rows = list(csv.DictReader(io.StringIO(capsys.readouterr().out)))
+    assert ["-17.499 µm/m", "-5.9999 µm/m"] == [row["apparent strain"] for row in rows]
+
+
+@pytest.mark.parametrize(
+    "content", [b"", b"insulation\n", b"colour\nred\n", b"insulation;later\n", b"\xff\xfe", b'"\n']
+)
+def test_a_table_that_is_none_is_told(
+    content: bytes, tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    file = tmp_path / "rows.csv"
+    file.write_bytes(content)
+    assert run(["calc", "leakage", "--each", str(file)]) == 3
+    assert "rows.csv" in capsys.readouterr().err
+
+
+def test_a_table_that_is_not_there_is_told(capsys: pytest.CaptureFixture[str]) -> None:
+    assert run(["calc", "leakage", "--each", "nowhere.csv"]) == 3
+    assert "can't be read" in capsys.readouterr().err
+
+
+def test_a_cell_that_starts_like_a_formula_is_guarded() -> None:
+    found = [
+        work_out(
+            SUBJECTS["conformity"],
+            {"value": "1", "uncertainty": "0.1", "at_least": "0", "qualifier": "="},
+        )
+    ]
+    out = io.StringIO()
+    write_each(found, out)
+    assert "'=" in out.getvalue()
+
+
+def test_a_kind_lists_its_own_arguments(capsys: pytest.CaptureFixture[str]) -> None:
+    assert run(["calc", "load", "what=shear pair"]) == 0
+    told = capsys.readouterr().out
+    assert "plus" in told
+    assert "arm" not in told.replace("armed", "")
+    assert run(["calc", "budget", "of=circuit"]) == 0
+    assert "What is uncertain is typed VALUE ± WIDTH" in capsys.readouterr().out
+
+
+def test_a_word_is_taken_whatever_its_case() -> None:
+    assert (
+        "2 mV/V"
+        in _figures("load", what="CELL", arrangement="Full  bending", strain="1000 ue").values()
+    )
+
+
+@pytest.mark.parametrize("name", list(SUBJECTS))
+def test_every_argument_has_help_and_an_example(name: str) -> None:
+    for argument in SUBJECTS[name].arguments:
+        assert argument.help
+        assert argument.like, argument.name
+
+
+def test_a_source_that_names_siblings_tells_theirs() -> None:
+    told = source_of(vessels.pressure_from_hoop)
+    assert "Gere, Mechanics of Materials, thin-walled pressure" in told
+    assert "Hooke's law in three dimensions" in told
+
+
+def test_every_subject_stands_in_the_readme() -> None:
+    readme = (Path(__file__).parents[2] / "README.md").read_text(encoding="utf-8")
+    assert [] == [name for name in SUBJECTS if f"`{name}`" not in readme]

@@ -29,7 +29,9 @@ _OF_STRAIN = (
 _OF_RATIO = "(?:%|percent|ppm|m/m|mm/mm)"
 
 
-RESISTANCE = Dimension("resistance", "ohm", "ohm", "Ω", "350 ohm")
+RESISTANCE = Dimension(
+    "resistance", "ohm", "ohm", "Ω", "350 ohm", (("megaohm", "MΩ"), ("gigaohm", "GΩ"))
+)
 INSULATION = Dimension(
     "insulation", "ohm", "megaohm", "MΩ", "12.5 Gohm", (("gigaohm", "GΩ"), ("teraohm", "TΩ"))
 )

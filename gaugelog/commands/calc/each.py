@@ -45,15 +45,17 @@ def _rows(
         yield row.where(""), {name: cell for name, cell in cells.items() if cell}
 
 
-def write_each(found: Sequence[Worked], out: TextIO = sys.stdout) -> None:
-    """Write inputs as understood and results as CSV; text that starts like a formula is guarded.
+def write_each(found: Sequence[Worked], out: TextIO | None = None) -> None:
+    """Write inputs as understood and results as CSV, to stdout where no `out` is given.
+
+    Text that starts like a formula is guarded.
 
     A row that lacks what another has (an input left out, a figure of another kind) leaves the
     cell empty.
     """
     inputs = dict.fromkeys(name for worked in found for name in worked.inputs)
     figures = dict.fromkeys(figure.name for worked in found for figure in worked.answer.figures)
-    writer = csv.writer(out, lineterminator="\r\n")
+    writer = csv.writer(out or sys.stdout, lineterminator="\r\n")
     writer.writerow([_guarded(name) for name in [*inputs, *figures, "warnings"]])
     for worked in found:
         shown = {figure.name: figure.shown for figure in worked.answer.figures}

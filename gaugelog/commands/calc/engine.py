@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 import re
+import warnings
 from collections.abc import Iterator, Mapping, Sequence
 from typing import Any
 
@@ -60,17 +61,24 @@ def _given(argument: Argument, typed: Mapping[str, str]) -> tuple[Any, str]:
 
 def _computed(subject: Subject, values: Values, where: str) -> Answer:
     try:
-        answer = subject.compute(values)
+        answer = _without_overflow(subject, values)
     except Faulty as error:
         raise Faulty([_placed(fault, where) for fault in error.faults], _NOTHING) from error
     except GaugelogError as error:
         raise Faulty([_fault_of(error, subject, where)], _NOTHING) from error
-    except (ArithmeticError, ValueError) as error:
+    except (ArithmeticError, ValueError, RuntimeWarning) as error:
         raise Faulty([_beyond(subject, where)], _NOTHING) from error
     for figure in answer.figures:
         if isinstance(figure.value, float) and not math.isfinite(figure.value):
             raise Faulty([_beyond(subject, where)], _NOTHING)
     return answer
+
+
+def _without_overflow(subject: Subject, values: Values) -> Answer:
+    """Compute; arrays that overflow raise as plain numbers do, where they would only warn."""
+    with warnings.catch_warnings():
+        warnings.simplefilter("error", RuntimeWarning)
+        return subject.compute(values)
 
 
 def _placed(fault: Fault, where: str) -> Fault:

@@ -114,10 +114,9 @@ def _ohm(value: float) -> str:
 
 def _diagnose(sheet: Sheet, values: Values, circuit: Circuit, plugged: bool) -> None:
     _refuse_strangers(values, circuit, plugged)
-    network = pin_network.pin_network(circuit, plugged=plugged)
     readings = [_measured(sheet, values, each) for each in values["readings"]]
     for each in readings:
-        expected = sheet.by(resistance_between, network, *each.between)
+        expected = _expected(sheet, circuit, each.between, plugged)
         sheet.put(f"{' to '.join(each.between)} should read", _ohm(expected))
     found = sheet.by(
         pins.diagnose,
@@ -128,17 +127,25 @@ def _diagnose(sheet: Sheet, values: Values, circuit: Circuit, plugged: bool) -> 
     )
     for number, answer in enumerate(found.answers, start=1):
         behind = answer.misfit - found.answers[0].misfit > RIVAL
-        _answer(sheet, f"answer {number}{', far behind' if behind else ''}", answer)
+        _answer(sheet, f"answer {number}", answer, " (far behind)" if behind else "")
         if behind:
             break
     _next(sheet, found)
 
 
-def _answer(sheet: Sheet, name: str, answer: pins.Answer) -> None:
+def _expected(sheet: Sheet, circuit: Circuit, between: tuple[str, str], plugged: bool) -> float:
+    """What a sound circuit shows there; bare metal and shield lead nowhere."""
+    if {ARTICLE, SHIELD} & set(between):
+        return float("inf")
+    network = pin_network.pin_network(circuit, plugged=plugged)
+    return float(sheet.by(resistance_between, network, *between))
+
+
+def _answer(sheet: Sheet, name: str, answer: pins.Answer, behind: str) -> None:
     kinds = dict.fromkeys(defect.kind for defect in answer.defects)
-    sheet.put(name, answer.sentence)
-    sheet.put(f"{name}, that is", "; or ".join(_MEANINGS[kind] for kind in kinds))
-    sheet.put(f"{name}, misfit", f"{answer.misfit:.3g}")
+    sheet.put(name, answer.sentence + behind)
+    sheet.put(f"{name} means", "; or ".join(_MEANINGS[kind] for kind in kinds))
+    sheet.put(f"{name} misfit", f"{answer.misfit:.3g}")
 
 
 def _next(sheet: Sheet, found: pins.Diagnosis) -> None:
