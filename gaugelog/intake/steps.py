@@ -12,8 +12,11 @@ from gaugelog.intake.units import unit_of
 from gaugelog.ledger.base import UNITS
 from gaugelog.ledger.routes import (
     AIR,
+    AXIS,
     BOND_LINE,
     HUMIDITY,
+    PLACE_X,
+    PLACE_Y,
     SURFACE,
     InputKind,
     RouteStep,
@@ -30,7 +33,7 @@ LONG = 4000
 _TIMES = ("s", "min", "h", "d")
 _Bound = Literal["not before", "within"]
 _TYPES: dict[str, tuple[str, ...]] = {
-    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE),
+    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE, PLACE_X, PLACE_Y, AXIS),
     "consumable": get_args(ConsumableKind),
     "instrument": tuple(QUANTITY_UNITS),
 }

@@ -17,6 +17,9 @@ SkipRule = Literal["never", "planner", "with reason"]
 BOND_LINE = "bond-line temperature"
 """What a quantity stands for from which a cure time is taken."""
 
+PLACE_X, PLACE_Y, AXIS = "position x", "position y", "axis direction"
+"""What a quantity stands for that is held against the planned place."""
+
 AIR, HUMIDITY, SURFACE = "air temperature", "relative humidity", "surface temperature"
 """What a quantity may stand for: rules on dew point and adhesive windows look for these."""
 

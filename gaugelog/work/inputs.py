@@ -8,6 +8,7 @@ from datetime import date
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
+from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.routes import RouteStep, StepInput
@@ -27,6 +28,15 @@ class Understood:
     readings: dict[str, TypedReading] = field(default_factory=dict)
     instrument: InstrumentAdded | None = None
     consumables: list[ConsumableReceived] = field(default_factory=list)
+
+    @property
+    def quantities(self) -> dict[str, Quantity]:
+        """The quantities among the inputs, by the name of their input."""
+        return {
+            name: entry.quantity
+            for name, entry in self.entered.items()
+            if entry.quantity is not None
+        }
 
 
 @dataclass(frozen=True, slots=True)

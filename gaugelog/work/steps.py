@@ -7,12 +7,13 @@ from functools import partial
 
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.journal.keys import Signer
-from gaugelog.ledger.points import PointRow
+from gaugelog.ledger.points import PointPlanned, PointRow
 from gaugelog.ledger.progress import SETTLED
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
 from gaugelog.rules.air import air_troubles
+from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
 from gaugelog.rules.who import demand_role, roles_of
@@ -151,6 +152,7 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
     demand_role(view, doing.making.signer.person, "technician")
     got = understand(Asked(view, row, doing.step, doing.day), typed)
     _demand_air(doing, got)
+    _demand_place(doing, got)
     readings = _readings(doing, got, reason)
     for reading in readings:
         others = [each for each in (reading.id, reading.gauge, reading.instrument) if each]
@@ -162,16 +164,30 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
 
 
 def _demand_air(doing: Doing, got: Understood) -> None:
-    quantities = {
-        name: entry.quantity for name, entry in got.entered.items() if entry.quantity is not None
-    }
-    troubles = air_troubles(doing.step, quantities, got.consumables)
+    troubles = air_troubles(doing.step, got.quantities, got.consumables)
     if troubles:
         raise Refused(
             f"{doing.row.label}: “{doing.step.title}” can't be done in this air: "
             f"{' '.join(troubles)}",
             "Warm the surface, dry the air or wait; then measure again.",
         )
+
+
+def _demand_place(doing: Doing, got: Understood) -> None:
+    planned = PointPlanned.model_validate_json(doing.row.data)
+    troubles = placed_troubles(doing.step, got.quantities, planned)
+    if troubles:
+        raise Refused(
+            f"{doing.row.label}: the layout is out of tolerance. {' '.join(troubles)}",
+            "Lay it out again, or have the planner change the place or its tolerance.",
+        )
+
+
+def _axis_flag(doing: Doing, got: Understood) -> list[str]:
+    planned = PointPlanned.model_validate_json(doing.row.data)
+    poisson = poisson_at(doing.making.view, planned)
+    effect = axis_effect(doing.step, got.quantities, planned, poisson)
+    return [effect] if effect else []
 
 
 def _blocked_lines(row: PointRow, step: RouteStep) -> tuple[str, ...]:
@@ -222,6 +238,7 @@ def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note
     entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
     flags = [window.sentence for window in doing.found.windows if not window.judged]
     flags += _out_of_order(doing)
+    flags += _axis_flag(doing, got)
     flags += [
         f"{reading.check} {reading.stage}: {reading.verdict.word}"
         for reading in readings
