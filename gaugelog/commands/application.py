@@ -10,6 +10,7 @@ import typer
 
 from gaugelog import __version__
 from gaugelog.commands import (
+    backup,
     calc,
     demo,
     doctor,
@@ -58,6 +59,8 @@ def application() -> typer.Typer:
         app.command(name, rich_help_panel=WORK)(command)
     for command in (calc.calc, doctor.doctor, demo.demo):
         app.command(command.__name__, rich_help_panel=LOOK)(command)
+    for command in (backup.backup, backup.restore):
+        app.command(command.__name__, rich_help_panel=SET_UP)(command)
     return app
 
 

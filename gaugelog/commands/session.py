@@ -73,10 +73,15 @@ def key_folder(logbook_id: str) -> KeyFolder:
 
 def unlock(logbook: Logbook, person: str, secrets: Secrets, *, purpose: str = "") -> Signer:
     """The unlocked key of `person`, asked for once. Raises KeyTrouble when it can't be."""
+    return unlock_for(logbook.id, person, secrets, purpose=purpose)
+
+
+def unlock_for(logbook_id: str, person: str, secrets: Secrets, *, purpose: str = "") -> Signer:
+    """The same for a logbook that is not open yet."""
     if not person:
         raise KeyTrouble(
             "Who acts was not said.", "Name the person with --as ID or GAUGELOG_PERSON."
         )
-    folder = key_folder(logbook.id)
+    folder = key_folder(logbook_id)
     wanted = f"Passphrase of {person}" + (f" to {purpose}" if purpose else "")
     return folder.unlock(person, secrets.ask(wanted))

@@ -26,6 +26,17 @@ def write_whole(path: Path, data: bytes, *, mode: int = 0o644) -> None:
     _sync_folder(path.parent)
 
 
+def settle(draft: Path, path: Path) -> None:
+    """See a draft that was written beside `path` onto the disk, then give it its name.
+
+    Raises OSError.
+    """
+    with draft.open("rb+") as file:
+        os.fsync(file.fileno())
+    draft.replace(path)
+    _sync_folder(path.parent)
+
+
 def _sync_folder(folder: Path) -> None:
     # The new name is on disk only when the folder is; Windows has no way to ask for it.
     try:

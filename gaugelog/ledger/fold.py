@@ -23,6 +23,7 @@ from gaugelog.ledger import (
     people,
     points,
     readings,
+    restored,
     reviews,
     routes,
     schema,
@@ -56,6 +57,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (reviews.PointSubmitted, reviews.apply_point_submitted),
         (reviews.PointAccepted, reviews.apply_point_accepted),
         (reviews.PointReturned, reviews.apply_point_returned),
+        (restored.LogbookRestored, restored.apply_logbook_restored),
     )
 }
 """Kind and version of a fact to its body and how it changes the tables."""

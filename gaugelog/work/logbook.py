@@ -32,6 +32,9 @@ SIGN = "logbook.toml"
 
 FORMAT = 1
 
+UNFINISHED = 'state = "backup"  # not to be worked in; `gaugelog restore` makes a logbook of it\n'
+"""The line atop `logbook.toml` in a backup, until the entry that says it was restored is kept."""
+
 
 @dataclass
 class Deed:
@@ -217,17 +220,29 @@ def _settings_text(settings: dict[str, str]) -> str:
 
 def _read_settings(folder: Path) -> dict[str, str]:
     try:
-        found = tomllib.loads((folder / SIGN).read_text(encoding="utf-8"))
-        settings = {key: str(found[key]) for key in ("id", "name", "chain")}
-        version = int(found["format"])
+        data = (folder / SIGN).read_bytes()
     except OSError as error:
         raise StorageTrouble(
             f"{folder / SIGN} can't be read: {error.strerror}.", "Restore it from a backup."
         ) from error
+    if data.startswith(UNFINISHED.encode()):
+        raise StorageTrouble(
+            f"{folder} was unpacked from a backup and its restoring was not finished.",
+            "Delete the folder, then: gaugelog restore FILE.zip FOLDER --as ID",
+        )
+    return parse_settings(data, str(folder / SIGN))
+
+
+def parse_settings(data: bytes, where: str) -> dict[str, str]:
+    """What `logbook.toml` says: `id`, `name`, `chain`. Raises StorageTrouble naming `where`."""
+    try:
+        found = tomllib.loads(data.decode())
+        settings = {key: str(found[key]) for key in ("id", "name", "chain")}
+        version = int(found["format"])
     except (tomllib.TOMLDecodeError, UnicodeDecodeError, KeyError, ValueError, TypeError) as error:
-        raise StorageTrouble(f"{folder / SIGN} is damaged.", "Restore it from a backup.") from error
+        raise StorageTrouble(f"{where} is damaged.", "Restore it from a backup.") from error
     if version > FORMAT:
         raise StorageTrouble(
-            f"{folder} was written by a newer Gaugelog (format {version}).", "Update Gaugelog."
+            f"{where} was written by a newer Gaugelog (format {version}).", "Update Gaugelog."
         )
     return settings

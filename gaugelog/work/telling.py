@@ -78,6 +78,7 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "step.reopened": lambda fact: f"from {fact['step']}, {fact['reason']}",
     "hold.decided": lambda fact: f"{fact['step']} {fact['outcome']}",
     "reading.taken": _reading,
+    "logbook.restored": lambda fact: f"from a backup at {fact['head']}, {fact['reason']}",
     "point.submitted": lambda fact: f"revision {fact['revision']}",
     "point.accepted": lambda fact: f"revision {fact['revision']}",
     "point.returned": lambda fact: f"revision {fact['revision']}, {fact['reason']}",

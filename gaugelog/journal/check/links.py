@@ -12,6 +12,9 @@ from gaugelog.journal.head import NO_HASH
 from gaugelog.journal.header import BadEntry
 from gaugelog.journal.storage.port import Reader
 
+RESTORED = "logbook.restored"
+"""The kind of the entry that says a logbook was restored, and by which printed heads."""
+
 
 class Format:
     """Step 1. Headers are canonical bytes of a known format; the storage's guards are there."""
@@ -88,6 +91,7 @@ class Chain:
         for head in printed:
             self._printed[head.seq].append(head)
         self._hashes: dict[str, dict[int, bytes]] = defaultdict(dict)
+        self._restored: list[Look] = []
 
     def see(self, look: Look) -> None:
         """Look at one entry."""
@@ -97,6 +101,8 @@ class Chain:
         if filed.seq in self._printed:
             self._meet(self.heads[filed.chain])
         if look.header is not None:
+            if look.header.kind == RESTORED:
+                self._restored.append(look)
             if filed.seq == before.seq + 1 and look.header.previous != before.hash.hex():
                 what = f"It does not follow entry {before.seq} as that stands: one was altered."
                 self._findings.trouble(look.position, Trouble(3, look.where, what, RESTORE))
@@ -107,13 +113,19 @@ class Chain:
     def finish(self) -> None:
         """Name the printed heads that nothing met."""
         for head in (head for heads in self._printed.values() for head in heads):
-            last = max((known.seq for known in self.heads.values()), default=0)
-            what = (
-                f"The journal ends at entry {last}; what came after was cut off."
-                if last < head.seq
-                else f"Entry {head.seq} as it stands has another hash: the past was written anew."
-            )
+            what = self._unmet(head)
             self._findings.trouble(head.seq, Trouble(3, f"printed head {head}", what, RESTORE))
+
+    def _unmet(self, head: PrintedHead) -> str:
+        """Why nothing met a printed head."""
+        for look in self._restored:
+            printed = look.body.fact.get("printed", ()) if look.body is not None else ()
+            if head.seq >= look.filed.seq and str(head) in printed:
+                return f"What it stands for was lost: {look.where} says so, after a restore."
+        last = max((known.seq for known in self.heads.values()), default=0)
+        if last < head.seq:
+            return f"The journal ends at entry {last}; what came after was cut off."
+        return f"Entry {head.seq} as it stands has another hash: the past was written anew."
 
     def _meet(self, head: Head) -> None:
         left = [printed for printed in self._printed[head.seq] if printed != head.short]
