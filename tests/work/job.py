@@ -54,6 +54,10 @@ WALK: tuple[tuple[str, dict[str, str]], ...] = (
 )
 """Who types what at each step of the shipped route, for point FB-1."""
 
+LAYOUT = WALK[3][1]
+FB_2_LAYOUT = {"x": "150 mm", "y": "220 mm", "axis": "90 deg"}
+"""The planned places of the two points."""
+
 MINUTES = 35
 """How long after the last step each step is done: inside every window of the route."""
 
@@ -93,6 +97,7 @@ class Job:
     ) -> steps.StepOutcome:
         """Do the next step `minutes` after the last."""
         self.clock.advance(60 * minutes)
+        typed = FB_2_LAYOUT if typed == LAYOUT and point == "FB-2" else typed
         return steps.do(self.book, self.keys[who], point=point, typed=typed, **more)
 
     def walk(self, count: int = len(WALK), point: str = "FB-1", gauge: str = "K7-03/1") -> None:
