@@ -20,6 +20,14 @@ from tests.work.job import Job
 ROOT = Path(__file__).parents[2]
 BEFORE_INSULATION = 9
 
+PATIENCE = 60.0
+"""Seconds after which a worker that acknowledges nothing is broken, not slow."""
+
+LONGEST_READING = 0.03
+"""Seconds within which a kill falls anywhere in the making of the next reading."""
+LONGEST_WAIT = 60
+"""Seconds; far beyond what a busy machine takes."""
+
 
 class Workers:
     """A process that forks workers on demand; each acknowledges readings to one file."""
@@ -43,9 +51,23 @@ class Workers:
         self._process.stdin.flush()
         return int(self._process.stdout.readline())
 
+    def wait_for(self, count: int) -> None:
+        """Wait until so many readings are acknowledged."""
+        deadline = time.monotonic() + LONGEST_WAIT
+        while len(self.ids()) < count:
+            assert time.monotonic() < deadline, f"only {len(self.ids())} of {count} readings"
+            time.sleep(0.002)
+
     def ids(self) -> list[str]:
         """The readings acknowledged so far."""
         return self.acknowledged.read_text(encoding="utf-8").split()
+
+    def wait_for(self, count: int) -> None:
+        """Wait until so many readings were acknowledged."""
+        deadline = time.monotonic() + PATIENCE
+        while len(self.ids()) < count:
+            assert time.monotonic() < deadline, f"only {len(self.ids())} of {count} readings"
+            time.sleep(0.001)
 
     def close(self) -> None:
         """End the process."""
@@ -54,18 +76,27 @@ class Workers:
 
 
 def _kill_again_and_again(job: Job, home: Path, times: int) -> None:
+    """Kill each worker at a moment of its own, after it acknowledged none, one or a few readings.
+
+    Waiting for what was acknowledged, not for a clock, asks as much of a busy machine as of an
+    idle one.
+    """
     job.walk(BEFORE_INSULATION)
     job.book.storage.close()
     dice = random.Random(20261201)  # noqa: S311 (no secret)
     workers = Workers(home)
+    asked = 0
     try:
         for _ in range(times):
+            before, wanted = len(workers.ids()), dice.randint(0, 4)
             child = workers.start()
-            time.sleep(dice.uniform(0.005, 0.25))
+            workers.wait_for(before + wanted)
+            time.sleep(dice.uniform(0, LONGEST_READING))
             os.kill(child, signal.SIGKILL)
+            asked += wanted
     finally:
         workers.close()
-    _everything_is_there(home, workers.ids(), least=times)
+    _everything_is_there(home, workers.ids(), least=asked)
 
 
 def _everything_is_there(home: Path, ids: list[str], least: int) -> None:
@@ -103,9 +134,7 @@ def test_two_processes_at_once_lose_nothing_and_fork_nothing(job: Job, tmp_path:
     workers = Workers(tmp_path)
     try:
         children = [workers.start(), workers.start()]
-        deadline = time.monotonic() + 20
-        while len(workers.ids()) < 60 and time.monotonic() < deadline:
-            time.sleep(0.1)
+        workers.wait_for(60)
         for child in children:
             os.kill(child, signal.SIGKILL)
     finally:
