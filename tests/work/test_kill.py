@@ -25,8 +25,6 @@ PATIENCE = 60.0
 
 LONGEST_READING = 0.03
 """Seconds within which a kill falls anywhere in the making of the next reading."""
-LONGEST_WAIT = 60
-"""Seconds; far beyond what a busy machine takes."""
 
 
 class Workers:
@@ -50,13 +48,6 @@ class Workers:
         self._process.stdin.write("go\n")
         self._process.stdin.flush()
         return int(self._process.stdout.readline())
-
-    def wait_for(self, count: int) -> None:
-        """Wait until so many readings are acknowledged."""
-        deadline = time.monotonic() + LONGEST_WAIT
-        while len(self.ids()) < count:
-            assert time.monotonic() < deadline, f"only {len(self.ids())} of {count} readings"
-            time.sleep(0.002)
 
     def ids(self) -> list[str]:
         """The readings acknowledged so far."""
