@@ -76,6 +76,7 @@ _AT_WORK: dict[str, Callable[..., None]] = {
     "submit": review.submit,
     "accept": review.accept,
     "return": review.give_back,
+    "amend": review.amend,
     "record": record.record,
 }
 

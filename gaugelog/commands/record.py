@@ -49,7 +49,7 @@ def _list(rows: list[dict[str, str]], json: bool) -> None:
         return
     put_table(
         "Records",
-        ["point", ">revision", "state", "submitted by", "accepted by", "head", "SHA-256"],
+        ["point", ">revision", "state", "submitted by", "accepted by", "head", "SHA-256", "reason"],
         [[str(value) for value in row.values()] for row in rows],
         empty="No point has been submitted yet.",
     )

@@ -1,4 +1,4 @@
-"""`gaugelog submit`, `accept` and `return`: the sign-offs of a point's record."""
+"""`gaugelog submit`, `accept`, `return`, `amend`: the sign-offs of a record, and its revision."""
 
 from __future__ import annotations
 
@@ -70,3 +70,25 @@ def give_back(
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"return {point}")
     reviews.give_back(logbook, signer, point=point, reason=reason, redo_from=redo_from)
     say(f"{point} is returned. Next: gaugelog step next {point}")
+
+
+def amend(
+    ctx: typer.Context,
+    point: Point,
+    reason: Annotated[str, typer.Option(help="Why; the next record names it.")],
+    redo_from: Annotated[
+        str, typer.Option(help="Step to go on from; left out: nothing is done again.")
+    ] = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Take up an accepted point again. Its record stays; the next one revises it, with reason."""
+    from gaugelog.work.amend import amend as take_up_again
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"amend {point}")
+    done = take_up_again(logbook, signer, point=point, reason=reason, redo_from=redo_from)
+    say(
+        f"{point} is in work again; record revision {done.revision} stays as it is.",
+        f"Next: gaugelog step next {point}",
+    )

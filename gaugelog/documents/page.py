@@ -29,6 +29,12 @@ _MOODS = {
     "conditional fail": "bad",
     "fail": "bad",
     "refused": "bad",
+    "accepted": "good",
+    "hold released": "good",
+    "returned": "bad",
+    "hold refused": "bad",
+    "amendment": "doubt",
+    "step reopened": "doubt",
 }
 
 

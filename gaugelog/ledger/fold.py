@@ -57,6 +57,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (reviews.PointSubmitted, reviews.apply_point_submitted),
         (reviews.PointAccepted, reviews.apply_point_accepted),
         (reviews.PointReturned, reviews.apply_point_returned),
+        (reviews.PointReopened, reviews.apply_point_reopened),
         (restored.LogbookRestored, restored.apply_logbook_restored),
     )
 }

@@ -8,8 +8,9 @@ from typing import ClassVar
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id
-from gaugelog.ledger.progress import reopen, route_of, set_states
-from gaugelog.ledger.rows import At, Change, Known, Put, have
+from gaugelog.ledger.progress import move, reopen, route_of, set_states
+from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
+from gaugelog.ledger.story import told
 
 
 class PointSubmitted(FactBody):
@@ -26,7 +27,9 @@ class PointSubmitted(FactBody):
     meaning: str
     submitted_by: Id
     reason: str = ""
-    """Why a record that was accepted is revised; empty at the first revision."""
+    """Why a record that was accepted is revised; empty where none was."""
+    revises: int | None = None
+    """The accepted revision that this one takes the place of."""
 
 
 class PointAccepted(FactBody):
@@ -55,6 +58,20 @@ class PointReturned(FactBody):
     returned_by: Id
 
 
+class PointReopened(FactBody):
+    """An accepted point goes back to work; its next record revises the one that was accepted."""
+
+    kind: ClassVar[str] = "point.reopened"
+
+    point: Id
+    revision: int
+    """The accepted revision, whose file stays as it is."""
+    reason: str
+    redo_from: str = ""
+    """The step that work goes on from; empty: nothing is done again."""
+    reopened_by: Id
+
+
 class RecordRow(SQLModel, table=True):
     """One revision of a point's record."""
 
@@ -65,7 +82,7 @@ class RecordRow(SQLModel, table=True):
     point: str = Field(index=True)
     revision: int
     state: str
-    """`submitted`, `accepted` or `returned`."""
+    """`submitted`, `returned`, `accepted`, or `amended` when it was reopened after that."""
     submitted_file: str
     submitted_by: str
     submitted_at: str
@@ -75,7 +92,11 @@ class RecordRow(SQLModel, table=True):
     accepted_at: str
     accepted_head: str
     reason: str
-    """Why it was returned, or empty."""
+    """Why it was returned or is amended, or empty."""
+    revises: int
+    """The accepted revision that it takes the place of, or 0."""
+    revision_reason: str
+    """Why it does, or empty."""
     seq: int
 
 
@@ -97,9 +118,12 @@ def apply_point_submitted(known: Known, at: At, fact: PointSubmitted) -> Iterato
             "accepted_at": "",
             "accepted_head": "",
             "reason": "",
+            "revises": fact.revises or 0,
+            "revision_reason": fact.reason,
             "seq": at.seq,
         },
     )
+    yield told(at, fact.point, "submitted", fact.submitted_by, revision=fact.revision)
     yield from set_states(known, have(known, "point", fact.point), "awaiting review")
 
 
@@ -116,16 +140,49 @@ def apply_point_accepted(known: Known, at: At, fact: PointAccepted) -> Iterator[
             "accepted_head": fact.head,
         },
     )
+    yield told(at, fact.point, "accepted", fact.accepted_by, revision=fact.revision)
     yield from set_states(known, have(known, "point", fact.point), "accepted")
 
 
-def apply_point_returned(known: Known, _at: At, fact: PointReturned) -> Iterator[Change]:
+def apply_point_returned(known: Known, at: At, fact: PointReturned) -> Iterator[Change]:
     """The record is returned; steps from `redo_from` on are to be done again."""
     record = have(known, "record", f"{fact.point}/{fact.revision}")
     yield Put("record", {**record, "state": "returned", "reason": fact.reason})
+    yield told(
+        at,
+        fact.point,
+        "returned",
+        fact.returned_by,
+        reason=fact.reason,
+        step=fact.redo_from,
+        revision=fact.revision,
+    )
     point = have(known, "point", fact.point)
+    yield from _reopen_from(known, point, fact.redo_from)
+    yield from set_states(known, point, "returned")
+
+
+def apply_point_reopened(known: Known, at: At, fact: PointReopened) -> Iterator[Change]:
+    """The accepted record is being amended: the point is in work again."""
+    record = have(known, "record", f"{fact.point}/{fact.revision}")
+    yield Put("record", {**record, "state": "amended", "reason": fact.reason})
+    yield told(
+        at,
+        fact.point,
+        "amendment",
+        fact.reopened_by,
+        reason=fact.reason,
+        step=fact.redo_from,
+        revision=fact.revision,
+    )
+    point = have(known, "point", fact.point)
+    yield from _reopen_from(known, point, fact.redo_from)
+    yield from move(known, point)
+
+
+def _reopen_from(known: Known, point: Row, step: str) -> Iterator[Change]:
+    """The step with this id and those after it are to be done again; none where it is empty."""
     steps = route_of(have(known, "route", point["route"])["data"]).steps
-    start = next((place for place, item in enumerate(steps) if item.id == fact.redo_from), None)
+    start = next((place for place, item in enumerate(steps) if item.id == step), None)
     if start is not None:
         yield from reopen(known, point, steps[start:])
-    yield from set_states(known, point, "returned")

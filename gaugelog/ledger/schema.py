@@ -23,8 +23,9 @@ from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.rows import Row
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
+from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 2
+LEDGER_VERSION = 3
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -43,6 +44,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     StepRow,
     ReadingRow,
     RecordRow,
+    StoryRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"
@@ -95,13 +97,13 @@ def ledger_version(connection: sqlite3.Connection) -> int:
 
 def load_row(connection: sqlite3.Connection, table: str, row_id: str) -> Row | None:
     """One row by its id, or None."""
-    found = connection.execute(_select(table) + " WHERE id = ?", (row_id,)).fetchone()
+    found = connection.execute(select(table) + " WHERE id = ?", (row_id,)).fetchone()
     return None if found is None else dict(zip(columns(table), found, strict=True))
 
 
 def load_rows(connection: sqlite3.Connection, table: str) -> Iterable[Row]:
     """Every row of a table."""
-    for found in connection.execute(_select(table)):
+    for found in connection.execute(select(table)):
         yield dict(zip(columns(table), found, strict=True))
 
 
@@ -118,8 +120,16 @@ def write(connection: sqlite3.Connection, buffer: Buffer) -> None:
 
 
 @cache
-def _select(table: str) -> str:
-    return f"SELECT {', '.join(map(_quoted, columns(table)))} FROM {_quoted(table)}"
+def select(table: str) -> str:
+    """The statement that reads every row of a table, its columns in order.
+
+    They are named with their table: SQLite takes a quoted name by itself for a text where there
+    is no such column.
+    """
+    quoted = _quoted(table)
+    return (
+        f"SELECT {', '.join(f'{quoted}.{_quoted(each)}' for each in columns(table))} FROM {quoted}"
+    )
 
 
 @cache

@@ -12,6 +12,7 @@ from gaugelog.ledger.base import FactBody, Id, Part, Quantity, TimeText
 from gaugelog.ledger.progress import move, note_worker, reopen, route_of, step_key, subjects_of
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
+from gaugelog.ledger.story import Turn, told
 
 
 class Entered(Part):
@@ -160,6 +161,11 @@ def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Chan
     """The hold is released; or refused, and the steps since `refused_to` are to be done again."""
     point = have(known, "point", fact.point)
     row = _row(at, fact, fact.outcome, fact.decided_by, fact.observed_at, fact.reason)
+    before = known.get("step", row["id"])
+    if fact.outcome == "refused" or before is not None:
+        # A hold that was released at once is no turn of the story; the step tells it.
+        turn: Turn = "hold refused" if fact.outcome == "refused" else "hold released"
+        yield told(at, fact.point, turn, fact.decided_by, reason=fact.reason, step=fact.step)
     yield Put("step", row)
     steps = _steps(known, point)
     hold = next(place for place, item in enumerate(steps) if item.id == fact.step)
@@ -169,8 +175,11 @@ def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Chan
     yield from move(known, point, steps[hold].reaches if fact.outcome == "released" else "")
 
 
-def apply_step_reopened(known: Known, _at: At, fact: StepReopened) -> Iterator[Change]:
+def apply_step_reopened(known: Known, at: At, fact: StepReopened) -> Iterator[Change]:
     """The step and those after it are to be done again."""
+    yield told(
+        at, fact.point, "step reopened", fact.reopened_by, reason=fact.reason, step=fact.step
+    )
     point = have(known, "point", fact.point)
     steps = _steps(known, point)
     start = next(place for place, item in enumerate(steps) if item.id == fact.step)

@@ -11,6 +11,7 @@ from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.amended import under_amendment
 from gaugelog.rules.progress import demand_complete, demand_step
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.logbook import Deed, Logbook
@@ -55,6 +56,7 @@ def submit(
     with logbook.deed(signer) as deed:
         _demand_untouched(deed, row, request)
         demand_complete(deed.view, row)
+        amended = under_amendment(deed.view, row.id)
         body = PointSubmitted(
             point=row.id,
             revision=request.revision,
@@ -62,6 +64,8 @@ def submit(
             head=request.head,
             meaning=meaning,
             submitted_by=signer.person,
+            reason=amended.reason if amended else "",
+            revises=amended.revision if amended else None,
         )
         deed.keep(body, _about(deed.view, row), evidence=[file])
     return SignedOff(request.revision, logbook.head().printed)
@@ -160,7 +164,10 @@ def draft(logbook: Logbook, maker: RecordMaker, *, point: str) -> RecordFile:
 
 
 def records(logbook: Logbook) -> list[dict[str, str]]:
-    """Every record: point, revision, state, who signed, head, digest of the newest file."""
+    """Every record: point, revision, state, who signed, head, digest of the newest file, why.
+
+    The reason is that of its return or amendment, else that of the revision it is.
+    """
     with logbook.reading() as view:
         labels = {row.id: row.label for row in view.all(PointRow)}
         return [
@@ -172,6 +179,7 @@ def records(logbook: Logbook) -> list[dict[str, str]]:
                 "accepted_by": item.accepted_by,
                 "head": item.accepted_head or item.submitted_head,
                 "sha256": item.accepted_file or item.submitted_file,
+                "reason": item.reason or item.revision_reason,
             }
             for item in view.all(RecordRow)
         ]

@@ -82,4 +82,5 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "point.submitted": lambda fact: f"revision {fact['revision']}",
     "point.accepted": lambda fact: f"revision {fact['revision']}",
     "point.returned": lambda fact: f"revision {fact['revision']}, {fact['reason']}",
+    "point.reopened": lambda fact: f"revision {fact['revision']} amended, {fact['reason']}",
 }

@@ -7,9 +7,11 @@ import pytest
 
 from gaugelog import __version__
 from gaugelog.documents.content import RecordContent, build
+from gaugelog.documents.page import record_html
 from gaugelog.errors import Refused
+from gaugelog.ledger.reviews import PointAccepted, PointReopened, PointSubmitted
 from gaugelog.work.ports import RecordRequest
-from tests.documents.joblog import Job, job, work
+from tests.documents.joblog import POINT, Job, job, work
 from tests.documents.signers import SUBMITTED
 
 
@@ -145,3 +147,45 @@ def test_an_unknown_point_is_refused(made: Job) -> None:
     request = RecordRequest("nowhere", 1, "1:X", SUBMITTED, "")
     with made.logbook.reading() as view, pytest.raises(Refused, match="no such point"):
         build(view, request)
+
+
+def test_a_first_record_without_turns_has_no_story(content: RecordContent) -> None:
+    assert content.story == ()
+    assert content.amends is None
+
+
+def test_an_amended_record_names_the_revision_the_reason_and_the_story(
+    tmp_path_factory: pytest.TempPathFactory,
+) -> None:
+    made = job(tmp_path_factory.mktemp("amended"))
+    work(made)
+    head, why = made.logbook.head().printed, "wrong cable lot"
+    made.keep(made.technician, _submitted(head))
+    made.keep(made.reviewer, _accepted(head))
+    made.keep(
+        made.technician,
+        PointReopened(point=POINT, revision=1, reason=why, reopened_by="t.okondo"),
+    )
+    with made.logbook.reading() as view:
+        shown = build(view, made.request(), "t.okondo")
+    assert shown.amends is not None
+    assert (1, why, "t.okondo") == (shown.amends.revision, shown.amends.reason, shown.amends.by)
+    assert [("submitted", 1), ("accepted", 1), ("amendment", 1)] == [
+        (turn.turn, turn.revision) for turn in shown.story
+    ]
+    assert "w.brandt" in {person.id for person in shown.people}
+    page = record_html(shown)
+    assert "takes the place of revision 1" in page
+    assert page.count(why) == 2
+
+
+def _submitted(head: str) -> PointSubmitted:
+    return PointSubmitted(
+        point=POINT, revision=1, file="0" * 64, head=head, meaning="M", submitted_by="t.okondo"
+    )
+
+
+def _accepted(head: str) -> PointAccepted:
+    return PointAccepted(
+        point=POINT, revision=1, file="1" * 64, head=head, meaning="M", accepted_by="w.brandt"
+    )

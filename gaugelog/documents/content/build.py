@@ -6,6 +6,7 @@ import json
 from typing import TYPE_CHECKING
 
 from gaugelog import __version__
+from gaugelog.documents.content.frombudget import budget_shown
 from gaugelog.documents.content.fromplan import (
     Planned,
     article_shown,
@@ -30,7 +31,8 @@ from gaugelog.documents.content.model import (
     RouteShown,
     SigningShown,
 )
-from gaugelog.documents.content.workdone import ReadingShown, StepShown
+from gaugelog.documents.content.pointstory import amends_shown, story_shown
+from gaugelog.documents.content.workdone import ReadingShown, StepShown, TurnShown
 from gaugelog.ledger.people import PersonRow
 
 if TYPE_CHECKING:
@@ -46,10 +48,12 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
     """
     plan = planned(view, request.point)
     steps, readings = steps_shown(view, plan), readings_shown(view, plan)
+    story = story_shown(view, plan)
     return RecordContent(
         number=f"{plan.campaign.label}-{plan.point.label}-R{request.revision}",
         revision=request.revision,
         state="draft" if submitted_by is None else "submitted",
+        amends=amends_shown(view, plan),
         drawn=_drawn(request),
         campaign=_campaign(plan),
         criteria=_criteria(plan),
@@ -61,9 +65,11 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
         route=_route(plan),
         steps=steps,
         readings=readings,
+        budget=budget_shown(view, plan.row),
+        story=story,
         instruments=instruments_shown(view, plan),
         consumables=consumables_shown(view, plan),
-        people=_people(view, _parts(steps, readings, submitted_by)),
+        people=_people(view, _parts(steps, readings, story, submitted_by)),
         signing=_signing(view, request, submitted_by),
         cautions=_cautions(plan),
     )
@@ -104,7 +110,10 @@ def _route(plan: Planned) -> RouteShown:
 
 
 def _parts(
-    steps: tuple[StepShown, ...], readings: tuple[ReadingShown, ...], submitted_by: str | None
+    steps: tuple[StepShown, ...],
+    readings: tuple[ReadingShown, ...],
+    story: tuple[TurnShown, ...],
+    submitted_by: str | None,
 ) -> dict[str, list[str]]:
     """What each person did, in the order they came in."""
     did = [(step.by, "holds" if step.hold else "steps") for step in steps if step.by]
@@ -112,6 +121,7 @@ def _parts(
     did += [
         (each.entered_by, "entries") for each in readings if each.entered_by != each.observed_by
     ]
+    did += [(turn.by, "story") for turn in story]
     if submitted_by is not None:
         did.append((submitted_by, "submission"))
     parts: dict[str, list[str]] = {}

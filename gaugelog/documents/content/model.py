@@ -17,8 +17,8 @@ from gaugelog.documents.content.installation import (
     GridShown,
     PointShown,
 )
-from gaugelog.documents.content.workdone import ReadingShown, StepShown
-from gaugelog.ledger.base import DateText, DecimalText, Id, TimeText
+from gaugelog.documents.content.workdone import AmendsShown, ReadingShown, StepShown, TurnShown
+from gaugelog.ledger.base import DateText, DecimalText, Id, Quantity, TimeText
 from gaugelog.ledger.instruments import InstrumentRange
 from gaugelog.ledger.people import Qualification
 
@@ -47,6 +47,33 @@ class CampaignShown(Shown):
     site: str = ""
     surroundings: str
     plan_revision: int
+
+
+class PartShown(Shown):
+    """One input of the budget: what it is, what it adds, its share of the variance in per cent."""
+
+    name: str
+    contribution: Quantity
+    share: DecimalText
+
+
+class CorrectionShown(Shown):
+    """What is to be taken off or multiplied, with its source."""
+
+    name: str
+    value: str
+    source: str
+
+
+class BudgetShown(Shown):
+    """What the strain of the point is worth at its largest planned strain; largest share first."""
+
+    strain: Quantity
+    expanded: Quantity
+    coverage: DecimalText
+    parts: tuple[PartShown, ...]
+    corrections: tuple[CorrectionShown, ...]
+    standard: str
 
 
 class CriteriaShown(Shown):
@@ -109,7 +136,7 @@ class PersonShown(Shown):
     roles: tuple[str, ...]
     qualifications: tuple[Qualification, ...] = ()
     part: tuple[str, ...] = ()
-    """What they did: `steps`, `readings`, `holds`, `submission`."""
+    """What they did: `steps`, `readings`, `holds`, `story`, `submission`."""
 
 
 class SigningShown(Shown):
@@ -128,6 +155,8 @@ class RecordContent(Shown):
     """Campaign, point and revision: `K1-BR2-R1`."""
     revision: int
     state: Literal["draft", "submitted"]
+    amends: AmendsShown | None = None
+    """The accepted record that this one takes the place of, if there is one."""
     drawn: Drawn
     campaign: CampaignShown
     criteria: CriteriaShown
@@ -140,6 +169,9 @@ class RecordContent(Shown):
     route: RouteShown
     steps: tuple[StepShown, ...]
     readings: tuple[ReadingShown, ...]
+    budget: BudgetShown | None = None
+    story: tuple[TurnShown, ...] = ()
+    """How the record came about, where that took more than one go."""
     instruments: tuple[InstrumentShown, ...]
     consumables: tuple[ConsumableShown, ...]
     people: tuple[PersonShown, ...]

@@ -42,6 +42,29 @@ class StepShown(Shown):
     inputs: tuple[InputShown, ...] = ()
 
 
+class AmendsShown(Shown):
+    """The accepted record that this one takes the place of, and why."""
+
+    revision: int
+    reason: str
+    by: Id
+    """Who took the point up again."""
+
+
+class TurnShown(Shown):
+    """One turn in the story of the point, before this record was drawn."""
+
+    at: TimeText
+    turn: str
+    """`submitted`, `returned`, `accepted`, `amendment`, `hold refused`, `step reopened` …"""
+    revision: int = 0
+    """The revision of the record it concerns, or 0."""
+    step: str = ""
+    """Title of the step it concerns or goes back to."""
+    by: Id
+    reason: str = ""
+
+
 class ReadingShown(Shown):
     """One attempt of a check, with every limit it was held to and the verdict."""
 
