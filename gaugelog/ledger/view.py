@@ -16,7 +16,7 @@ from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.ledger.instruments import InstrumentRow
 from gaugelog.ledger.people import IdentitySheet, PersonRow
 from gaugelog.ledger.points import GridRow, PointRow
-from gaugelog.ledger.schema import load_row, table_of
+from gaugelog.ledger.schema import load_row, select, table_of
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 
 T = TypeVar("T", bound=SQLModel)
@@ -41,8 +41,9 @@ class View:
 
     def all(self, model: type[T], **equals: str | int) -> list[T]:
         """Every row whose columns equal what is given, in the journal's order or by label."""
-        where = " AND ".join(f'"{name}" = ?' for name in equals)
-        query = _select(model) + (f" WHERE {where}" if where else "") + _order(model)
+        table = table_of(model).name
+        where = " AND ".join(f'"{table}"."{name}" = ?' for name in equals)
+        query = select(table) + (f" WHERE {where}" if where else "") + _order(model)
         names = _columns(model)
         rows = self._connection.execute(query, tuple(equals.values()))
         return [model(**dict(zip(names, row, strict=True))) for row in rows]
@@ -109,7 +110,7 @@ class View:
             folded = wanted.casefold()
             rows = self.all(model)
             return [row for row in rows if row.label.casefold() == folded]  # type: ignore[attr-defined]
-        query = f"{_select(model)} WHERE label = ? COLLATE NOCASE{_order(model)}"
+        query = f"{select(table_of(model).name)} WHERE label = ? COLLATE NOCASE{_order(model)}"
         names = _columns(model)
         found = self._connection.execute(query, (wanted,)).fetchall()
         return [model(**dict(zip(names, row, strict=True))) for row in found]
@@ -118,12 +119,6 @@ class View:
 @cache
 def _columns(model: type[SQLModel]) -> tuple[str, ...]:
     return tuple(column.name for column in table_of(model).columns)
-
-
-@cache
-def _select(model: type[SQLModel]) -> str:
-    columns = ", ".join(f'"{name}"' for name in _columns(model))
-    return f'SELECT {columns} FROM "{table_of(model).name}"'
 
 
 @cache

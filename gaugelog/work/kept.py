@@ -45,3 +45,9 @@ def name_to_keep(text: str) -> str:
     'r%C3%BCta.toml'
     """
     return text if text.isascii() else quote(text_to_keep(text), safe=" /")
+
+
+def demand_meaning(meaning: str) -> None:
+    """Raise Faulty unless a sign-off says what it means (21 CFR 11.50 asks for it)."""
+    if not meaning.strip():
+        raise Faulty([Fault("meaning", "is empty.", "Say what the signature means.")])

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import sqlite3
 import tomllib
 from collections.abc import Callable, Iterable, Iterator
 from contextlib import contextmanager
@@ -146,7 +147,7 @@ class Logbook:
     @contextmanager
     def reading(self) -> Iterator[View]:
         """Look at what is known: one unchanging view."""
-        with self.storage.reading() as reader:
+        with self.storage.reading() as reader, _ledger_told():
             yield self._view(reader)
 
     @contextmanager
@@ -157,7 +158,7 @@ class Logbook:
         logbook can't be written.
         """
         moment = self.clock.now()
-        with self.storage.writing(self._on_wait) as writer:
+        with self.storage.writing(self._on_wait) as writer, _ledger_told():
             standing = certificates_of(writer).standing(
                 signer.fingerprint, signer.person, moment.utc
             )
@@ -187,6 +188,20 @@ class Logbook:
 
     def _view(self, reader: SqliteReader) -> View:
         return View(reader.connection, reader.sheet)
+
+
+@contextmanager
+def _ledger_told() -> Iterator[None]:
+    """Say plainly that a table of the ledger is missing or has other columns."""
+    try:
+        yield
+    except sqlite3.OperationalError as error:
+        if "no such" not in str(error) and "no column" not in str(error):
+            raise
+        raise StorageTrouble(
+            f"The ledger's tables are not as Gaugelog laid them down: {error}.",
+            "Nothing is lost: rebuild them with `gaugelog journal rebuild`.",
+        ) from error
 
 
 def find_logbook(start: Path, asked: Path | None) -> Path:

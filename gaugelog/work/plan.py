@@ -19,7 +19,7 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.fit import PlanFinding, check_plan
 from gaugelog.rules.progress import worst_state
 from gaugelog.rules.who import demand_role
-from gaugelog.work.kept import name_to_keep
+from gaugelog.work.kept import demand_meaning, name_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 
 
@@ -95,6 +95,7 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
 
     Raises Refused when the check refuses something, naming it, or there is no draft.
     """
+    demand_meaning(meaning)
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner")
         campaign = _planned(deed.view)

@@ -14,6 +14,7 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.amended import under_amendment
 from gaugelog.rules.progress import demand_complete, demand_step
 from gaugelog.rules.who import demand_role, demand_second_person
+from gaugelog.work.kept import demand_meaning
 from gaugelog.work.logbook import Deed, Logbook
 from gaugelog.work.ports import RecordMaker, RecordRequest, Stamp
 
@@ -44,6 +45,7 @@ def submit(
     meanwhile nothing is kept. Raises Refused when the point is not ready, MachineTrouble when
     pages can't be drawn.
     """
+    demand_meaning(meaning)
     # The head comes first: what is kept after it, even before the view opens, counts as a touch.
     head = logbook.head().printed
     with logbook.reading() as view:
@@ -78,6 +80,7 @@ def accept(
 
     Raises Refused when nothing is submitted, or the reviewer did a step of the point.
     """
+    demand_meaning(meaning)
     with logbook.reading() as view:
         row, record = _under_review(view, point, signer, "accept it")
         stamp = Stamp(

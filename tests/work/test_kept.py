@@ -114,3 +114,19 @@ def _understood(job: Job, home: Path, old: str, new: str) -> PlanFacts:
     received = load_stock([DEMO / "lots.csv"], new_id=new_id)
     stock.receive(job.book, job.keys["c.ward"], received)
     return plan.understand(job.book, _plan_with_own_route(home, old, new))
+
+
+@pytest.mark.parametrize("meaning", ["", "  ", "\n"])
+def test_nothing_is_signed_off_without_a_meaning(job: Job, meaning: str) -> None:
+    job.walk()
+    maker, keys = PlainMaker(), job.keys
+    before = job.book.head()
+    with pytest.raises(Faulty, match="nothing was stored"):
+        reviews.submit(job.book, keys["t.okoro"], maker, point="FB-1", meaning=meaning)
+    with pytest.raises(Faulty, match="nothing was stored"):
+        plan.release(job.book, keys["c.ward"], meaning=meaning)
+    assert before == job.book.head()
+    job.submit()
+    with pytest.raises(Faulty, match="nothing was stored"):
+        reviews.accept(job.book, keys["q.reyes"], maker, point="FB-1", meaning=meaning)
+    assert job.state() == "awaiting review"
