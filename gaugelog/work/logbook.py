@@ -144,6 +144,15 @@ class Logbook:
             fold.keep(writer.connection, kept)
         return kept
 
+    def discard(self) -> None:
+        """Take away what `create` laid down, of a logbook that never began; the folder stays."""
+        import shutil
+
+        self.storage.close()
+        for file in (SIGN, "logbook.db", "logbook.db-wal", "logbook.db-shm"):
+            (self.folder / file).unlink(missing_ok=True)
+        shutil.rmtree(self.folder / "evidence", ignore_errors=True)
+
     @contextmanager
     def reading(self) -> Iterator[View]:
         """Look at what is known: one unchanging view."""

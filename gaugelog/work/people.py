@@ -67,11 +67,15 @@ def start(
     given = None if authority is None else Authority.from_pkcs12(*authority)
     logbook = Logbook.create(folder, name, clock=clock)
     ours = given or Authority.create(name, logbook.clock)
-    keys = keys_of(logbook.id)
-    signer = _certified(logbook, ours, custodian.person)
-    keys.save_authority(ours, passphrase)
-    _save(keys, signer, passphrase)
-    logbook.begin(signer, lambda deed: _keep_person(deed, custodian))
+    try:
+        keys = keys_of(logbook.id)
+        signer = _certified(logbook, ours, custodian.person)
+        keys.save_authority(ours, passphrase)
+        _save(keys, signer, passphrase)
+        logbook.begin(signer, lambda deed: _keep_person(deed, custodian))
+    except BaseException:
+        logbook.discard()
+        raise
     return logbook
 
 
@@ -93,6 +97,7 @@ def enrol(
     check_passphrase(passphrase)
     with logbook.deed(custodian) as deed:
         demand_role(deed.view, custodian.person, "custodian")
+        _demand_own_authority(deed, authority)
         if "custodian" not in newcomer.roles:
             _demand_custodian_left(deed, newcomer.person)
         fresh = _certified(logbook, authority, newcomer.person)
@@ -146,11 +151,29 @@ def _demand_custodian_left(deed: Deed, without: str) -> None:
         )
 
 
+def _demand_own_authority(deed: Deed, authority: Authority) -> None:
+    if certificates_of(deed.writer).authority != authority.certificate:
+        raise Refused(
+            "The authority is not the one this logbook began with; nobody could sign by it.",
+            "Use the authority that lies with the custodian's keys.",
+        )
+
+
 def _erase(deed: Deed, row: PersonRow, reason: str) -> None:
-    if deed.writer.sheet(row.sheet) is None:
+    """Erase every sheet a person ever had: earlier ones hold the name as well as the last."""
+    there = set(deed.writer.sheets())
+    sheets = [
+        digest
+        for entry in deed.writer.of_kinds([PersonEnrolled.kind])
+        if entry.body.fact["person"] == row.id
+        for digest in entry.body.sheets
+        if digest in there
+    ]
+    if not sheets:
         raise Refused(f"The name of {row.id} is erased already.")
-    deed.writer.erase_sheet(row.sheet)
-    deed.keep_fact(sheet_erased(row.sheet, reason, (row.id,)))
+    for digest in sheets:
+        deed.writer.erase_sheet(digest)
+        deed.keep_fact(sheet_erased(digest, reason, (row.id,)))
 
 
 def _certified(logbook: Logbook, authority: Authority, person: str) -> UnlockedKey:
