@@ -1,4 +1,4 @@
-"""Starting a logbook, under its own authority or an organisation's; a failed start leaves nothing."""
+"""Starting a logbook under its own authority or an organisation's; failing leaves no trace."""
 
 from __future__ import annotations
 
