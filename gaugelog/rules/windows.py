@@ -72,6 +72,8 @@ def _local(when: datetime, now: Moment) -> str:
 
 def _minutes(span: timedelta) -> str:
     minutes = span.total_seconds() / 60
+    if 0 < minutes < 1:
+        return "less than 1 min"
     if minutes < 120:
         return f"{minutes:.0f} min"
     return f"{minutes / 60:.1f} h"
