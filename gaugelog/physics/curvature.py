@@ -9,7 +9,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from math import isinf
 
-from gaugelog.physics._maths import Number, is_array, is_uncertain
+from gaugelog.physics._maths import Number
 from gaugelog.physics.validity import Notice, between, finite, largest, not_negative, not_zero
 
 _STRAIN_NOTED = 0.005
@@ -93,6 +93,6 @@ def bonding_strain_notices(radius: Number, height: Number) -> tuple[Notice, ...]
 
 def _bend(radius: Number) -> Number:
     """One over the radius, nothing where it is infinite."""
-    if not is_array(radius) and not is_uncertain(radius) and isinf(radius):
+    if isinstance(radius, int | float) and isinf(radius):
         return 0.0
     return 1 / not_zero("radius", radius)

@@ -11,6 +11,7 @@ from gaugelog.physics._order import any_of
 from gaugelog.physics.validity import (
     Notice,
     above,
+    finite,
     largest,
     not_zero,
     positive,
@@ -66,13 +67,14 @@ def large_strain_of_indicated(indicated: Number, setting: Number, factor: Number
     >>> round(large_strain_of_indicated(0.0950226, 2.0, 2.0), 6)
     0.1
     """
-    shown = not_zero("setting", setting) * indicated
+    shown = not_zero("setting", setting) * finite("indicated", indicated)
     strictly_between("setting times indicated", shown, -2.0, 2.0)
     return large_strain(factor, 2 * shown / (2 - shown))
 
 
 def large_change_notices(strain: Number, limit: Number) -> tuple[Notice, ...]:
     """A notice where a grid is strained beyond the limit its lot gives, a ratio."""
+    finite("strain", strain)
     if not any_of(abs(nominal(strain)) > nominal(positive("limit", limit))):
         return ()
     message = (
@@ -84,7 +86,7 @@ def large_change_notices(strain: Number, limit: Number) -> tuple[Notice, ...]:
 
 def factor_at_strain_notices(strain: Number) -> tuple[Notice, ...]:
     """A notice where a constant factor would misread a large strain."""
-    found = largest(strain)
+    found = largest(finite("strain", strain))
     if found <= LARGE_STRAIN:
         return ()
     message = (

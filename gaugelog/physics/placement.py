@@ -84,9 +84,9 @@ def largest_misalignment(first: float, second: float, intended: float, permitted
     """
     radius = abs(finite("first", first) - finite("second", second)) / 2
     positive("permitted", permitted)
+    start = 2 * finite("intended", intended)
     if permitted >= 2 * radius:
         return pi / 2
-    start = 2 * finite("intended", intended)
     found = [pi / 2]
     for level in (cos(start) + permitted / radius, cos(start) - permitted / radius):
         if abs(level) <= 1:

@@ -10,10 +10,11 @@ from dataclasses import dataclass
 from math import pi
 
 from gaugelog.physics._maths import Number, arctan2, cos, hypot, is_array, nominal, sin, where
+from gaugelog.physics._order import any_of
 from gaugelog.physics.validity import Notice, finite, largest
 
 NO_DIRECTION = 1e-9
-"""Radius of Mohr's circle, as a part of the strains, below which no direction is told."""
+"""Radius of Mohr's circle, as a part of its centre, up to which no direction is told."""
 
 SMALL_STRAIN = 0.01
 """Strain beyond which the formulas for small strain are left (ASTM E1561, scope)."""
@@ -110,17 +111,18 @@ def principal_strains(state: PlaneStrain) -> PrincipalStrains:
 
 
 def _direction(state: PlaneStrain, circle: MohrCircle) -> Number | None:
-    radius, size = nominal(circle.radius), abs(nominal(circle.centre))
-    alike = radius <= NO_DIRECTION * (size + radius)
+    alike = nominal(circle.radius) <= NO_DIRECTION * abs(nominal(circle.centre))
     if not (is_array(alike) and alike.ndim):
-        return None if alike else _first_half(arctan2(state.shear, state.x - state.y) / 2)
-    angle = _first_half(arctan2(state.shear, state.x - state.y) / 2)
-    return where(alike, float("nan"), angle)
+        return None if alike else _angle(state)
+    # A pass over a million states is saved wherever there is nothing to replace.
+    return where(alike, float("nan"), _angle(state)) if alike.any() else _angle(state)
 
 
-def _first_half(angle: Number) -> Number:
-    """−π/2 is the same direction as π/2, and the latter is told."""
-    return where(nominal(angle) <= -pi / 2, angle + pi, angle)
+def _angle(state: PlaneStrain) -> Number:
+    """½ atan2(γ, εx − εy); −π/2 is the same direction as π/2, and the latter is told."""
+    angle = arctan2(state.shear, state.x - state.y) / 2
+    turned_back = nominal(angle) <= -pi / 2
+    return where(turned_back, angle + pi, angle) if any_of(turned_back) else angle
 
 
 def principal_strains_notices(state: PlaneStrain) -> tuple[Notice, ...]:

@@ -9,14 +9,14 @@ from __future__ import annotations
 import importlib
 from collections.abc import Sequence
 from dataclasses import dataclass
-from itertools import permutations
 from math import cos, pi, sin, sqrt
 from typing import Literal
 
-from gaugelog.physics._maths import Number
+from gaugelog.physics._maths import Number, nominal
 from gaugelog.physics._maths import sqrt as root
+from gaugelog.physics._order import any_of
 from gaugelog.physics.plane import PlaneStrain, strain_along
-from gaugelog.physics.validity import OutOfDomain, finite, not_negative, one_of
+from gaugelog.physics.validity import Notice, OutOfDomain, finite, largest, not_negative, one_of
 
 Numbering = Literal["counter-clockwise", "clockwise"]
 Viewing = Literal["gauge side", "other side"]
@@ -65,7 +65,8 @@ def rectangular_state(one: Number, two: Number, three: Number) -> PlaneStrain:
 
     Source: ASTM E1561, rectangular rosette (from memory).
     """
-    return PlaneStrain(finite("one", one), finite("three", three), 2 * two - one - three)
+    shear = 2 * finite("two", two) - finite("one", one) - finite("three", three)
+    return PlaneStrain(one, three, shear)
 
 
 def delta_state(one: Number, two: Number, three: Number) -> PlaneStrain:
@@ -73,8 +74,8 @@ def delta_state(one: Number, two: Number, three: Number) -> PlaneStrain:
 
     Source: ASTM E1561, delta rosette (from memory).
     """
-    across = (2 * finite("two", two) + 2 * finite("three", three) - one) / 3
-    return PlaneStrain(finite("one", one), across, 2 * (two - three) / sqrt(3))
+    across = (2 * finite("two", two) + 2 * finite("three", three) - finite("one", one)) / 3
+    return PlaneStrain(one, across, 2 * (two - three) / sqrt(3))
 
 
 def tee_state(one: Number, two: Number) -> PlaneStrain:
@@ -91,7 +92,12 @@ def rosette_state(readings: Sequence[Number], angles: Sequence[float]) -> PlaneS
     `readings` are ratios (n floats, arrays of one shape, or uncertain numbers), `angles` n
     radians. Source: least squares on `plane.strain_along`; ASTM E1561 for three grids.
     """
-    return fit_rosette(readings, angles).state
+    matrix = _inverse_of([_row(angle) for angle in _checked(readings, angles)])
+    x, y, shear = (
+        sum(weight * reading for weight, reading in zip(line, readings, strict=True))
+        for line in matrix
+    )
+    return PlaneStrain(x, y, shear)
 
 
 def fit_rosette(readings: Sequence[Number], angles: Sequence[float]) -> RosetteFit:
@@ -99,12 +105,7 @@ def fit_rosette(readings: Sequence[Number], angles: Sequence[float]) -> RosetteF
 
     Source: as `rosette_state`.
     """
-    matrix = inverse_of([_row(angle) for angle in _checked(readings, angles)])
-    x, y, shear = (
-        sum(weight * reading for weight, reading in zip(line, readings, strict=True))
-        for line in matrix
-    )
-    state = PlaneStrain(x, y, shear)
+    state = rosette_state(readings, angles)
     residuals = tuple(
         reading - strain_along(state, angle)
         for reading, angle in zip(readings, angles, strict=True)
@@ -114,68 +115,19 @@ def fit_rosette(readings: Sequence[Number], angles: Sequence[float]) -> RosetteF
     return RosetteFit(state, residuals, root(squares / spare) if spare else None)
 
 
-def uniaxial_readings(
-    strain: Number, poisson: Number, angles: Sequence[float], axis: float = 0.0
-) -> tuple[Number, ...]:
-    """What each grid reads under uniaxial stress along `axis` (radians); strain as a ratio.
+def fit_rosette_notices(fit: RosetteFit, permitted: Number) -> tuple[Notice, ...]:
+    """A notice where spare readings disagree by more than `permitted`, a ratio.
 
-    Source: Hooke's law, εy = −ν εx, and `plane.strain_along`.
+    Source: least squares; what may be permitted is the readings' own standard uncertainty.
     """
-    state = PlaneStrain(strain, -poisson * strain, 0.0 * strain)
-    return tuple(strain_along(state, angle - axis) for angle in angles)
-
-
-def exchanged_grids(
-    readings: Sequence[float], expected: Sequence[float], tolerance: float
-) -> tuple[int, ...] | None:
-    """The order of grids that explains a directional check load, when it is not the planned one.
-
-    Gives for each place the number of the grid that is wired there, or None where readings fit
-    as planned or in no order. `tolerance` is how far a reading may lie from the expected strain;
-    ratios. Source: common practice, a check load in a known direction.
-
-    >>> exchanged_grids([-90.0, 105.0, 300.0], [300.0, 105.0, -90.0], 10.0)
-    (3, 2, 1)
-    """
-    not_negative("tolerance", tolerance)
-    if len(readings) != len(expected):
-        raise OutOfDomain("expected", "must have as many strains as there are readings.")
-    planned = tuple(range(1, len(readings) + 1))
-    fitting = [
-        order
-        for order in permutations(planned)
-        if all(
-            abs(reading - expected[grid - 1]) <= tolerance
-            for reading, grid in zip(readings, order, strict=True)
-        )
-    ]
-    if planned in fitting or len(fitting) != 1:
-        return None
-    return fitting[0]
-
-
-def exchange_sentence(order: tuple[int, ...] | None) -> str:
-    """An order of grids in words: `grids 1 and 3 exchanged`. Source: none, a wording."""
-    if order is None:
-        return "no exchange of grids explains the readings"
-    moved = [place for place, grid in enumerate(order, start=1) if grid != place]
-    names = f"{', '.join(str(place) for place in moved[:-1])} and {moved[-1]}"
-    return f"grids {names} exchanged"
-
-
-def inverse_of(rows: Sequence[Sequence[float]]) -> list[list[float]]:
-    """The least-squares inverse of a matrix of plain numbers; refuses grids that are too alike.
-
-    Source: Moore-Penrose inverse (NumPy).
-    """
-    numpy = importlib.import_module("numpy")
-    matrix = numpy.array(rows, dtype=float)
-    if matrix.shape[0] < matrix.shape[1] or (
-        numpy.linalg.svd(matrix, compute_uv=False).min() < _LEAST_SPREAD
-    ):
-        raise OutOfDomain("angles", "must hold three different directions of grids.")
-    inverse: list[list[float]] = numpy.linalg.pinv(matrix).tolist()
-    return inverse
+    not_negative("permitted", permitted)
+    if fit.scatter is None or not any_of(nominal(fit.scatter) > nominal(permitted)):
+        return ()
+    message = (
+        f"The grids scatter by {1e6 * largest(fit.scatter):.3g} µm/m about one state of strain, "
+        f"more than {1e6 * largest(permitted):.3g} µm/m: a grid, its angle or its wiring is wrong."
+    )
+    return (Notice("rosette fit", message, "least squares, spare readings"),)
 
 
 def _row(angle: float) -> tuple[float, float, float]:
@@ -188,3 +140,15 @@ def _checked(readings: Sequence[Number], angles: Sequence[float]) -> list[float]
     for number, reading in enumerate(readings, start=1):
         finite(f"reading {number}", reading)
     return [float(finite(f"angle {number}", angle)) for number, angle in enumerate(angles, start=1)]
+
+
+def _inverse_of(rows: Sequence[Sequence[float]]) -> list[list[float]]:
+    """The least-squares inverse (Moore and Penrose); refuses grids that are too alike."""
+    numpy = importlib.import_module("numpy")
+    matrix = numpy.array(rows, dtype=float)
+    if matrix.shape[0] < matrix.shape[1] or (
+        numpy.linalg.svd(matrix, compute_uv=False).min() < _LEAST_SPREAD
+    ):
+        raise OutOfDomain("angles", "must hold three different directions of grids.")
+    inverse: list[list[float]] = numpy.linalg.pinv(matrix).tolist()
+    return inverse

@@ -103,7 +103,7 @@ def semiconductor_notices(
         found.append("At this strain the second-order term is over a quarter of the signal.")
     if largest(strain) > STRAIN_NOTED:
         found.append("Over 3000 µm/m a semiconductor grid may break.")
-    plain = nominal(celsius)
+    plain = nominal(finite("celsius", celsius))
     if any_of((plain < -50) | (plain > 150)):
         found.append("The factor goes as 1/T from about -50 to 150 °C only.")
     return tuple(Notice("semiconductor grid", each, SEMICONDUCTOR_SOURCE) for each in found)

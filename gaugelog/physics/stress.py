@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from gaugelog.physics._maths import Number, hypot, sqrt
-from gaugelog.physics.plane import PlaneStrain
-from gaugelog.physics.validity import OutOfDomain, positive, strictly_between
+from gaugelog.physics._maths import Number, nominal, sqrt
+from gaugelog.physics._order import all_of
+from gaugelog.physics.plane import PlaneStrain, principal_strains, turned
+from gaugelog.physics.validity import OutOfDomain, above, between, finite, positive
 
 
 @dataclass(frozen=True, slots=True)
@@ -17,13 +18,23 @@ class PlaneStress:
     y: Number
     shear: Number
 
+    def __post_init__(self) -> None:
+        finite("x", self.x)
+        finite("y", self.y)
+        finite("shear", self.shear)
+
 
 @dataclass(frozen=True, slots=True)
 class PrincipalStresses:
-    """The larger and the smaller principal stress in the plane, pascal."""
+    """The principal stresses in the plane, pascal, and the direction of the larger, radians.
+
+    `angle` is as in `plane.PrincipalStrains`. In an isotropic material it is the direction of
+    the larger strain; in an orthotropic one it need not be.
+    """
 
     largest: Number
     smallest: Number
+    angle: Number | None
 
 
 def shear_modulus(modulus: Number, poisson: Number) -> Number:
@@ -31,7 +42,7 @@ def shear_modulus(modulus: Number, poisson: Number) -> Number:
 
     Source: Timoshenko and Goodier, Theory of Elasticity (from memory).
     """
-    strictly_between("poisson", poisson, -1.0, 0.5000001)
+    above("poisson", between("poisson", poisson, -1.0, 0.5), -1.0)
     return positive("modulus", modulus) / (2 * (1 + poisson))
 
 
@@ -58,9 +69,9 @@ def orthotropic_stress(
     Materials, reduced stiffnesses (from memory).
     """
     positive("along", along)
-    minor = poisson * positive("across", across) / along
+    minor = finite("poisson", poisson) * positive("across", across) / along
     left = 1 - poisson * minor
-    if not bool((left > 0) if not hasattr(left, "all") else (left > 0).all()):
+    if not all_of(nominal(left) > 0):
         raise OutOfDomain("poisson", "is too large for these moduli: no such material can be.")
     return PlaneStress(
         (along * state.x + minor * along * state.y) / left,
@@ -69,14 +80,24 @@ def orthotropic_stress(
     )
 
 
-def principal_stresses(stress: PlaneStress) -> PrincipalStresses:
-    """Principal stresses in the plane: (σx + σy)/2 ± √((σx − σy)²/4 + τ²); pascal.
+def turned_stress(stress: PlaneStress, angle: Number) -> PlaneStress:
+    """The same stress in axes turned by `angle`, radians; pascal.
 
-    Source: Mohr's circle; Timoshenko and Goodier, Theory of Elasticity (from memory).
+    A stress turns as a strain does whose shear is twice as large. Source: Timoshenko and
+    Goodier, Theory of Elasticity, stress at a point (from memory).
     """
-    mean = (stress.x + stress.y) / 2
-    radius = hypot((stress.x - stress.y) / 2, stress.shear)
-    return PrincipalStresses(mean + radius, mean - radius)
+    found = turned(_as_strain(stress), angle)
+    return PlaneStress(found.x, found.y, found.shear / 2)
+
+
+def principal_stresses(stress: PlaneStress) -> PrincipalStresses:
+    """Principal stresses: (σx + σy)/2 ± √((σx − σy)²/4 + τ²), at ½ atan2(2τ, σx − σy).
+
+    Units: pascal, radians. Source: Mohr's circle; Timoshenko and Goodier, Theory of Elasticity
+    (from memory).
+    """
+    found = principal_strains(_as_strain(stress))
+    return PrincipalStresses(found.largest, found.smallest, found.angle)
 
 
 def von_mises(stress: PlaneStress) -> Number:
@@ -85,3 +106,7 @@ def von_mises(stress: PlaneStress) -> Number:
     Source: von Mises in plane stress; Timoshenko, Strength of Materials (from memory).
     """
     return sqrt(stress.x**2 - stress.x * stress.y + stress.y**2 + 3 * stress.shear**2)
+
+
+def _as_strain(stress: PlaneStress) -> PlaneStrain:
+    return PlaneStrain(stress.x, stress.y, 2 * stress.shear)

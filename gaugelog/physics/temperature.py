@@ -8,9 +8,19 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
-from gaugelog.physics._maths import Number, magnitude
+from gaugelog.physics._maths import Number, magnitude, nominal
+from gaugelog.physics._order import any_of, at_most
 from gaugelog.physics.transverse import CALIBRATION_POISSON
-from gaugelog.physics.validity import Notice, OutOfDomain, above, finite, not_negative, not_zero
+from gaugelog.physics.validity import (
+    Notice,
+    OutOfDomain,
+    above,
+    between,
+    finite,
+    not_negative,
+    not_zero,
+    strictly_between,
+)
 
 ABSOLUTE_ZERO = -273.15
 SCATTER_RATES: dict[str, float] = {
@@ -38,6 +48,19 @@ def polynomial_output(celsius: Number, coefficients: Sequence[float]) -> Number:
     for coefficient in reversed(coefficients):
         total = total * celsius + finite("coefficient", coefficient)
     return total
+
+
+def polynomial_output_notices(celsius: Number, low: float, high: float) -> tuple[Notice, ...]:
+    """A notice where a temperature lies beyond those a lot's polynomial was fitted over, °C."""
+    at_most("low", finite("low", low), "high", finite("high", high))
+    plain = nominal(finite("celsius", celsius))
+    if not any_of((plain < low) | (plain > high)):
+        return ()
+    message = (
+        f"The lot's thermal output is fitted from {low:g} to {high:g} °C; a polynomial tells "
+        "nothing beyond."
+    )
+    return (Notice("polynomial output", message, "the lot's sheet"),)
 
 
 def referred_output(celsius: Number, coefficients: Sequence[float], reference: Number) -> Number:
@@ -88,7 +111,8 @@ def grid_output(
     Source: Dally and Riley, Experimental Stress Analysis, temperature compensation, with the
     transverse term (from memory).
     """
-    across = (1 + sensitivity) / (1 - poisson * sensitivity)
+    kt = strictly_between("transverse sensitivity", sensitivity, -0.5, 0.5)
+    across = (1 + kt) / (1 - between("poisson", poisson, -1.0, 0.5) * kt)
     own = finite("grid_coefficient", grid_coefficient) / not_zero("factor", factor)
     return (own + across * (finite("article", article) - finite("grid", grid))) * finite(
         "rise", rise
@@ -100,7 +124,8 @@ def scatter(rate: Number, celsius: Number, reference: Number) -> Number:
 
     `rate` in 1/K, such as one of `SCATTER_RATES`. Source: common practice.
     """
-    return not_negative("rate", rate) * magnitude(finite("celsius", celsius) - reference)
+    away = finite("celsius", celsius) - finite("reference", reference)
+    return not_negative("rate", rate) * magnitude(away)
 
 
 def factor_at(factor: Number, coefficient: Number, rise: Number) -> Number:

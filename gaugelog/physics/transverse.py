@@ -7,12 +7,11 @@ a grid of transverse sensitivity Kt reads ε̂ (1 − ν0 Kt) = ε + Kt ε_acros
 from __future__ import annotations
 
 from collections.abc import Sequence
-from math import cos, pi, sin
 
 from gaugelog.physics._maths import Number
-from gaugelog.physics.plane import PlaneStrain, strain_along
-from gaugelog.physics.rosette import inverse_of
-from gaugelog.physics.validity import OutOfDomain, finite, strictly_between
+from gaugelog.physics.plane import PlaneStrain
+from gaugelog.physics.rosette import rosette_state
+from gaugelog.physics.validity import OutOfDomain, between, finite, strictly_between
 
 CALIBRATION_POISSON = 0.285
 """Poisson's ratio of the beam on which gauge factors are usually measured. Common practice."""
@@ -26,7 +25,7 @@ def indicated_strain(
     Source: definition of transverse sensitivity and gauge factor, ASTM E251 (from memory).
     """
     kt = _sensitivity(sensitivity)
-    return (finite("along", along) + kt * finite("across", across)) / (1 - poisson * kt)
+    return (finite("along", along) + kt * finite("across", across)) / _beam(poisson, kt)
 
 
 def single_grid_strain(
@@ -41,7 +40,7 @@ def single_grid_strain(
     """
     kt = _sensitivity(sensitivity)
     below = 1 + kt * finite("biaxiality", biaxiality)
-    return finite("indicated", indicated) * (1 - poisson * kt) / below
+    return finite("indicated", indicated) * _beam(poisson, kt) / below
 
 
 def uncorrected_error(
@@ -52,7 +51,8 @@ def uncorrected_error(
     Source: as `indicated_strain`; in per cent in the literature of transverse sensitivity.
     """
     kt = _sensitivity(sensitivity)
-    return kt * (finite("biaxiality", biaxiality) + poisson) / (1 - poisson * kt)
+    below = _beam(poisson, kt)
+    return kt * (finite("biaxiality", biaxiality) + poisson) / below
 
 
 def tee_strains(
@@ -66,8 +66,8 @@ def tee_strains(
     `indicated_strain` solved.
     """
     (one, two), (k1, k2) = readings, (_sensitivity(item) for item in sensitivities)
-    first = (1 - poisson * k1) * finite("reading 1", one)
-    second = (1 - poisson * k2) * finite("reading 2", two)
+    first = _beam(poisson, k1) * finite("reading 1", one)
+    second = _beam(poisson, k2) * finite("reading 2", two)
     below = 1 - k1 * k2
     return (first - k1 * second) / below, (second - k2 * first) / below
 
@@ -82,9 +82,9 @@ def rectangular_strains(
     ε1 = (1 − ν0 Kt)/(1 − Kt²) (ε̂1 − Kt ε̂3), ε2 = … [(1 + Kt) ε̂2 − Kt (ε̂1 + ε̂3)].
     Source: three equations of `indicated_strain` solved; ASTM E1561 notes.
     """
-    one, two, three = (finite(f"reading {n}", item) for n, item in enumerate(readings, start=1))
+    one, two, three = _three(readings)
     kt = _sensitivity(sensitivity)
-    share = (1 - poisson * kt) / (1 - kt**2)
+    share = _beam(poisson, kt) / (1 - kt**2)
     return (
         share * (one - kt * three),
         share * ((1 + kt) * two - kt * (one + three)),
@@ -102,9 +102,9 @@ def delta_strains(
     ε1 = (1 − ν0 Kt)/(1 − Kt²) [(1 + Kt/3) ε̂1 − 2/3 Kt (ε̂2 + ε̂3)], and so round.
     Source: three equations of `indicated_strain` solved.
     """
-    one, two, three = (finite(f"reading {n}", item) for n, item in enumerate(readings, start=1))
+    one, two, three = _three(readings)
     kt = _sensitivity(sensitivity)
-    share = (1 - poisson * kt) / (1 - kt**2)
+    share = _beam(poisson, kt) / (1 - kt**2)
     total = one + two + three
     first, second, third = (
         share * ((1 + kt / 3) * each - 2 / 3 * kt * (total - each)) for each in (one, two, three)
@@ -112,42 +112,42 @@ def delta_strains(
     return first, second, third
 
 
+def corrected_strains(
+    readings: Sequence[Number],
+    angles: Sequence[float],
+    sensitivities: Sequence[Number],
+    poisson: float = CALIBRATION_POISSON,
+) -> tuple[Number, ...]:
+    """Strains along three or more grids at any angles, each with its own Kt; ratios.
+
+    ε_i = [(1 − ν0 K_i) ε̂_i − K_i S]/(1 − K_i), with S = εx + εy, the same for every grid. What
+    spare readings disagree by stays in them, for `rosette.fit_rosette` to find. `readings` n
+    ratios, `angles` n radians. Source: equations of `indicated_strain`, ε_across = S − ε.
+    """
+    if not len(readings) == len(angles) == len(sensitivities):
+        raise OutOfDomain("sensitivities", "must be one for each reading and angle.")
+    each_kt = [_sensitivity(kt) for kt in sensitivities]
+    own = [
+        _beam(poisson, kt) * finite(f"reading {number}", reading) / (1 - kt)
+        for number, (reading, kt) in enumerate(zip(readings, each_kt, strict=True), start=1)
+    ]
+    shares = [kt / (1 - kt) for kt in each_kt]
+    # S is the sum of a state that is linear in the strains, which are linear in S.
+    both = _sum_of(own, angles) / (1 + _sum_of(shares, angles))
+    return tuple(strain - share * both for strain, share in zip(own, shares, strict=True))
+
+
 def corrected_state(
     readings: Sequence[Number],
     angles: Sequence[float],
-    sensitivities: Sequence[float],
+    sensitivities: Sequence[Number],
     poisson: float = CALIBRATION_POISSON,
 ) -> PlaneStrain:
     """State from three or more grids at any angles, each with its own Kt, by least squares.
 
-    `readings` n ratios, `angles` n radians, `sensitivities` n plain ratios. Source: equations
-    of `indicated_strain` with `plane.strain_along`, least squares.
+    Source: `corrected_strains`, then `rosette.rosette_state`.
     """
-    if not len(readings) == len(angles) == len(sensitivities):
-        raise OutOfDomain("sensitivities", "must be one for each reading and angle.")
-    rows = [
-        _row(float(angle), float(_sensitivity(kt)), poisson)
-        for angle, kt in zip(angles, sensitivities, strict=True)
-    ]
-    x, y, shear = (
-        sum(weight * finite("reading", item) for weight, item in zip(line, readings, strict=True))
-        for line in inverse_of(rows)
-    )
-    return PlaneStrain(x, y, shear)
-
-
-def corrected_strains(
-    readings: Sequence[Number],
-    angles: Sequence[float],
-    sensitivities: Sequence[float],
-    poisson: float = CALIBRATION_POISSON,
-) -> tuple[Number, ...]:
-    """Strains along the grids themselves, corrected; as `corrected_state`, which is the source.
-
-    Source: as `corrected_state`.
-    """
-    state = corrected_state(readings, angles, sensitivities, poisson)
-    return tuple(strain_along(state, angle) for angle in angles)
+    return rosette_state(corrected_strains(readings, angles, sensitivities, poisson), angles)
 
 
 def shear_pair_factor(sensitivity: Number, poisson: float = CALIBRATION_POISSON) -> Number:
@@ -156,18 +156,26 @@ def shear_pair_factor(sensitivity: Number, poisson: float = CALIBRATION_POISSON)
     Source: the difference of two equations of `indicated_strain`.
     """
     kt = _sensitivity(sensitivity)
-    return (1 - poisson * kt) / (1 - kt)
+    return _beam(poisson, kt) / (1 - kt)
 
 
 def _sensitivity(value: Number) -> Number:
     return strictly_between("transverse sensitivity", value, -0.5, 0.5)
 
 
-def _row(angle: float, kt: float, poisson: float) -> tuple[float, float, float]:
-    along = (cos(angle) ** 2, sin(angle) ** 2, sin(angle) * cos(angle))
-    turned = angle + pi / 2
-    across = (cos(turned) ** 2, sin(turned) ** 2, sin(turned) * cos(turned))
-    one, two, three = (
-        (a + kt * b) / (1 - poisson * kt) for a, b in zip(along, across, strict=True)
-    )
+def _beam(poisson: Number, kt: Number) -> Number:
+    """1 − ν0 Kt: what the calibration beam's own strain across has put into the gauge factor."""
+    return 1 - between("poisson", poisson, -1.0, 0.5) * kt
+
+
+def _three(readings: Sequence[Number]) -> tuple[Number, Number, Number]:
+    if len(readings) != 3:
+        raise OutOfDomain("readings", f"must be three, not {len(readings)}.")
+    one, two, three = (finite(f"reading {n}", item) for n, item in enumerate(readings, start=1))
     return one, two, three
+
+
+def _sum_of(strains: Sequence[Number], angles: Sequence[float]) -> Number:
+    """εx + εy of the state that these strains along the grids make."""
+    state = rosette_state(strains, angles)
+    return state.x + state.y

@@ -15,6 +15,7 @@ CHECKS = (
     stress.shear_modulus,
     stress.isotropic_stress,
     stress.orthotropic_stress,
+    stress.turned_stress,
     stress.principal_stresses,
     stress.von_mises,
 )
@@ -73,6 +74,23 @@ def test_an_orthotropic_layer_by_its_compliance_matrix() -> None:
     wanted = np.linalg.solve(compliance, strain)
     found = stress.orthotropic_stress(PlaneStrain(*strain), along, across, poisson, shear)
     assert list(wanted) == pytest.approx([found.x, found.y, found.shear])
+
+
+def test_turned_and_principal_stresses_are_those_of_the_tensor() -> None:
+    # Independent program: NumPy, Q S Qᵀ and its symmetric eigenvalue solver.
+    angle, given = -0.4, stress.PlaneStress(80e6, -35e6, 27e6)
+    turn = np.array([[np.cos(angle), np.sin(angle)], [-np.sin(angle), np.cos(angle)]])
+    tensor = np.array([[given.x, given.shear], [given.shear, given.y]])
+    wanted = turn @ tensor @ turn.T
+    found = stress.turned_stress(given, angle)
+    assert [wanted[0, 0], wanted[1, 1], wanted[0, 1]] == pytest.approx(
+        [found.x, found.y, found.shear]
+    )
+    values, vectors = np.linalg.eigh(tensor)
+    ends = stress.principal_stresses(given)
+    assert list(values) == pytest.approx([ends.smallest, ends.largest])
+    assert ends.angle is not None
+    assert vectors[1, 1] / vectors[0, 1] == pytest.approx(np.tan(ends.angle))
 
 
 def test_equal_moduli_make_an_orthotropic_layer_isotropic() -> None:

@@ -10,6 +10,7 @@ from tests.outside.cases import case
 
 CHECKS = (
     temperature.polynomial_output,
+    temperature.polynomial_output_notices,
     temperature.referred_output,
     temperature.output_at_setting,
     temperature.mismatch_output,
@@ -92,6 +93,21 @@ def test_a_lots_polynomial_is_evaluated_as_numpy_does() -> None:
     referred = temperature.referred_output(points, coefficients, 24.0)
     at_reference = np.polynomial.polynomial.polyval(24.0, coefficients)
     assert np.allclose(wanted - at_reference, referred)
+
+
+def test_a_polynomial_is_told_to_end_where_its_data_end() -> None:
+    # Independent program: numpy.polynomial keeps the range of its data as `domain`; a cubic fitted
+    # to a saturating curve goes astray soon beyond (why lots name a range is common practice).
+    data = np.linspace(0.0, 100.0, 21)
+    truth = np.polynomial.Polynomial.fit(data, np.tanh(data / 30) * 1e-4, 3)
+    low, high = truth.domain
+    coefficients = [float(each) for each in truth.convert().coef]
+    inside, beyond = (temperature.polynomial_output(t, coefficients) for t in (high, 2 * high))
+    assert inside == pytest.approx(np.tanh(high / 30) * 1e-4, rel=0.05)
+    assert abs(beyond - 1e-4) > 1e-4
+    assert () == temperature.polynomial_output_notices(data, low, high)
+    for outside in (low - 1, high + 1):
+        assert "0 to 100 °C" in temperature.polynomial_output_notices(outside, low, high)[0].message
 
 
 def test_a_class_per_fahrenheit_is_recognised() -> None:

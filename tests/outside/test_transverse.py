@@ -97,3 +97,19 @@ def test_grids_of_their_own_sensitivity_are_solved_as_numpy_solves_them() -> Non
     found = transverse.corrected_state(readings, angles, kts, poisson)
     assert list(wanted) == pytest.approx([found.x, found.y, found.shear])
     assert [truth.x, truth.y, truth.shear] == pytest.approx([found.x, found.y, found.shear])
+
+
+def test_spare_grids_are_fitted_as_numpy_fits_them() -> None:
+    # Independent program: numpy.linalg.lstsq on the equations of the definition, each divided by
+    # (1 − Kt)/(1 − ν0 Kt), so that its residual is one of strain along the grid.
+    angles = np.radians([0.0, 45.0, 90.0, 135.0, 20.0])
+    kt, poisson = 0.02, 0.285
+    readings = np.array([410.0, 262.0, -155.0, 8.0, 401.0]) / MICRO
+    along = np.array([np.cos(angles) ** 2, np.sin(angles) ** 2, np.sin(angles) * np.cos(angles)]).T
+    rows = along + kt / (1 - kt) * np.array([1.0, 1.0, 0.0])
+    right = readings * (1 - poisson * kt) / (1 - kt)
+    wanted, *_ = np.linalg.lstsq(rows, right, rcond=None)
+    strains = transverse.corrected_strains(list(readings), list(angles), [kt] * 5, poisson)
+    found = transverse.corrected_state(list(readings), list(angles), [kt] * 5, poisson)
+    assert list(wanted) == pytest.approx([found.x, found.y, found.shear])
+    assert list(right - rows @ wanted) == pytest.approx(list(strains - along @ wanted))

@@ -1,4 +1,4 @@
-"""Plane strain and rosettes: invariants of rotation, round trips, symmetry, bad input."""
+"""Rosettes: round trips, numbering, spare grids, uncertain readings, bad input."""
 
 from __future__ import annotations
 
@@ -16,26 +16,7 @@ from gaugelog.physics.validity import OutOfDomain
 
 STRAIN = st.floats(min_value=-2e-3, max_value=2e-3)
 ANGLE = st.floats(min_value=-pi, max_value=pi)
-
-
-@given(STRAIN, STRAIN, STRAIN, ANGLE)
-def test_principal_strains_do_not_turn_with_the_axes(
-    x: float, y: float, shear: float, angle: float
-) -> None:
-    state = PlaneStrain(x, y, shear)
-    here = plane.principal_strains(state)
-    there = plane.principal_strains(plane.turned(state, angle))
-    assert here.largest == pytest.approx(there.largest, abs=1e-15)
-    assert here.smallest == pytest.approx(there.smallest, abs=1e-15)
-
-
-@given(STRAIN, STRAIN, STRAIN)
-def test_the_direction_told_is_that_of_the_largest_strain(x: float, y: float, shear: float) -> None:
-    state = PlaneStrain(x, y, shear)
-    found = plane.principal_strains(state)
-    if found.angle is not None:
-        assert -pi / 2 < found.angle <= pi / 2
-        assert plane.strain_along(state, found.angle) == pytest.approx(found.largest, abs=1e-15)
+NUMBERINGS: tuple[rosette.Numbering, ...] = ("counter-clockwise", "clockwise")
 
 
 @given(STRAIN, STRAIN, STRAIN, st.sampled_from(["rectangular", "delta"]))
@@ -58,19 +39,6 @@ def test_the_closed_forms_agree_with_least_squares(one: float, two: float, three
         assert [state.x, state.y, state.shear] == pytest.approx(
             [found.x, found.y, found.shear], abs=1e-14
         )
-
-
-@given(STRAIN)
-def test_equal_biaxial_strain_has_no_direction(strain: float) -> None:
-    assert plane.principal_strains(PlaneStrain(strain, strain, 0.0)).angle is None
-
-
-def test_in_an_array_no_direction_is_not_a_number() -> None:
-    state = PlaneStrain(np.array([1e-3, 1e-3]), np.array([1e-3, 0.0]), np.array([0.0, 0.0]))
-    angle = plane.principal_strains(state).angle
-    assert angle is not None
-    assert np.isnan(angle[0])
-    assert angle[1] == 0.0
 
 
 def test_uncertain_readings_pass_through_the_same_formula() -> None:
@@ -110,3 +78,63 @@ def test_bad_input_names_its_argument(
 ) -> None:
     with pytest.raises(OutOfDomain, match=named):
         rosette.rosette_state(readings, angles)
+
+
+@pytest.mark.parametrize("pattern", ["rectangular", "delta"])
+@given(STRAIN, STRAIN, STRAIN)
+def test_clockwise_numbering_mirrors_the_direction(
+    pattern: str, one: float, two: float, three: float
+) -> None:
+    directions = []
+    for numbering in NUMBERINGS:
+        angles = rosette.grid_angles(pattern, numbering)
+        state = rosette.rosette_state([one, two, three], angles)
+        directions.append((state.x, state.y, state.shear))
+    (x, y, shear), (mirrored_x, mirrored_y, mirrored_shear) = directions
+    assert [x, y, -shear] == pytest.approx([mirrored_x, mirrored_y, mirrored_shear], abs=1e-15)
+
+
+@given(STRAIN, STRAIN, STRAIN, st.lists(ANGLE, min_size=1, max_size=4))
+def test_spare_grids_that_agree_leave_nothing(
+    x: float, y: float, shear: float, more: list[float]
+) -> None:
+    state = PlaneStrain(x, y, shear)
+    angles = [*rosette.grid_angles("delta"), *more]
+    fit = rosette.fit_rosette([plane.strain_along(state, angle) for angle in angles], angles)
+    assert [0.0] * len(angles) == pytest.approx(list(fit.residuals), abs=1e-15)
+    assert () == rosette.fit_rosette_notices(fit, 1e-12)
+
+
+def test_a_spare_grid_that_disagrees_is_noticed() -> None:
+    angles = [0.0, pi / 4, pi / 2, 3 * pi / 4]
+    fit = rosette.fit_rosette([400e-6, 300e-6, -200e-6, -85e-6], angles)
+    assert 7.5e-6 == pytest.approx(fit.scatter)
+    told = rosette.fit_rosette_notices(fit, 5e-6)[0].message
+    assert "scatter by 7.5 µm/m" in told
+    assert "more than 5 µm/m" in told
+    assert () == rosette.fit_rosette_notices(fit, 8e-6)
+    three = rosette.fit_rosette([400e-6, 300e-6, -200e-6], angles[:3])
+    assert () == rosette.fit_rosette_notices(three, 0.0)
+
+
+def test_arrays_of_readings_give_arrays_of_states() -> None:
+    readings = np.array([[400.0, -200.0], [300.0, 300.0], [-200.0, 400.0]]) * 1e-6
+    many = rosette.fit_rosette(list(readings), rosette.grid_angles("rectangular")).state
+    for place in (0, 1):
+        one = rosette.rectangular_state(*readings[:, place])
+        assert [one.x, one.y, one.shear] == pytest.approx(
+            [many.x[place], many.y[place], many.shear[place]], abs=1e-18
+        )
+
+
+@pytest.mark.parametrize(
+    ("arguments", "named"),
+    [
+        (("star",), "pattern must be one of tee, rectangular, delta, not star"),
+        (("delta", "left"), "numbering must be one of"),
+        (("delta", "clockwise", "below"), "seen_from must be one of"),
+    ],
+)
+def test_an_unknown_pattern_is_named(arguments: tuple[str, ...], named: str) -> None:
+    with pytest.raises(OutOfDomain, match=named):
+        rosette.grid_angles(*arguments)  # type: ignore[arg-type]

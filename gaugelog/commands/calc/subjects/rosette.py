@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Sequence
 from dataclasses import replace
 from itertools import combinations
 
@@ -15,70 +14,29 @@ from gaugelog.commands.calc.bounds import (
     SMALL,
     Bound,
 )
-from gaugelog.commands.calc.choosing import need, one_each, only_one
+from gaugelog.commands.calc.choosing import need
 from gaugelog.commands.calc.dimensions import ANGLE, MODULUS, RATIO, STRAIN, STRESS
 from gaugelog.commands.calc.model import Answer, Argument, Family, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
+from gaugelog.commands.calc.subjects.rosettegrids import (
+    angles_of,
+    corrected_readings,
+    state_of,
+)
 from gaugelog.errors import Fault, Faulty
-from gaugelog.physics import plane, principal_budget, rosette, stress, transverse
+from gaugelog.physics import checkload, plane, principal_budget, rosette, stress, transverse
 from gaugelog.physics.estimates import normal
 
-_MOST_GRIDS = 12
 _MOST_EXCHANGED = 6
+_ALIKE = "none: alike in every direction"
 _CORRELATION = Bound("must lie between −1 and 1", lambda value: -1 <= value <= 1)
-
-
-def angles_of(values: Values) -> tuple[float, ...]:
-    """The grids' angles, radians, for the viewer of the gauges."""
-    if only_one(values, "pattern", "angles") == "angles":
-        angles: tuple[float, ...] = values["angles"]
-    else:
-        angles = rosette.grid_angles(values["pattern"], values["numbering"], values["seen_from"])
-    count, readings = len(angles), len(values["readings"])
-    if count != readings:
-        raise Faulty([Fault("readings", f"are {readings}, the grids are {count}.")])
-    if count > _MOST_GRIDS:
-        raise Faulty([Fault("readings", f"must be {_MOST_GRIDS} at most, not {count}.")])
-    return angles
-
-
-def state_of(values: Values, sheet: Sheet | None = None) -> plane.PlaneStrain:
-    """The state of strain at the rosette, axes from grid 1."""
-    sheet = sheet or Sheet()
-    readings, angles = _corrected(sheet, values), angles_of(values)
-    if values["pattern"] == "tee":
-        return sheet.by(rosette.tee_state, *readings)
-    fitted = sheet.by(rosette.fit_rosette, readings, angles)
-    if fitted.scatter is not None:
-        for number, residual in enumerate(fitted.residuals, start=1):
-            sheet.put(f"reading {number} less the fit", residual, STRAIN, 4)
-        sheet.put("scatter of the readings", fitted.scatter, STRAIN, 4)
-    return fitted.state
-
-
-def _corrected(sheet: Sheet, values: Values) -> Sequence[float]:
-    """Readings with the grids' transverse sensitivity taken off, where it is given."""
-    readings: tuple[float, ...] = values["readings"]
-    if values["transverse"] is None:
-        return readings
-    own = one_each("transverse", values["transverse"], len(readings))
-    angles, beam = angles_of(values), values["beam_poisson"]
-    if values["pattern"] == "tee":
-        corrected: Sequence[float] = sheet.by(
-            transverse.tee_strains, (readings[0], readings[1]), (own[0], own[1]), beam
-        )
-    else:
-        corrected = sheet.by(transverse.corrected_strains, readings, angles, own, beam)
-    for number, strain in enumerate(corrected, start=1):
-        sheet.put(f"grid {number}, transverse corrected", strain, STRAIN)
-    return corrected
 
 
 def _strains(values: Values) -> Answer:
     sheet = Sheet()
     state = state_of(values, sheet)
     found = sheet.by(plane.principal_strains, state)
-    direction = "none: alike in every direction" if found.angle is None else found.angle
+    direction = _ALIKE if found.angle is None else found.angle
     sheet.put("largest principal strain", found.largest, STRAIN)
     sheet.put("smallest principal strain", found.smallest, STRAIN)
     sheet.put("direction of the largest, from grid 1", direction, ANGLE, 4)
@@ -125,12 +83,17 @@ def _layer_stresses(sheet: Sheet, values: Values, state: plane.PlaneStrain) -> N
     sheet.put("stress along the fibre", found.x, STRESS, 4)
     sheet.put("stress across the fibre", found.y, STRESS, 4)
     sheet.put("shear stress in the layer", found.shear, STRESS, 4)
+    ends = sheet.by(stress.principal_stresses, found)
+    sheet.put("largest principal stress", ends.largest, STRESS, 4)
+    sheet.put("smallest principal stress", ends.smallest, STRESS, 4)
+    direction = _ALIKE if ends.angle is None else ends.angle
+    sheet.put("direction of the largest stress, from the fibre", direction, ANGLE, 4)
 
 
 def _doubt(sheet: Sheet, values: Values) -> None:
     """Standard uncertainties of the principal values, the grids' errors going together or not."""
     angles = angles_of(values)
-    strains = [normal(each, values["uncertainty"]) for each in _corrected(Sheet(), values)]
+    strains = [normal(each, values["uncertainty"]) for each in corrected_readings(Sheet(), values)]
     names = principal_budget.grid_names(len(angles))
     together = {pair: float(values["correlation"]) for pair in combinations(names, 2)}
     found = sheet.by(principal_budget.principal_budgets, strains, angles, together)
@@ -147,18 +110,13 @@ def _check(values: Values) -> Answer:
     if len(readings) > _MOST_EXCHANGED:
         raise Faulty([Fault("readings", f"must be {_MOST_EXCHANGED} at most for a check.")])
     expected = sheet.by(
-        rosette.uniaxial_readings,
+        checkload.uniaxial_readings,
         *(values["strain"], values["poisson"], angles, values["axis"]),
     )
     for number, strain in enumerate(expected, start=1):
         sheet.put(f"grid {number} should read", strain, STRAIN, 4)
-    order = sheet.by(rosette.exchanged_grids, readings, expected, values["tolerance"])
-    near = [
-        abs(one - other) <= values["tolerance"]
-        for one, other in zip(readings, expected, strict=True)
-    ]
-    word = "grids as planned" if all(near) else rosette.exchange_sentence(order)
-    sheet.put("answer", word)
+    orders = sheet.by(checkload.explaining_orders, readings, expected, values["tolerance"])
+    sheet.put("answer", checkload.order_sentence(orders))
     return sheet.answer()
 
 
