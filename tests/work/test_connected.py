@@ -1,4 +1,4 @@
-"""The connected circuit at the article, compared with what resistances read and the reel predict."""
+"""The connected circuit at the article, compared with what its resistances and reel predict."""
 
 from __future__ import annotations
 
