@@ -42,6 +42,37 @@ def test_arms_are_four() -> None:
     assert "must be four, not 3." == faults("bridge", arms="350, 350, 350 ohm")[0].what
 
 
+def test_annealed_constantan_reads_on_where_foil_would_not() -> None:
+    # ΔR/R = (1 + ε)² − 1: 21 % at 10 % strain (Dally and Riley, from memory).
+    typed = {"arrangement": "quarter two-wire", "grid": "annealed constantan"}
+    there = shown("bridge", **typed, strain="10 %")
+    assert "21 %" == there["change of resistance"]
+    assert 0.1 == pytest.approx(value("actual strain", "bridge", **typed, output=there["output"]))
+
+
+def test_a_semiconductor_bends_and_loses_factor_as_it_warms() -> None:
+    typed = {
+        "arrangement": "quarter two-wire",
+        "grid": "semiconductor",
+        "factor": "119.5",
+        "second": "4000",
+    }
+    there = shown("bridge", **typed, strain="1000 ue")
+    assert "12.35 %" == there["change of resistance"]
+    back = value("actual strain", "bridge", **typed, output=there["output"])
+    assert 1e-3 == pytest.approx(back, rel=1e-6)
+    warm = shown("bridge", **typed, strain="1000 ue", temperature="50 degC")
+    # K T₀/T with 298.15 K and 323.15 K.
+    assert "110.255" == warm["factor at 50 °C"]
+    assert answer("bridge", **typed, strain="4000 ue").warnings
+
+
+def test_other_grids_are_for_balanced_quarter_bridges() -> None:
+    other = {"grid": "semiconductor", "strain": "1 ue"}
+    assert ["grid"] == places("bridge", arrangement="half bending", **other)
+    assert ["second"] == places("bridge", arrangement="quarter two-wire", **other)
+
+
 def test_only_one_of_strain_output_and_arms_is_taken() -> None:
     placed = {"arrangement": "half bending"}
     assert ["strain, output, arms"] == places("bridge", **placed)

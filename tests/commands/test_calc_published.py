@@ -9,8 +9,9 @@ import math
 
 import pytest
 
+from gaugelog.commands.calc.sources import name_of, source_of
 from gaugelog.commands.calc.subjects import SUBJECTS
-from tests.commands.calculated import shown, value
+from tests.commands.calculated import answer, shown, value
 from tests.outside.cases import case
 
 MICRO, DEGREES, MEGA = 1e6, 180 / math.pi, 1e-6
@@ -331,6 +332,15 @@ def test_figures_are_shown_as_their_source_has_them(
 ) -> None:
     found = shown(subject, **typed)
     assert expected == {name: found[name] for name in expected}
+
+
+def test_every_formula_behind_these_figures_names_its_source() -> None:
+    rows = [(row[3], row[5]) for row in CASES] + [(row[1], row[2]) for row in PRINTED]
+    formulas = {each for subject, typed in rows for each in answer(subject, **typed).formulas}
+    assert len(formulas) > 50
+    silent = [name_of(each) for each in formulas if source_of(each) == "see its docstring"]
+    assert [] == silent
+    assert [] == [name_of(each) for each in formulas if "`" in source_of(each)]
 
 
 def test_every_subject_is_held_to_a_source() -> None:

@@ -275,6 +275,25 @@ def test_placement_has_a_kind_for_each_trouble(
     assert expected == shown("placement", **typed)[figure]
 
 
+def test_a_welded_carrier_takes_up_strain_over_its_ends() -> None:
+    # λ = √(E t h/G) = 1.118 mm (Volkersen 1938, from memory).
+    name = "length over which strain comes across"
+    welded = {
+        "what": "welded",
+        "length": "6 mm",
+        "carrier": "20 mm",
+        "modulus": "200 GPa",
+        "thickness": "125 um",
+    }
+    bond = {"shear_modulus": "1 GPa", "bond": "50 um"}
+    assert "1.118 mm" == shown("placement", **welded, **bond)[name]
+    spots = {"spot": "20 kN/mm", "pitch": "1 mm", "rows": "1 mm"}
+    assert "1.118 mm" == shown("placement", **welded, **spots)[name]
+    short = answer("placement", **{**welded, "carrier": "7 mm"}, **bond)
+    assert short.warnings
+    assert ["pitch", "rows"] == places("placement", **welded, spot="1 kN/mm")
+
+
 def test_a_kind_that_is_none_lists_those_there_are() -> None:
     (fault,) = faults("placement", what="upside down")
     assert "what" == fault.where

@@ -5,7 +5,7 @@ from __future__ import annotations
 from math import cos, degrees, pi, sin
 
 from gaugelog.commands.calc.model import Worked
-from gaugelog.commands.calc.subjects.rosette import angles_of, state_of
+from gaugelog.commands.calc.subjects.rosettegrids import angles_of, state_of
 from gaugelog.documents.sketch import ACCENT, GREY, INK, PAPER, Sketch, Spot
 from gaugelog.physics import plane
 

@@ -4,11 +4,19 @@ from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import NOT_ZERO, POISSON, POSITIVE
 from gaugelog.commands.calc.choosing import need, only_one
-from gaugelog.commands.calc.dimensions import OUTPUT, PERCENT, RATIO, RESISTANCE, STRAIN
+from gaugelog.commands.calc.dimensions import (
+    OUTPUT,
+    PERCENT,
+    RATIO,
+    RESISTANCE,
+    STRAIN,
+    TEMPERATURE,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
+from gaugelog.commands.calc.subjects.othergrids import FOIL, GRIDS, answer_of
 from gaugelog.errors import Fault, Faulty
-from gaugelog.physics import arrangements, balance, bridge
+from gaugelog.physics import arrangements, balance, bridge, largestrain
 
 
 def _compute(values: Values) -> Answer:
@@ -17,6 +25,8 @@ def _compute(values: Values) -> Answer:
     if given != "arms":
         need(values, "arrangement", why="with strain and output")
         _check_poisson(values)
+        if values["grid"] != FOIL:
+            return answer_of(values, given)
     return ways[given](values)
 
 
@@ -41,6 +51,7 @@ def _from_strain(values: Values) -> Answer:
         part = sheet.by(bridge.nonlinearity_of_actual, strain, factor, *place)
         sheet.put("non-linearity, of the strain", part, PERCENT, 4)
     sheet.warn(bridge.indicated_strain_notices(strain, factor, *place))
+    sheet.warn(largestrain.factor_at_strain_notices(strain))
     return sheet.answer()
 
 
@@ -52,16 +63,24 @@ def _from_output(values: Values) -> Answer:
     sheet.put("strain a linear scale shows", shown, STRAIN, 6)
     sheet.put("actual strain", actual, STRAIN, 6)
     sheet.warn(bridge.indicated_strain_notices(actual, factor, *place))
+    sheet.warn(largestrain.factor_at_strain_notices(actual))
     return sheet.answer()
 
 
 def _from_arms(values: Values) -> Answer:
     if len(values["arms"]) != 4:
         raise Faulty([Fault("arms", f"must be four, not {len(values['arms'])}.")])
-    sheet, arms, adjusted = Sheet(), values["arms"], int(values["adjust"])
+    sheet, arms = Sheet(), values["arms"]
     sheet.put("output", sheet.by(bridge.output_ratio, *arms), OUTPUT, 7)
     shown = sheet.by(bridge.indicated_strain, bridge.output_ratio(*arms), values["factor"])
     sheet.put("as strain of one grid, linear scale", shown, STRAIN, 6)
+    if values["adjust"] is not None:
+        _null(sheet, arms, int(values["adjust"]))
+    return sheet.answer()
+
+
+def _null(sheet: Sheet, arms: tuple[float, float, float, float], adjusted: int) -> None:
+    """What arm nulls the bridge, and the resistor that makes it so."""
     wanted = sheet.by(balance.balancing_arm, arms, adjusted)
     sheet.put(f"arm {adjusted} that nulls it", wanted, RESISTANCE, 7)
     if wanted > arms[adjusted - 1]:
@@ -70,7 +89,6 @@ def _from_arms(values: Values) -> Answer:
     elif wanted < arms[adjusted - 1]:
         across = sheet.by(balance.balancing_parallel, arms, adjusted)
         sheet.put(f"resistor across arm {adjusted}", across, RESISTANCE)
-    return sheet.answer()
 
 
 SUBJECT = Subject(
@@ -86,6 +104,9 @@ SUBJECT = Subject(
         Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
         Argument("strain", "strain along the grid", STRAIN, ""),
         Argument("output", "measured output", OUTPUT, ""),
+        Argument("grid", "that the bridge is made of", choices=GRIDS, default=FOIL),
+        Argument("second", "second-order term of a semiconductor", RATIO, "", example="4000"),
+        Argument("temperature", "of a semiconductor, its sheet's where left out", TEMPERATURE, ""),
         Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "", bound=POISSON),
         Argument("initial", "output before loading", OUTPUT, "0 mV/V"),
         Argument(
@@ -97,7 +118,7 @@ SUBJECT = Subject(
             bound=POSITIVE,
             example="351.2, 350, 350, 350 ohm",
         ),
-        Argument("adjust", "arm to null with", choices=("1", "2", "3", "4"), default="2"),
+        Argument("adjust", "arm to null with", choices=("1", "2", "3", "4"), default=""),
     ),
     _compute,
 )

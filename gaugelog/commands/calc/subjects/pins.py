@@ -2,26 +2,20 @@
 
 from __future__ import annotations
 
-import re
-from dataclasses import dataclass
-
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, POSITIVE, whole
 from gaugelog.commands.calc.dimensions import INSULATION, PERCENT, RATIO, RESISTANCE
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
-from gaugelog.commands.calc.quantities import NotUnderstood, show, understand
+from gaugelog.commands.calc.quantities import show
 from gaugelog.commands.calc.sheet import Sheet
-from gaugelog.commands.calc.stated import Stated, stated
+from gaugelog.commands.calc.subjects.pinreadings import TypedReading, readings
 from gaugelog.errors import Fault, Faulty
 from gaugelog.physics import change, pin_network, pins
 from gaugelog.physics.arrangements import ARRANGEMENTS
 from gaugelog.physics.circuit import Circuit, circuit_of
-from gaugelog.physics.layouts import LAYOUTS
 from gaugelog.physics.network import resistance_between
 from gaugelog.physics.pin_network import ARTICLE, SHIELD
 from gaugelog.physics.pin_next import RIVAL
 
-_OVERLOAD = re.compile(r"(?:ol|o\.l\.?|overload|open|>\s*(?P<bound>.+))", re.IGNORECASE)
-_MOST_READINGS = 60
 _MEANINGS = {
     "nothing": "the wiring reads as planned",
     "open": "no current passes: a broken wire, a lifted tab or a joint that never took",
@@ -32,55 +26,6 @@ _MEANINGS = {
     "joint": "a cold or corroded joint, or a loose contact, adds resistance",
     "swapped": "these wires have changed places at one end",
 }
-
-
-@dataclass(frozen=True)
-class _Typed:
-    """A resistance typed between two terminals; `width` is its own doubt, if it was typed."""
-
-    between: tuple[str, str]
-    stated: Stated | None
-    bound: float | None = None
-
-
-def _terminals() -> dict[str, str]:
-    """Every terminal of every layout by its name in lower case."""
-    wires = {pin for each in LAYOUTS.values() for pin in each.wires}
-    tabs = {tab for each in LAYOUTS.values() for tab in each.wires.values()}
-    return {name.casefold(): name for name in (*sorted(wires | tabs), ARTICLE, SHIELD)}
-
-
-def _readings(text: str) -> tuple[tuple[_Typed, ...], str]:
-    """Readings such as "supply+ to signal+ = 350.2 ohm", parted by commas or semicolons."""
-    parts = [part.strip() for part in re.split(r"[,;]", text) if part.strip()]
-    if not 0 < len(parts) <= _MOST_READINGS:
-        raise NotUnderstood(f"must hold 1 to {_MOST_READINGS} resistances")
-    found = [_reading(part) for part in parts]
-    return tuple(each for each, _ in found), "; ".join(shown for _, shown in found)
-
-
-def _reading(part: str) -> tuple[_Typed, str]:
-    # "signal+ to ARTICLE > 20 Mohm" needs no equals sign.
-    places, equals, figure = (part if "=" in part else part.replace(">", "= >", 1)).partition("=")
-    ends = [" ".join(end.split()) for end in re.split(r"\s+to\s+", places.strip())]
-    if not equals or len(ends) != 2:
-        raise NotUnderstood(f"“{part}” is no reading; type it like supply+ to signal+ = 350.2 ohm")
-    known = _terminals()
-    for end in ends:
-        if end.casefold() not in known:
-            raise NotUnderstood(f"“{end}” is no terminal; known: {', '.join(known.values())}")
-    one, other = (known[end.casefold()] for end in ends)
-    if one == other:
-        raise NotUnderstood(f"“{part}” names one terminal twice")
-    over = _OVERLOAD.fullmatch(figure.strip())
-    if over is None:
-        value, shown = stated(RESISTANCE)(figure.strip())
-        if value.value is None or value.value < 0:
-            raise NotUnderstood(f"“{part}” needs a resistance that is not negative")
-        return _Typed((one, other), value), f"{one} to {other} = {shown}"
-    bound = understand(over["bound"], INSULATION) if over["bound"] else None
-    told = f"> {bound.shown}" if bound else "overload"
-    return _Typed((one, other), None, bound.value if bound else None), f"{one} to {other} {told}"
 
 
 def _compute(values: Values) -> Answer:
@@ -114,13 +59,13 @@ def _ohm(value: float) -> str:
 
 def _diagnose(sheet: Sheet, values: Values, circuit: Circuit, plugged: bool) -> None:
     _refuse_strangers(values, circuit, plugged)
-    readings = [_measured(sheet, values, each) for each in values["readings"]]
-    for each in readings:
+    measured = [_measured(sheet, values, each) for each in values["readings"]]
+    for each in measured:
         expected = _expected(sheet, circuit, each.between, plugged)
         sheet.put(f"{' to '.join(each.between)} should read", _ohm(expected))
     found = sheet.by(
         pins.diagnose,
-        *(circuit, readings),
+        *(circuit, measured),
         part_spread=values["part_spread"],
         wire_spread=values["wire_spread"],
         plugged=plugged,
@@ -179,7 +124,7 @@ def _listed(names: set[str]) -> str:
     return ", ".join(sorted(names))
 
 
-def _measured(sheet: Sheet, values: Values, typed: _Typed) -> pins.PinReading:
+def _measured(sheet: Sheet, values: Values, typed: TypedReading) -> pins.PinReading:
     """A reading with its standard uncertainty, by its own width or the meter's accuracy."""
     if typed.stated is None:
         bound = typed.bound or values["range"]
@@ -206,7 +151,7 @@ SUBJECT = Subject(
             "readings",
             "resistances between terminals, ARTICLE and SHIELD among them; OL for an overload",
             default="",
-            read=_readings,
+            read=readings,
             example="supply+ to signal+ = 350.2 ohm, signal+ to ARTICLE > 20 Mohm",
         ),
         Argument("accuracy", "of the meter, ± of reading", PERCENT, "0.2 %", bound=NOT_NEGATIVE),

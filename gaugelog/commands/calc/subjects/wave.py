@@ -27,6 +27,8 @@ def _compute(values: Values) -> Answer:
     if values["velocity"] is not None:
         strain = sheet.by(dynamics.strain_of_velocity, values["velocity"], speed)
         sheet.put("strain behind the front", strain, STRAIN)
+    if values["frequency"] is not None:
+        sheet.put("length of the wave", speed / values["frequency"], LENGTH)
     if values["length"] is not None:
         _grid(sheet, values, speed)
     if values["corner"] is not None:
@@ -53,7 +55,6 @@ def _grid(sheet: Sheet, values: Values, speed: float) -> None:
     """What the grid's length makes of the wave."""
     length, frequency = values["length"], values["frequency"]
     if frequency is not None:
-        sheet.put("length of the wave", speed / frequency, LENGTH)
         share = sheet.by(dynamics.wave_average, length, frequency, speed)
         sheet.put("part of the amplitude shown", share, PERCENT, 7)
         sheet.warn(dynamics.wave_average_notices(length, frequency, speed))
