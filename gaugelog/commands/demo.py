@@ -74,25 +74,37 @@ def _hand_out(story: Story, folder: Path) -> list[Path]:
 def _summary(story: Story, folder: Path, records: list[Path]) -> None:
     from gaugelog.commands.story import PASSPHRASE
 
+    program, first = _how_to_type(), records[0].name if records else "FB-1-r1.pdf"
     put(
         "",
         f"The invented job “{story.told['name']}” is in {folder}/:",
         "  input/     the files a planner writes; README.md there explains each",
         "  logbook/   the logbook: journal, ledger, evidence",
         "  keys/      the three people's keys, here only because this is a demo",
-        *(f"  {path.name:<10} the signed record of a point" for path in records),
+        *(f"  {path.name}  the signed record of a point" for path in records),
         "",
         "Look at: FB-2, where the insulation failed at 0.42 GΩ, was put right and passed.",
         "",
         "Type next:",
         f"  cd {folder}/logbook",
-        "  export GAUGELOG_KEYS=../keys        # the passphrase of everyone: " + PASSPHRASE,
-        "  gaugelog journal check              # is every entry as it was signed?",
-        "  gaugelog journal show FB-2          # what happened at a point",
-        "  gaugelog plan show                  # points, lots, circuits, channels, states",
-        "  gaugelog step next FB-1             # what a point needs now",
-        "  gaugelog record                     # the records and their digests",
-        f"  pdfsig ../{records[0].name if records else 'FB-1-r1.pdf'}             "
-        "# the signatures, judged by a foreign program",
+        "  export GAUGELOG_KEYS=../keys    # the passphrase of everyone: " + PASSPHRASE,
+        f"  {program} journal check    # is every entry as it was signed?",
+        f"  {program} journal show FB-2    # what happened at a point",
+        f"  {program} plan show    # points, lots, circuits, channels, states",
+        f"  {program} step next FB-1    # what a point needs now",
+        f"  {program} record    # the records and their digests",
+        f"  pdfsig ../{first}    # the signatures, judged by a foreign program",
+        "",
         f"Head of the journal: {story.book().head().printed}",
     )
+
+
+def _how_to_type() -> str:
+    """How this very program is typed from the logbook's folder: its name, or its whole path."""
+    import shutil
+    import sys
+
+    if shutil.which("gaugelog"):
+        return "gaugelog"
+    started = Path(sys.argv[0])
+    return str(started.absolute()) if started.name == "gaugelog" else "gaugelog"

@@ -8,7 +8,15 @@ from typing import Annotated
 import typer
 
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, Json, SecretFd, key_folder, open_logbook, unlock
+from gaugelog.commands.session import (
+    As,
+    Json,
+    SecretFd,
+    key_folder,
+    open_logbook,
+    unlock,
+    unlock_asking,
+)
 from gaugelog.commands.talk import put_json, put_table, say
 
 group = typer.Typer(help="People: enrol, list, revoke.")
@@ -36,15 +44,18 @@ def enrol(
 
     Asks the custodian's passphrase, then the person's own new one.
     """
+    from gaugelog.rules.who import demand_role
     from gaugelog.work import people
 
     logbook = open_logbook(ctx)
     secrets = Secrets(secret_fd)
     keys = key_folder(logbook.id)
-    phrase = secrets.ask(f"Passphrase of {as_}")
+    signer, phrase = unlock_asking(logbook, as_, secrets)
+    with logbook.reading() as view:
+        demand_role(view, signer.person, "custodian")
     done = people.enrol(
         logbook,
-        keys.unlock(as_, phrase),
+        signer,
         keys.unlock_authority(phrase),
         keys,
         newcomer=people.Newcomer(person, name, initials, tuple(role), tuple(qualification or ())),

@@ -10,7 +10,7 @@ from typing import TYPE_CHECKING, Annotated
 import typer
 
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.errors import KeyTrouble
+from gaugelog.errors import KeyTrouble, Refused
 
 if TYPE_CHECKING:
     from gaugelog.journal.keys import KeyFolder, Signer
@@ -72,16 +72,40 @@ def key_folder(logbook_id: str) -> KeyFolder:
 
 
 def unlock(logbook: Logbook, person: str, secrets: Secrets, *, purpose: str = "") -> Signer:
-    """The unlocked key of `person`, asked for once. Raises KeyTrouble when it can't be."""
-    return unlock_for(logbook.id, person, secrets, purpose=purpose)
+    """The unlocked key of `person`, asked for once.
+
+    Raises KeyTrouble when nobody was named or the key can't be opened, Refused when nobody of
+    that id is enrolled.
+    """
+    return unlock_asking(logbook, person, secrets, purpose=purpose)[0]
+
+
+def unlock_asking(
+    logbook: Logbook, person: str, secrets: Secrets, *, purpose: str = ""
+) -> tuple[Signer, str]:
+    """The same, with the passphrase that opened the key."""
+    from gaugelog.ledger.people import PersonRow
+
+    _demand_named(person)
+    with logbook.reading() as view:
+        if view.get(PersonRow, person) is None:
+            raise Refused(f"Nobody is enrolled as {person}.", "See `gaugelog person list`.")
+    return _unlocked(logbook.id, person, secrets, purpose)
 
 
 def unlock_for(logbook_id: str, person: str, secrets: Secrets, *, purpose: str = "") -> Signer:
     """The same for a logbook that is not open yet."""
+    _demand_named(person)
+    return _unlocked(logbook_id, person, secrets, purpose)[0]
+
+
+def _demand_named(person: str) -> None:
     if not person:
         raise KeyTrouble(
             "Who acts was not said.", "Name the person with --as ID or GAUGELOG_PERSON."
         )
-    folder = key_folder(logbook_id)
-    wanted = f"Passphrase of {person}" + (f" to {purpose}" if purpose else "")
-    return folder.unlock(person, secrets.ask(wanted))
+
+
+def _unlocked(logbook_id: str, person: str, secrets: Secrets, purpose: str) -> tuple[Signer, str]:
+    phrase = secrets.ask(f"Passphrase of {person}" + (f" to {purpose}" if purpose else ""))
+    return key_folder(logbook_id).unlock(person, phrase), phrase

@@ -10,6 +10,7 @@ from gaugelog.commands.calc.engine import parse_pairs
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+from gaugelog.errors import Fault, Faulty
 
 if TYPE_CHECKING:
     from gaugelog.ledger.routes import StepInput
@@ -60,11 +61,25 @@ def _tell_step(found: NextStep) -> None:
     put(*_wrapped(step.instruction))
     for caution in step.cautions:
         put(*_wrapped(caution, "CAUTION: "))
-    put("", *(_input_line(item) for item in step.inputs))
-    put(*(f"  time: {window.sentence}" for window in found.windows))
-    put(*(f"  BLOCKED: {block}" for block in found.blocks))
-    again = "; measured before: give --reason" if found.again else ""
-    put("", f"Next: {_command(found)}{again}")
+    if found.facts:
+        put("", "From the plan:", *(f"  {fact}" for fact in found.facts))
+    if step.inputs:
+        put("", "To enter:", *(_input_line(item) for item in step.inputs))
+    put(*(f"  time: {window.sentence}" for window in found.windows if window.open))
+    put("", *(f"BLOCKED: {block}" for block in found.blocks))
+    put(*([] if found.blocks else [f"Next: {_command(found)}"]), *_ways_back(found))
+
+
+def _ways_back(found: NextStep) -> list[str]:
+    """Where a window is over, the step to go back to."""
+    if found.step is None:
+        return []
+    pairs = zip(found.step.windows, found.windows, strict=False)
+    return [
+        f"Next: gaugelog step redo {found.point} {planned.after} --reason WHY"
+        for planned, window in pairs
+        if not window.open and planned.bound == "within"
+    ]
 
 
 def _wrapped(text: str, lead: str = "") -> list[str]:
@@ -81,7 +96,8 @@ def _input_line(item: StepInput) -> str:
 
 def _command(found: NextStep) -> str:
     names = " ".join(f"{item.name}=…" for item in found.step.inputs) if found.step else ""
-    return " ".join(f"gaugelog step do {found.point} {names}".split())
+    again = " --reason WHY" if found.again else ""
+    return " ".join(f"gaugelog step do {found.point} {names}{again}".split())
 
 
 @group.command()
@@ -95,8 +111,8 @@ def do(
     note: Annotated[str, typer.Option(help="A remark kept with the step.")] = "",
     reason: Annotated[str, typer.Option(help="Why a reading is taken again.")] = "",
     refuse: Annotated[
-        str, typer.Option(help="At a hold: refuse with this reason instead of releasing.")
-    ] = "",
+        str | None, typer.Option(help="At a hold: refuse with this reason instead of releasing.")
+    ] = None,
     at: At = "",
     as_: As = "",
     secret_fd: SecretFd = None,
@@ -111,12 +127,24 @@ def do(
     logbook = open_logbook(ctx)
     found = steps.next_step(logbook, point)
     typed = {**parse_pairs(pairs or [])}
-    typed.update(_ask_missing(found, typed))
+    if not found.blocks:
+        typed.update(_ask_missing(found, typed))
+    if refuse is not None and not refuse.strip():
+        raise Faulty([Fault("--refuse", "is empty.", "Say why the hold is refused.")])
+    steps.rehearse(logbook, point=point, typed=typed, at=at)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=_purpose(found))
     outcome = steps.do(
-        logbook, signer, point=point, typed=typed, note=note, reason=reason, refuse=refuse, at=at
+        logbook,
+        signer,
+        point=point,
+        typed=typed,
+        note=note,
+        reason=reason,
+        refuse=refuse or "",
+        at=at,
     )
     _tell_outcome(outcome)
+    _tell_what_follows(steps.next_step(logbook, point), outcome)
     raise typer.Exit(int(outcome.exit_code))
 
 
@@ -146,6 +174,16 @@ def _tell_outcome(outcome: StepOutcome) -> None:
         put(f"{reading.check} {reading.stage} {reading.typed}: {reading.verdict.word.upper()}")
         put(*(f"  {line}" for line in shown.explained))
     say(*outcome.lines)
+
+
+def _tell_what_follows(found: NextStep, outcome: StepOutcome) -> None:
+    if not outcome.settled:
+        return
+    if found.step is None:
+        say(f"Next: {found.title} of {found.point}: gaugelog submit {found.point}")
+        return
+    hold = ", a hold for a second person" if found.step.hold else ""
+    say(f"Next, {found.number} of {found.count}{hold}: {found.step.title}")
 
 
 @group.command()

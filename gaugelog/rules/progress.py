@@ -55,6 +55,8 @@ class NextStep:
     blocks: tuple[str, ...] = ()
     again: bool = False
     """A reading of this step was kept and blocks: measuring again needs a reason."""
+    facts: tuple[str, ...] = ()
+    """What the plan says that the step needs."""
 
     @property
     def title(self) -> str:

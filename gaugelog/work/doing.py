@@ -60,7 +60,12 @@ class Doing:
     @property
     def day(self) -> date:
         """The calendar day of it where the work is done."""
-        return (self.observed + timedelta(minutes=self.making.moment.offset_minutes)).date()
+        return day_of(self.observed, self.making.moment)
+
+
+def day_of(observed: datetime, moment: Moment) -> date:
+    """The calendar day of an observation (UTC) where the work is done."""
+    return (observed + timedelta(minutes=moment.offset_minutes)).date()
 
 
 def point_row(view: View, label: str) -> PointRow:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Mapping
+from dataclasses import replace
 from functools import partial
 
 from gaugelog.errors import Fault, Faulty, Refused
@@ -13,6 +14,7 @@ from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
 from gaugelog.rules.air import air_troubles
+from gaugelog.rules.facts import plan_facts
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
@@ -21,6 +23,7 @@ from gaugelog.work.doing import (
     Doing,
     StepOutcome,
     about,
+    day_of,
     observed_at,
     point_row,
     shown,
@@ -35,9 +38,31 @@ __all__ = ["StepOutcome", "do", "next_step", "redo", "skip", "worklist"]
 
 
 def next_step(logbook: Logbook, point: str) -> NextStep:
-    """What a point needs now. Raises Refused when there is no such point."""
+    """What a point needs now, with what the plan says of it.
+
+    Raises Refused when there is no such point.
+    """
     with logbook.reading() as view:
-        return progress(view, point_row(view, point), logbook.clock.now())
+        row = point_row(view, point)
+        found = progress(view, row, logbook.clock.now())
+        if found.step is None:
+            return found
+        facts = plan_facts(view, row, found.step, found.subject, found.number)
+        return replace(found, facts=tuple(facts))
+
+
+def rehearse(logbook: Logbook, *, point: str, typed: Mapping[str, str], at: str = "") -> None:
+    """Look whether a step could be done with these inputs, before anyone signs. Keeps nothing.
+
+    Raises Faulty and Refused as `do` would for what is typed and for the time.
+    """
+    moment = logbook.clock.now()
+    with logbook.reading() as view:
+        row = point_row(view, point)
+        observed = observed_at(at, moment)
+        step = _open(progress(view, row, moment, observed))
+        if not step.hold:
+            understand(Asked(view, row, step, day_of(observed, moment)), typed)
 
 
 def worklist(logbook: Logbook) -> list[NextStep]:

@@ -56,7 +56,7 @@ def test_the_failed_check_was_put_right_with_a_reason(demo: Path, command: Comma
 
 def test_every_command_the_summary_names_works(demo: Path, command: Command) -> None:
     source = Path(__file__).parents[2] / "gaugelog" / "commands" / "demo.py"
-    lines = re.findall(r'"  gaugelog ([^#"]+?)\s*#', source.read_text(encoding="utf-8"))
+    lines = re.findall(r'"  {program} ([^#"]+?)\s*#', source.read_text(encoding="utf-8"))
     assert len(lines) >= 5
     for line in lines:
         assert command(*shlex.split(line)).code == 0, line

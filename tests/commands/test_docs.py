@@ -70,3 +70,21 @@ def test_a_slip_in_a_commands_name_is_told(command: Command) -> None:
 
 def test_the_version_is_told(command: Command) -> None:
     assert command("--version").out.startswith("gaugelog ")
+
+
+def test_the_readmes_job_runs_as_it_is_written(
+    tmp_path: Path, monkeypatch: pytest.MonkeyPatch, command: Command
+) -> None:
+    monkeypatch.setenv("GAUGELOG_KEYS", str(tmp_path / "keys"))
+    (tmp_path / "demo_project").symlink_to(ROOT / "demo_project")
+    monkeypatch.chdir(tmp_path)
+    job = README[README.index("## A job from start") : README.index("and so on, step by step")]
+    lines = re.findall(r"^    gaugelog (.+?)(?:\s{2,}#.*)?$", job, re.MULTILINE)
+    assert len(lines) == 13
+    for line in lines:
+        words = shlex.split(line)
+        asks = "--as" in words or words[0] == "start"
+        told = command(*words, secrets="long enough\nlong enough\n" if asks else "")
+        assert told.code == 0, (line, told.err)
+        if words[0] == "start":
+            monkeypatch.chdir(tmp_path / "bridge")
