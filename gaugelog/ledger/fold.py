@@ -12,6 +12,7 @@ from typing import Any
 
 from pydantic import ConfigDict, create_model
 
+from gaugelog.errors import GaugelogError, StorageTrouble
 from gaugelog.journal.check.report import Trouble
 from gaugelog.journal.entry import Entry
 from gaugelog.journal.order import ledger_order
@@ -120,13 +121,30 @@ def keep(connection: sqlite3.Connection, entries: Iterable[Entry]) -> None:
 def fold(entries: Iterable[Entry], *, one_chain: bool = False) -> Buffer:
     """The whole ledger from the whole journal, in memory.
 
-    With `one_chain` the entries are those of a single chain, in its own order already.
+    With `one_chain` the entries are those of a single chain, in its own order already. Raises
+    StorageTrouble naming an entry that can't be followed.
     """
     buffer = Buffer()
     with _no_collection():
         for entry in entries if one_chain else ledger_order(entries):
-            buffer.take(apply(buffer, entry))
+            try:
+                buffer.take(apply(buffer, entry))
+            except (LookupError, ValueError, TypeError) as error:
+                raise _unfoldable(entry, error) from error
     return buffer
+
+
+def _unfoldable(entry: Entry, error: Exception) -> StorageTrouble:
+    """What an entry says can't be followed: a newer program's, or bytes that were altered."""
+    try:
+        place = f"Entry {entry.header.seq}, a {entry.header.kind},"
+    except GaugelogError:
+        place = "An entry whose header can't be read"
+    first = str(error).splitlines()[0] if str(error) else type(error).__name__
+    return StorageTrouble(
+        f"{place} can't be followed by this version: {first}.",
+        "Update Gaugelog, or see what `gaugelog journal check` finds.",
+    )
 
 
 @contextmanager
