@@ -4,6 +4,10 @@ from __future__ import annotations
 
 import sys
 from collections.abc import Sequence
+from typing import TYPE_CHECKING
+
+if TYPE_CHECKING:
+    from gaugelog.errors import GaugelogError
 
 
 def main() -> None:
@@ -26,11 +30,26 @@ def run(arguments: Sequence[str]) -> int:
     except GaugelogError as error:
         tell_error(error)
         return int(error.exit_code)
+    except OSError as error:
+        trouble = _not_written(error)
+        tell_error(trouble)
+        return int(trouble.exit_code)
     except SystemExit as end:
         return _code(end)
     except Exception as error:
         return tell_unexpected(error, debug="--debug" in arguments)
     return 0
+
+
+def _not_written(error: OSError) -> GaugelogError:
+    """What the system said about a file, in a sentence."""
+    from gaugelog.errors import StorageTrouble
+
+    what = error.filename or "A file"
+    reason = error.strerror or type(error).__name__
+    return StorageTrouble(
+        f"{what} can't be read or written: {reason}.", "Name another place, or mend this one."
+    )
 
 
 def _code(end: SystemExit) -> int:

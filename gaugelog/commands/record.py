@@ -43,6 +43,11 @@ def record(
     put(str(target))
 
 
+def _short(name: str, value: object) -> str:
+    """A cell of the list; a digest by its beginning, whole with --json."""
+    return f"{str(value)[:12]} …" if name == "sha256" else str(value)
+
+
 def _list(rows: list[dict[str, str]], json: bool) -> None:
     if json:
         put_json(rows)
@@ -50,6 +55,6 @@ def _list(rows: list[dict[str, str]], json: bool) -> None:
     put_table(
         "Records",
         ["point", ">revision", "state", "submitted by", "accepted by", "head", "SHA-256", "reason"],
-        [[str(value) for value in row.values()] for row in rows],
+        [[_short(name, value) for name, value in row.items()] for row in rows],
         empty="No point has been submitted yet.",
     )

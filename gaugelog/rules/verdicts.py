@@ -96,7 +96,7 @@ def judge_change(basis: Basis, stage: str, before: Taken, after: Taken) -> Judge
     uncertainty = spread / before.si
     found = judge(share, uncertainty, allowed, coverage=float(basis.criteria.coverage))
     verdict = _verdict(found, basis.criteria, uncertainty, "%", rule)
-    return Judged(limits, verdict, quantity(share, "%"))
+    return Judged(limits, verdict, quantity(share, "%", 4))
 
 
 def _both_ways(limits: tuple[LimitFound, ...]) -> tuple[LimitFound, ...]:

@@ -166,3 +166,21 @@ def test_someone_enrolled_anew_signs_again(job: Path, command: Command) -> None:
         assert told.code == 0, told.err
     _do(command, "safe=yes")
     assert command("journal", "check").code == 0
+
+
+def test_a_record_goes_to_no_folder_that_is_not_there(job: Path, command: Command) -> None:
+    told = command("record", "FB-1", "--draft", "--out", str(job / "none" / "x.pdf"))
+    assert told.code == 6
+    assert "can't be read or written" in told.err
+
+
+def test_a_hold_is_not_refused_without_a_reason(job: Path, command: Command) -> None:
+    told = command("step", "do", "FB-1", "--refuse", "", "--as", "q.reyes", secrets=f"{WORD}\n")
+    assert told.code == 3
+    assert "--refuse" in told.err
+
+
+def test_a_step_shows_what_the_plan_says_of_it(job: Path, command: Command) -> None:
+    assert "permit: Work from the inspection gantry only" in command("step", "next", "FB-1").out
+    _do(command, "safe=yes")
+    assert "on the shelf: K7-03/1" in command("step", "next", "FB-1").out
