@@ -11,7 +11,8 @@ import pytest
 
 from gaugelog.commands import run
 from gaugelog.commands.calc.each import write_each
-from gaugelog.commands.calc.engine import parse_pairs, work_out
+from gaugelog.commands.calc.engine import parse_pairs, understood, work_out
+from gaugelog.commands.calc.model import Family
 from gaugelog.commands.calc.sources import source_of
 from gaugelog.commands.calc.subjects import SUBJECTS
 from gaugelog.errors import Faulty
@@ -191,6 +192,25 @@ def test_every_argument_has_help_and_an_example(name: str) -> None:
     for argument in SUBJECTS[name].arguments:
         assert argument.help
         assert argument.like, argument.name
+
+
+@pytest.mark.parametrize("name", list(SUBJECTS))
+def test_every_example_of_an_argument_is_understood(name: str) -> None:
+    subject = SUBJECTS[name]
+    kinds = subject.kinds.values() if isinstance(subject, Family) else [subject]
+    for argument in (each for kind in kinds for each in kind.arguments):
+        like = argument.choices[0] if argument.choices else argument.like.split(" or ")[0]
+        value, shown = understood(argument, like)
+        assert value is not None
+        assert shown
+
+
+def test_every_default_is_understood() -> None:
+    for subject in SUBJECTS.values():
+        kinds = subject.kinds.values() if isinstance(subject, Family) else [subject]
+        for argument in (each for kind in kinds for each in kind.arguments):
+            if argument.default:
+                assert understood(argument, argument.default)[1]
 
 
 def test_a_source_that_names_siblings_tells_theirs() -> None:

@@ -78,20 +78,37 @@ def _asks_only(chosen: Subject | Family, typed: Mapping[str, str]) -> bool:
 
 
 def _kinds(chosen: Subject | Family) -> Mapping[str, Subject]:
-    return getattr(chosen, "kinds", {"": chosen})
+    return getattr(chosen, "kinds", {})
 
 
 def _tell_arguments(chosen: Subject | Family, typed: Mapping[str, str]) -> None:
-    wanted = typed.get(getattr(chosen, "by", ""), "")
+    kinds = _kinds(chosen)
+    if kinds and not typed:
+        _tell_kinds(chosen, kinds)
+        return
+    word = next(iter(typed.values()), "")
+    kind: Subject | Family = kinds[word] if kinds else chosen
+    rows = [_row(item) for item in kind.arguments]
     columns = ["argument", "what", "like", "if left out"]
-    if not wanted and getattr(chosen, "by", None):
-        put_table(f"{chosen.name}: {chosen.title}", columns, [_row(chosen.arguments[0])], empty="")
-    for word, kind in _kinds(chosen).items():
-        if wanted in ("", word):
-            title = f'{chosen.name} {chosen.arguments[0].name}="{word}"' if word else kind.name
-            rows = [_row(item) for item in kind.arguments]
-            put_table(f"{title}: {kind.title}", columns, rows, empty="")
-            put(*([kind.note, ""] if kind.note else []))
+    title = f"{chosen.name} ({word})" if word else chosen.name
+    put_table(f"{title}: {kind.title}", columns, rows, empty="")
+    note = getattr(kind, "note", "")
+    put(*([note] if note else []))
+
+
+def _tell_kinds(chosen: Subject | Family, kinds: Mapping[str, Subject]) -> None:
+    """The kinds of a family, each with the names of its arguments."""
+    chooser = chosen.arguments[0]
+    rows = [
+        [word, kind.title, ", ".join(argument.name for argument in kind.arguments)]
+        for word, kind in kinds.items()
+    ]
+    title = f"{chosen.name}: {chosen.title}"
+    put_table(title, [chooser.name, "which is", "arguments"], rows, empty="")
+    example = next(word for word in kinds if word != chooser.default)
+    put(f'`gaugelog calc {chosen.name} {chooser.name}="{example}"` lists what one kind takes.')
+    if chooser.default:
+        put(f"Left out, {chooser.name} is “{chooser.default}”.")
 
 
 def _row(item: Argument) -> list[str]:

@@ -20,7 +20,7 @@ NOT_ZERO = Bound("must be other than zero", lambda value: value != 0)
 POISSON = Bound("must lie between −1 and 0.5", lambda value: -1 <= value <= 0.5)
 SOLID = Bound("must lie between 0 and 0.5", lambda value: 0 <= value <= 0.5)
 """Poisson's ratio where a formula divides by what vanishes for odd materials."""
-SHARE = Bound("must lie between 0 and 1", lambda value: 0 <= value <= 1)
+PART_OR_ALL = Bound("must lie between 0 and 1", lambda value: 0 <= value <= 1)
 PART = Bound("must lie between 0 and 1, neither included", lambda value: 0 < value < 1)
 HUMID = Bound("must be more than 0 % and no more than 100 %", lambda value: 0 < value <= 1)
 SMALL = Bound("must lie between −10 % and 10 %", lambda value: -0.1 <= value <= 0.1)

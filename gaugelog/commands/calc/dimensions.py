@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 
 @dataclass(frozen=True)
@@ -38,6 +38,7 @@ INSULATION = Dimension(
 CONDUCTANCE = Dimension("conductance", "siemens", "nanosiemens", "nS", "1 nS")
 RESISTANCE_PER_LENGTH = Dimension("resistance per length", "ohm/m", "ohm/m", "Ω/m", "0.123 ohm/m")
 STRAIN = Dimension("strain", "", "micrometer/meter", "µm/m", "350 ue", only=_OF_STRAIN)
+STRAINS = replace(STRAIN, example="400, 300, -200 ue")
 GRADIENT = Dimension("strain gradient", "1/m", "micrometer/meter/mm", "µm/m per mm", "20 ue/mm")
 STIFFNESS = Dimension("stiffness", "newton/meter", "kilonewton/mm", "kN/mm", "20 kN/mm")
 LENGTH = Dimension("length", "m", "mm", "mm", "3 mm")
@@ -51,6 +52,11 @@ NOISE_DENSITY = Dimension(
 )
 CURRENT = Dimension("current", "ampere", "milliampere", "mA", "10 mA")
 RATIO = Dimension("ratio", "", "", "", "2.1 or 5 %", only=_OF_RATIO)
+"""A bare number; those below are the same with another example."""
+FACTOR = replace(RATIO, example="2.05")
+POISSONS_RATIO = replace(RATIO, example="0.3")
+SHARE = replace(RATIO, example="1 %")
+COUNT = replace(RATIO, example="4")
 PERCENT = Dimension("percentage", "", "percent", "%", "0.5 %", only=_OF_RATIO)
 OUTPUT = Dimension("bridge output", "", "millivolt/volt", "mV/V", "0.85 mV/V", only="[muµ]?V/V")
 TEMPERATURE = Dimension("temperature", "degC", "degC", "°C", "20 degC or 68 degF")

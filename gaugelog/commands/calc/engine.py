@@ -56,7 +56,7 @@ def _given(argument: Argument, typed: Mapping[str, str]) -> tuple[Any, str]:
     text = typed.get(argument.name, "").strip() or argument.default
     if text is None:
         raise NotUnderstood("is missing")
-    return _read(argument, text) if text else (None, "")
+    return understood(argument, text) if text else (None, "")
 
 
 def _computed(subject: Subject, values: Values, where: str) -> Answer:
@@ -108,7 +108,8 @@ def _strangers(subject: Subject, typed: Mapping[str, str], where: str) -> Iterat
             yield Fault(f"{where}{name}", "is no argument here.", f"Known: {', '.join(known)}.")
 
 
-def _read(argument: Argument, text: str) -> tuple[Any, str]:
+def understood(argument: Argument, text: str) -> tuple[Any, str]:
+    """The value of what was typed for an argument, and how to show it."""
     if argument.read is not None:
         return argument.read(text)
     if argument.dimension is None:

@@ -9,7 +9,7 @@ from dataclasses import dataclass
 from functools import cache
 from typing import Any
 
-from gaugelog.commands.calc.dimensions import AREA, PERCENT, RATIO, TEMPERATURE, Dimension
+from gaugelog.commands.calc.dimensions import AREA, PERCENT, TEMPERATURE, Dimension
 from gaugelog.errors import GaugelogError
 
 _ALIASES: dict[str, str] = {
@@ -76,7 +76,7 @@ def understand(text: str, dimension: Dimension) -> Understood:
         raise NotUnderstood(f"“{text}” is too large a number")
     if dimension is TEMPERATURE and value < -273.15:
         raise NotUnderstood(f"“{text}” lies below absolute zero")
-    as_typed = PERCENT if dimension is RATIO and match[2] == "%" else dimension
+    as_typed = PERCENT if dimension.shown == "" and match[2] == "%" else dimension
     return Understood(text, value, show(value, as_typed))
 
 

@@ -5,8 +5,10 @@ from __future__ import annotations
 from gaugelog.commands.calc.bounds import NOT_ZERO, POISSON, POSITIVE
 from gaugelog.commands.calc.choosing import need, only_one
 from gaugelog.commands.calc.dimensions import (
+    FACTOR,
     OUTPUT,
     PERCENT,
+    POISSONS_RATIO,
     RATIO,
     RESISTANCE,
     STRAIN,
@@ -101,13 +103,13 @@ SUBJECT = Subject(
             default="",
             choices=tuple(arrangements.ARRANGEMENTS),
         ),
-        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument("strain", "strain along the grid", STRAIN, ""),
         Argument("output", "measured output", OUTPUT, ""),
         Argument("grid", "that the bridge is made of", choices=GRIDS, default=FOIL),
         Argument("second", "second-order term of a semiconductor", RATIO, "", example="4000"),
         Argument("temperature", "of a semiconductor, its sheet's where left out", TEMPERATURE, ""),
-        Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "", bound=POISSON),
+        Argument("poisson", "Poisson's ratio, for Poisson arms", POISSONS_RATIO, "", bound=POISSON),
         Argument("initial", "output before loading", OUTPUT, "0 mV/V"),
         Argument(
             "arms",

@@ -8,12 +8,17 @@ from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, PART, POISSON,
 from gaugelog.commands.calc.dimensions import (
     ANGLE,
     CONDUCTANCE,
+    COUNT,
     DIFFERENCE,
     EXPANSION,
+    FACTOR,
     PERCENT,
+    POISSONS_RATIO,
     RATIO,
     RESISTANCE,
+    SHARE,
     STRAIN,
+    STRAINS,
     TEMPERATURE,
     Dimension,
 )
@@ -37,14 +42,36 @@ _UNITS: dict[str, Dimension] = {
     "S": CONDUCTANCE,
 }
 
+_EXAMPLES = {
+    "factor": "2.05 ± 1 %",
+    "factor_slope": "0.01 %/K ± 0.002 %/K",
+    "celsius": "± 3 K",
+    "transverse": "0.6 % ± 0.2 %",
+    "biaxiality": "-0.3 ± 0.02",
+    "misalignment": "± 2 deg",
+    "shear": "± 0.05",
+    "thermal": "40 ue ± 10 ue normal",
+    "thermal_slope": "0.5 ue/K ± 0.1 ue/K",
+    "scatter": "± 6 ue k=2",
+    "resistance": "350 ohm ± 0.3 %",
+    "wire": "1 ohm ± 0.1 ohm",
+    "wire_drift": "± 2 milliohm",
+    "leak": "± 0.1 nS",
+    "shunt_error": "± 0.1 %",
+    "gain": "1 ± 0.05 %",
+    "zero": "± 1 ue",
+    "resolution": "± 0.5 ue",
+    "nonlinearity": "± 0.5 ue",
+    "repeatability": "± 1 ue normal dof=4",
+}
+
 
 def _term(name: str) -> Argument:
     """The argument of one term of the reading: a value, a width, or both."""
     what, unit = TERMS[name]
     dimension = _UNITS[unit]
     width = DIFFERENCE if dimension is TEMPERATURE else dimension
-    example = f"± {width.example.split(' or ')[0]}"
-    return Argument(name, what, default="", read=stated(dimension, width), example=example)
+    return Argument(name, what, default="", read=stated(dimension, width), example=_EXAMPLES[name])
 
 
 def _circuit(values: Values) -> Answer:
@@ -163,15 +190,22 @@ _PLAN = (
         default="quarter three-wire",
     ),
     Argument("layout", "of the wires", choices=tuple(LAYOUTS), default="quarter three-wire"),
-    Argument("setting", "the instrument's gauge factor", RATIO, "2.0", bound=NOT_ZERO),
-    Argument("poisson", "Poisson's ratio of the article", RATIO, "0.3", bound=POISSON),
+    Argument("setting", "the instrument's gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
+    Argument("poisson", "Poisson's ratio of the article", POISSONS_RATIO, "0.3", bound=POISSON),
     Argument("shunt", "resistor that set the scale", RESISTANCE, "", bound=POSITIVE),
 )
 _HOW = (
-    Argument("readings", "repeated, in place of repeatability", STRAIN, "", many=True),
-    Argument("confidence", "share of cases that U holds", RATIO, "95 %", bound=PART),
-    Argument("draws", "of the simulation", RATIO, "200000", bound=whole(1000, 10_000_000)),
-    Argument("seed", "of the simulation", RATIO, "1", bound=whole(0, 2**31)),
+    Argument("readings", "repeated, in place of repeatability", STRAINS, "", many=True),
+    Argument("confidence", "share of cases that U holds", SHARE, "95 %", bound=PART),
+    Argument(
+        "draws",
+        "of the simulation",
+        COUNT,
+        "200000",
+        bound=whole(1000, 10_000_000),
+        example="1000000",
+    ),
+    Argument("seed", "of the simulation", COUNT, "1", bound=whole(0, 2**31)),
 )
 _KINDS = {
     "circuit": Subject(
@@ -189,7 +223,7 @@ _KINDS = {
             Argument("before", "first reading, all in one unit of your choice", RATIO),
             Argument("after", "second reading, same unit", RATIO),
             Argument("meter", "of the two readings", choices=("same", "another"), default="same"),
-            Argument("gain", "accuracy of reading, ±", RATIO, "0 %", bound=NOT_NEGATIVE),
+            Argument("gain", "accuracy of reading, ±", SHARE, "0 %", bound=NOT_NEGATIVE),
             Argument("offset", "accuracy beside it, ±, same unit", RATIO, "0", bound=NOT_NEGATIVE),
             Argument("resolution", "step of the display", RATIO, "0", bound=NOT_NEGATIVE),
         ),

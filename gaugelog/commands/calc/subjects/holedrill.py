@@ -4,7 +4,15 @@ from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, POSITIVE, SOLID
 from gaugelog.commands.calc.choosing import given, need
-from gaugelog.commands.calc.dimensions import ANGLE, LENGTH, MODULUS, RATIO, STRAIN, STRESS
+from gaugelog.commands.calc.dimensions import (
+    ANGLE,
+    LENGTH,
+    MODULUS,
+    POISSONS_RATIO,
+    RATIO,
+    STRAINS,
+    STRESS,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.errors import Fault, Faulty
@@ -70,9 +78,9 @@ SUBJECT = Subject(
     "holedrill",
     "Residual stress, uniform with depth, from a hole drilled in a rosette",
     (
-        Argument("readings", "relieved strain of grids 1, 2, 3", STRAIN, many=True),
+        Argument("readings", "relieved strain of grids 1, 2, 3", STRAINS, many=True),
         Argument("modulus", "of elasticity", MODULUS, bound=POSITIVE),
-        Argument("poisson", "Poisson's ratio", RATIO, bound=SOLID),
+        Argument("poisson", "Poisson's ratio", POISSONS_RATIO, bound=SOLID),
         Argument("hole", "its diameter, when it goes through", LENGTH, "", bound=POSITIVE),
         Argument("circle", "diameter of the gauge circle", LENGTH, "", bound=POSITIVE),
         Argument("near", "end of the grid, from the hole's middle", LENGTH, "", bound=POSITIVE),

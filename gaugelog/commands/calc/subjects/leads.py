@@ -11,6 +11,7 @@ from gaugelog.commands.calc.dimensions import (
     AREA,
     DIFFERENCE,
     DISTANCE,
+    FACTOR,
     OUTPUT,
     PERCENT,
     RATIO,
@@ -108,7 +109,7 @@ SUBJECT = Subject(
     (
         Argument("layout", "wires between bridge and module", choices=tuple(LAYOUTS)),
         Argument("resistance", "resistance of the grid", RESISTANCE, "350 ohm", bound=POSITIVE),
-        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument("length", "length of the cable", DISTANCE, "", bound=NOT_NEGATIVE),
         Argument(
             "per_metre",

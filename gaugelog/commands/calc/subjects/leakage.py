@@ -2,9 +2,15 @@
 
 from __future__ import annotations
 
-from gaugelog.commands.calc.bounds import NOT_ZERO, POSITIVE, SHARE
+from gaugelog.commands.calc.bounds import NOT_ZERO, PART_OR_ALL, POSITIVE
 from gaugelog.commands.calc.choosing import at_least_one, need
-from gaugelog.commands.calc.dimensions import INSULATION, RATIO, RESISTANCE, STRAIN
+from gaugelog.commands.calc.dimensions import (
+    FACTOR,
+    INSULATION,
+    RATIO,
+    RESISTANCE,
+    STRAIN,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.physics import leakage
@@ -61,7 +67,7 @@ SUBJECT = Subject(
     "Strain that poor insulation feigns, or the insulation a permitted error needs",
     (
         Argument("resistance", "resistance of the grid", RESISTANCE, "350 ohm", bound=POSITIVE),
-        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument(
             "insulation", "insulation resistance to the article", INSULATION, "", bound=POSITIVE
         ),
@@ -72,16 +78,25 @@ SUBJECT = Subject(
             "potential of another grid's tab that it leaks to, as a share of the supply",
             RATIO,
             "",
-            bound=SHARE,
+            bound=PART_OR_ALL,
+            example="0.5",
         ),
         Argument(
             "shield",
             "potential of a shield that it leaks to, as a share of the supply",
             RATIO,
             "",
-            bound=SHARE,
+            bound=PART_OR_ALL,
+            example="0.5",
         ),
-        Argument("tab", "potential of the grid's signal tab", RATIO, "0.5", bound=SHARE),
+        Argument(
+            "tab",
+            "potential of the grid's signal tab",
+            RATIO,
+            "0.5",
+            bound=PART_OR_ALL,
+            example="0.5",
+        ),
     ),
     _compute,
     renamed={"grid": "resistance"},

@@ -3,7 +3,13 @@
 from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, POSITIVE, whole
-from gaugelog.commands.calc.dimensions import INSULATION, PERCENT, RATIO, RESISTANCE
+from gaugelog.commands.calc.dimensions import (
+    COUNT,
+    FACTOR,
+    INSULATION,
+    PERCENT,
+    RESISTANCE,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.quantities import show
 from gaugelog.commands.calc.sheet import Sheet
@@ -141,9 +147,9 @@ SUBJECT = Subject(
     "What is wrong with the wiring, from resistances between pins; without readings, the table",
     (
         Argument("arrangement", "of the bridge", choices=tuple(ARRANGEMENTS)),
-        Argument("wires", "number of wires to the module", RATIO, bound=whole(2, 6), example="3"),
+        Argument("wires", "number of wires to the module", COUNT, bound=whole(2, 6), example="3"),
         Argument("resistance", "of each grid", RESISTANCE, "350 ohm", bound=POSITIVE),
-        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument("wire", "resistance of one lead wire", RESISTANCE, "1 ohm", bound=NOT_NEGATIVE),
         Argument("completion", "resistors of the module", RESISTANCE, "", bound=POSITIVE),
         Argument("plugged", "the module is measured too", choices=("no", "yes"), default="no"),

@@ -15,7 +15,15 @@ from gaugelog.commands.calc.bounds import (
     Bound,
 )
 from gaugelog.commands.calc.choosing import need
-from gaugelog.commands.calc.dimensions import ANGLE, MODULUS, RATIO, STRAIN, STRESS
+from gaugelog.commands.calc.dimensions import (
+    ANGLE,
+    MODULUS,
+    POISSONS_RATIO,
+    SHARE,
+    STRAIN,
+    STRAINS,
+    STRESS,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Family, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.commands.calc.subjects.rosettegrids import (
@@ -123,7 +131,7 @@ def _check(values: Values) -> Answer:
 def _arguments(*own: Argument) -> tuple[Argument, ...]:
     """What every kind asks of the grids, and then its own."""
     return (
-        Argument("readings", "strain of each grid, in order", STRAIN, many=True),
+        Argument("readings", "strain of each grid, in order", STRAINS, many=True),
         Argument("pattern", "of the grids", default="", choices=tuple(rosette.PATTERNS)),
         Argument("angles", "of the grids, for odd patterns", ANGLE, "", many=True),
         Argument(
@@ -142,17 +150,17 @@ def _arguments(*own: Argument) -> tuple[Argument, ...]:
     )
 
 
-_POISSON = Argument("poisson", "Poisson's ratio of the article", RATIO, "", bound=POISSON)
+_POISSON = Argument("poisson", "Poisson's ratio of the article", POISSONS_RATIO, "", bound=POISSON)
 _KINDS: dict[str, Subject] = {
     "strains": Subject(
         "rosette",
         "Principal strains and stresses from a rosette",
         _arguments(
-            Argument("transverse", "sensitivity, one or each", RATIO, "", many=True, bound=SMALL),
+            Argument("transverse", "sensitivity, one or each", SHARE, "", many=True, bound=SMALL),
             Argument(
                 "beam_poisson",
                 "Poisson's ratio of the beam that gave the gauge factor",
-                RATIO,
+                POISSONS_RATIO,
                 str(transverse.CALIBRATION_POISSON),
                 bound=POISSON,
             ),
@@ -163,7 +171,7 @@ _KINDS: dict[str, Subject] = {
             Argument("shear_modulus", "for an orthotropic layer", MODULUS, "", bound=POSITIVE),
             Argument("fibre", "direction of an orthotropic layer", ANGLE, "0 deg"),
             Argument("uncertainty", "standard, of each reading", STRAIN, "", bound=NOT_NEGATIVE),
-            Argument("correlation", "between grids' errors", RATIO, "0", bound=_CORRELATION),
+            Argument("correlation", "between grids' errors", SHARE, "0", bound=_CORRELATION),
         ),
         _strains,
     ),

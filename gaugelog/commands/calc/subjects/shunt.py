@@ -5,12 +5,15 @@ from __future__ import annotations
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, POISSON, POSITIVE, whole
 from gaugelog.commands.calc.choosing import need, only_one
 from gaugelog.commands.calc.dimensions import (
+    COUNT,
     DIFFERENCE,
     EXPANSION,
+    FACTOR,
     OUTPUT,
     PERCENT,
-    RATIO,
+    POISSONS_RATIO,
     RESISTANCE,
+    SHARE,
     STRAIN,
 )
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
@@ -106,7 +109,7 @@ SUBJECT = Subject(
     "Strain a shunt stands for and shows, or the resistor for a wanted strain",
     (
         Argument("resistance", "resistance of the arm", RESISTANCE, "350 ohm", bound=POSITIVE),
-        Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument("shunt", "the shunt resistor", RESISTANCE, "", bound=POSITIVE),
         Argument("strain", "the strain wanted", STRAIN, "", bound=NOT_ZERO),
         Argument("arm", "the arm it spans", choices=("1", "2", "3", "4"), default="1"),
@@ -116,9 +119,9 @@ SUBJECT = Subject(
             choices=tuple(ARRANGEMENTS),
             default="quarter three-wire",
         ),
-        Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "0", bound=POISSON),
+        Argument("poisson", "Poisson's, for Poisson arms", POISSONS_RATIO, "0", bound=POISSON),
         Argument("wire", "resistance of one lead wire", RESISTANCE, "0 ohm", bound=NOT_NEGATIVE),
-        Argument("wires", "number of wires to the module", RATIO, "", bound=whole(2, 6)),
+        Argument("wires", "number of wires to the module", COUNT, "", bound=whole(2, 6)),
         Argument(
             "between",
             "terminals it spans; at the article they end in “tab”",
@@ -126,7 +129,7 @@ SUBJECT = Subject(
             read=_between,
             example="signal+ to supply-",
         ),
-        Argument("tolerance", "of the resistor", RATIO, "0 %", bound=NOT_NEGATIVE),
+        Argument("tolerance", "of the resistor", SHARE, "0 %", bound=NOT_NEGATIVE),
         Argument("coefficient", "of the resistor with temperature", EXPANSION, "0 ppm/K"),
         Argument("rise", "how much warmer the resistor gets", DIFFERENCE, "10 K"),
     ),

@@ -4,7 +4,14 @@ from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, SMALL
 from gaugelog.commands.calc.choosing import need, only_one
-from gaugelog.commands.calc.dimensions import EXPANSION, RATIO, STRAIN, TEMPERATURE
+from gaugelog.commands.calc.dimensions import (
+    EXPANSION,
+    FACTOR,
+    RATIO,
+    SHARE,
+    STRAIN,
+    TEMPERATURE,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.physics import balance, temperature
@@ -110,14 +117,14 @@ SUBJECT = Subject(
             many=True,
             example="-31.8, 2.77, -0.0655, 3.28e-4",
         ),
-        Argument("measured_with", "factor that the curve holds for", RATIO, "2.0", bound=NOT_ZERO),
-        Argument("setting", "the instrument's gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("measured_with", "factor that the curve holds for", FACTOR, "2.0", bound=NOT_ZERO),
+        Argument("setting", "the instrument's gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
         Argument("article", "expansion of the article", EXPANSION, ""),
         Argument("matched", "expansion that the gauge is matched to", EXPANSION, ""),
         Argument("grid_coefficient", "of the grid's resistance", EXPANSION, ""),
         Argument("grid_expansion", "expansion of the grid", EXPANSION, ""),
-        Argument("transverse", "sensitivity of the grid", RATIO, "0 %", bound=SMALL),
-        Argument("factor", "gauge factor at the reference", RATIO, "2.0", bound=NOT_ZERO),
+        Argument("transverse", "sensitivity of the grid", SHARE, "0 %", bound=SMALL),
+        Argument("factor", "gauge factor at the reference", FACTOR, "2.0", bound=NOT_ZERO),
         Argument(
             "factor_slope",
             "of the factor with temperature",

@@ -6,7 +6,15 @@ from collections.abc import Sequence
 
 from gaugelog.commands.calc.bounds import POISSON, SMALL
 from gaugelog.commands.calc.choosing import one_each
-from gaugelog.commands.calc.dimensions import ANGLE, PERCENT, RATIO, STRAIN
+from gaugelog.commands.calc.dimensions import (
+    ANGLE,
+    PERCENT,
+    POISSONS_RATIO,
+    RATIO,
+    SHARE,
+    STRAIN,
+    STRAINS,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Family, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.errors import Fault, Faulty
@@ -104,15 +112,15 @@ def _shear(values: Values) -> Answer:
 _BEAM = Argument(
     "beam_poisson",
     "Poisson's ratio of the beam that gave the gauge factor",
-    RATIO,
+    POISSONS_RATIO,
     str(transverse.CALIBRATION_POISSON),
     bound=POISSON,
 )
-_ONE = Argument("transverse", "sensitivity of the grid", RATIO, bound=SMALL, example="0.6 %")
+_ONE = Argument("transverse", "sensitivity of the grid", SHARE, bound=SMALL, example="0.6 %")
 _MANY = Argument(
-    "transverse", "sensitivity, one for all or one each", RATIO, many=True, bound=SMALL
+    "transverse", "sensitivity, one for all or one each", SHARE, many=True, bound=SMALL
 )
-_READ = Argument("readings", "strain of each grid, in order", STRAIN, many=True)
+_READ = Argument("readings", "strain of each grid, in order", STRAINS, many=True)
 
 _KINDS = {
     "single": Subject(

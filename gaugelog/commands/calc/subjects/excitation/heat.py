@@ -11,6 +11,7 @@ from gaugelog.commands.calc.dimensions import (
     POWER_DENSITY,
     RATIO,
     RESISTANCE,
+    SHARE,
     VOLTAGE,
 )
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
@@ -108,7 +109,7 @@ KINDS = {
                 default="direct",
                 choices=("direct", "carrier", "pulses"),
             ),
-            Argument("duty", "part of the time that pulses are on", RATIO, "", bound=_DUTY),
+            Argument("duty", "part of the time that pulses are on", SHARE, "", bound=_DUTY),
             Argument(
                 "heat_sink",
                 "class of article",

@@ -5,10 +5,11 @@ from __future__ import annotations
 from gaugelog.commands.calc.bounds import NOT_NEGATIVE, NOT_ZERO, POSITIVE, whole
 from gaugelog.commands.calc.choosing import need
 from gaugelog.commands.calc.dimensions import (
+    COUNT,
+    FACTOR,
     FREQUENCY,
     NOISE_DENSITY,
     OUTPUT,
-    RATIO,
     RESISTANCE,
     SIGNAL,
     STRAIN,
@@ -86,15 +87,15 @@ KINDS = {
         (
             _GRID,
             Argument("supply", "across the bridge", VOLTAGE, "5 V", bound=POSITIVE),
-            Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
-            Argument("bridge_factor", "1 for a quarter bridge", RATIO, "1", bound=POSITIVE),
+            Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
+            Argument("bridge_factor", "1 for a quarter bridge", FACTOR, "1", bound=POSITIVE),
             Argument("corner", "of the low pass", FREQUENCY, bound=POSITIVE),
-            Argument("order", "of the low pass", RATIO, "1", bound=whole(1, 20)),
+            Argument("order", "of the low pass", COUNT, "1", bound=whole(1, 20)),
             Argument("temperature", "of the grids", TEMPERATURE, "23 degC"),
             Argument("amplifier", "its noise at the input", NOISE_DENSITY, "", bound=NOT_NEGATIVE),
-            Argument("bits", "of the converter", RATIO, "", bound=whole(1, 32)),
+            Argument("bits", "of the converter", COUNT, "", bound=whole(1, 32)),
             Argument("span", "of the converter, end to end", OUTPUT, "", bound=POSITIVE),
-            Argument("readings", "that are averaged", RATIO, "1", bound=whole(1, 1_000_000)),
+            Argument("readings", "that are averaged", COUNT, "1", bound=whole(1, 1_000_000)),
         ),
         _noise,
     ),

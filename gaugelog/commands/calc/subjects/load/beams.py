@@ -11,7 +11,7 @@ from gaugelog.commands.calc.dimensions import (
     FORCE,
     LENGTH,
     MODULUS,
-    RATIO,
+    POISSONS_RATIO,
     STRAIN,
     STRESS,
     TORQUE,
@@ -136,7 +136,7 @@ KINDS = {
                 "modulus", "of elasticity; or give load and strain", MODULUS, "", bound=POSITIVE
             ),
             Argument("area", "of the bar", AREA, bound=POSITIVE, example="100 mm2"),
-            Argument("poisson", "Poisson's ratio", RATIO, "", bound=POISSON),
+            Argument("poisson", "Poisson's ratio", POISSONS_RATIO, "", bound=POISSON),
         ),
         _bar,
         renamed={"force": "load"},

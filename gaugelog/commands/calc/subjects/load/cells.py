@@ -4,7 +4,14 @@ from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import NOT_ZERO, POISSON
 from gaugelog.commands.calc.choosing import only_one
-from gaugelog.commands.calc.dimensions import FORCE, OUTPUT, PERCENT, RATIO, STRAIN
+from gaugelog.commands.calc.dimensions import (
+    FACTOR,
+    FORCE,
+    OUTPUT,
+    PERCENT,
+    POISSONS_RATIO,
+    STRAIN,
+)
 from gaugelog.commands.calc.lists import Pair, pair
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
@@ -76,9 +83,9 @@ KINDS = {
         (
             Argument("strain", "at the grids", STRAIN, ""),
             Argument("output", "wanted", OUTPUT, ""),
-            Argument("factor", "gauge factor", RATIO, "2.0", bound=NOT_ZERO),
+            Argument("factor", "gauge factor", FACTOR, "2.0", bound=NOT_ZERO),
             Argument("arrangement", "of the bridge", choices=tuple(ARRANGEMENTS)),
-            Argument("poisson", "Poisson's ratio, for Poisson arms", RATIO, "0", bound=POISSON),
+            Argument("poisson", "Poisson's, for Poisson arms", POISSONS_RATIO, "0", bound=POISSON),
         ),
         _sensitivity,
         renamed={"ratio": "output"},

@@ -8,7 +8,7 @@ from gaugelog.commands.calc.dimensions import (
     ANGLE,
     LENGTH,
     MODULUS,
-    RATIO,
+    POISSONS_RATIO,
     STRAIN,
     STRESS,
     TORQUE,
@@ -66,7 +66,7 @@ _SHAFT = (
     Argument("bore", "of a hollow shaft", LENGTH, "0 mm", bound=NOT_NEGATIVE),
     Argument("shear_modulus", "or give modulus and poisson", MODULUS, "", bound=POSITIVE),
     Argument("modulus", "of elasticity", MODULUS, "", bound=POSITIVE),
-    Argument("poisson", "Poisson's ratio", RATIO, "", bound=POISSON),
+    Argument("poisson", "Poisson's ratio", POISSONS_RATIO, "", bound=POISSON),
 )
 _RENAMED = {"outer": "diameter", "inner": "bore"}
 

@@ -4,7 +4,13 @@ from __future__ import annotations
 
 from gaugelog.commands.calc.bounds import POSITIVE, SOLID
 from gaugelog.commands.calc.choosing import only_one
-from gaugelog.commands.calc.dimensions import LENGTH, MODULUS, RATIO, STRAIN, STRESS
+from gaugelog.commands.calc.dimensions import (
+    LENGTH,
+    MODULUS,
+    POISSONS_RATIO,
+    STRAIN,
+    STRESS,
+)
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.errors import Fault, Faulty
@@ -66,7 +72,7 @@ def _thick_cylinder(values: Values) -> Answer:
 
 _MATERIAL = (
     Argument("modulus", "of elasticity", MODULUS, bound=POSITIVE),
-    Argument("poisson", "Poisson's ratio", RATIO, bound=SOLID),
+    Argument("poisson", "Poisson's ratio", POISSONS_RATIO, bound=SOLID),
 )
 _THIN = (
     Argument("radius", "inside", LENGTH, bound=POSITIVE),

@@ -7,7 +7,9 @@ from gaugelog.commands.calc.choosing import need, only_one
 from gaugelog.commands.calc.dimensions import (
     LENGTH,
     PERCENT,
+    POISSONS_RATIO,
     RATIO,
+    SHARE,
 )
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
@@ -62,7 +64,7 @@ KINDS = {
         (
             _LENGTH,
             Argument("wavelength", "of the strain", LENGTH, bound=POSITIVE),
-            Argument("loss", "of amplitude permitted", RATIO, "", bound=POSITIVE, example="1 %"),
+            Argument("loss", "of amplitude permitted", SHARE, "", bound=POSITIVE, example="1 %"),
         ),
         _wave,
     ),
@@ -73,7 +75,7 @@ KINDS = {
             _LENGTH,
             Argument("reach", "where the parabola comes to nothing", LENGTH, "", bound=POSITIVE),
             Argument("distance", "from the peak, where fallen is known", LENGTH, ""),
-            Argument("fallen", "strain there over the peak's", RATIO, ""),
+            Argument("fallen", "strain there over the peak's", SHARE, ""),
             Argument("off", "of the grid's middle from the peak", LENGTH, "0 mm"),
         ),
         _peak,
@@ -86,7 +88,7 @@ KINDS = {
             Argument("near", "from edge to first strand", LENGTH, bound=NOT_NEGATIVE),
             Argument("width", "of the grid", LENGTH, bound=POSITIVE),
             _LENGTH,
-            Argument("poisson", "Poisson's ratio", RATIO, bound=POISSON),
+            Argument("poisson", "Poisson's ratio", POISSONS_RATIO, bound=POISSON),
         ),
         _hole,
     ),

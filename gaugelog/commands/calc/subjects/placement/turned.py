@@ -11,7 +11,7 @@ from gaugelog.commands.calc.dimensions import (
     GRADIENT,
     LENGTH,
     PERCENT,
-    RATIO,
+    POISSONS_RATIO,
     STRAIN,
 )
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
@@ -70,7 +70,7 @@ KINDS = {
         (
             Argument("off", "how far it is turned", ANGLE),
             Argument("intended", "direction meant, from the first principal", ANGLE, "0 deg"),
-            Argument("poisson", "for uniaxial stress", RATIO, "", bound=POISSON),
+            Argument("poisson", "for uniaxial stress", POISSONS_RATIO, "", bound=POISSON),
             Argument("first", "principal strain", STRAIN, ""),
             Argument("second", "principal strain", STRAIN, ""),
             Argument("permitted", "error of strain", STRAIN, "", bound=POSITIVE),
