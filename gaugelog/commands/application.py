@@ -23,6 +23,7 @@ from gaugelog.commands import (
     start,
     step,
     stock,
+    wiring,
 )
 from gaugelog.commands.session import Place
 
@@ -36,7 +37,7 @@ stdout, talk to stderr. Try `gaugelog demo` first.
 SET_UP, WORK, LOOK = "Set up", "Plan and work", "Look, check, compute"
 _PANELS = {
     **dict.fromkeys(("person", "stock", "instrument"), SET_UP),
-    **dict.fromkeys(("plan", "step"), WORK),
+    **dict.fromkeys(("plan", "wiring", "step"), WORK),
     "journal": LOOK,
 }
 
@@ -69,6 +70,7 @@ _GROUPS: dict[str, typer.Typer] = {
     "stock": stock.group,
     "instrument": instrument.group,
     "plan": plan.group,
+    "wiring": wiring.group,
     "step": step.group,
     "journal": journal.group,
 }

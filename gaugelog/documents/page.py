@@ -41,13 +41,13 @@ _MOODS = {
 def record_html(content: RecordContent) -> str:
     """The whole page of a record. Foreign text is escaped and made drawable."""
     lettering = Lettering()
-    for text in _texts(content.model_dump(mode="json")):
+    for text in texts_in(content.model_dump(mode="json")):
         lettering(text)
     page = environment(content, lettering).get_template("record.html")
     return page.render(
         record=content,
         summary=summary(content),
-        notices=_notices(lettering),
+        notices=notices_of(lettering),
         diagrams=[bridge_diagram(circuit) for circuit in content.circuits],
         wirings=[wiring_list(circuit) for circuit in content.circuits],
         titles={step.step: step.title for step in content.steps},
@@ -103,26 +103,28 @@ def summary(content: RecordContent) -> str:
     return f"{counted}; {again} measured again" if again else counted
 
 
-def _notices(lettering: Lettering) -> list[str]:
+def notices_of(lettering: Lettering) -> list[str]:
+    """What the page says of characters that its fonts lack."""
     if not lettering.missing:
         return []
     codes = ", ".join(f"U+{ord(char):04X}" for char in sorted(lettering.missing))
     return [
-        f"Some characters can't be drawn by the fonts of this record and stand as their code "
+        f"Some characters can't be drawn by the fonts of this page and stand as their code "
         f"points: {codes}. The attached data has them as they were entered."
     ]
 
 
-def _texts(value: Any) -> Iterator[str]:
+def texts_in(value: Any) -> Iterator[str]:
+    """Every text within plain data, the names of its parts too."""
     if isinstance(value, str):
         yield value
     elif isinstance(value, dict):
         for name, each in value.items():
             yield name
-            yield from _texts(each)
-    elif isinstance(value, list):
+            yield from texts_in(each)
+    elif isinstance(value, list | tuple):
         for each in value:
-            yield from _texts(each)
+            yield from texts_in(each)
 
 
 def _initials(content: RecordContent) -> Any:

@@ -111,7 +111,7 @@ def memory_fetcher() -> MemoryFetcher:
     from gaugelog.documents.fetcher import MemoryFetcher
 
     served = {font.address: (template_bytes(f"fonts/{font.file}"), "font/ttf") for font in FONTS}
-    for name in ("record.css", "stamp.css"):
+    for name in ("record.css", "stamp.css", "wiring.css"):
         served[f"gaugelog:{name}"] = (template_bytes(name), "text/css")
     return MemoryFetcher(served)
 

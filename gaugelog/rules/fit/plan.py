@@ -9,7 +9,7 @@ from gaugelog.ledger.campaign import Article, CampaignPlanned, CampaignRow, Chan
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow
-from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
+from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 
 
@@ -28,9 +28,11 @@ class Plan:
     def __init__(self, view: View, campaign: CampaignRow) -> None:
         body = CampaignPlanned.model_validate_json(campaign.data)
         self.articles = {article.id: article for article in body.articles}
+        gone = _withdrawn(view)
         self.points = [
             PointPlanned.model_validate_json(row.data)
             for row in view.all(PointRow, campaign=campaign.id)
+            if row.id not in gone
         ]
         self.lots = {row.id: LotReceived.model_validate_json(row.data) for row in view.all(LotRow)}
         self.routes = {
@@ -46,7 +48,13 @@ class Plan:
             row.id: PlannedChannel(row.label, row.module, Channel.model_validate_json(row.data))
             for row in view.all(ChannelRow, campaign=campaign.id)
         }
+        self.reels = frozenset(
+            row.label.casefold() for row in view.all(ConsumableRow, type="cable")
+        )
+        """Labels of the cable lots in stock."""
         self.shelf = Counter(gauge.lot for gauge in view.all(GaugeRow, state="on shelf"))
+        self.taken = frozenset(gauge.point for gauge in view.all(GaugeRow, state="in service"))
+        """Points that have their gauge already, in a plan that is revised."""
 
     def lot_of_grid(self, grid: str) -> LotReceived | None:
         """The lot that a grid is planned from, or None when it is not in stock."""
@@ -69,3 +77,11 @@ class Plan:
     def article_of(self, point: PointPlanned) -> Article | None:
         """The article a point lies on."""
         return self.articles.get(point.article)
+
+
+def _withdrawn(view: View) -> set[str]:
+    """Points that are no more part of the job: every grid of theirs is withdrawn."""
+    states: dict[str, set[str]] = {}
+    for grid in view.all(GridRow):
+        states.setdefault(grid.point, set()).add(grid.state)
+    return {point for point, found in states.items() if found == {"withdrawn"}}

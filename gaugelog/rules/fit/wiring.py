@@ -1,19 +1,21 @@
-"""Wiring: every grid in one circuit, no channel and no pin used twice."""
+"""Wiring: every grid in one circuit; no channel, pin or mark used twice."""
 
 from __future__ import annotations
 
 from collections import Counter
 from collections.abc import Iterator
 
+from gaugelog.rules.fit.conflicts import conflicts
 from gaugelog.rules.fit.finding import PlanFinding
-from gaugelog.rules.fit.plan import Plan, PlannedChannel
+from gaugelog.rules.fit.plan import Plan
 
 
 def wiring_findings(plan: Plan) -> Iterator[PlanFinding]:
-    """Grids, channels and pins: each used once."""
+    """Grids, channels, pins and marks: each used once."""
     yield from _grids(plan)
     yield from _channels(plan)
-    yield from _pins(plan)
+    for conflict in conflicts(plan):
+        yield conflict.finding
 
 
 def _grids(plan: Plan) -> Iterator[PlanFinding]:
@@ -40,26 +42,6 @@ def _grids(plan: Plan) -> Iterator[PlanFinding]:
 
 
 def _channels(plan: Plan) -> Iterator[PlanFinding]:
-    used: dict[str, list[str]] = {}
     for circuit in plan.circuits:
-        used.setdefault(circuit.channel, []).append(circuit.label)
-    for channel, circuits in used.items():
-        if channel not in plan.channels:
-            yield PlanFinding("refusal", ", ".join(circuits), "its channel is not known")
-        elif len(circuits) > 1:
-            what = f"is used by {', '.join(circuits)}"
-            label = f"channel {plan.channels[channel].label}"
-            yield PlanFinding("refusal", label, what, f"{len(circuits)} circuits")
-
-
-def _pins(plan: Plan) -> Iterator[PlanFinding]:
-    used: dict[tuple[str, str, str], list[PlannedChannel]] = {}
-    for each in plan.channels.values():
-        if each.channel.connector:
-            for pin in each.channel.pins.values():
-                used.setdefault((each.module, each.channel.connector, pin), []).append(each)
-    for (module, connector, pin), channels in used.items():
-        if len(channels) > 1:
-            names = ", ".join(dict.fromkeys(each.label for each in channels))
-            what = f"pin {pin} serves {len(channels)} functions, of channel {names}"
-            yield PlanFinding("refusal", f"{module}, connector {connector}", what)
+        if circuit.channel not in plan.channels:
+            yield PlanFinding("refusal", circuit.label, "its channel is not known")
