@@ -13,6 +13,9 @@ from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.intake.texts import listed
 from gaugelog.intake.typed import parse_quantity
 from gaugelog.ledger.circuits import CircuitPlanned, Element, Leads
+from gaugelog.physics.arrangements import ARRANGEMENTS as KNOWN
+from gaugelog.physics.layouts import layout_for
+from gaugelog.physics.validity import OutOfDomain
 
 COLUMNS = Columns(
     needed=(
@@ -31,8 +34,8 @@ COLUMNS = Columns(
     others=("cable", "marks"),
 )
 
-ARRANGEMENTS = ("quarter three-wire",)
-"""The arrangements that this version plans."""
+ARRANGEMENTS = tuple(KNOWN)
+"""The arrangements that a circuit may have."""
 
 _UNKNOWN = "-"
 _PLUS = re.compile(r"\s\+\s")
@@ -75,16 +78,26 @@ def _circuit(row: Fields, campaign: str, named: Named, new_id: Callable[[], str]
     known = [grid for grid in used if grid != _UNKNOWN]
     if len(set(known)) != len(known):
         row.fault("arm1", "or another arm names a grid twice in one circuit.")
+    arrangement, leads = row.choice("arrangement", ARRANGEMENTS), _leads(row)
+    _fits(row, arrangement, leads)
     return CircuitPlanned(
         id=new_id(),
         label=row.label("circuit"),
         campaign=campaign,
-        arrangement=row.choice("arrangement", ARRANGEMENTS),
+        arrangement=arrangement,
         arms=arms,
-        leads=_leads(row),
+        leads=leads,
         channel=_channel(row, named),
         grids=tuple(dict.fromkeys(known)),
     )
+
+
+def _fits(row: Fields, arrangement: str, leads: Leads) -> None:
+    if row.sound("arrangement", "wires"):
+        try:
+            layout_for(arrangement, leads.wires)
+        except OutOfDomain as error:
+            row.fault("wires", error.message.removeprefix("wires "))
 
 
 def _channel(row: Fields, named: Named) -> str:
@@ -161,6 +174,16 @@ def _element(row: Fields, name: str, text: str, named: Named) -> Element | None:
 def _grid(row: Fields, name: str, kind: str, label: str, named: Named) -> Element | None:
     found = _UNKNOWN if named.grids is None else named.grids.get(label.casefold())
     if found is None:
-        row.fault(name, f"grids.csv has no grid “{label[:40]}”.", _ARM_REMEDY)
+        row.fault(name, f"grids.csv has no grid “{label[:40]}”.", _like(label, named))
         return None
     return Element(kind="dummy" if kind == "dummy" else "grid", grid=found)
+
+
+def _like(label: str, named: Named) -> str:
+    """What to write instead: the grids of that point where it has several."""
+    shown = f"{label[:40]}."
+    several = [each for each in named.grids or () if each.startswith(shown.casefold())]
+    if not several or not label:
+        return _ARM_REMEDY
+    numbers = ", ".join(f"{shown}{each.removeprefix(shown.casefold())}" for each in several)
+    return f"The grids of that point are {numbers}."

@@ -44,6 +44,12 @@ class Fields:
         self._taken: set[str] = set()
         self._unsound: set[str] = set(absent)
 
+    def following(self, names: Collection[str]) -> Fields:
+        """The same values as a row that follows another of its kind: it may leave `names` empty."""
+        empty = [name for name in names if not self.has(name)]
+        absent = {*self._absent, *empty}
+        return Fields(self.place, self._values, self._faults, self._joint, absent)
+
     def where(self, name: str) -> str:
         """The place of one value, as a fault names it."""
         return f"{self.place}{self._joint}{name}"
@@ -87,12 +93,17 @@ class Fields:
             self.fault(name, f"“{text[:60]}” can't be a label.", remedy)
         return text
 
-    def choice(self, name: str, options: Sequence[str], default: str | None = None) -> str:
-        """One of `options`, whatever the letter case; “gage” is read as “gauge”."""
+    def choice(
+        self, name: str, options: Sequence[str], default: str | None = None, *, trailing: str = ""
+    ) -> str:
+        """One of `options`, whatever the letter case; “gage” is read as “gauge”.
+
+        A `trailing` word that people may add is passed over.
+        """
         text = self.text(name, needed=default is None)
         if not text:
             return default if default is not None else options[0]
-        meant = text.casefold().replace("gage", "gauge")
+        meant = text.casefold().replace("gage", "gauge").removesuffix(trailing)
         for option in options:
             if option.casefold() == meant:
                 return option
@@ -151,6 +162,18 @@ class Fields:
             return None
         found = Quantity(value=number, unit=unit)
         return self._above_nothing(name, found) if positive else found
+
+    def numbers(self, name: str, unit: str, *, positive: bool = False) -> list[Quantity]:
+        """Plain decimal numbers with semicolons between; one at least, a stand-in with a fault."""
+        value = self._take(name, True)
+        if value is None:
+            return [Quantity(value="1", unit=unit)]
+        parts = value.split(";") if isinstance(value, str) else [value]
+        each = [Fields(self.place, {name: part}, self._faults, self._joint) for part in parts]
+        found = [one.number(name, unit, positive=positive) for one in each]
+        if not all(one.sound(name) for one in each):
+            self._unsound.add(name)
+        return found
 
     def whole(self, name: str, least: int, most: int) -> int:
         """A whole number from `least` to `most`."""

@@ -6,9 +6,11 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Literal, cast
 
-from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
+from gaugelog.intake.fields import Fields, Gathered, in_order
+from gaugelog.intake.gridrows import grids_in, grouped, settle_labels, told_alike
+from gaugelog.intake.patterned import pattern_facts
 from gaugelog.intake.tables import Columns, rows_of
-from gaugelog.ledger.points import Place, PlannedGrid, PointPlanned
+from gaugelog.ledger.points import Place, PointPlanned
 from gaugelog.physics.temperature import ABSOLUTE_ZERO
 
 COLUMNS = Columns(
@@ -34,13 +36,23 @@ COLUMNS = Columns(
         "lot",
         "route",
     ),
-    others=("z_mm", "quantity", "duration_h", "cycles"),
+    others=(
+        "grid",
+        "pattern",
+        "numbering",
+        "seen_from",
+        "dummy",
+        "z_mm",
+        "quantity",
+        "duration_h",
+        "cycles",
+    ),
 )
 
 
 @dataclass(frozen=True, slots=True)
 class GridPlan:
-    """A point as its row gives it; article, lot and route still by label."""
+    """A point as its first row gives it; article, lot and route still by label."""
 
     fields: Fields
     point: PointPlanned
@@ -49,16 +61,32 @@ class GridPlan:
 def read_grids(
     name: str, data: bytes, campaign: str, new_id: Callable[[], str], faults: Gathered
 ) -> list[GridPlan]:
-    """Understand `grids.csv`; faults are gathered, and then what is given means nothing."""
+    """Understand `grids.csv`; faults are gathered, and then what is given means nothing.
+
+    A point with several grids has a row for each, numbered in the column `grid`; what its later
+    rows say of the point must be what the first says, or be left empty.
+    """
     rows = rows_of(name, data, COLUMNS, faults)
-    found = [GridPlan(row, _point(row, campaign, new_id)) for row in rows]
-    distinct(rows, "point", [plan.point.label for plan in found])
-    return found
+    groups = grouped(rows)
+    plans = [_planned(label, group, campaign, new_id) for label, group in groups]
+    settle_labels([(plan.fields, plan.point) for plan in plans])
+    return plans
 
 
-def _point(row: Fields, campaign: str, new_id: Callable[[], str]) -> PointPlanned:
-    label = row.label("point")
+def _planned(label: str, group: list[Fields], campaign: str, new_id: Callable[[], str]) -> GridPlan:
+    first, *others = group
+    point = _point(label, first, campaign, new_id)
+    for row in others:
+        following = row.following(COLUMNS.known)
+        told_alike(first, point, following, _point(label, following, campaign, new_id))
+    grids = grids_in(label, group, point.pattern, new_id)
+    return GridPlan(first, point.model_copy(update={"grids": grids}))
+
+
+def _point(label: str, row: Fields, campaign: str, new_id: Callable[[], str]) -> PointPlanned:
+    """The point as one row gives it, its grids still to be numbered."""
     load = row.choice("load", ("static", "dynamic"))
+    pattern, numbering, seen_from = pattern_facts(row)
     point = PointPlanned(
         id=new_id(),
         label=label,
@@ -78,9 +106,14 @@ def _point(row: Fields, campaign: str, new_id: Callable[[], str]) -> PointPlanne
         place=_place(row),
         lot=row.label("lot") or "-",
         route=row.text("route") or "-",
-        grids=(PlannedGrid(id=new_id(), label=label or "-", number=1),),
+        pattern=pattern,
+        numbering=numbering,
+        seen_from=seen_from,
+        dummy=row.choice("dummy", ("no", "yes"), "no") == "yes",
+        grids=(),
     )
     _in_order(row, point)
+    _unstrained(row, point)
     return point
 
 
@@ -107,6 +140,16 @@ def _in_order(row: Fields, point: PointPlanned) -> None:
     ):
         if row.sound(name) and figure <= ABSOLUTE_ZERO:
             row.fault(name, "lies below absolute zero.")
+
+
+def _unstrained(row: Fields, point: PointPlanned) -> None:
+    for name, strain in (
+        ("strain_min_um_per_m", point.strain_min),
+        ("strain_max_um_per_m", point.strain_max),
+    ):
+        if point.dummy and row.sound(name) and strain.si() != 0:
+            what = f"{strain} for a dummy, which lies where there is no strain."
+            row.fault(name, what, "Give 0, or say no in the column dummy.")
 
 
 def _place(row: Fields) -> Place:

@@ -10,6 +10,7 @@ from typing import cast, get_args
 from gaugelog.errors import Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
 from gaugelog.intake.files import read_bytes, text_of
+from gaugelog.intake.griddata import grids_of, pattern_of
 from gaugelog.intake.tables import Columns, rows_of
 from gaugelog.intake.typed import number_of
 from gaugelog.ledger.base import Quantity
@@ -17,7 +18,6 @@ from gaugelog.ledger.stock import (
     ConsumableKind,
     ConsumableReceived,
     CurePoint,
-    GridData,
     LotReceived,
     PackReceived,
 )
@@ -39,6 +39,8 @@ LOT_COLUMNS = Columns(
         "received_on",
     ),
     others=(
+        "pattern",
+        "grid_angles_deg",
         "expansion_class_ppm_per_K",
         "temperature_min_degC",
         "temperature_max_degC",
@@ -140,9 +142,15 @@ _CERTIFIED: dict[str, Callable[[LotReceived], object]] = {
     "type": lambda lot: lot.type,
     "resistance_ohm": lambda lot: _plain(lot.nominal_resistance),
     "resistance_tolerance_percent": lambda lot: _plain(lot.resistance_tolerance),
-    "gauge_factor": lambda lot: _plain(lot.grids[0].gauge_factor),
-    "gauge_factor_tolerance_percent": lambda lot: _plain(lot.grids[0].gauge_factor_tolerance),
-    "transverse_sensitivity_percent": lambda lot: _plain(lot.grids[0].transverse_sensitivity),
+    "pattern": lambda lot: lot.pattern,
+    "gauge_factor": lambda lot: [grid.gauge_factor.si() for grid in lot.grids],
+    "gauge_factor_tolerance_percent": lambda lot: [
+        grid.gauge_factor_tolerance.si() for grid in lot.grids
+    ],
+    "transverse_sensitivity_percent": lambda lot: [
+        grid.transverse_sensitivity.si() for grid in lot.grids
+    ],
+    "grid_angles_deg": lambda lot: [grid.angle.si() for grid in lot.grids],
     "grid_length_mm": lambda lot: _plain(lot.grid_length),
     "grid_width_mm": lambda lot: _plain(lot.grid_width),
     "received_on": lambda lot: lot.received_on,
@@ -158,16 +166,18 @@ _CERTIFIED: dict[str, Callable[[LotReceived], object]] = {
 
 def _lot_data(row: Fields) -> LotReceived:
     """A lot as one row gives it, without its packs."""
+    pattern = pattern_of(row)
     lot = LotReceived(
         id="-",
         label=row.label("lot"),
         maker=row.text("maker"),
         type=row.text("type"),
+        pattern=pattern,
         nominal_resistance=row.number("resistance_ohm", "ohm", positive=True),
         resistance_tolerance=row.number("resistance_tolerance_percent", "%", positive=True),
         grid_length=row.number("grid_length_mm", "mm", positive=True),
         grid_width=row.number("grid_width_mm", "mm", positive=True),
-        grids=(_grid(row),),
+        grids=grids_of(row, pattern),
         expansion_class=row.maybe_number("expansion_class_ppm_per_K", "ppm/K"),
         temperature_min=row.maybe_number("temperature_min_degC", "degC"),
         temperature_max=row.maybe_number("temperature_max_degC", "degC"),
@@ -183,16 +193,6 @@ def _lot_data(row: Fields) -> LotReceived:
         what = "lies below the lowest temperature."
         in_order(row, "temperature_min_degC", "temperature_max_degC", figures, what)
     return lot
-
-
-def _grid(row: Fields) -> GridData:
-    return GridData(
-        number=1,
-        gauge_factor=row.number("gauge_factor", "1", positive=True),
-        gauge_factor_tolerance=row.number("gauge_factor_tolerance_percent", "%", positive=True),
-        transverse_sensitivity=row.number("transverse_sensitivity_percent", "%"),
-        angle=Quantity(value="0", unit="deg"),
-    )
 
 
 def _check_dates(row: Fields, received_on: str, expires: str | None) -> None:

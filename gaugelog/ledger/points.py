@@ -25,6 +25,9 @@ GridState = Literal[
     "removed",
 ]
 
+Numbering = Literal["", "counter-clockwise", "clockwise"]
+SeenFrom = Literal["", "gauge side", "other side"]
+
 
 class Place(Part):
     """Where a gauge sits: datum, coordinates, side and axis direction, with tolerances."""
@@ -74,6 +77,14 @@ class PointPlanned(FactBody):
     place: Place
     lot: Id
     route: Id
+    pattern: str = "single"
+    """Pattern of the gauge, as its lot has it: `rectangular` …"""
+    numbering: Numbering = ""
+    """Which way grids follow grid 1; empty where it makes no difference."""
+    seen_from: SeenFrom = ""
+    """The side that the numbering is seen from: the grids' own, or through the article."""
+    dummy: bool = False
+    """Whether it compensates others: bonded alike, on a piece that feels no strain."""
     grids: tuple[PlannedGrid, ...]
 
 
@@ -96,6 +107,8 @@ class PointRow(SQLModel, table=True):
     """JSON list of `subject/check/stage` whose latest reading blocks."""
     workers: str
     """JSON list of everyone who ever did or skipped a step, also one that was done again since."""
+    touched: str
+    """JSON list of what plan revisions changed here since a reviewer last looked."""
     data: str
     """The whole of `PointPlanned` as JSON."""
     seq: int
@@ -130,6 +143,7 @@ def apply_point_planned(_known: Known, at: At, fact: PointPlanned) -> Iterator[C
             "generation": 1,
             "blocked": "[]",
             "workers": "[]",
+            "touched": "[]",
             "data": at.data,
             "seq": at.seq,
         },

@@ -49,8 +49,11 @@ def change(file: Path, old: str, new: str) -> None:
 
 
 def set_cell(file: Path, row: int, column: str, value: str) -> None:
-    """Change one cell of a CSV file; row 1 is the heading."""
+    """Change one cell of a CSV file; row 1 is the heading, and gets a column that it lacks."""
     table = list(csv.reader(io.StringIO(file.read_text(encoding="utf-8"))))
+    if column not in table[0]:
+        for place, line in enumerate(table):
+            line.append(column if place == 0 else "")
     table[row - 1][table[0].index(column)] = value
     with file.open("w", encoding="utf-8", newline="") as target:
         csv.writer(target, lineterminator="\n").writerows(table)

@@ -83,8 +83,8 @@ def test_marks_that_name_no_wire_are_told(plan: Path, text: str, what: str) -> N
     assert what in refusal(plan, "marks", text)
 
 
-def test_the_arrangement_is_one_that_this_version_plans(plan: Path) -> None:
-    assert "is not one of quarter three-wire" in refusal(plan, "arrangement", "octopus")
+def test_the_arrangement_is_one_that_is_known(plan: Path) -> None:
+    assert "is not one of quarter two-wire" in refusal(plan, "arrangement", "octopus")
 
 
 def test_circuits_are_looked_at_without_the_files_they_name(plan: Path) -> None:
@@ -93,3 +93,28 @@ def test_circuits_are_looked_at_without_the_files_they_name(plan: Path) -> None:
     set_cell(plan / "circuits.csv", 3, "length_m", "-9")
     found = places_of(lambda: understood(plan))
     assert ["campaign.toml", "grids.csv", "circuits.csv, row 3, column length_m"] == found
+
+
+@pytest.mark.parametrize(
+    ("arrangement", "wires"),
+    [
+        ("quarter two-wire", "2"),
+        ("quarter three-wire", "3"),
+        ("half bending", "3"),
+        ("half with dummy", "5"),
+        ("opposite arms", "4"),
+        ("full torsion", "6"),
+    ],
+)
+def test_every_arrangement_is_planned_with_as_many_wires_as_it_needs(
+    plan: Path, arrangement: str, wires: str
+) -> None:
+    set_cell(plan / "circuits.csv", 2, "arrangement", arrangement)
+    set_cell(plan / "circuits.csv", 2, "wires", wires)
+    assert arrangement == understood(plan).circuits[0].arrangement
+
+
+def test_wires_that_the_arrangement_has_no_use_for_are_told(plan: Path) -> None:
+    set_cell(plan / "circuits.csv", 2, "arrangement", "half bending")
+    line = refusal(plan, "wires", "2")
+    assert "of a half bending circuit must number 3 or 5, not 2." in line

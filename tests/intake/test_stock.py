@@ -4,6 +4,8 @@ from __future__ import annotations
 
 from pathlib import Path
 
+import pytest
+
 from gaugelog.intake.stock import load_stock
 from tests.intake.conftest import DEMO, change, counter, faults_of
 
@@ -92,3 +94,62 @@ def test_a_byte_order_mark_and_windows_lines_do_no_harm(tmp_path: Path) -> None:
     text = (DEMO / "consumables.csv").read_text(encoding="utf-8").replace("\n", "\r\n")
     file.write_bytes(b"\xef\xbb\xbf" + text.encode())
     assert len(load_stock([file], counter()).consumables) == 6
+
+
+ROSETTE = (
+    "lot,pack,pieces,maker,type,pattern,grid_angles_deg,resistance_ohm,"
+    "resistance_tolerance_percent,gauge_factor,gauge_factor_tolerance_percent,"
+    "transverse_sensitivity_percent,grid_length_mm,grid_width_mm,received_on\n"
+    "R-1,R1-01,5,Lindmoor Foil Works,6 mm rosette,{pattern},{angles},350,0.4,"
+    "{factor},1,0.4; 0.5; 0.4,6,2.8,2026-09-14\n"
+)
+
+
+def _rosette(folder: Path, **cells: str) -> Path:
+    usual = {"pattern": "rectangular", "angles": "0; 45; 90", "factor": "2.08; 2.09; 2.08"}
+    file = folder / "rosettes.csv"
+    file.write_text(ROSETTE.format(**usual | cells), encoding="utf-8")
+    return file
+
+
+def test_a_rosettes_grids_have_figures_of_their_own(tmp_path: Path) -> None:
+    (lot,) = load_stock([_rosette(tmp_path)], counter()).lots
+    assert "rectangular" == lot.pattern
+    assert [1, 2, 3] == [grid.number for grid in lot.grids]
+    assert ["2.08", "2.09", "2.08"] == [grid.gauge_factor.value for grid in lot.grids]
+    assert ["0.4", "0.5", "0.4"] == [grid.transverse_sensitivity.value for grid in lot.grids]
+    assert ["1", "1", "1"] == [grid.gauge_factor_tolerance.value for grid in lot.grids]
+    assert ["0", "45", "90"] == [grid.angle.value for grid in lot.grids]
+
+
+def test_a_pattern_may_be_called_a_rosette(tmp_path: Path) -> None:
+    (lot,) = load_stock([_rosette(tmp_path, pattern="Rectangular rosette")], counter()).lots
+    assert "rectangular" == lot.pattern
+
+
+@pytest.mark.parametrize(
+    ("cells", "column", "what"),
+    [
+        ({"pattern": "star"}, "pattern", "“star” is not one of single, tee, shear pair"),
+        ({"factor": "2.08; 2.09"}, "gauge_factor", "gives 2 values for 3 grids."),
+        ({"factor": "2.08; x; 2.08"}, "gauge_factor", "“x” is no number of this trade."),
+        ({"factor": "2.08; 0; 2.08"}, "gauge_factor", "“0” must be above 0."),
+        ({"factor": ""}, "gauge_factor", "is missing."),
+        ({"angles": ""}, "grid_angles_deg", "is missing; a rectangular gauge has 3 grids."),
+        ({"angles": "0; 60; 120"}, "grid_angles_deg", "not the angles of a rectangular gauge."),
+        ({"angles": "45; 90; 135"}, "grid_angles_deg", "not the angles of a rectangular gauge."),
+    ],
+)
+def test_figures_that_do_not_make_up_the_pattern_are_told(
+    tmp_path: Path, cells: dict[str, str], column: str, what: str
+) -> None:
+    file = _rosette(tmp_path, **cells)
+    (found,) = faults_of(lambda: load_stock([file], counter()))
+    assert f"rosettes.csv, row 2, column {column}" == found.where
+    assert what in found.what
+
+
+def test_several_figures_for_a_gauge_of_one_grid_are_told(tmp_path: Path) -> None:
+    file = _rosette(tmp_path, pattern="", angles="")
+    whats = [fault.what for fault in faults_of(lambda: load_stock([file], counter()))]
+    assert ["gives 3 values for one grid."] * 2 == whats
