@@ -1,4 +1,4 @@
-"""`gaugelog plan`: load the planner's files, check the plan, look at it, release it."""
+"""`gaugelog plan`: load the planner's files, check the plan, look at it, release and revise it."""
 
 from __future__ import annotations
 
@@ -13,12 +13,15 @@ from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 from gaugelog.errors import ExitCode
 
 if TYPE_CHECKING:
+    from gaugelog.ledger.revisions import PlanRevised
     from gaugelog.rules.fit import PlanFinding
 
 group = typer.Typer(help="The plan: load, check, show, release.")
 
 _SIGNS = {"ok": "✓", "warning": "!", "refusal": "✗"}
+_MARKS = {"added": "+", "changed": "~", "dropped": "-"}
 _MEANING = "I release this plan and its acceptance criteria for work."
+_SEEN_MEANING = "I looked at what the plan's revision changes here and let the work go on."
 
 
 @group.command()
@@ -30,18 +33,29 @@ def load(
             help="Folder with campaign.toml, criteria.toml, grids.csv and circuits.csv."
         ),
     ],
+    reason: Annotated[
+        str, typer.Option(help="Why a plan that is released is revised; needed only then.")
+    ] = "",
     as_: As = "",
     secret_fd: SecretFd = None,
 ) -> None:
     """Load a plan as a draft; it replaces an earlier draft.
 
-    Every fault of every file is named at once; nothing is stored unless all is right.
+    Every fault of every file is named at once; nothing is stored unless all is right. With
+    --reason, a plan that is released gets a draft revision, and what it changes is told; work
+    goes on under the released one until the revision is released.
     """
     from gaugelog.work import plan
 
     logbook = open_logbook(ctx)
     facts = plan.understand(logbook, folder)
     signer = unlock(logbook, as_, Secrets(secret_fd))
+    if reason and plan.is_released(logbook):
+        from gaugelog.work import revising
+
+        _tell_changes(revising.revise(logbook, signer, facts, reason=reason))
+        say("Next: gaugelog plan check")
+        return
     loaded = plan.load(logbook, signer, facts)
     say(
         f"Draft revision {loaded.revision} loaded: {len(loaded.points)} points, "
@@ -80,6 +94,48 @@ def _tell_findings(findings: list[PlanFinding]) -> None:
     )
 
 
+def _tell_changes(revised: PlanRevised) -> None:
+    put(f"Plan revision {revised.revision}: {revised.reason}")
+    for change in revised.changes:
+        put(f"{_MARKS[change.what]} {change.subject} {change.label} {change.what}")
+        put(*(f"    {line}" for line in change.lines))
+
+
+@group.command()
+def changes(ctx: typer.Context, json: Json = False) -> None:
+    """Tell what the draft of a revision changes; without one, what the newest revision did."""
+    from gaugelog.work import revising
+
+    revised = revising.changes(open_logbook(ctx))
+    if not json:
+        _tell_changes(revised)
+        return
+    told = {"revision": revised.revision, "reason": revised.reason}
+    put_json({**told, "changes": as_json(revised.changes)})
+
+
+@group.command()
+def seen(
+    ctx: typer.Context,
+    point: Annotated[str, typer.Argument(help="Label of the point.")],
+    remark: Annotated[str, typer.Option(help="What you found; kept in the record's story.")],
+    redo_from: Annotated[
+        str, typer.Option(help="Step to go on from; left out: nothing is done again.")
+    ] = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Say, as a reviewer, that you looked at what a revision changed where work was done."""
+    from gaugelog.work import revising
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"let {point} go on")
+    revising.see(
+        logbook, signer, point=point, remark=remark, meaning=_SEEN_MEANING, redo_from=redo_from
+    )
+    say(f"{point} may go on. Next: gaugelog step next {point}")
+
+
 @group.command()
 def show(ctx: typer.Context, json: Json = False) -> None:
     """Show the plan: each point with its place, lot, circuit, channel and state."""
@@ -91,7 +147,17 @@ def show(ctx: typer.Context, json: Json = False) -> None:
         return
     put_table(
         "Plan",
-        ["point", "zone", "lot", "circuit", "channel", "route", ">permitted error", "state"],
+        [
+            "point",
+            "zone",
+            "lot",
+            "circuit",
+            "channel",
+            "route",
+            ">permitted error",
+            "state",
+            "touched by",
+        ],
         [_cells(row) for row in rows],
         empty="No plan is loaded. Try: gaugelog plan load FOLDER",
     )
@@ -107,6 +173,7 @@ def _cells(row: Any) -> list[str]:
         row.route,
         row.permitted_error,
         row.state,
+        "; ".join(row.touched),
     ]
 
 

@@ -245,9 +245,14 @@ def apply_campaign_planned(_known: Known, at: At, fact: CampaignPlanned) -> Iter
             "released_seq": 0,
         },
     )
-    for module in fact.modules:
+    yield from channels_of(fact)
+
+
+def channels_of(job: CampaignPlanned) -> Iterator[Change]:
+    """The rows of every channel of a campaign."""
+    for module in job.modules:
         for channel in module.channels:
-            yield Put("channel", _channel(fact.id, module, channel))
+            yield Put("channel", _channel(job.id, module, channel))
 
 
 def _channel(campaign: str, module: Module, channel: Channel) -> Row:

@@ -113,3 +113,11 @@ def reopen(known: Known, point: Row, steps: Sequence[RouteStep]) -> Iterator[Cha
             row = known.get("step", step_key(point["id"], step.id, subject))
             if row is not None:
                 yield Put("step", {**row, "outcome": "reopened"})
+
+
+def reopen_from(known: Known, point: Row, step: str) -> Iterator[Change]:
+    """The step with this id and those after it are to be done again; none where it is empty."""
+    steps = route_of(have(known, "route", point["route"])["data"]).steps
+    start = next((place for place, item in enumerate(steps) if item.id == step), None)
+    if start is not None:
+        yield from reopen(known, point, steps[start:])

@@ -8,8 +8,8 @@ from typing import ClassVar
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id
-from gaugelog.ledger.progress import move, reopen, route_of, set_states
-from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
+from gaugelog.ledger.progress import move, reopen_from, set_states
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 from gaugelog.ledger.story import told
 
 
@@ -158,7 +158,7 @@ def apply_point_returned(known: Known, at: At, fact: PointReturned) -> Iterator[
         revision=fact.revision,
     )
     point = have(known, "point", fact.point)
-    yield from _reopen_from(known, point, fact.redo_from)
+    yield from reopen_from(known, point, fact.redo_from)
     yield from set_states(known, point, "returned")
 
 
@@ -176,13 +176,5 @@ def apply_point_reopened(known: Known, at: At, fact: PointReopened) -> Iterator[
         revision=fact.revision,
     )
     point = have(known, "point", fact.point)
-    yield from _reopen_from(known, point, fact.redo_from)
+    yield from reopen_from(known, point, fact.redo_from)
     yield from move(known, point)
-
-
-def _reopen_from(known: Known, point: Row, step: str) -> Iterator[Change]:
-    """The step with this id and those after it are to be done again; none where it is empty."""
-    steps = route_of(have(known, "route", point["route"])["data"]).steps
-    start = next((place for place, item in enumerate(steps) if item.id == step), None)
-    if start is not None:
-        yield from reopen(known, point, steps[start:])

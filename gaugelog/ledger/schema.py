@@ -19,13 +19,14 @@ from gaugelog.ledger.people import PersonRow
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.reviews import RecordRow
+from gaugelog.ledger.revisions import RevisionRow
 from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.rows import Row
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 3
+LEDGER_VERSION = 4
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -45,6 +46,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     ReadingRow,
     RecordRow,
     StoryRow,
+    RevisionRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"

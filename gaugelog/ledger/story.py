@@ -20,6 +20,9 @@ Turn = Literal[
     "returned",
     "accepted",
     "amendment",
+    "plan changed",
+    "change seen",
+    "withdrawn",
 ]
 
 

@@ -160,9 +160,25 @@ def _blocks(view: View, point: PointRow, windows: Sequence[WindowFound]) -> Iter
     state = state_of(view, point)
     if state in {"awaiting review", "accepted", "withdrawn", "removed"}:
         yield f"The point is {state}."
+    else:
+        yield from _unseen(point)
     for window in windows:
         if not window.open:
             yield window.sentence
+
+
+def _unseen(point: PointRow) -> Iterator[str]:
+    """What plan revisions changed under work that was done, until a reviewer has looked."""
+    touched: list[str] = json.loads(point.touched)
+    if touched:
+        told = "; ".join(touched)
+        yield f"A reviewer looks first (`gaugelog plan seen {point.label}`) at {told}."
+
+
+def demand_changes_seen(point: PointRow) -> None:
+    """Raise Refused while a change of the plan waits for a reviewer's eye at the point."""
+    for told in _unseen(point):
+        raise Refused(f"The plan changed under {point.label}. {told}")
 
 
 def _blocking(view: View, point: PointRow, found: OpenStep) -> list[ReadingRow]:
@@ -176,8 +192,9 @@ def _blocking(view: View, point: PointRow, found: OpenStep) -> list[ReadingRow]:
 def demand_complete(view: View, point: PointRow) -> None:
     """Raise Refused, naming everything open, unless the point is ready to be submitted."""
     state = state_of(view, point)
-    if state in {"awaiting review", "accepted"}:
+    if state in {"awaiting review", "accepted", "withdrawn"}:
         raise Refused(f"{point.label} is {state} already.")
+    demand_changes_seen(point)
     still = [*_open_things(view, point)]
     if still:
         raise Refused(

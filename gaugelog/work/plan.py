@@ -2,9 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+import json
+from collections.abc import Iterable, Iterator
+from contextlib import contextmanager
 from dataclasses import dataclass
 from pathlib import Path
+from sqlite3 import Connection
 
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.plan import PlanFacts, load_plan
@@ -21,6 +24,7 @@ from gaugelog.rules.progress import worst_state
 from gaugelog.rules.who import demand_role
 from gaugelog.work.kept import demand_meaning, name_to_keep
 from gaugelog.work.logbook import Deed, Logbook
+from gaugelog.work.revising import as_released, drafted
 
 
 @dataclass(frozen=True, slots=True)
@@ -35,6 +39,8 @@ class PlannedPoint:
     route: str
     permitted_error: str
     state: str
+    touched: tuple[str, ...] = ()
+    """What plan revisions changed here since a reviewer last looked."""
 
 
 def understand(logbook: Logbook, folder: Path) -> PlanFacts:
@@ -59,8 +65,7 @@ def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
         if earlier is not None and earlier.state == "released":
             raise Refused(
                 f"The plan of {earlier.label} is released.",
-                "A released plan is changed by a revision, which this version can't make yet; "
-                "start another logbook for another job.",
+                "A released plan is changed by a revision: say why, with --reason.",
             )
         loaded = _loaded(facts, earlier)
         _keep(deed, facts, loaded)
@@ -86,8 +91,21 @@ def _demand_plain_names(facts: PlanFacts) -> None:
 
 def check(logbook: Logbook) -> list[PlanFinding]:
     """Everything found about the plan: ok, warning or refusal, each with figure and source."""
-    with logbook.reading() as view:
-        return check_plan(view, _planned(view))
+    with logbook.storage.reading() as reader, _as_drafted(reader.connection) as (view, campaign):
+        return check_plan(view, campaign)
+
+
+@contextmanager
+def _as_drafted(connection: Connection) -> Iterator[tuple[View, CampaignRow]]:
+    """What is checked and released: the draft, or the revision of the plan as if it stood."""
+    now = View(connection, lambda _sheet: None)
+    campaign = _planned(now)
+    draft = drafted(now, campaign)
+    if draft is None:
+        yield now, campaign
+        return
+    with as_released(connection, draft) as view:
+        yield view, _planned(view)
 
 
 def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
@@ -98,10 +116,12 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
     demand_meaning(meaning)
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner")
-        campaign = _planned(deed.view)
-        if campaign.state == "released":
-            raise Refused(f"Revision {campaign.revision} is released already.")
-        findings = check_plan(deed.view, campaign)
+        before = _planned(deed.view)
+        if before.state == "released" and drafted(deed.view, before) is None:
+            raise Refused(f"Revision {before.revision} is released already.")
+        with _as_drafted(deed.writer.connection) as (view, campaign):
+            findings = check_plan(view, campaign)
+            points = [row.id for row in view.all(PointRow)]
         refused = [finding for finding in findings if finding.level == "refusal"]
         if refused:
             raise Refused(
@@ -119,8 +139,16 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
                 if finding.level == "warning"
             ),
         )
-        deed.keep(body, [campaign.id, *(row.id for row in deed.view.all(PointRow))])
+        known = [row.id for row in deed.view.all(PointRow)]
+        deed.keep(body, [campaign.id, *known, *points])
     return body
+
+
+def is_released(logbook: Logbook) -> bool:
+    """Whether a plan is released, so that the next load is a revision of it."""
+    with logbook.reading() as view:
+        campaign = _campaign(view)
+    return campaign is not None and campaign.state == "released"
 
 
 def overview(logbook: Logbook) -> list[PlannedPoint]:
@@ -154,6 +182,7 @@ class _Names:
             self._routes.get(row.route, "?"),
             str(planned.permitted_error),
             worst_state([grid.state for grid in grids]),
+            tuple(json.loads(row.touched)),
         )
 
 

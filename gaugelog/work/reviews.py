@@ -12,7 +12,7 @@ from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.amended import under_amendment
-from gaugelog.rules.progress import demand_complete, demand_step
+from gaugelog.rules.progress import demand_changes_seen, demand_complete, demand_step
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.kept import demand_meaning
 from gaugelog.work.logbook import Deed, Logbook
@@ -83,6 +83,7 @@ def accept(
     demand_meaning(meaning)
     with logbook.reading() as view:
         row, record = _under_review(view, point, signer, "accept it")
+        demand_changes_seen(row)
         stamp = Stamp(
             signer.person,
             view.name(signer.person),
@@ -93,7 +94,8 @@ def accept(
     pdf = maker.accepted(logbook.evidence.get(record.submitted_file), stamp, signer)
     file = logbook.evidence.put(pdf)
     with logbook.deed(signer) as deed:
-        _, now = _under_review(deed.view, point, signer, "accept it")
+        latest, now = _under_review(deed.view, point, signer, "accept it")
+        demand_changes_seen(latest)
         if now.id != record.id:
             raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
         body = PointAccepted(

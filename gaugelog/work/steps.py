@@ -142,7 +142,7 @@ def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str
         row = point_row(making.view, point)
         demand_role(making.view, signer.person, "technician")
         state = state_of(making.view, row)
-        if state in {"planned", "awaiting review", "accepted"}:
+        if state in {"planned", "awaiting review", "accepted", "withdrawn"}:
             raise Refused(f"{row.label} is {state}; no step can be done again now.")
         wanted = demand_step(making.view, row, step)
         demand_walked(making.view, row, wanted)

@@ -82,5 +82,7 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "point.submitted": lambda fact: f"revision {fact['revision']}",
     "point.accepted": lambda fact: f"revision {fact['revision']}",
     "point.returned": lambda fact: f"revision {fact['revision']}, {fact['reason']}",
+    "plan.revised": lambda fact: f"draft of revision {fact['revision']}, {fact['reason']}",
+    "change.seen": lambda fact: f"plan revision {fact['revision']}, {fact['remark']}",
     "point.reopened": lambda fact: f"revision {fact['revision']} amended, {fact['reason']}",
 }

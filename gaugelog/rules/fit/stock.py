@@ -11,7 +11,8 @@ from gaugelog.rules.fit.plan import Plan
 
 def stock_findings(plan: Plan) -> Iterator[PlanFinding]:
     """Each lot that is planned from: wanted against what is on the shelf."""
-    wanted = Counter(point.lot for point in plan.points if point.lot in plan.lots)
+    open_points = [point for point in plan.points if point.id not in plan.taken]
+    wanted = Counter(point.lot for point in open_points if point.lot in plan.lots)
     for lot, count in wanted.items():
         there = plan.shelf[lot]
         label = f"lot {plan.lots[lot].label}"
