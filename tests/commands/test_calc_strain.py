@@ -106,6 +106,15 @@ def test_a_fourth_grid_checks_the_other_three() -> None:
     assert "-3.75 µm/m" == told["reading 1 less the fit"]
 
 
+def test_spare_grids_that_disagree_beyond_their_uncertainty_are_told() -> None:
+    typed = {"readings": "400, 300, -200, -85 ue", "angles": "0, 45, 90, 135 deg"}
+    for transverse in ({}, {"transverse": "1 %"}):
+        told = answer("rosette", **typed, **transverse, uncertainty="3 ue")
+        assert any("scatter by 7.5" in each for each in told.warnings)
+        fine = answer("rosette", **typed, **transverse, uncertainty="4 ue")
+        assert not any("scatter" in each for each in fine.warnings)
+
+
 def test_transverse_sensitivity_comes_off_before_the_circle() -> None:
     told = shown("rosette", pattern="delta", readings="1018, 224, -1527 ue", transverse="2 %")
     assert "1036.6 µm/m" == told["grid 1, transverse corrected"]
@@ -123,6 +132,8 @@ def test_a_layer_has_stresses_in_its_own_axes() -> None:
         shear_modulus="5 GPa",
     )
     assert {"stress along the fibre", "stress across the fibre"} <= set(told)
+    # ½ atan2(2 · 2.0, 55.76 + 0.81) MPa: far from the 16.8° of the strain.
+    assert "2.023°" == told["direction of the largest stress, from the fibre"]
     assert "von Mises stress" not in told
 
 
@@ -155,6 +166,12 @@ def test_a_check_load_finds_grids_as_planned_or_in_no_order() -> None:
     check = {"what": "check", "pattern": "rectangular", "strain": "300 ue", "poisson": "0.3"}
     assert "grids as planned" == shown("rosette", **check, readings="301, 100, -93 ue")["answer"]
     assert "no exchange" in shown("rosette", **check, readings="301, 200, 10 ue")["answer"]
+
+
+def test_a_check_load_says_what_it_cannot_tell() -> None:
+    check = {"what": "check", "pattern": "delta", "strain": "300 ue", "poisson": "0.3"}
+    told = shown("rosette", **check, readings="300, 7.5, 7.5 ue")["answer"]
+    assert "grids as planned, or grids 2 and 3 exchanged: this load cannot tell" == told
 
 
 def test_the_drawing_is_well_formed_and_tells_the_figures(tmp_path: Path, command: Command) -> None:
