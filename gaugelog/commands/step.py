@@ -62,7 +62,7 @@ def _tell_step(found: NextStep) -> None:
     for caution in step.cautions:
         put(*_wrapped(caution, "CAUTION: "))
     if found.facts:
-        put("", "From the plan:", *(f"  {fact}" for fact in found.facts))
+        put("", "From the plan:", *(line for fact in found.facts for line in _wrapped(fact)))
     if step.inputs:
         put("", "To enter:", *(_input_line(item) for item in step.inputs))
     put(*(f"  time: {window.sentence}" for window in found.windows if window.open))
@@ -85,7 +85,10 @@ def _ways_back(found: NextStep) -> list[str]:
 def _wrapped(text: str, lead: str = "") -> list[str]:
     import textwrap
 
-    return textwrap.wrap(lead + text, 78, initial_indent="  ", subsequent_indent="  ")
+    indent = " " * (len(text) - len(text.lstrip()) + 2)
+    return textwrap.wrap(
+        lead + text.strip(), 78, initial_indent=indent, subsequent_indent=f"{indent}  "
+    )
 
 
 def _input_line(item: StepInput) -> str:

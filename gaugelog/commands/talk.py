@@ -67,14 +67,26 @@ def put_table(
         say(empty)
         return
     table = Table(title=Text(title), title_justify="left", box=box.SIMPLE_HEAD, pad_edge=False)
-    for column in columns:
-        right = column.startswith(">")
+    for place, column in enumerate(columns):
+        right, heading = column.startswith(">"), column.removeprefix(">")
         table.add_column(
-            Text(column.removeprefix(">")), justify="right" if right else "left", overflow="fold"
+            Text(heading),
+            justify="right" if right else "left",
+            overflow="fold",
+            min_width=_least_width(heading, [cells[place].plain for cells in body]),
         )
     for cells in body:
         table.add_row(*cells)
     console().print(table)
+
+
+def _least_width(heading: str, cells: Iterable[str]) -> int:
+    """How narrow a column may get: its words stay whole, those of a dozen letters or less."""
+    words = [*heading.split(), *(word for cell in cells for word in cell.split())]
+    return max((len(word) for word in words if len(word) <= _WHOLE_WORD), default=1)
+
+
+_WHOLE_WORD = 12
 
 
 def tell_error(error: GaugelogError) -> None:
