@@ -11,6 +11,7 @@ from functools import cache
 from typing import Any
 
 from pydantic import ConfigDict, create_model
+from pydantic_core import from_json
 
 from gaugelog.errors import GaugelogError, StorageTrouble
 from gaugelog.journal.check.report import Trouble
@@ -57,7 +58,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (steps.StepSkipped, steps.apply_step_skipped),
         (steps.HoldDecided, steps.apply_hold_decided),
         (steps.StepReopened, steps.apply_step_reopened),
-        (readings.ReadingTaken, readings.apply_reading_taken),
+        (readings.ReadingSeen, readings.apply_reading_taken),
         (reviews.PointSubmitted, reviews.apply_point_submitted),
         (reviews.PointAccepted, reviews.apply_point_accepted),
         (reviews.PointReturned, reviews.apply_point_returned),
@@ -77,7 +78,7 @@ def apply(known: Known, entry: Entry) -> Iterator[Change]:
     Kinds that this version does not know, and withheld bodies, change nothing.
     """
     # The check reads headers strictly; here a plain look at the same bytes is enough.
-    header = json.loads(entry.header_bytes)
+    header = from_json(entry.header_bytes)
     found = _FOLD.get((header["kind"], header["version"]))
     if found is None or entry.body_bytes is None:
         return
