@@ -30,7 +30,7 @@ def load(
     folder: Annotated[
         Path,
         typer.Argument(
-            help="Folder with campaign.toml, criteria.toml, grids.csv and circuits.csv."
+            help="Folder with campaign.toml, criteria.toml, and grids and circuits as .csv or .xlsx."
         ),
     ],
     reason: Annotated[

@@ -23,12 +23,13 @@ group = typer.Typer(help="Stock: receive gauge lots and consumables, list what i
 def receive(
     ctx: typer.Context,
     files: Annotated[
-        list[Path], typer.Argument(help="CSV of gauge lots (a row a pack) or of consumables.")
+        list[Path],
+        typer.Argument(help="CSV or XLSX of gauge lots (a row a pack) or of consumables."),
     ],
     as_: As = "",
     secret_fd: SecretFd = None,
 ) -> None:
-    """Receive gauge lots and consumables from CSV files.
+    """Receive gauge lots and consumables from CSV or XLSX files.
 
     Every fault of every file is named at once; nothing is stored unless all is right.
     """

@@ -81,7 +81,9 @@ class Fields:
         if value is None:
             return ""
         if not isinstance(value, str):
-            self.fault(name, f"is {_kind(value)}, not text.", "Put it in quotes.")
+            in_sheet = "; in a spreadsheet format the cell as text"
+            more = in_sheet if isinstance(value, date) else ""
+            self.fault(name, f"is {_kind(value)}, not text.", f"Put it in quotes{more}.")
             return ""
         return self._tidied(name, value, longest)
 

@@ -1,4 +1,7 @@
-"""A plan's folder as a whole: four files understood together, every fault of all at once."""
+"""A plan's folder as a whole: four files understood together, every fault of all at once.
+
+The two tables may be CSV or XLSX.
+"""
 
 from __future__ import annotations
 
@@ -78,13 +81,14 @@ class _Reading:
             lambda name, data: read_criteria(name, data, owner, self.new_id, self.faults),
         )
         plans = self._understood(
-            "grids.csv", lambda name, data: read_grids(name, data, owner, self.new_id, self.faults)
+            self._table("grids"),
+            lambda name, data: read_grids(name, data, owner, self.new_id, self.faults),
         )
         routes = Routes(self.folder, self.new_id, FILES)
         points = [self._settled(plan, campaign, routes) for plan in plans or ()]
         named = Named(_grids(points) if plans is not None else None, _channels(campaign))
         circuits = self._understood(
-            "circuits.csv",
+            self._table("circuits"),
             lambda name, data: read_circuits(
                 name, data, owner, named, new_id=self.new_id, faults=self.faults
             ),
@@ -96,6 +100,16 @@ class _Reading:
 
     def _campaign(self, name: str, data: bytes) -> CampaignPlanned:
         return read_campaign(name, data, self.new_id, self.faults)
+
+    def _table(self, name: str) -> str:
+        """The name of a table's file, which may be CSV or XLSX; a fault where both are there."""
+        text, workbook = f"{name}.csv", f"{name}.xlsx"
+        if not (self.folder / workbook).exists():
+            return text
+        if (self.folder / text).exists():
+            what = f"is there beside {text}."
+            self.faults.append(Fault(workbook, what, "Keep the one that counts."))
+        return workbook
 
     def _understood(self, name: str, read: Callable[[str, bytes], T]) -> T | None:
         """What `read` makes of a file; None, and faults, where it can't be read as one."""

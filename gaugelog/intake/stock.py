@@ -1,4 +1,4 @@
-"""Gauge lots and consumables from CSV: a row a pack, a row a consumable lot."""
+"""Gauge lots and consumables from CSV or XLSX: a row a pack, a row a consumable lot."""
 
 from __future__ import annotations
 
@@ -9,9 +9,9 @@ from typing import cast, get_args
 
 from gaugelog.errors import Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct, in_order
-from gaugelog.intake.files import read_bytes, text_of
+from gaugelog.intake.files import read_bytes
 from gaugelog.intake.griddata import grids_of, pattern_of
-from gaugelog.intake.tables import Columns, rows_of
+from gaugelog.intake.tables import Columns, heading_of, rows_of
 from gaugelog.intake.typed import number_of
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.stock import (
@@ -86,7 +86,7 @@ def load_stock(files: Sequence[Path], new_id: NewId) -> Stock:
     for path in files:
         try:
             data = read_bytes(path)
-            if _holds_consumables(text_of(path.name, data)):
+            if _holds_consumables(heading_of(path.name, data)):
                 consumables += rows_of(path.name, data, CONSUMABLE_COLUMNS, faults)
             else:
                 lots += rows_of(path.name, data, LOT_COLUMNS, faults)
@@ -98,9 +98,8 @@ def load_stock(files: Sequence[Path], new_id: NewId) -> Stock:
     return stock
 
 
-def _holds_consumables(text: str) -> bool:
-    heading = text.partition("\n")[0].casefold()
-    return "consumable" in heading
+def _holds_consumables(heading: list[str]) -> bool:
+    return any("consumable" in cell.casefold() for cell in heading)
 
 
 def _lots(rows: list[Fields], new_id: NewId) -> tuple[LotReceived, ...]:
