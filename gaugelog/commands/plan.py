@@ -30,7 +30,7 @@ def load(
     folder: Annotated[
         Path,
         typer.Argument(
-            help="Folder with campaign.toml, criteria.toml, and grids and circuits as .csv or .xlsx."
+            help="Folder with campaign.toml, criteria.toml, and grids and circuits, .csv or .xlsx."
         ),
     ],
     reason: Annotated[
