@@ -65,7 +65,7 @@ class CircuitRow(SQLModel, table=True):
 
 
 def apply_circuit_planned(known: Known, at: At, fact: CircuitPlanned) -> Iterator[Change]:
-    """The circuit is planned, and its grids know it."""
+    """The circuit is planned, and its grids know it; a shared dummy keeps to its first circuit."""
     yield Put(
         "circuit",
         {
@@ -78,4 +78,6 @@ def apply_circuit_planned(known: Known, at: At, fact: CircuitPlanned) -> Iterato
         },
     )
     for grid in fact.grids:
-        yield Put("grid", {**have(known, "grid", grid), "circuit": fact.id})
+        row = have(known, "grid", grid)
+        if not row["circuit"]:
+            yield Put("grid", {**row, "circuit": fact.id})

@@ -10,9 +10,13 @@ from functools import lru_cache
 from gaugelog.ledger.points import PointPlanned
 from gaugelog.ledger.routes import RouteAdopted, RouteStep
 from gaugelog.ledger.rows import Change, Known, Put, Row, have
+from gaugelog.ledger.sharing import sharers
 
 SETTLED = frozenset({"done", "skipped", "released"})
 """Outcomes after which the route goes on."""
+
+UNDER_WAY = frozenset({"in work", "on hold", "ready to coat", "non-conforming"})
+"""States of grids where work goes on."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -107,12 +111,47 @@ def set_states(known: Known, point: Row, state: str) -> Iterator[Change]:
 
 
 def reopen(known: Known, point: Row, steps: Sequence[RouteStep]) -> Iterator[Change]:
-    """Mark steps that were settled as to be done again."""
+    """Mark steps that were settled as to be done again; of a circuit, for each of its points."""
+    others: dict[str, None] = {}
     for step in steps:
         for subject in subjects_of(known, point, step):
-            row = known.get("step", step_key(point["id"], step.id, subject))
-            if row is not None:
-                yield Put("step", {**row, "outcome": "reopened"})
+            sharing = sharers(known, point["id"], subject) if step.subject == "circuit" else ()
+            for each in (point["id"], *sharing):
+                row = known.get("step", step_key(each, step.id, subject))
+                if row is not None:
+                    yield Put("step", {**row, "outcome": "reopened"})
+            others |= dict.fromkeys(sharing)
+    for other in others:
+        yield from move_along(known, other)
+
+
+def count_for_sharers(known: Known, row: Row, person: str) -> Iterator[Change]:
+    """A step's row, done on a circuit by `person`, for each other point whose route asks for it."""
+    for other in sharers(known, row["point"], row["subject"]):
+        if row["step"] in _circuit_steps(known, have(known, "point", other)):
+            if person:
+                yield from note_worker(known, other, person)
+            key = step_key(other, row["step"], row["subject"])
+            yield Put("step", {**row, "id": key, "point": other})
+            yield from move_along(known, other)
+
+
+def _circuit_steps(known: Known, point: Row) -> set[str]:
+    steps = route_of(have(known, "route", point["route"])["data"]).steps
+    return {step.id for step in steps if step.subject == "circuit"}
+
+
+def under_way(known: Known, point: Row) -> bool:
+    """Whether work goes on at a point; what happens on its circuit moves none that is at rest."""
+    states = {have(known, "grid", grid)["state"] for grid in grids_of(point["data"])}
+    return states <= UNDER_WAY
+
+
+def move_along(known: Known, point_id: str) -> Iterator[Change]:
+    """The states of a point that shares a circuit, after something happened on it elsewhere."""
+    point = have(known, "point", point_id)
+    if under_way(known, point):
+        yield from move(known, point)
 
 
 def reopen_from(known: Known, point: Row, step: str) -> Iterator[Change]:

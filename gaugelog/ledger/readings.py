@@ -10,8 +10,9 @@ from pydantic import ConfigDict
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity, TimeText
-from gaugelog.ledger.progress import mark
-from gaugelog.ledger.rows import At, Change, Known, Put, have
+from gaugelog.ledger.progress import mark, under_way
+from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
+from gaugelog.ledger.sharing import sharers
 
 Word = Literal["pass", "conditional pass", "conditional fail", "fail", "undecided"]
 Qualifier = Literal["=", ">", "<", "overload"]
@@ -169,7 +170,14 @@ def apply_reading_taken(known: Known, at: At, fact: ReadingSeen) -> Iterator[Cha
             "seq": at.seq,
         },
     )
-    point = have(known, "point", fact.point)
+    yield from _marked(known, have(known, "point", fact.point), fact)
+    for other in sharers(known, fact.point, fact.subject):
+        point = have(known, "point", other)
+        if under_way(known, point):
+            yield from _marked(known, point, fact)
+
+
+def _marked(known: Known, point: Row, fact: ReadingSeen) -> Iterator[Change]:
     blocked = _blocked(point["blocked"], fact)
     if blocked != point["blocked"]:
         point["blocked"] = blocked

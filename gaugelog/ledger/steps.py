@@ -9,7 +9,15 @@ from typing import ClassVar, Literal
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity, TimeText
-from gaugelog.ledger.progress import move, note_worker, reopen, route_of, step_key, subjects_of
+from gaugelog.ledger.progress import (
+    count_for_sharers,
+    move,
+    note_worker,
+    reopen,
+    route_of,
+    step_key,
+    subjects_of,
+)
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.rows import At, Change, Known, Put, Row, have
 from gaugelog.ledger.story import Turn, told
@@ -111,8 +119,10 @@ def apply_step_done(known: Known, at: At, fact: StepDone) -> Iterator[Change]:
     yield from _take_gauge(known, point, step, fact)
     inputs = {name: item.model_dump(mode="json") for name, item in fact.inputs.items()}
     row = _row(at, fact, "done", fact.done_by, fact.observed_at, fact.note)
-    yield Put("step", {**row, "data": json.dumps(inputs, ensure_ascii=False)})
+    row["data"] = json.dumps(inputs, ensure_ascii=False)
+    yield Put("step", row)
     yield from move(known, have(known, "point", fact.point), step.reaches)
+    yield from count_for_sharers(known, row, fact.done_by)
 
 
 def _take_gauge(known: Known, point: Row, step: RouteStep, fact: StepDone) -> Iterator[Change]:
@@ -122,29 +132,33 @@ def _take_gauge(known: Known, point: Row, step: RouteStep, fact: StepDone) -> It
             continue
         generation = point["generation"]
         if point["gauge"] not in {"", gauge.id}:
-            mounted = _was_mounted(known, point, step)
+            mounted = was_mounted(known, point)
             generation += int(mounted)
-            yield _given_up(known, point, mounted)
+            yield given_up(known, point, mounted)
         yield Put("point", {**point, "gauge": gauge.id, "generation": generation})
         taken = {"state": "in service", "point": fact.point}
         yield Put("gauge", {**have(known, "gauge", gauge.id), **taken})
 
 
-def _was_mounted(known: Known, point: Row, taking: RouteStep) -> bool:
-    """Whether any step on grid or circuit was done after the one that takes the gauge."""
+def was_mounted(known: Known, point: Row) -> bool:
+    """Whether any step on grid or circuit was done since the gauge in place was taken."""
     steps = _steps(known, point)
-    later = steps[steps.index(taking) + 1 :]
-    keys = (
-        step_key(point["id"], step.id, subject)
-        for step in later
-        if step.subject != "place"
-        for subject in subjects_of(known, point, step)
-    )
-    rows = (known.get("step", key) for key in keys)
-    return any(row is not None for row in rows)
+    takes = [any(item.kind == "gauge" for item in step.inputs) for step in steps]
+    if True not in takes:
+        return False
+    first = takes.index(True)
+    taken = [row["seq"] for row in _rows_of(known, point, steps[first])]
+    later = (step for step in steps[first + 1 :] if step.subject != "place")
+    rows = (row for step in later for row in _rows_of(known, point, step))
+    return bool(taken) and any(row["seq"] > min(taken) for row in rows)
 
 
-def _given_up(known: Known, point: Row, mounted: bool) -> Change:
+def _rows_of(known: Known, point: Row, step: RouteStep) -> list[Row]:
+    keys = (step_key(point["id"], step.id, each) for each in subjects_of(known, point, step))
+    return [row for key in keys if (row := known.get("step", key)) is not None]
+
+
+def given_up(known: Known, point: Row, mounted: bool) -> Change:
     """The gauge that another takes the place of: removed when it was mounted, else on the shelf."""
     state = {"state": "removed"} if mounted else {"state": "on shelf", "point": ""}
     return Put("gauge", {**have(known, "gauge", point["gauge"]), **state})
@@ -153,8 +167,10 @@ def _given_up(known: Known, point: Row, mounted: bool) -> Change:
 def apply_step_skipped(known: Known, at: At, fact: StepSkipped) -> Iterator[Change]:
     """The step is settled without being done."""
     yield from note_worker(known, fact.point, fact.skipped_by)
-    yield Put("step", _row(at, fact, "skipped", fact.skipped_by, at.time, fact.reason))
+    row = _row(at, fact, "skipped", fact.skipped_by, at.time, fact.reason)
+    yield Put("step", row)
     yield from move(known, have(known, "point", fact.point))
+    yield from count_for_sharers(known, row, fact.skipped_by)
 
 
 def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Change]:
@@ -167,6 +183,7 @@ def apply_hold_decided(known: Known, at: At, fact: HoldDecided) -> Iterator[Chan
         turn: Turn = "hold refused" if fact.outcome == "refused" else "hold released"
         yield told(at, fact.point, turn, fact.decided_by, reason=fact.reason, step=fact.step)
     yield Put("step", row)
+    yield from count_for_sharers(known, row, "")
     steps = _steps(known, point)
     hold = next(place for place, item in enumerate(steps) if item.id == fact.step)
     if fact.outcome == "refused":

@@ -19,6 +19,7 @@ from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.view import View
 from gaugelog.physics.validity import OutOfDomain
 from gaugelog.rules.cure import cured
+from gaugelog.rules.waiting import waits_for
 from gaugelog.rules.windows import WindowFound, judge_window
 
 WORST_FIRST: tuple[GridState, ...] = (
@@ -117,7 +118,7 @@ def next_step(
         found.subject,
         subject_label(view, found.subject) or point.label,
         windows,
-        tuple(_blocks(view, point, windows)),
+        tuple(_blocks(view, point, found, windows)),
         bool(_blocking(view, point, found)),
     )
 
@@ -153,7 +154,9 @@ def _windows(
                 yield judge_window(fitted, earlier.title, latest, observed, now)
 
 
-def _blocks(view: View, point: PointRow, windows: Sequence[WindowFound]) -> Iterator[str]:
+def _blocks(
+    view: View, point: PointRow, found: OpenStep, windows: Sequence[WindowFound]
+) -> Iterator[str]:
     campaign = view.get(CampaignRow, point.campaign)
     if campaign is None or campaign.state != "released":
         yield "The plan is not released."
@@ -162,6 +165,7 @@ def _blocks(view: View, point: PointRow, windows: Sequence[WindowFound]) -> Iter
         yield f"The point is {state}."
     else:
         yield from _unseen(point)
+    yield from waits_for(view, point.id, found)
     for window in windows:
         if not window.open:
             yield window.sentence
@@ -184,7 +188,7 @@ def demand_changes_seen(point: PointRow) -> None:
 def _blocking(view: View, point: PointRow, found: OpenStep) -> list[ReadingRow]:
     return [
         row
-        for row in view.all(ReadingRow, point=point.id, subject=found.subject, latest=1)
+        for row in view.all(ReadingRow, subject=found.subject, latest=1)
         if row.step == found.step.id and row.blocks
     ]
 

@@ -7,8 +7,8 @@ import json
 from gaugelog.errors import Refused
 from gaugelog.ledger.people import PersonRow, Role
 from gaugelog.ledger.points import PointRow
-from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.taken import readings_at
 
 
 def roles_of(view: View, person: str) -> tuple[Role, ...]:
@@ -37,7 +37,7 @@ def workers_of(view: View, point: str) -> set[str]:
     """
     row = view.get(PointRow, point)
     did: set[str] = set(json.loads(row.workers)) if row is not None else set()
-    return did | {reading.observed_by for reading in view.all(ReadingRow, point=point)}
+    return did | {reading.observed_by for reading in readings_at(view, point)}
 
 
 def demand_second_person(view: View, person: str, point: str, what: str) -> None:

@@ -11,6 +11,7 @@ from gaugelog.journal.clock import Moment
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.sharing import points_in
 from gaugelog.ledger.view import View
 from gaugelog.rules.progress import NextStep
 from gaugelog.work.logbook import Deed
@@ -77,9 +78,14 @@ def point_row(view: View, label: str) -> PointRow:
 
 
 def about(view: View, row: PointRow, subject: str, *others: str) -> list[str]:
-    """The ids a fact at a point concerns: the point, its grids, the subject, and others."""
-    grids = [grid.id for grid in view.all(GridRow, point=row.id)]
-    return [row.id, subject, *grids, *others]
+    """The ids a fact at a point concerns: the point, its grids, the subject, and others.
+
+    A fact on a circuit concerns every point and grid in it.
+    """
+    known = view.known()
+    points = dict.fromkeys((row.id, *points_in(known, subject)))
+    grids = [grid.id for point in points for grid in view.all(GridRow, point=point)]
+    return [row.id, subject, *[point for point in points if point != row.id], *grids, *others]
 
 
 def observed_at(text: str, now: Moment) -> datetime:

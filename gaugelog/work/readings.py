@@ -161,9 +161,7 @@ def _taken_before(view: View, reading: ReadingTaken) -> Taken:
 
 
 def _latest(seen: Observation, check: str, stage: str) -> ReadingRow | None:
-    rows = seen.view.all(
-        ReadingRow, point=seen.point.id, subject=seen.subject, check=check, stage=stage, latest=1
-    )
+    rows = seen.view.all(ReadingRow, subject=seen.subject, check=check, stage=stage, latest=1)
     return rows[-1] if rows else None
 
 
