@@ -13,6 +13,7 @@ from gaugelog.commands import (
     backup,
     calc,
     demo,
+    disposition,
     doctor,
     instrument,
     journal,
@@ -79,6 +80,8 @@ _AT_WORK: dict[str, Callable[..., None]] = {
     "accept": review.accept,
     "return": review.give_back,
     "amend": review.amend,
+    "replace": disposition.replace,
+    "withdraw": disposition.withdraw,
     "record": record.record,
 }
 

@@ -34,6 +34,9 @@ _MOODS = {
     "returned": "bad",
     "hold refused": "bad",
     "amendment": "doubt",
+    "plan changed": "doubt",
+    "gauge replaced": "doubt",
+    "withdrawn": "doubt",
     "step reopened": "doubt",
 }
 
@@ -99,7 +102,7 @@ def summary(content: RecordContent) -> str:
     if not words:
         return "none yet"
     counted = ", ".join(f"{count} {word}" for word, count in words.items())
-    again = sum(not reading.latest for reading in content.readings)
+    again = sum(not (each.latest or each.earlier_gauge) for each in content.readings)
     return f"{counted}; {again} measured again" if again else counted
 
 

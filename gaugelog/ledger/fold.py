@@ -22,6 +22,7 @@ from gaugelog.ledger import (
     campaign,
     circuits,
     instruments,
+    dispositions,
     people,
     points,
     readings,
@@ -64,6 +65,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (reviews.PointReturned, reviews.apply_point_returned),
         (reviews.PointReopened, reviews.apply_point_reopened),
         (restored.LogbookRestored, restored.apply_logbook_restored),
+        (dispositions.DispositionMade, dispositions.apply_disposition_made),
     )
 }
 """Kind and version of a fact to its body and how it changes the tables."""

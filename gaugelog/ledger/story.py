@@ -22,6 +22,7 @@ Turn = Literal[
     "amendment",
     "plan changed",
     "change seen",
+    "gauge replaced",
     "withdrawn",
 ]
 

@@ -83,11 +83,12 @@ def _label(view: View, kind: str, known: str) -> str:
 
 def readings_shown(view: View, plan: Planned) -> tuple[ReadingShown, ...]:
     """Every attempt of every check, in the order they were entered."""
+    rows = view.all(ReadingRow, point=plan.point.id)
     labels = dict(plan.subjects("grid") + plan.subjects("circuit") + plan.subjects("place"))
-    return tuple(_reading(view, row, labels) for row in view.all(ReadingRow, point=plan.point.id))
+    return tuple(_reading(view, plan, row, labels) for row in rows)
 
 
-def _reading(view: View, row: ReadingRow, labels: dict[str, str]) -> ReadingShown:
+def _reading(view: View, plan: Planned, row: ReadingRow, labels: dict[str, str]) -> ReadingShown:
     taken = ReadingTaken.model_validate_json(row.data)
     fields = {
         name: getattr(taken, name)
@@ -99,11 +100,19 @@ def _reading(view: View, row: ReadingRow, labels: dict[str, str]) -> ReadingShow
             **fields,
             "subject": labels.get(row.subject, row.subject),
             "latest": bool(row.latest),
+            "earlier_gauge": _earlier_gauge(view, plan, taken),
             "instrument": needed(view.get(InstrumentRow, row.instrument)).label,
             "entered_at": row.entered_at,
             "entered_by": row.entered_by,
         }
     )
+
+
+def _earlier_gauge(view: View, plan: Planned, taken: ReadingTaken) -> str:
+    if taken.gauge is None or taken.gauge == plan.row.gauge:
+        return ""
+    gauge = view.get(GaugeRow, taken.gauge)
+    return gauge.label if gauge is not None else taken.gauge
 
 
 def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:

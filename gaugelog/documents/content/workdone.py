@@ -75,6 +75,8 @@ class ReadingShown(Shown):
     attempt: int
     latest: bool
     """Whether it is the last attempt of its check at its stage."""
+    earlier_gauge: str = ""
+    """Label of the piece it was taken on, where that is not the one in place now."""
     typed: str
     qualifier: Qualifier
     value: Quantity | None = None

@@ -1,0 +1,44 @@
+"""`gaugelog replace` and `withdraw`: what becomes of a point that can't go on as it is."""
+
+from __future__ import annotations
+
+from typing import Annotated
+
+import typer
+
+from gaugelog.commands.passphrases import Secrets
+from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import say
+
+Point = Annotated[str, typer.Argument(help="Label of the point.")]
+Reason = Annotated[str, typer.Option(help="Why; the record's story shows it.")]
+
+REPLACE_MEANING = "I decided that the gauge in place is given up and replaced."
+WITHDRAW_MEANING = "I decided that this point is withdrawn."
+
+
+def replace(
+    ctx: typer.Context, point: Point, reason: Reason, as_: As = "", secret_fd: SecretFd = None
+) -> None:
+    """Give up the gauge in place: a new piece is taken, the place prepared anew. A sign-off."""
+    from gaugelog.work import dispositions
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"replace the gauge of {point}")
+    dispositions.replace(logbook, signer, point=point, reason=reason, meaning=REPLACE_MEANING)
+    say(
+        f"{point}: the gauge is removed; its readings stay with it.",
+        f"Next, from the start: gaugelog step next {point}",
+    )
+
+
+def withdraw(
+    ctx: typer.Context, point: Point, reason: Reason, as_: As = "", secret_fd: SecretFd = None
+) -> None:
+    """Withdraw a point: nothing more is done or measured there. A sign-off."""
+    from gaugelog.work import dispositions
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"withdraw {point}")
+    dispositions.withdraw(logbook, signer, point=point, reason=reason, meaning=WITHDRAW_MEANING)
+    say(f"{point} is withdrawn; what was kept of it stays.")
