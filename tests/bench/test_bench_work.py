@@ -117,11 +117,16 @@ def test_replay_takes_at_most_three_times_a_bulk_insert(
 
 
 def _replayed(file: Path, entries: list[Entry]) -> None:
-    with _fresh(file) as connection:
-        fresh = [Entry(each.header_bytes, each.body_bytes, each.signature) for each in entries]
-        rows = fold.fold(fresh, one_chain=True)
-        schema.create_tables(connection)
-        schema.write(connection, rows)
+    """The ledger folded anew and written in one transaction, as `Logbook.rebuild` does."""
+    file.unlink(missing_ok=True)
+    connection = sqlite3.connect(file, isolation_level=None)
+    fresh = [Entry(each.header_bytes, each.body_bytes, each.signature) for each in entries]
+    connection.execute("BEGIN IMMEDIATE")
+    rows = fold.fold(fresh, one_chain=True)
+    schema.create_tables(connection)
+    schema.write(connection, rows)
+    connection.execute("COMMIT")
+    connection.close()
 
 
 def _inserted(file: Path, rows: Buffer) -> None:
@@ -136,8 +141,3 @@ def _inserted(file: Path, rows: Buffer) -> None:
             if kept:
                 connection.execute(insert(table), kept)
     engine.dispose()
-
-
-def _fresh(file: Path) -> sqlite3.Connection:
-    file.unlink(missing_ok=True)
-    return sqlite3.connect(file)
