@@ -409,6 +409,15 @@ def test_no_room_while_restoring_leaves_nothing(
     assert not (tmp_path / "r").exists()
 
 
+def test_a_full_disk_takes_no_backup_and_is_told_as_such(
+    job: Job, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    monkeypatch.setattr(shutil, "disk_usage", lambda _folder: shutil._ntuple_diskusage(1, 1, 0))
+    with pytest.raises(StorageTrouble, match="has room for 0 kB"):
+        backup(job.book, tmp_path / "b.zip")
+    assert [] == [each for each in tmp_path.iterdir() if "b.zip" in each.name]
+
+
 def test_a_full_disk_is_told_before_anything_is_unpacked(
     job: Job, kept: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
 ) -> None:

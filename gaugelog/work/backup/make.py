@@ -5,6 +5,7 @@ from __future__ import annotations
 import hashlib
 import io
 import os
+import shutil
 import tempfile
 import zipfile
 from collections.abc import Iterator
@@ -57,6 +58,7 @@ def backup(logbook: Logbook, target: Path) -> BackedUp:
     if target.exists():
         raise Refused(f"{target} is there already.", "Give each backup a name of its own.")
     with _written_plainly(target), _scratch(target) as scratch:
+        _demand_room(target, logbook.storage.path.stat().st_size)
         with logbook.storage.reading() as reader:
             with told_plainly(target):
                 copy_database(reader, scratch / DATABASE)
@@ -117,6 +119,17 @@ class _Packing:
                 digest.update(piece)
                 out.write(piece)
         self.sums[name] = digest.hexdigest()
+
+
+def _demand_room(target: Path, needed: int) -> None:
+    """Raise StorageTrouble when the disk can't even take a copy of the database."""
+    free = shutil.disk_usage(target.parent).free
+    if free < needed:
+        raise StorageTrouble(
+            f"The disk of {target} has room for {free // 1000} kB; the backup needs more than "
+            f"{needed // 1000} kB.",
+            "Make room, or write the backup to another disk.",
+        )
 
 
 @contextmanager
