@@ -1,4 +1,4 @@
-"""`gaugelog stock`: gauge lots and consumables as received, and what is left of them."""
+"""`gaugelog stock`: gauge lots and consumables as received, what is left, what may be used."""
 
 from __future__ import annotations
 
@@ -13,10 +13,18 @@ from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import put_json, put_table, say
 
 if TYPE_CHECKING:
+    from gaugelog.ledger.standing import Standing
     from gaugelog.ledger.stock import ConsumableReceived, LotReceived
     from gaugelog.ledger.view import View
 
-group = typer.Typer(help="Stock: receive gauge lots and consumables, list what is there.")
+group = typer.Typer(
+    help="Stock: receive gauge lots and consumables, list them, set what may be used."
+)
+
+Label = Annotated[
+    str, typer.Argument(help="A lot, a pack (K7-03), a gauge (K7-03/4), a consumable.")
+]
+Reason = Annotated[str, typer.Option(help="Why; it is kept with the standing.")]
 
 
 @group.command()
@@ -50,8 +58,9 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
     logbook = open_logbook(ctx)
     with logbook.reading() as view:
         lots, consumables = _lots(view), _consumables(view)
+        standing = _standing(view)
     if json:
-        put_json({"lots": lots, "consumables": consumables})
+        put_json({"lots": lots, "consumables": consumables, "standing": standing})
         return
     put_table(
         "Gauge lots",
@@ -65,6 +74,66 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
         [[str(value) for value in row.values()] for row in consumables],
         empty="No consumable has been received.",
     )
+    if standing:
+        put_table(
+            "Not free to use",
+            ["label", "kind", "standing", "since", "by", "reason"],
+            [list(row.values()) for row in standing],
+            empty="",
+        )
+
+
+@group.command()
+def quarantine(
+    ctx: typer.Context, label: Label, reason: Reason, as_: As = "", secret_fd: SecretFd = None
+) -> None:
+    """Stop the use of a lot, a pack, a gauge or a consumable until it is freed."""
+    _set(ctx, label, "quarantined", reason, as_, secret_fd)
+
+
+@group.command()
+def free(
+    ctx: typer.Context, label: Label, reason: Reason, as_: As = "", secret_fd: SecretFd = None
+) -> None:
+    """Let something in quarantine be used again; not the technician's to say."""
+    _set(ctx, label, "free", reason, as_, secret_fd)
+
+
+@group.command()
+def scrap(
+    ctx: typer.Context, label: Label, reason: Reason, as_: As = "", secret_fd: SecretFd = None
+) -> None:
+    """Scrap a gauge, or what is on the shelf of a pack or lot; for good."""
+    _set(ctx, label, "scrapped", reason, as_, secret_fd)
+
+
+def _set(
+    ctx: typer.Context, label: str, standing: Standing, reason: str, as_: str, fd: int | None
+) -> None:
+    from gaugelog.work.standing import set_standing
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(fd))
+    done = set_standing(logbook, signer, label=label, standing=standing, reason=reason)
+    scrapped = f"; {len(done.scraps)} gauges leave the shelf" if done.scraps else ""
+    say(f"{done.item_kind} {done.label} is {done.standing}{scrapped}.")
+
+
+def _standing(view: View) -> list[dict[str, str]]:
+    from gaugelog.ledger.standing import StandingRow
+
+    return [
+        {
+            "label": row.label,
+            "kind": row.item_kind,
+            "standing": row.standing,
+            "since": row.at,
+            "by": row.by,
+            "reason": row.reason,
+        }
+        for row in view.all(StandingRow)
+        if row.standing != "free"
+    ]
 
 
 def _lots(view: View) -> list[dict[str, Any]]:

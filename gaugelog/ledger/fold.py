@@ -21,8 +21,8 @@ from gaugelog.journal.storage.sqlite import SqliteReader
 from gaugelog.ledger import (
     campaign,
     circuits,
-    instruments,
     dispositions,
+    instruments,
     people,
     points,
     readings,
@@ -31,6 +31,7 @@ from gaugelog.ledger import (
     revisions,
     routes,
     schema,
+    standing,
     steps,
     stock,
 )
@@ -64,8 +65,9 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (reviews.PointAccepted, reviews.apply_point_accepted),
         (reviews.PointReturned, reviews.apply_point_returned),
         (reviews.PointReopened, reviews.apply_point_reopened),
-        (restored.LogbookRestored, restored.apply_logbook_restored),
         (dispositions.DispositionMade, dispositions.apply_disposition_made),
+        (standing.StandingSet, standing.apply_standing_set),
+        (restored.LogbookRestored, restored.apply_logbook_restored),
     )
 }
 """Kind and version of a fact to its body and how it changes the tables."""

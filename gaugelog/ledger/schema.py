@@ -22,11 +22,12 @@ from gaugelog.ledger.reviews import RecordRow
 from gaugelog.ledger.revisions import RevisionRow
 from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.rows import Row
+from gaugelog.ledger.standing import StandingRow
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 6
+LEDGER_VERSION = 7
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -47,6 +48,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     RecordRow,
     StoryRow,
     RevisionRow,
+    StandingRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"

@@ -10,6 +10,7 @@ from gaugelog.ledger.points import PointPlanned, PointRow
 from gaugelog.ledger.routes import AXIS, PLACE_X, PLACE_Y, RouteStep
 from gaugelog.ledger.stock import GaugeRow, LotRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.barred import why_gauge_barred
 
 _MOST_PIECES = 5
 
@@ -44,7 +45,8 @@ def _gauges(view: View, row: PointRow) -> Iterator[str]:
     lot = view.get(LotRow, row.lot)
     if lot is None:
         return
-    free = [gauge.label for gauge in view.all(GaugeRow, lot=row.lot, state="on shelf")]
+    shelf = view.all(GaugeRow, lot=row.lot, state="on shelf")
+    free = [gauge.label for gauge in shelf if not why_gauge_barred(view, gauge)]
     more = f" and {len(free) - _MOST_PIECES} more" if len(free) > _MOST_PIECES else ""
     yield f"lot {lot.label}, {lot.type}; on the shelf: {', '.join(free[:_MOST_PIECES])}{more}"
 

@@ -18,6 +18,7 @@ from gaugelog.ledger.routes import RouteAdopted, RouteRow, RouteStep
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.view import View
 from gaugelog.physics.validity import OutOfDomain
+from gaugelog.rules.barred import why_place_barred
 from gaugelog.rules.cure import cured
 from gaugelog.rules.waiting import waits_for
 from gaugelog.rules.windows import WindowFound, judge_window
@@ -166,6 +167,10 @@ def _blocks(
     else:
         yield from _unseen(point)
     yield from waits_for(view, point.id, found)
+    barred = why_place_barred(view, point)
+    if barred and not any(item.kind == "gauge" for item in found.step.inputs):
+        # Where a step takes a gauge, another can be taken; it is the input that is refused.
+        yield f"In place: {barred.rstrip('.')}."
     for window in windows:
         if not window.open:
             yield window.sentence
@@ -209,6 +214,9 @@ def demand_complete(view: View, point: PointRow) -> None:
 
 def _open_things(view: View, point: PointRow) -> Iterator[str]:
     found = open_step(view.known(), point.model_dump())
+    barred = why_place_barred(view, point)
+    if barred:
+        yield barred
     if found is not None:
         yield f"step {found.number}, “{found.step.title}”, is open"
     for key in json.loads(point.blocked):

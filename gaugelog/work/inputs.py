@@ -15,6 +15,7 @@ from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered
 from gaugelog.ledger.stock import ConsumableReceived, LotRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.barred import why_barred, why_gauge_barred
 
 LONGEST_TEXT = 2000
 _YES, _NO = frozenset({"yes", "y", "ok", "done"}), frozenset({"no", "n"})
@@ -97,7 +98,13 @@ def _gauge(asked: Asked, item: StepInput, text: str, where: str, found: Understo
         raise _fault(f"{gauge.label} is not of lot {planned}, which is planned here.")
     if gauge.state != "on shelf" and gauge.id != asked.point.gauge:
         raise _fault(f"{gauge.label} is {gauge.state}.", "Take one from the shelf.")
+    _demand_free(why_gauge_barred(asked.view, gauge))
     found.entered[item.name] = Entered(typed=text, id=gauge.id)
+
+
+def _demand_free(barred: str) -> None:
+    if barred:
+        raise _fault(f"{barred.rstrip('.')}.", "Take another, or have it freed.")
 
 
 def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:
@@ -108,6 +115,7 @@ def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Und
         raise _fault(f"{lot.label} is a lot of {lot.type}, not of {item.type}.")
     if lot.expires and date.fromisoformat(lot.expires) < asked.day:
         raise _fault(f"{lot.label} expired on {lot.expires}.", "Take a lot that is in date.")
+    _demand_free(why_barred(asked.view, lot.id))
     found.entered[item.name] = Entered(typed=text, id=lot.id)
     found.consumables.append(ConsumableReceived.model_validate_json(lot.data))
 

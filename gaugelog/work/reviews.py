@@ -12,6 +12,7 @@ from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.amended import under_amendment
+from gaugelog.rules.barred import demand_place_free
 from gaugelog.rules.progress import demand_changes_seen, demand_complete, demand_step
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.kept import demand_meaning
@@ -96,6 +97,7 @@ def accept(
     with logbook.deed(signer) as deed:
         latest, now = _under_review(deed.view, point, signer, "accept it")
         demand_changes_seen(latest)
+        demand_place_free(deed.view, latest)
         if now.id != record.id:
             raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
         body = PointAccepted(

@@ -84,6 +84,7 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "point.returned": lambda fact: f"revision {fact['revision']}, {fact['reason']}",
     "plan.revised": lambda fact: f"draft of revision {fact['revision']}, {fact['reason']}",
     "change.seen": lambda fact: f"plan revision {fact['revision']}, {fact['remark']}",
+    "standing.set": lambda fact: f"{fact['label']} {fact['standing']}, {fact['reason']}",
     "disposition.made": lambda fact: f"{fact['disposition']}, {fact['reason']}",
     "point.reopened": lambda fact: f"revision {fact['revision']} amended, {fact['reason']}",
 }

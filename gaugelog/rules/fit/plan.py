@@ -9,7 +9,8 @@ from gaugelog.ledger.campaign import Article, CampaignPlanned, CampaignRow, Chan
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow
-from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotReceived, LotRow
+from gaugelog.ledger.standing import StandingRow
+from gaugelog.ledger.stock import ConsumableRow, GaugeRow, GridData, LotReceived, LotRow
 from gaugelog.ledger.view import View
 
 
@@ -29,6 +30,7 @@ class Plan:
         body = CampaignPlanned.model_validate_json(campaign.data)
         self.articles = {article.id: article for article in body.articles}
         gone = _withdrawn(view)
+        barred = {row.id for row in view.all(StandingRow) if row.standing != "free"}
         self.points = [
             PointPlanned.model_validate_json(row.data)
             for row in view.all(PointRow, campaign=campaign.id)
@@ -52,7 +54,11 @@ class Plan:
             row.label.casefold() for row in view.all(ConsumableRow, type="cable")
         )
         """Labels of the cable lots in stock."""
-        self.shelf = Counter(gauge.lot for gauge in view.all(GaugeRow, state="on shelf"))
+        self.shelf = Counter(
+            gauge.lot
+            for gauge in view.all(GaugeRow, state="on shelf")
+            if barred.isdisjoint((gauge.id, gauge.pack, gauge.lot))
+        )
         self.taken = frozenset(gauge.point for gauge in view.all(GaugeRow, state="in service"))
         """Points that have their gauge already, in a plan that is revised."""
 
@@ -60,6 +66,21 @@ class Plan:
         """The lot that a grid is planned from, or None when it is not in stock."""
         point = self.point_of_grid.get(grid)
         return None if point is None else self.lots.get(point.lot)
+
+    def data_of_grid(self, grid: str) -> GridData | None:
+        """What the lot's certificate says of a grid, or None when it is not in stock."""
+        lot, point = self.lot_of_grid(grid), self.point_of_grid.get(grid)
+        if lot is None or point is None:
+            return None
+        number = next(each.number for each in point.grids if each.id == grid)
+        return next((each for each in lot.grids if each.number == number), lot.grids[0])
+
+    def factor_of(self, circuit: CircuitPlanned) -> float | None:
+        """The mean gauge factor of a circuit's active grids, as far as they are in stock."""
+        active = [each.grid for arm in circuit.arms for each in arm if each.kind == "grid"]
+        found = [self.data_of_grid(grid) for grid in active if grid is not None]
+        factors = [data.gauge_factor.si() for data in found if data is not None]
+        return sum(factors) / len(factors) if factors else None
 
     def lots_of(self, circuit: CircuitPlanned) -> list[LotReceived]:
         """The lots of a circuit's grids, as far as they are in stock."""
