@@ -19,12 +19,22 @@ LEAKAGE_SOURCE = "leakage across the grid, R (1/(K |ε|) − 1); parallel resist
 
 @dataclass(frozen=True, slots=True)
 class Basis:
-    """What limits are computed from: the point as planned, the gauge's lot, the surroundings."""
+    """What limits are computed from: the point as planned, the gauge's lot, the surroundings.
+
+    `grid` is the number of the grid that is read, of a gauge that has several.
+    """
 
     point: PointPlanned
     lot: LotReceived
     criteria: CriteriaAgreed
     surroundings: str
+    grid: int = 1
+
+    @property
+    def factor(self) -> float:
+        """The gauge factor of the grid."""
+        own = [each for each in self.lot.grids if each.number == self.grid]
+        return (own or self.lot.grids)[0].gauge_factor.si()
 
 
 def criteria_for(basis: Basis, check: str, stage: str) -> list[CheckCriterion]:
@@ -71,8 +81,7 @@ def _for_permitted_error(basis: Basis, check: str) -> LimitFound:
             rules=False,
         )
     nominal = basis.lot.nominal_resistance.si()
-    factor = basis.lot.grids[0].gauge_factor.si()
-    needed = float(insulation_needed(nominal, factor, basis.point.permitted_error.si()))
+    needed = float(insulation_needed(nominal, basis.factor, basis.point.permitted_error.si()))
     return LimitFound(
         origin="permitted error",
         at_least=Quantity(value=decimal_text(needed / 1e6), unit="Mohm"),

@@ -7,16 +7,15 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from gaugelog.errors import Refused
-from gaugelog.ledger.campaign import Channel, ShuntSpec
+from gaugelog.ledger.campaign import Channel
 from gaugelog.ledger.circuits import CircuitPlanned
 from gaugelog.ledger.readings import LimitFound, Verdict
 from gaugelog.physics.conformity import Judgement, Words
-from gaugelog.physics.layouts import COMPLETION, SIGNAL_PLUS, SUPPLY_MINUS
 from gaugelog.physics.prediction import output
 from gaugelog.rules.digits import quantity
 from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.shunt import SOURCE as SHUNT_SOURCE
-from gaugelog.rules.shunt import judge_shunt
+from gaugelog.rules.shunt import judge_shunt, shunt_place
 from gaugelog.rules.verdicts import VERSION, Judged, Taken, blocks
 from gaugelog.rules.wired import Wired
 from gaugelog.rules.zero import SOURCE as ZERO_SOURCE
@@ -66,6 +65,8 @@ def _zero(known: Expected, taken: Taken, least: float) -> _Comparison:
         predicted_uncertainty=_zero_uncertainty(known.wired),
         measured_uncertainty=taken.on.uncertainty(taken.si),
         least_tolerance=least,
+        name=known.planned.arrangement,
+        poisson=known.wired.poisson,
     )
     return _Comparison(
         "zero offset",
@@ -99,12 +100,13 @@ def _shunt(known: Expected, taken: Taken, least: float) -> _Comparison:
     found = judge_shunt(
         known.wired.circuit,
         spec.value.si(),
-        shunt_place(spec),
+        shunt_place(known.wired.circuit, spec.between),
         taken.si,
         setting=known.wired.factor,
         least_tolerance=least,
         uncertainty=taken.on.uncertainty(taken.si),
         name=known.planned.arrangement,
+        poisson=known.wired.poisson,
     )
     return _Comparison(
         "shunt",
@@ -117,21 +119,14 @@ def _shunt(known: Expected, taken: Taken, least: float) -> _Comparison:
     )
 
 
-def shunt_place(spec: ShuntSpec) -> str | None:
-    """The place of a channel's shunt by its pins; None where the pins do not tell it.
-
-    Between the module's supply- and signal+ pins it spans the gauge and its leads; between the
-    completion pin and supply+ it spans arm 2; at the gauge's own tabs, arm 1 alone.
-    """
-    pins = set(spec.between)
-    if pins == {SUPPLY_MINUS, SIGNAL_PLUS}:
-        return "module pins of arm 1"
-    if COMPLETION in pins or spec.arm != 1:
-        return f"arm {spec.arm}"
-    return "arm 1" if pins == {f"{SUPPLY_MINUS} tab", f"{SIGNAL_PLUS} tab"} else None
-
-
 def _loop(known: Expected, taken: Taken, least: float) -> _Comparison:
+    layout = known.wired.circuit.layout
+    if len(set(layout.wires.values())) == len(layout.wires):
+        raise Refused(
+            f"In a {known.planned.arrangement} circuit on {len(layout.wires)} wires no two wires "
+            "end at one tab, so there is no loop of wires alone.",
+            "Skip the step with that reason.",
+        )
     predicted = _loop_predicted(known)
     tolerance = max(least, 2 * taken.on.uncertainty(taken.si))
     excess = taken.si - predicted

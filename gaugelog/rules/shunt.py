@@ -7,7 +7,16 @@ from dataclasses import dataclass
 
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.conformity import Judgement, Limits, Words, judge, undecided
-from gaugelog.physics.layouts import SENSE_MINUS, SIGNAL_PLUS, SUPPLY_MINUS
+from gaugelog.physics.layouts import (
+    HALF_MINUS,
+    HALF_PLUS,
+    SENSE_MINUS,
+    SENSE_PLUS,
+    SIGNAL_MINUS,
+    SIGNAL_PLUS,
+    SUPPLY_MINUS,
+    SUPPLY_PLUS,
+)
 from gaugelog.physics.prediction import added_strain
 
 RULE = "shunt 1"
@@ -28,17 +37,42 @@ class ShuntFound:
     hint: str
 
 
+_PINS: dict[int, tuple[str, str]] = {
+    1: (SUPPLY_MINUS, SIGNAL_PLUS),
+    2: (SIGNAL_PLUS, SUPPLY_PLUS),
+    3: (SUPPLY_PLUS, SIGNAL_MINUS),
+    4: (SIGNAL_MINUS, SUPPLY_MINUS),
+}
+"""The module's pins at the two ends of each arm."""
+
+_SENSED = {SUPPLY_MINUS: SENSE_MINUS, SUPPLY_PLUS: SENSE_PLUS}
+
+
 def shunt_places(circuit: Circuit) -> dict[str, tuple[str, str]]:
     """Where a shunt may lie in `circuit`: a name people use, and the two nodes it joins.
 
-    Across each arm at its own ends; across arm 1 from the module's pins, leads included.
+    Across each arm at its own ends; across an arm from the module's pins, leads included; with
+    remote sense also from the sense pin.
     """
-    ends = circuit.layout.arm_ends
-    places = {f"arm {number}": pair for number, pair in enumerate(ends, start=1)}
-    if ends[0] != (SUPPLY_MINUS, SIGNAL_PLUS):
-        low = SENSE_MINUS if circuit.layout.sensed else SUPPLY_MINUS
-        places["module pins of arm 1"] = (low, SIGNAL_PLUS)
+    layout = circuit.layout
+    places = {f"arm {number}": pair for number, pair in enumerate(layout.arm_ends, start=1)}
+    for number, pair in _PINS.items():
+        if HALF_PLUS in layout.arm_ends[number - 1] or HALF_MINUS in layout.arm_ends[number - 1]:
+            continue  # the module's buffered half: nothing can be put across it from outside
+        if layout.arm_ends[number - 1] != pair:
+            places[f"module pins of arm {number}"] = pair
+        if layout.sensed:
+            low, high = (_SENSED.get(pin, pin) for pin in pair)
+            places[f"sense pin of arm {number}"] = (low, high)
     return places
+
+
+def shunt_place(circuit: Circuit, between: tuple[str, str]) -> str | None:
+    """The place of a shunt by the two pins it joins; None where this circuit has none there."""
+    for name, pair in shunt_places(circuit).items():
+        if set(pair) == set(between):
+            return name
+    return None
 
 
 def judge_shunt(

@@ -7,22 +7,24 @@ from dataclasses import dataclass
 from gaugelog.errors import Refused
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
-from gaugelog.ledger.points import GridRow, PointRow
+from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.stock import GaugeRow, GridData, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.circuit import Element as Part
-from gaugelog.physics.layouts import layout_for
 from gaugelog.rules.accuracy import range_for
+from gaugelog.rules.layout import layout_of
+from gaugelog.rules.placed import poisson_at
 
 
 @dataclass(frozen=True, slots=True)
 class Wired:
     """A circuit from what was read: for predictions. Uncertainties are standard ones, ohm.
 
-    `factor` is the gauge factor of its grids, `resistance` their nominal value; `read` names the
-    grids whose resistance was read, the others stand at their nominal value.
+    `factor` is the mean gauge factor of its active grids, which the channel is set to,
+    `resistance` the nominal value of the first; `read` names the grids whose resistance was read,
+    the others stand at their nominal value. `poisson` is the article's, where a grid lies across.
     """
 
     circuit: Circuit
@@ -30,6 +32,7 @@ class Wired:
     resistance: float
     uncertainties: dict[str, float]
     read: tuple[str, ...]
+    poisson: float = 0.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -40,6 +43,7 @@ class _Grid:
     factor: float
     nominal: float
     read: bool
+    poisson: float
 
 
 def planned_circuit(view: View, circuit: str) -> CircuitPlanned:
@@ -62,15 +66,18 @@ def wired(view: View, planned: CircuitPlanned) -> Wired:
         )
         for number, arm in enumerate(planned.arms, start=1)
     )
-    layout = layout_for(planned.arrangement, planned.leads.wires)
+    layout = layout_of(planned)
     wire = planned.leads.resistance_per_length.si() * planned.leads.length.si()
     first = next(iter(grids.values()))
+    circuit = Circuit(layout, (one, two, three, four), dict.fromkeys(layout.wires, wire))
+    factors = [part.factor for part in circuit.elements if part.kind == "grid"]
     return Wired(
-        Circuit(layout, (one, two, three, four), dict.fromkeys(layout.wires, wire)),
-        first.factor,
+        circuit,
+        float(sum(factors) / len(factors)),
         first.nominal,
         {grid.label: grid.uncertainty for grid in grids.values()},
         tuple(grid.label for grid in grids.values() if grid.read),
+        first.poisson,
     )
 
 
@@ -91,17 +98,20 @@ def _grid(view: View, grid: str) -> _Grid:
     if row is None or lot_row is None:
         raise Refused("A grid of this circuit has no gauge yet.", "Do its first steps first.")
     lot = LotReceived.model_validate_json(lot_row.data)
-    factor = _data(lot, row.number).gauge_factor.si()
+    factor = grid_data(lot, row.number).gauge_factor.si()
+    poisson = poisson_at(view, PointPlanned.model_validate_json(point.data)) if point else 0.0
     nominal = lot.nominal_resistance.si()
     reading = _last_resistance(view, grid)
     if reading is None or reading.value is None:
         spread = nominal * lot.resistance_tolerance.si() / 3**0.5
-        return _Grid(row.label, nominal, spread, factor, nominal, False)
+        return _Grid(row.label, nominal, spread, factor, nominal, False, poisson)
     value = reading.value.si()
-    return _Grid(row.label, value, _uncertainty(view, reading, value), factor, nominal, True)
+    spread = _uncertainty(view, reading, value)
+    return _Grid(row.label, value, spread, factor, nominal, True, poisson)
 
 
-def _data(lot: LotReceived, number: int) -> GridData:
+def grid_data(lot: LotReceived, number: int) -> GridData:
+    """What the lot's certificate says of the grid with this number."""
     return next((grid for grid in lot.grids if grid.number == number), lot.grids[0])
 
 

@@ -37,12 +37,15 @@ def judge_zero(
     predicted_uncertainty: float,
     measured_uncertainty: float,
     least_tolerance: float,
+    name: str = "quarter three-wire",
+    poisson: float = 0.0,
 ) -> ZeroFound:
     """Hold a measured zero (V/V) against the one that `circuit`'s own resistances predict.
 
-    `setting` is the gauge factor set; uncertainties are standard ones, V/V. Whether it fits is
-    a comparison of two uncertain values, so the tolerance carries both and the word is pass or
-    fail, with no guard band on top. Source: nodal analysis (Kirchhoff's laws).
+    `setting` is the gauge factor set, `name` the arrangement; uncertainties are standard ones,
+    V/V. Whether it fits is a comparison of two uncertain values, so the tolerance carries both
+    and the word is pass or fail, with no guard band on top. Source: nodal analysis (Kirchhoff's
+    laws).
     """
     predicted = float(output(circuit))
     both = (predicted_uncertainty**2 + measured_uncertainty**2) ** 0.5
@@ -51,7 +54,7 @@ def judge_zero(
     fits = judgement.word is Words.PASS
     return ZeroFound(
         predicted,
-        float(indicated_strain(predicted, setting)),
+        float(indicated_strain(predicted, setting, name, poisson)),
         measured,
         tolerance,
         judgement,

@@ -16,7 +16,7 @@ from gaugelog.ledger.campaign import (
 )
 from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
-from gaugelog.ledger.points import PointPlanned, PointRow
+from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import LimitFound, ReadingRow, ReadingTaken
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
@@ -171,7 +171,7 @@ def _basis(seen: Observation, gauge: str) -> Basis:
         raise Refused(
             f"No gauge was taken for {seen.point.label} yet.", "Enter the gauge in its step first."
         )
-    lot = seen.view.get(LotRow, piece.lot)
+    lot, grid = seen.view.get(LotRow, piece.lot), seen.view.get(GridRow, seen.subject)
     campaign = seen.view.get(CampaignRow, seen.point.campaign)
     criteria = seen.view.get(CriteriaRow, campaign.criteria) if campaign is not None else None
     if lot is None or campaign is None or criteria is None:
@@ -181,4 +181,5 @@ def _basis(seen: Observation, gauge: str) -> Basis:
         LotReceived.model_validate_json(lot.data),
         CriteriaAgreed.model_validate_json(criteria.data),
         campaign.surroundings,
+        grid.number if grid is not None else 1,
     )

@@ -5,9 +5,11 @@ from __future__ import annotations
 from gaugelog.ledger.campaign import CampaignRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.fit.arrangement import arrangement_findings
+from gaugelog.rules.fit.dummies import dummy_findings
 from gaugelog.rules.fit.finding import Level, PlanFinding
 from gaugelog.rules.fit.leads import lead_findings
 from gaugelog.rules.fit.output import output_findings
+from gaugelog.rules.fit.patterns import pattern_findings
 from gaugelog.rules.fit.plan import Plan
 from gaugelog.rules.fit.points import point_findings
 from gaugelog.rules.fit.stock import stock_findings
@@ -23,6 +25,8 @@ _SUBJECTS = (
     stock_findings,
     wiring_findings,
     arrangement_findings,
+    dummy_findings,
+    pattern_findings,
     lead_findings,
     supply_findings,
     output_findings,

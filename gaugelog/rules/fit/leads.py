@@ -6,11 +6,11 @@ from collections.abc import Iterator
 
 from gaugelog.ledger.circuits import CircuitPlanned
 from gaugelog.physics.arrangements import ARRANGEMENTS
-from gaugelog.physics.layouts import layout_for
 from gaugelog.physics.leads import initial_offset, sensitivity_loss
 from gaugelog.physics.validity import OutOfDomain
 from gaugelog.rules.fit.finding import Level, PlanFinding
 from gaugelog.rules.fit.plan import Plan
+from gaugelog.rules.layout import layout_of
 
 LOSS_WARNED = 0.02
 """Part of the sensitivity beyond which the loss is warned of. Common practice."""
@@ -39,7 +39,7 @@ def _layout(circuit: CircuitPlanned) -> str:
     if circuit.arrangement not in ARRANGEMENTS:
         return ""
     try:
-        return layout_for(circuit.arrangement, circuit.leads.wires).name
+        return layout_of(circuit).name
     except OutOfDomain:
         return ""
 

@@ -13,7 +13,7 @@ from gaugelog.rules.fit.finding import Level, PlanFinding
 from gaugelog.rules.fit.plan import Plan
 
 OUTPUT_SOURCE = "exact output of the arrangement, Dally and Riley (from memory)"
-OFFSET_SOURCE = "lot tolerance in each active arm, ΔR/(4 R), in quadrature"
+OFFSET_SOURCE = "lot tolerance in each arm with a grid, ΔR/(4 R), in quadrature"
 
 
 def output_findings(plan: Plan) -> Iterator[PlanFinding]:
@@ -33,7 +33,7 @@ def _range(
     article = plan.article_of(points[0])
     poisson = article.material.poisson_ratio.si() if article is not None else 0.3
     strains = [value.si() for point in points for value in (point.strain_min, point.strain_max)]
-    factor = lot.grids[0].gauge_factor.si()
+    factor = plan.factor_of(circuit) or lot.grids[0].gauge_factor.si()
     outputs = [
         abs(float(strain_output(strain, factor, circuit.arrangement, poisson)))
         for strain in strains
@@ -49,8 +49,8 @@ def _range(
 def _balance(circuit: CircuitPlanned, channel: Channel, lot: LotReceived) -> Iterator[PlanFinding]:
     if channel.balance_range is None:
         return
-    active = sum(ARRANGEMENTS[circuit.arrangement].active)
-    likely = lot.resistance_tolerance.si() / 4 * active**0.5
+    arms = sum(any(element.grid is not None for element in arm) for arm in circuit.arms)
+    likely = lot.resistance_tolerance.si() / 4 * arms**0.5
     level: Level = "warning" if likely > channel.balance_range.si() else "ok"
     word = "may exceed" if level == "warning" else "lies within"
     figure = f"±{likely * 1e3:.3g} mV/V of ±{channel.balance_range}"
