@@ -186,6 +186,9 @@ def test_numbering_and_viewing_side_turn_the_angles() -> None:
     # ASTM E1561 numbers counter-clockwise; a mirror turns the other way (common practice).
     plain = rosette.grid_angles("rectangular")
     assert [0.0, 45.0, 90.0] == pytest.approx([degrees(each) for each in plain])
+    delta, tee = rosette.grid_angles("delta"), rosette.grid_angles("tee")
+    assert [0.0, 60.0, 120.0] == pytest.approx([degrees(each) for each in delta])
+    assert [0.0, 90.0] == pytest.approx([degrees(each) for each in tee])
     for pattern in ("rectangular", "delta", "tee"):
         mirrored = rosette.grid_angles(pattern, "clockwise")
         assert mirrored == rosette.grid_angles(pattern, seen_from="other side")

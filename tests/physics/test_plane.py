@@ -103,7 +103,8 @@ def test_every_formula_takes_floats_arrays_and_uncertain_numbers() -> None:
 @pytest.mark.parametrize("size", [0.0101, -0.02])
 def test_a_notice_tells_of_strain_that_is_not_small(size: float) -> None:
     state = PlaneStrain(size, 0.0, 0.0)
-    assert "beyond 1 %" in plane.principal_strains_notices(state)[0].message
+    assert "beyond 1 %," in plane.principal_strains_notices(state)[0].message
+    assert "of 9.9 %" in plane.principal_strains_notices(PlaneStrain(0.0, 0.099, 0.0))[0].message
     assert () == plane.principal_strains_notices(PlaneStrain(size / 3, 0.0, 0.0))
 
 

@@ -142,6 +142,8 @@ PAIR: Any = TRIPLE[:2]
         (lambda: transverse.indicated_strain(nan, 0.0, 0.01), "along must be a finite"),
         (lambda: transverse.indicated_strain(0.0, 0.0, 0.5), "transverse sensitivity must lie"),
         (lambda: transverse.indicated_strain(0.0, 0.0, 0.1, nan), "poisson must be a finite"),
+        (lambda: transverse.shear_pair_factor(0.1, 0.6), "poisson must lie between -1 and 0.5"),
+        (lambda: transverse.shear_pair_factor(-0.5), "transverse sensitivity must lie"),
         (lambda: transverse.single_grid_strain(0.0, 0.1, nan), "biaxiality must be a finite"),
         (lambda: transverse.uncorrected_error(nan, 0.0), "transverse sensitivity must be a finite"),
         (lambda: transverse.tee_strains((nan, 0.0), (0.0, 0.0)), "reading 1 must be a finite"),
