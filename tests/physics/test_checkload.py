@@ -58,6 +58,11 @@ def test_an_answer_is_told_in_words(orders: list[tuple[int, ...]], told: str) ->
     assert told == checkload.order_sentence(orders)
 
 
+def test_a_reading_just_as_far_off_as_allowed_still_fits() -> None:
+    assert ((1, 2),) == checkload.explaining_orders([310.0, -90.0], [300.0, -90.0], 10.0)
+    assert () == checkload.explaining_orders([310.5, -90.0], [300.0, -90.0], 10.0)
+
+
 def test_twelve_grids_alike_are_answered_at_once() -> None:
     orders = checkload.explaining_orders([1.0] * 12, [1.0] * 12, 0.1)
     assert tuple(range(1, 13)) == orders[0]
