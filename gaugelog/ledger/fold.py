@@ -2,11 +2,9 @@
 
 from __future__ import annotations
 
-import gc
 import json
 import sqlite3
 from collections.abc import Iterable, Iterator
-from contextlib import contextmanager
 from functools import cache
 from typing import Any
 
@@ -15,6 +13,7 @@ from pydantic_core import from_json
 
 from gaugelog.errors import GaugelogError, StorageTrouble
 from gaugelog.journal.check.report import Trouble
+from gaugelog.journal.collection import no_collection
 from gaugelog.journal.entry import Entry
 from gaugelog.journal.order import ledger_order
 from gaugelog.journal.storage.sqlite import SqliteReader
@@ -133,7 +132,7 @@ def fold(entries: Iterable[Entry], *, one_chain: bool = False) -> Buffer:
     StorageTrouble naming an entry that can't be followed.
     """
     buffer = Buffer()
-    with _no_collection():
+    with no_collection():
         for entry in entries if one_chain else ledger_order(entries):
             try:
                 buffer.take(apply(buffer, entry))
@@ -153,18 +152,6 @@ def _unfoldable(entry: Entry, error: Exception) -> StorageTrouble:
         f"{place} can't be followed by this version: {first}.",
         "Update Gaugelog, or see what `gaugelog journal check` finds.",
     )
-
-
-@contextmanager
-def _no_collection() -> Iterator[None]:
-    """Nothing a fold makes is garbage: looking for some again and again takes a third of it."""
-    was_on = gc.isenabled()
-    gc.disable()
-    try:
-        yield
-    finally:
-        if was_on:
-            gc.enable()
 
 
 def rebuild(reader: SqliteReader) -> None:

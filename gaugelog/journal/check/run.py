@@ -12,6 +12,7 @@ from gaugelog.journal.check.links import Bodies, Chain, Format, Numbering
 from gaugelog.journal.check.look import RESTORE, Look, looks
 from gaugelog.journal.check.report import Findings, Report, Trouble
 from gaugelog.journal.check.signatures import Deeds, Issues, Validity
+from gaugelog.journal.collection import no_collection
 from gaugelog.journal.entry import PrintedHead
 from gaugelog.journal.evidence import Evidence
 from gaugelog.journal.storage.port import Reader
@@ -66,7 +67,8 @@ def check(
     findings = Findings()
     walk = _Walk(reader, evidence, findings, printed, may_withhold)
     try:
-        walk.go(progress)
+        with no_collection():
+            walk.go(progress)
     except Exception as error:  # whatever foreign bytes bring up is a trouble, not a traceback
         findings.trouble(0, Trouble(1, "the storage", f"It can't be read: {_said(error)}", RESTORE))
     finally:
