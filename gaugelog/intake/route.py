@@ -128,8 +128,8 @@ def _check_gauge(top: Fields, route: RouteAdopted) -> None:
         what = f"asks for the gauge {len(takes)} times."
         top.fault("step", what, 'One step has one input of kind "gauge", so it is known which.')
         return
-    if route.steps[takes[0]].subject != "grid":
-        top.fault(f"step[{takes[0] + 1}].subject", "takes the gauge, so it must be grid.")
+    if route.steps[takes[0]].subject not in {"grid", "gauge"}:
+        top.fault(f"step[{takes[0] + 1}].subject", "takes the gauge, so it must be grid or gauge.")
     for place, step in enumerate(route.steps[: takes[0]], start=1):
         if _readings(step):
             top.fault(f"step[{place}].input", "has a reading before the gauge is taken.")

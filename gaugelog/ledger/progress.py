@@ -46,9 +46,12 @@ def step_key(point: str, step: str, subject: str) -> str:
 
 
 def subjects_of(known: Known, point: Row, step: RouteStep) -> list[str]:
-    """What a step is done on: the point itself, each of its grids, or each circuit of theirs."""
+    """What a step is done on: the point itself, each of its grids, or each circuit of theirs.
+
+    A point's place and its gauge go by the point's own id.
+    """
     grids = grids_of(point["data"])
-    if step.subject == "place":
+    if step.subject in {"place", "gauge"}:
         return [point["id"]]
     if step.subject == "grid":
         return list(grids)

@@ -10,7 +10,9 @@ from sqlmodel import Field, SQLModel
 from gaugelog.ledger.base import FactBody, Id, Part, Quantity
 from gaugelog.ledger.rows import At, Change, Known, Put
 
-StepSubject = Literal["place", "grid", "circuit"]
+StepSubject = Literal["place", "gauge", "grid", "circuit"]
+"""What a step is done on. Place and gauge are one a point: a step on the gauge mounts it."""
+
 InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
 SkipRule = Literal["never", "planner", "with reason"]
 

@@ -14,6 +14,7 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.amended import under_amendment
 from gaugelog.rules.barred import demand_place_free
 from gaugelog.rules.progress import demand_changes_seen, demand_complete, demand_step
+from gaugelog.rules.untouched import demand_untouched
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.kept import demand_meaning
 from gaugelog.work.logbook import Deed, Logbook
@@ -84,6 +85,7 @@ def accept(
     demand_meaning(meaning)
     with logbook.reading() as view:
         row, record = _under_review(view, point, signer, "accept it")
+        demand_untouched(view, row, record)
         demand_changes_seen(row)
         stamp = Stamp(
             signer.person,
@@ -96,6 +98,7 @@ def accept(
     file = logbook.evidence.put(pdf)
     with logbook.deed(signer) as deed:
         latest, now = _under_review(deed.view, point, signer, "accept it")
+        demand_untouched(deed.view, latest, now)
         demand_changes_seen(latest)
         demand_place_free(deed.view, latest)
         if now.id != record.id:

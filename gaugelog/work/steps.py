@@ -15,6 +15,7 @@ from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
 from gaugelog.rules.air import air_troubles
 from gaugelog.rules.facts import plan_facts
+from gaugelog.rules.piece import demand_one_piece
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
@@ -178,6 +179,7 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
     got = understand(Asked(view, row, doing.step, doing.day), typed)
     _demand_air(doing, got)
     _demand_place(doing, got)
+    demand_one_piece(view, row, doing.step, doing.found.subject, got.entered)
     readings = _readings(doing, got, reason)
     for reading in readings:
         others = [each for each in (reading.id, reading.gauge, reading.instrument) if each]

@@ -67,7 +67,7 @@ basis = "b"
 [[step]]
 id = "a"
 title = "A"
-subject = "gauge"
+subject = "socket"
 instruction = "do"
   [[step.window]]
   bound = "within"

@@ -80,7 +80,7 @@ def test_a_gauge_is_taken_before_anything_is_read_on_it() -> None:
 def test_the_gauge_is_taken_for_a_grid() -> None:
     before = 'subject = "grid"\nstage = "received"'
     lines = refusal(before, 'subject = "place"\nstage = "received"')
-    assert ["own.toml, step[2].subject: takes the gauge, so it must be grid."] == lines
+    assert ["own.toml, step[2].subject: takes the gauge, so it must be grid or gauge."] == lines
 
 
 def test_one_check_is_read_once_a_stage() -> None:
