@@ -16,6 +16,7 @@ from gaugelog.documents.content.installation import (
     PointShown,
 )
 from gaugelog.errors import Refused
+from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.campaign import (
     CampaignPlanned,
     CampaignRow,
@@ -29,6 +30,9 @@ from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
+from gaugelog.physics.validity import OutOfDomain
+from gaugelog.rules.layout import layout_of
+from gaugelog.rules.wired import grid_data
 
 if TYPE_CHECKING:
     from gaugelog.ledger.view import View
@@ -115,9 +119,12 @@ def point_shown(point: PointPlanned) -> PointShown:
     return PointShown.model_validate({name: getattr(point, name) for name in kept})
 
 
-def grids_shown(plan: Planned) -> tuple[GridShown, ...]:
-    """The grids with their states."""
+def grids_shown(view: View, plan: Planned) -> tuple[GridShown, ...]:
+    """The grids with their states, and what the certificate of the gauge in place says of each."""
     circuits = {circuit.id: circuit.label for circuit in plan.circuits}
+    gauge = view.get(GaugeRow, plan.row.gauge) if plan.row.gauge else None
+    lot_row = needed(view.get(LotRow, gauge.lot)) if gauge is not None else None
+    lot = LotReceived.model_validate_json(lot_row.data) if lot_row is not None else None
     return tuple(
         GridShown(
             id=grid.id,
@@ -125,9 +132,28 @@ def grids_shown(plan: Planned) -> tuple[GridShown, ...]:
             number=grid.number,
             state=grid.state,
             circuit=circuits.get(grid.circuit, ""),
+            serves=_serves(view, plan, grid.id) if plan.point.dummy else (),
+            **(_figures(lot, grid.number) if lot is not None else {}),
         )
         for grid in plan.grids
     )
+
+
+def _figures(lot: LotReceived, number: int) -> dict[str, Quantity]:
+    data = grid_data(lot, number)
+    return {
+        "gauge_factor": data.gauge_factor,
+        "gauge_factor_tolerance": data.gauge_factor_tolerance,
+        "transverse_sensitivity": data.transverse_sensitivity,
+        "angle": data.angle,
+    }
+
+
+def _serves(view: View, plan: Planned, grid: str) -> tuple[str, ...]:
+    """The circuits that a dummy is in, by label."""
+    rows = view.all(CircuitRow, campaign=plan.campaign.id)
+    bodies = (CircuitPlanned.model_validate_json(row.data) for row in rows)
+    return tuple(body.label for body in bodies if grid in body.grids)
 
 
 def gauge_shown(view: View, row: PointRow) -> GaugeShown | None:
@@ -158,6 +184,7 @@ def circuit_shown(view: View, plan: Planned, circuit: CircuitPlanned) -> Circuit
         id=circuit.id,
         label=circuit.label,
         arrangement=circuit.arrangement,
+        layout=_layout(circuit),
         arms=(one, two, three, four),
         leads=LeadsShown(
             wires=circuit.leads.wires,
@@ -168,6 +195,13 @@ def circuit_shown(view: View, plan: Planned, circuit: CircuitPlanned) -> Circuit
         ),
         channel=_channel(view, plan.campaign.modules, circuit.channel),
     )
+
+
+def _layout(circuit: CircuitPlanned) -> str:
+    try:
+        return layout_of(circuit).name
+    except OutOfDomain:  # a draft plan that its check refuses
+        return ""
 
 
 def _element(view: View, element: Element) -> ElementShown:

@@ -14,6 +14,7 @@ from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.steps import Entered, StepRow
 from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, GaugeRow
+from gaugelog.rules.taken import readings_at
 
 if TYPE_CHECKING:
     from gaugelog.ledger.view import View
@@ -83,7 +84,7 @@ def _label(view: View, kind: str, known: str) -> str:
 
 def readings_shown(view: View, plan: Planned) -> tuple[ReadingShown, ...]:
     """Every attempt of every check, in the order they were entered."""
-    rows = view.all(ReadingRow, point=plan.point.id)
+    rows = readings_at(view, plan.point.id)
     labels = dict(plan.subjects("grid") + plan.subjects("circuit") + plan.subjects("place"))
     return tuple(_reading(view, plan, row, labels) for row in rows)
 
@@ -118,7 +119,7 @@ def _earlier_gauge(view: View, plan: Planned, taken: ReadingTaken) -> str:
 def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
     """The instruments that were used, each with the ranges that were used."""
     used: dict[str, set[str]] = {}
-    for row in view.all(ReadingRow, point=plan.point.id):
+    for row in readings_at(view, plan.point.id):
         taken = ReadingTaken.model_validate_json(row.data)
         used.setdefault(row.instrument, set()).add(taken.range)
     for instrument in _entered_ids(view, plan, "instrument"):

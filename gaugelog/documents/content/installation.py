@@ -42,10 +42,17 @@ class PointShown(Shown):
     cycles: int | None = None
     permitted_error: Quantity
     place: Place
+    pattern: str = "single"
+    numbering: str = ""
+    """Which way grids follow grid 1; empty where it makes no difference."""
+    seen_from: str = ""
+    """The side that the numbering is seen from."""
+    dummy: bool = False
+    """Whether it compensates others and feels no strain itself."""
 
 
 class GridShown(Shown):
-    """A grid of the point and the state it was in."""
+    """A grid of the point and the state it was in, with its own figures once a gauge is taken."""
 
     id: Id
     label: str
@@ -53,6 +60,13 @@ class GridShown(Shown):
     state: str
     circuit: str = ""
     """Label of the circuit it is wired into."""
+    serves: tuple[str, ...] = ()
+    """Labels of every circuit a dummy compensates."""
+    gauge_factor: Quantity | None = None
+    gauge_factor_tolerance: Quantity | None = None
+    transverse_sensitivity: Quantity | None = None
+    angle: Quantity | None = None
+    """Built angle from grid 1, counter-clockwise for the viewer of the gauge."""
 
 
 class GaugeShown(Shown):
@@ -121,6 +135,8 @@ class CircuitShown(Shown):
     id: Id
     label: str
     arrangement: str
+    layout: str = ""
+    """Where arms and wires run: `half three-wire` …; empty where that is not known."""
     arms: tuple[
         tuple[ElementShown, ...],
         tuple[ElementShown, ...],
