@@ -6,9 +6,11 @@ import tomllib
 from collections.abc import Callable
 from dataclasses import dataclass
 from datetime import UTC, datetime
+from functools import partial
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
+from gaugelog.commands.acts import Stage, play, title_of
 from gaugelog.errors import MachineTrouble
 
 if TYPE_CHECKING:
@@ -47,13 +49,17 @@ class Story:
             ("receive stock, enter meters", self._stock),
             ("load and release the plan", self._plan),
         ]
-        return [*first, *((_title(deed), _Played(self, deed)) for deed in self.told["deed"])]
+        return [*first, *((title_of(act), partial(self._act, act)) for act in self.told["act"])]
 
     def book(self) -> Logbook:
         """The logbook, once it is started."""
         if self.logbook is None:
             raise AssertionError("the story begins with its first act")
         return self.logbook
+
+    def _act(self, act: dict[str, Any]) -> None:
+        usual = self.told["usual"]
+        play(Stage(self.book(), self.clock, self.keys, self.maker, usual), act)
 
     def _start(self, home: Path) -> None:
         from gaugelog.work import people
@@ -112,41 +118,22 @@ class Story:
         plan.release(self.book(), planner, meaning=meaning)
 
 
-@dataclass(frozen=True)
-class _Played:
-    """One deed of the story, ready to be played."""
-
-    story: Story
-    deed: dict[str, Any]
-
-    def __call__(self) -> None:
-        from gaugelog.commands.review import ACCEPT_MEANING, SUBMIT_MEANING
-        from gaugelog.work import reviews, steps
-
-        story, deed = self.story, self.deed
-        story.clock.advance(deed["wait"])
-        book, key = story.book(), story.keys[deed["who"]]
-        if "submit" in deed:
-            reviews.submit(book, key, story.maker, point=deed["submit"], meaning=SUBMIT_MEANING)
-        elif "accept" in deed:
-            reviews.accept(book, key, story.maker, point=deed["accept"], meaning=ACCEPT_MEANING)
-        elif "skip" in deed:
-            steps.skip(book, key, point=deed["point"], reason=deed["skip"])
-        else:
-            reason = deed.get("reason", "")
-            steps.do(book, key, point=deed["point"], typed=deed["step"], reason=reason)
-
-
 def read_story(maker: RecordMaker) -> Story:
     """The shipped story, ready to be played."""
     from gaugelog.journal.clock import Moment, SetClock
     from gaugelog.journal.ids import new_id
 
     files = demo_files()
-    told = tomllib.loads((files / "story.toml").read_text(encoding="utf-8"))
+    told = _told(files / "story.toml")
+    chapters = [_told(chapter) for chapter in sorted((files / "story").glob("*.toml"))]
+    told["act"] = [act for chapter in chapters for act in chapter["act"]]
     begin = datetime.fromisoformat(told["start"].replace("Z", "+00:00")).astimezone(UTC)
     clock = SetClock(Moment(begin, 60, new_id(), 3_600_000))
     return Story(files, told, clock, {}, maker)
+
+
+def _told(file: Path) -> dict[str, Any]:
+    return tomllib.loads(file.read_text(encoding="utf-8"))
 
 
 def _newcomer(person: dict[str, Any]) -> Any:
@@ -159,11 +146,3 @@ def _newcomer(person: dict[str, Any]) -> Any:
         tuple(person["roles"]),
         tuple(person.get("qualifications", ())),
     )
-
-
-def _title(deed: dict[str, Any]) -> str:
-    for word in ("submit", "accept"):
-        if word in deed:
-            return f"{word} {deed[word]}, by {deed['who']}"
-    word = "skip a step at" if "skip" in deed else "work at"
-    return f"{word} {deed['point']}, by {deed['who']}"

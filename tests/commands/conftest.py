@@ -1,4 +1,4 @@
-"""A played demo to try commands on, made once for each worker; keys cheap to unlock."""
+"""A played small job to try commands on, made once for each worker; keys cheap to unlock."""
 
 from __future__ import annotations
 
@@ -14,6 +14,8 @@ from gaugelog.commands import run, session, story
 from gaugelog.journal.keys import KeyFolder
 
 CHEAP_ROUNDS = 1000
+SMALL_JOB = Path(__file__).parents[1] / "small_job"
+"""Two points of the demo with its first chapter: played in a moment, and steady."""
 
 
 @dataclass(frozen=True)
@@ -71,6 +73,7 @@ def _played(tmp_path_factory: pytest.TempPathFactory) -> Path:
 
     with pytest.MonkeyPatch.context() as patch:
         patch.setattr(KeyFolder, "__init__", cheap)
+        patch.setattr(story, "demo_files", lambda: SMALL_JOB)
         assert run(["demo", str(folder)]) == 0
     return folder
 

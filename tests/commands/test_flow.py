@@ -12,7 +12,7 @@ from gaugelog.commands import session
 from tests.commands.conftest import Command
 
 ROOT = Path(__file__).parents[2]
-FILES = ROOT / "demo_project"
+FILES = ROOT / "tests" / "small_job"
 WORD = "long enough"
 
 

@@ -14,7 +14,7 @@ import pytest
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.plan import PlanFacts, load_plan
 
-DEMO = Path(__file__).parents[2] / "demo_project"
+DEMO = Path(__file__).parents[1] / "small_job"
 
 
 def counter() -> Callable[[], str]:

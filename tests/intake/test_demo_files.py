@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 from itertools import chain
+from pathlib import Path
 
 import pytest
 
@@ -15,8 +16,8 @@ from gaugelog.intake.grids import COLUMNS as GRIDS
 from gaugelog.intake.route import shipped_routes
 from gaugelog.intake.stock import CONSUMABLE_COLUMNS, LOT_COLUMNS
 from gaugelog.intake.typed import parse_quantity
-from tests.intake.conftest import DEMO
 
+DEMO = Path(__file__).parents[2] / "demo_project"
 README = (DEMO / "README.md").read_text(encoding="utf-8")
 
 
@@ -37,7 +38,7 @@ def test_the_readme_names_every_choice(word: str) -> None:
 def test_every_file_of_the_demo_is_in_the_readme() -> None:
     files = {
         str(path.relative_to(DEMO))
-        for path in chain(DEMO.glob("*"), DEMO.glob("plan/*"))
+        for path in chain(DEMO.glob("*"), DEMO.glob("*/*"))
         if path.is_file() and path.name != "README.md"
     }
     assert set() == {file for file in files if f"`{file}`" not in README}

@@ -18,7 +18,7 @@ from gaugelog.work.logbook import Logbook
 from gaugelog.work.people import Newcomer
 from gaugelog.work.ports import RecordRequest, Stamp
 
-DEMO = Path(__file__).parents[2] / "demo_project"
+DEMO = Path(__file__).parents[1] / "small_job"
 WORD = "long enough"
 START = datetime(2026, 11, 17, 8, 0, tzinfo=UTC)
 CHEAP_ROUNDS = 1000

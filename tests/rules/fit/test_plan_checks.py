@@ -15,7 +15,7 @@ from gaugelog.rules.fit import PlanFinding
 from gaugelog.work import people, plan, stock
 from gaugelog.work.people import Newcomer
 
-DEMO = Path(__file__).parents[3] / "demo_project"
+DEMO = Path(__file__).parents[2] / "small_job"
 WORD = "long enough"
 
 Change = tuple[str, str, str]
