@@ -56,11 +56,10 @@ def parse(data: bytes, *, strict: bool = False) -> JsonValue:
     """
     try:
         text = data.decode("utf-8")
-        value: JsonValue = _READ_STRICTLY(text) if strict else _READ(text)
         if strict:
-            _demand_canonical(value, data, text)
-        else:
-            _written(value)
+            return _read_canonical(data, text)
+        value: JsonValue = _READ(text)
+        _written(value)
     except RecursionError:
         raise NotCanonical("The JSON is nested too deeply.") from None
     except UnicodeDecodeError:
@@ -70,16 +69,18 @@ def parse(data: bytes, *, strict: bool = False) -> JsonValue:
     return value
 
 
-def _demand_canonical(value: JsonValue, data: bytes, text: str) -> None:
-    # Writing the value again shows doubled names, spaces, escapes and -0. The quotes around each
-    # text compose with nothing, so the whole is in normal form just when each text in it is.
+def _read_canonical(data: bytes, text: str) -> JsonValue:
+    # Writing the value again shows doubled names, spaces, escapes, -0 and whatever comes after
+    # the value. The quotes around each text compose with nothing, so the whole is in normal form
+    # just when each text in it is.
+    value: JsonValue = _READ_FIRST(text)[0]
     if _written(value) != data:
         raise NotCanonical("The JSON is not in canonical form.")
-    if data.isascii():
-        return
-    _allow_text(text)
-    if _NAME_BEYOND_ASCII.search(text):
-        raise NotCanonical("A name in the JSON is not ASCII text.")
+    if not data.isascii():
+        _allow_text(text)
+        if _NAME_BEYOND_ASCII.search(text):
+            raise NotCanonical("A name in the JSON is not ASCII text.")
+    return value
 
 
 def _written(value: JsonValue) -> bytes:
@@ -143,8 +144,13 @@ def _no_doubles(pairs: list[tuple[str, JsonValue]]) -> dict[str, JsonValue]:
 _NAME_BEYOND_ASCII = re.compile(r'[^\x00-\x7f](?:[^"\\]|\\.)*":')
 """From a character beyond ASCII to the end of its text, which a colon shows to be a name."""
 
+# A value that holds itself is found before, by walking it.
 _WRITE = json.JSONEncoder(
-    sort_keys=True, separators=(",", ":"), ensure_ascii=False, allow_nan=False
+    sort_keys=True,
+    separators=(",", ":"),
+    ensure_ascii=False,
+    allow_nan=False,
+    check_circular=False,
 ).encode
 _READ = json.JSONDecoder(
     parse_float=_no_float,
@@ -153,6 +159,6 @@ _READ = json.JSONDecoder(
     object_pairs_hook=_no_doubles,
 ).decode
 # Without the hook for pairs the decoder is twice as fast; writing the value again finds doubles.
-_READ_STRICTLY = json.JSONDecoder(
+_READ_FIRST = json.JSONDecoder(
     parse_float=_no_float, parse_int=_whole, parse_constant=_no_float
-).decode
+).raw_decode

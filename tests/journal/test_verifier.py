@@ -33,7 +33,7 @@ def found_bad(count: int, bad: set[int], *, helped: bool = True) -> set[int]:
     try:
         for place in range(count):
             one = signature(str(place), good=place not in bad)
-            judge.add(Signed(place, f"entry {place}", one))
+            judge.add(Signed(place, "chain", place, one))
         judge.finish()
     finally:
         judge.close()

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from gaugelog.journal.certificates import CERTIFICATE_KINDS, Certificates
-from gaugelog.journal.check.look import RESTORE, Look
+from gaugelog.journal.check.look import RESTORE, Look, where
 from gaugelog.journal.check.report import Findings, Trouble
 from gaugelog.journal.check.verifier import Signed, Verifier
 from gaugelog.journal.entry import Header
@@ -25,7 +25,7 @@ class Deeds:
         self._findings = findings
         self._certificates = certificates
         self._unfinished: dict[str, Look] = {}
-        self._begun: dict[str, str] = {}
+        self._begun: dict[str, tuple[str, int]] = {}
         self._verifier = Verifier(self._bad_signature)
 
     def see(self, look: Look) -> None:
@@ -67,9 +67,10 @@ class Deeds:
             self._trouble(
                 look, f"It is {header.index} of {header.count} of a deed that lacks more."
             )
-        first = self._begun.setdefault(header.deed, look.where)
-        if first != look.where and header.index == 1:
-            self._trouble(look, f"Its deed was done before, at {first}.")
+        own = (look.filed.chain, look.filed.seq)
+        first = self._begun.setdefault(header.deed, own)
+        if first != own and header.index == 1:
+            self._trouble(look, f"Its deed was done before, at {where(*first)}.")
 
     def _cut_short(self, look: Look, header: Header) -> None:
         self._trouble(look, f"Its deed has {header.count} entries and ends here at {header.index}.")
@@ -84,7 +85,7 @@ class Deeds:
             self._trouble(look, "Its signature can't be verified: its certificate is not known.")
             return
         made = Signature(key, signature, look.entry.header_bytes)
-        self._verifier.add(Signed(look.position, look.where, made))
+        self._verifier.add(Signed(look.position, look.filed.chain, look.filed.seq, made))
 
     def _bad_signature(self, signed: Signed) -> None:
         what = "Its signature does not fit it: it was altered, or signed by another key."

@@ -13,6 +13,7 @@ from collections.abc import Callable, Sequence
 from concurrent.futures import Future, ThreadPoolExecutor
 from typing import NamedTuple
 
+from gaugelog.journal.check.look import where
 from gaugelog.journal.verifying import Signature, packed, verdicts
 
 _BATCH = 512
@@ -24,11 +25,17 @@ _SWITCH_SECONDS = 0.0005
 
 
 class Signed(NamedTuple):
-    """A signature of an entry: its place in the walk, its name for people, and the signature."""
+    """A signature of an entry: its place in the walk, its chain and number, and the signature."""
 
     position: int
-    where: str
+    chain: str
+    seq: object
     signature: Signature
+
+    @property
+    def where(self) -> str:
+        """Which entry it is, for people."""
+        return where(self.chain, self.seq)
 
 
 class Helper:
