@@ -14,6 +14,9 @@ from gaugelog.work.history import check_logbook
 from gaugelog.work.logbook import Logbook
 
 FROZEN = Path(__file__).parents[1] / "frozen"
+HEADS = {"v1": "61:CR3RQILEKQ7WBL5VBAIJPY6XWE"}
+"""The printed heads; a frozen logbook that is made anew is another one, and shows here."""
+
 VERSIONS = sorted(path.name for path in FROZEN.iterdir() if (path / "logbook.toml").is_file())
 
 
@@ -28,7 +31,7 @@ def test_there_is_one_of_the_first_version() -> None:
 
 
 def test_it_opens_and_checks_against_its_printed_head(frozen: Path) -> None:
-    head = (frozen / "head.txt").read_text(encoding="utf-8").strip()
+    head = HEADS[frozen.name]
     book = Logbook.open(frozen)
     assert head == book.head().printed
     report = check_logbook(book, [head])
