@@ -65,15 +65,15 @@ def _kind(act: Mapping[str, Any]) -> str:
 
 
 def _submit(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
-    from gaugelog.commands.review import SUBMIT_MEANING
     from gaugelog.work import reviews
+    from gaugelog.work.meanings import SUBMIT_MEANING
 
     reviews.submit(stage.book, key, stage.maker, point=act["submit"], meaning=SUBMIT_MEANING)
 
 
 def _accept(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
-    from gaugelog.commands.review import ACCEPT_MEANING
     from gaugelog.work import reviews
+    from gaugelog.work.meanings import ACCEPT_MEANING
 
     reviews.accept(stage.book, key, stage.maker, point=act["accept"], meaning=ACCEPT_MEANING)
 

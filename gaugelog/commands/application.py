@@ -21,6 +21,7 @@ from gaugelog.commands import (
     plan,
     record,
     review,
+    screen,
     start,
     step,
     stock,
@@ -48,7 +49,7 @@ def application() -> typer.Typer:
     app = typer.Typer(
         name="gaugelog",
         help=_HELP,
-        no_args_is_help=True,
+        invoke_without_command=True,
         pretty_exceptions_enable=False,
         rich_markup_mode="markdown",
         context_settings={"help_option_names": ["-h", "--help"]},
@@ -76,6 +77,8 @@ _GROUPS: dict[str, typer.Typer] = {
     "journal": journal.group,
 }
 _AT_WORK: dict[str, Callable[..., None]] = {
+    "install": screen.install,
+    "review": screen.review,
     "submit": review.submit,
     "accept": review.accept,
     "return": review.give_back,
@@ -109,3 +112,14 @@ def _root(
     ] = False,
 ) -> None:
     ctx.obj = Place(logbook)
+    if ctx.invoked_subcommand is None:
+        _alone(ctx, ctx.obj)
+
+
+def _alone(ctx: typer.Context, place: Place) -> None:
+    """`gaugelog` without a command: the full screen in a logbook, at a terminal; else the help."""
+    if screen.at_a_terminal() and screen.is_logbook_here(place):
+        screen.open_screen(place)
+        return
+    typer.echo(ctx.get_help())
+    raise typer.Exit(2)

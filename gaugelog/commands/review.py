@@ -9,11 +9,9 @@ import typer
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import say
+from gaugelog.work.meanings import ACCEPT_MEANING, SUBMIT_MEANING
 
 Point = Annotated[str, typer.Argument(help="Label of the point.")]
-
-SUBMIT_MEANING = "I did or saw the work recorded here and submit it for review."
-ACCEPT_MEANING = "I reviewed this record against its criteria and accept it."
 
 
 def submit(

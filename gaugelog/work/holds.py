@@ -9,9 +9,7 @@ from gaugelog.ledger.steps import HoldDecided
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.doing import Doing, StepOutcome, about, utc_text
 from gaugelog.work.inputs import Asked, understand
-
-HOLD_MEANING = "I looked at the work myself and let it go on."
-REFUSAL_MEANING = "I looked at the work myself and send it back."
+from gaugelog.work.meanings import HOLD_MEANING, REFUSAL_MEANING
 
 
 def decide(doing: Doing, typed: Mapping[str, str], note: str, refuse: str) -> StepOutcome:

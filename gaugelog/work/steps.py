@@ -73,7 +73,7 @@ def worklist(logbook: Logbook) -> list[NextStep]:
         return [progress(view, row, now) for row in view.all(PointRow)]
 
 
-def do(
+def do(  # noqa: PLR0913 (what the person says is each its own word)
     logbook: Logbook,
     signer: Signer,
     *,
@@ -84,13 +84,15 @@ def do(
     refuse: str = "",
     at: str = "",
     deed: str | None = None,
+    seen: NextStep | None = None,
 ) -> StepOutcome:
     """Do the next step of a point; a hold is decided, by a second person.
 
     A reading that blocks is kept by itself and the step stays open. `reason` says why a check is
     measured again, `refuse` why a hold is refused, `at` when the step was observed, if not now;
-    `deed` is the caller's own id, so that a retry is recognised. Raises Faulty with every fault
-    of the input, Refused when a rule forbids the step now.
+    `deed` is the caller's own id, so that a retry is recognised; `seen` is the step the person
+    looked at, so that nothing is kept when the point went on meanwhile. Raises Faulty with every
+    fault of the input, Refused when a rule forbids the step now.
     """
     with logbook.deed(signer, deed) as making:
         row = point_row(making.view, point)
@@ -98,6 +100,7 @@ def do(
             return _told_again(making, row)
         observed = observed_at(at, making.moment)
         found = progress(making.view, row, making.moment, observed)
+        _demand_as_seen(found, seen)
         doing = Doing(making, row, found, _open(found), observed)
         if doing.step.hold:
             return decide(doing, typed, note, refuse)
@@ -314,6 +317,15 @@ def _open(found: NextStep) -> RouteStep:
     if found.step is None:
         raise Refused(f"{found.point} has no step left.", f"Next: gaugelog submit {found.point}")
     return found.step
+
+
+def _demand_as_seen(found: NextStep, seen: NextStep | None) -> None:
+    """Raise Refused when another step is open than the one the person looked at."""
+    if seen is not None and (seen.step, seen.subject) != (found.step, found.subject):
+        raise Refused(
+            f"{found.point} went on meanwhile: it is at “{found.title}” now; nothing was kept.",
+            "Look at it again.",
+        )
 
 
 def _demand_may_skip(making: Deed, found: NextStep) -> None:

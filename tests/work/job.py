@@ -6,6 +6,7 @@ import shutil
 from dataclasses import dataclass
 from datetime import UTC, datetime
 from pathlib import Path
+from typing import Any
 
 from gaugelog.intake.instruments import load_instruments
 from gaugelog.intake.stock import load_stock
@@ -93,7 +94,7 @@ class Job:
         typed: dict[str, str],
         point: str = "FB-1",
         minutes: float = MINUTES,
-        **more: str,
+        **more: Any,
     ) -> steps.StepOutcome:
         """Do the next step `minutes` after the last."""
         self.clock.advance(60 * minutes)

@@ -1,0 +1,184 @@
+"""The full screen as one program: who sits there, which screen is open, what happens meanwhile."""
+
+from __future__ import annotations
+
+import os
+from collections.abc import Callable, Iterable
+from typing import Any, ClassVar
+
+from textual import events
+from textual.app import App, SystemCommand
+from textual.binding import Binding, BindingType
+from textual.screen import Screen
+
+from gaugelog.errors import GaugelogError
+from gaugelog.screens.desk import Desk, Seat
+from gaugelog.screens.dialog import Dialog
+from gaugelog.screens.drafts import Drafts
+from gaugelog.screens.review import ReviewScreen
+from gaugelog.screens.room import Room
+from gaugelog.screens.sign_on import SignOn
+from gaugelog.screens.step import StepScreen
+from gaugelog.screens.themes import THEMES, first_theme, next_theme
+from gaugelog.screens.worklist import WorklistScreen
+
+PLACES: dict[str, Callable[[str], Room]] = {
+    "worklist": lambda _point: WorklistScreen(),
+    "step": StepScreen,
+    "review": ReviewScreen,
+}
+"""Where one can go, and how the screen there is made for a point (empty: none in particular)."""
+
+TICK_SECONDS = 1.0
+LOOK_AGAIN_TICKS = 15
+"""Windows and cures run: what is shown is read anew this often even if nothing was kept."""
+
+
+class FullScreen(App[None]):
+    """Gaugelog on the whole terminal. `place` and `point` say where it opens after sign-on.
+
+    `look` names a theme; empty: by the terminal.
+    """
+
+    TITLE = "Gaugelog"
+    CSS_PATH = "look.tcss"
+    HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (100, "-wide")]  # noqa: RUF012 (as App has it)
+    BINDINGS: ClassVar[list[BindingType]] = [
+        Binding("f2", "go('worklist')", "Worklist"),
+        Binding("f3", "go('review')", "Review"),
+        Binding("f8", "hand_over", "Hand over", priority=True),
+        Binding("ctrl+t", "next_look", "Look", show=False),
+        Binding("ctrl+q,ctrl+c", "quit", "Leave", priority=True, show=False),
+    ]
+
+    def __init__(self, desk: Desk, place: str = "", point: str = "", look: str = "") -> None:
+        super().__init__()
+        self.desk = desk
+        self.drafts = Drafts(desk.drafts)
+        self._place, self._point = place, point
+        self._look = look or first_theme(os.environ)
+        self._head = 0
+        self._ticks = 0
+
+    def on_mount(self) -> None:
+        """Ask who is there, and begin to watch."""
+        for theme in THEMES:
+            self.register_theme(theme)
+        self.theme = self._look
+        self.push_screen(SignOn(), self._arrived)
+        self.set_interval(TICK_SECONDS, self.tick)
+
+    def rooms(self) -> list[Room]:
+        """The screens that are open, the topmost last."""
+        return [screen for screen in self.screen_stack if isinstance(screen, Room)]
+
+    def go(self, place: str, point: str = "") -> None:
+        """Open a screen above the worklist; going to the worklist closes what is above it."""
+        self._close_all_but_home()
+        if place != "worklist":
+            self.push_screen(PLACES[place](point))
+        else:
+            self.rooms()[-1].facts_changed()
+
+    def action_go(self, place: str, point: str = "") -> None:
+        """A key that leads to a screen."""
+        self.go(place, point)
+
+    def check_action(self, action: str, parameters: tuple[object, ...]) -> bool | None:
+        """A key is shown only where it works now."""
+        if action in {"go", "hand_over"}:
+            return self.desk.seat is not None and not isinstance(self.screen, Dialog)
+        return True
+
+    def action_hand_over(self) -> None:
+        """Lock the desk for the next person to sign on."""
+        self.lock("Who takes over? What was half typed is kept for its person.")
+
+    def action_next_look(self) -> None:
+        """Dark, light, sixteen colours, in turn."""
+        self.theme = next_theme(self.theme)
+
+    async def action_quit(self) -> None:
+        """Put away what is half typed, and leave."""
+        self._leaving()
+        self.exit()
+
+    def lock(self, why: str) -> None:
+        """Forget the unlocked key and ask who is there; what is half typed is put away."""
+        self._leaving()
+        while isinstance(self.screen, Dialog):
+            self.pop_screen()
+        last = self.desk.seat.person if self.desk.seat is not None else ""
+        self.desk.sit(None)
+        self.push_screen(SignOn(last, why), self._returned)
+
+    def tick(self) -> None:
+        """Every second: lock an idle desk, and look whether something was kept by anyone."""
+        if self.desk.seat is None:
+            return
+        if self.desk.seconds_left <= 0:
+            minutes = self.desk.idle_seconds / 60
+            self.lock(f"Locked: nobody typed for {minutes:.0f} min. Sign on to go on.")
+            return
+        for room in self.rooms():
+            room.draw_bar()
+        self._ticks += 1
+        if self._something_kept() or self._ticks % LOOK_AGAIN_TICKS == 0:
+            for room in self.rooms():
+                room.facts_changed()
+
+    async def on_event(self, event: events.Event) -> None:
+        """Any key or click says that somebody is there."""
+        if isinstance(event, (events.Key, events.MouseDown)):
+            self.desk.touch()
+        await super().on_event(event)
+
+    def get_system_commands(self, screen: Screen[Any]) -> Iterable[SystemCommand]:
+        """The palette offers the keys that work now, in words, and nothing else."""
+        for _key, bound in sorted(screen.active_bindings.items()):
+            binding = bound.binding
+            if binding.description and bound.enabled and binding.action != "command_palette":
+                yield SystemCommand(
+                    binding.description,
+                    f"Key: {self.get_key_display(binding)}",
+                    lambda action=binding.action: self.call_later(self.run_action, action),
+                )
+
+    def _something_kept(self) -> bool:
+        try:
+            seq = self.desk.logbook.head().seq
+        except GaugelogError as error:
+            self.rooms()[-1].tell_error(error)
+            return False
+        changed, self._head = seq != self._head, seq
+        return changed
+
+    def _arrived(self, seat: Seat | None) -> None:
+        if seat is None:
+            self.exit()
+            return
+        self.desk.sit(seat)
+        self._something_kept()
+        self.push_screen(WorklistScreen())
+        draft = self.drafts.load(seat.person)
+        place = self._place or ("step" if draft.open and draft.point else "")
+        if place and place != "worklist":
+            self.push_screen(PLACES[place](self._point or draft.point))
+
+    def _returned(self, seat: Seat | None) -> None:
+        if seat is None:
+            self.exit()
+            return
+        self.desk.sit(seat)
+        for room in self.rooms():
+            room.draw_bar()
+            room.seat_changed()
+
+    def _close_all_but_home(self) -> None:
+        self._leaving()
+        while len(self.rooms()) > 1:
+            self.pop_screen()
+
+    def _leaving(self) -> None:
+        for room in self.rooms():
+            room.leaving()

@@ -1,0 +1,185 @@
+"""What every screen has: a bar that says where and who, a line of talk, the keys that work now."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterable
+from dataclasses import dataclass
+from datetime import timedelta
+from typing import TYPE_CHECKING, Any, TypeVar, cast
+
+from textual.app import ComposeResult
+from textual.containers import Horizontal
+from textual.content import Content
+from textual.message import Message
+from textual.screen import Screen
+from textual.widget import Widget
+from textual.widgets import Footer
+
+from gaugelog.errors import GaugelogError
+from gaugelog.screens.words import BAD, CALM, WAIT, Words, plain, told
+
+if TYPE_CHECKING:
+    from gaugelog.screens.app import FullScreen
+    from gaugelog.screens.desk import Desk
+
+T = TypeVar("T")
+
+_WARN_SECONDS = 60.0
+
+
+class Room(Screen[None]):
+    """A screen of Gaugelog. A subclass gives `title_text`, `body`, and what it does on a change.
+
+    What is slow goes through `in_background`; what is to be said goes through `tell`.
+    """
+
+    @dataclass
+    class Finished(Message):
+        """Slow work has ended; `act` runs on the thread that draws."""
+
+        act: Callable[[], None]
+
+    def __init__(self) -> None:
+        super().__init__()
+        self._doing = ""
+        self._since = 0.0
+
+    @property
+    def full(self) -> FullScreen:
+        """The program this screen belongs to."""
+        return cast("FullScreen", self.app)
+
+    @property
+    def desk(self) -> Desk:
+        """The logbook and who sits at it."""
+        return self.full.desk
+
+    @property
+    def busy(self) -> bool:
+        """Whether slow work runs; a second Enter does nothing then."""
+        return bool(self._doing)
+
+    def title_text(self) -> str:
+        """What this screen is about, for the bar."""
+        return ""
+
+    def body(self) -> Iterable[Widget]:
+        """What stands between the bar and the talk."""
+        return ()
+
+    def facts_changed(self) -> None:
+        """Something was kept, here or by another program, or time went on: look again."""
+
+    def seat_changed(self) -> None:
+        """Another person sits here, or the same one again: look again."""
+        self.facts_changed()
+
+    def leaving(self) -> None:
+        """The program ends, or the desk is locked: put away what is half done."""
+
+    def compose(self) -> ComposeResult:
+        """The bar, the body, the talk, the keys."""
+        with Horizontal(id="bar"):
+            yield Words(id="where")
+            yield Words(id="who")
+        yield from self.body()
+        yield Words(id="talk")
+        yield Footer(show_command_palette=False)
+
+    def on_mount(self) -> None:
+        """Fill the bar, and keep it so."""
+        self.draw_bar()
+        self.set_interval(0.5, self._draw_doing)
+
+    def draw_bar(self) -> None:
+        """Show where we are, who sits here, and the time of this machine."""
+        book, seat = self.desk.logbook, self.desk.seat
+        about = self.title_text()
+        self.query_one("#where", Words).say(f" {book.name}" + (f" · {about}" if about else ""))
+        moment = book.clock.now()
+        clock = f"{moment.utc + timedelta(minutes=moment.offset_minutes):%H:%M}"
+        who = seat.name if seat is not None else "nobody signed on"
+        self.query_one("#who", Words).say(
+            Content(" · ").join([plain(who), *self._left(), plain(f"{clock} ")])
+        )
+
+    def _left(self) -> list[Content]:
+        left = self.desk.seconds_left
+        soon = self.desk.seat is not None and left < _WARN_SECONDS
+        return [plain(f"locks in {max(left, 0):.0f} s", f"bold {WAIT}")] if soon else []
+
+    def tell(self, text: Content | str) -> None:
+        """Say something to the person; it stands until something else is said."""
+        self.query_one("#talk", Words).say(text)
+
+    def tell_error(self, error: GaugelogError) -> None:
+        """Say what stopped a deed, and what to do."""
+        self.tell(told(error))
+
+    @property
+    def talk(self) -> str:
+        """What was said last."""
+        return self.query_one("#talk", Words).text
+
+    def in_background(
+        self,
+        doing: str,
+        act: Callable[[], T],
+        then: Callable[[T], None],
+        failed: Callable[[GaugelogError], None] | None = None,
+    ) -> None:
+        """Do slow work on another thread, and say so; `then` gets its result on this one.
+
+        While it runs nothing else is begun. What it raises is told, or given to `failed`.
+        """
+        if self.busy:
+            return
+        self._doing, self._since = doing, self.desk.ticks()
+        tell = failed or self.tell_error
+
+        def work() -> None:
+            try:
+                result = act()
+            except GaugelogError as error:
+                self._finish(lambda error=error: tell(error))  # type: ignore[misc]
+            except Exception as error:  # a defect: said plainly, the screen stays
+                self._finish(lambda error=error: self._tell_defect(error))  # type: ignore[misc]
+            else:
+                self._finish(lambda: then(result))
+
+        self.run_worker(work, thread=True, group="slow", exit_on_error=False)
+
+    def _finish(self, act: Callable[[], None]) -> None:
+        self.post_message(self.Finished(act))
+
+    def on_room_finished(self, message: Room.Finished) -> None:
+        """Slow work ended: say or show what came of it."""
+        message.stop()
+        self._doing = ""
+        if self.is_mounted:
+            self.query_one("#talk", Words).say("")
+            message.act()
+
+    def _tell_defect(self, error: Exception) -> None:
+        kind = type(error).__name__
+        self.tell(
+            plain(
+                f"✗ This is a defect of Gaugelog ({kind}: {error}); nothing half-done was stored.",
+                BAD,
+            )
+        )
+
+    def _draw_doing(self) -> None:
+        if self._doing:
+            seconds = self.desk.ticks() - self._since
+            self.tell(plain(f"… {self._doing} ({seconds:.0f} s)", CALM))
+
+
+def show(widget: Widget, shown: bool) -> None:
+    """Show a widget, or leave its room to others."""
+    widget.display = shown
+
+
+def only(screen: Any, kind: type[T]) -> T | None:
+    """The screen if it is of a kind, else None."""
+    return screen if isinstance(screen, kind) else None
