@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
+from datetime import timedelta
 from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
@@ -43,18 +44,31 @@ def title_of(act: Mapping[str, Any]) -> str:
     """The act in a few words: `walk FB-1 until coated`."""
     kind = _kind(act)
     until = f" until {act['until']}" if "until" in act else ""
-    return f"{kind} {act[kind]}{until}"
+    points = act[kind] if isinstance(act[kind], str) else ", ".join(act[kind])
+    return f"{kind} {points}{until}"
 
 
 def play(stage: Stage, act: Mapping[str, Any]) -> None:
     """Play one act. Raises StoryFault when it does not fit."""
     kind = _kind(act)
-    stage.clock.advance(60 * act.get("wait", 0))
+    _wait(stage, act)
     key = stage.keys[act.get("by", stage.usual[PLAYED_BY[kind]])]
     if kind == "walk":
         _Walk(stage, act, key, _lines(act.get("typed", {}))).play()
     else:
         _SIGNED[kind](stage, act, key)
+
+
+def _wait(stage: Stage, act: Mapping[str, Any]) -> None:
+    """Let the clock run to `at` (a time at the place of work), then for `wait` minutes."""
+    now = stage.clock.now()
+    if "at" in act:
+        here = now.utc + timedelta(minutes=now.offset_minutes)
+        ahead = (act["at"] - here.replace(tzinfo=None)).total_seconds()
+        if ahead < 0:
+            raise StoryFault(f"{title_of(act)}: {act['at']} is past, it is {here:%d %B %H:%M}")
+        stage.clock.advance(ahead)
+    stage.clock.advance(60 * act.get("wait", 0))
 
 
 def _kind(act: Mapping[str, Any]) -> str:
@@ -122,7 +136,11 @@ def _lines(typed: Mapping[str, Any]) -> dict[str, list[dict[str, Any]]]:
 
 @dataclass
 class _Walk:
-    """A point's steps, one after the other. Lines are taken off as they are typed."""
+    """The steps of one point, or of several that share a circuit, one after the other.
+
+    Each point goes as far as it can, then it is the next one's turn. Lines are taken off as they
+    are typed.
+    """
 
     stage: Stage
     act: Mapping[str, Any]
@@ -132,17 +150,32 @@ class _Walk:
 
     def play(self) -> None:
         """To `until`, or to the end of the route; every line of the act has to be typed."""
+        points = self.act["walk"]
+        open_points = [points] if isinstance(points, str) else list(points)
+        while open_points:
+            ends = [self._walk(point) for point in open_points]
+            if not any(moved for moved, _ in ends):
+                raise StoryFault(f"{title_of(self.act)}: comes no further")
+            open_points = [
+                point for point, (_, waits) in zip(open_points, ends, strict=True) if waits
+            ]
+        left = [step for step, lines in self.lines.items() if lines]
+        if left:
+            raise StoryFault(f"{title_of(self.act)}: never came to {', '.join(left)}")
+
+    def _walk(self, point: str) -> tuple[bool, bool]:
+        """Walk a point until it waits for another or comes to its end: moved, waits."""
         from gaugelog.work import steps
 
-        point, until = self.act["walk"], self.act.get("until", "")
-        while True:
-            found = steps.next_step(self.stage.book, point)
-            if found.step is None or found.step.id == until:
-                break
+        moved, until = False, self.act.get("until", "")
+        while (found := steps.next_step(self.stage.book, point)).step is not None:
+            if found.step.id == until:
+                return True, False
+            if found.forbidden:
+                return moved, True
             self._step(found, found.step.id)
-        left = [step for step, lines in self.lines.items() if lines]
-        if left or (until and found.step is None):
-            raise StoryFault(f"{title_of(self.act)}: never came to {', '.join(left) or until}")
+            moved = True
+        return True, False
 
     def _step(self, found: NextStep, step: str) -> None:
         from gaugelog.work import steps

@@ -15,11 +15,20 @@ if TYPE_CHECKING:
 
 FOLDER = Path("gaugelog-demo")
 
+ALWAYS_NEXT = (
+    ("journal check", "is every entry as it was signed?"),
+    ("journal show FB-2", "what happened at a point"),
+    ("plan show", "points, lots, circuits, channels, states"),
+    ("wiring show", "which wire goes to which pin; spare channels"),
+    ("record", "the records and their digests"),
+)
+"""What the summary names to type in every case, and why; the story adds to it."""
+
 
 def demo(
     folder: Annotated[Path, typer.Argument(help="Where to play it; a new folder.")] = FOLDER,
 ) -> None:
-    """Play an invented job: three people, two points, signed records at the end.
+    """Play an invented job: three people, fifteen points, signed records at the end.
 
     Makes a folder with the input files, a logbook, its keys and the records, and says what to
     look at and type next.
@@ -60,43 +69,49 @@ def _play(story: Story, folder: Path) -> None:
 
 
 def _hand_out(story: Story, folder: Path) -> list[Path]:
+    """The newest record of each point, in `records`."""
     from gaugelog.work import reviews
 
     written = []
-    for row in reviews.records(story.book()):
-        found = reviews.record(story.book(), point=row["point"])
-        target = folder / f"{found.file_name}.pdf"
+    (folder / "records").mkdir()
+    for point in dict.fromkeys(row["point"] for row in reviews.records(story.book())):
+        found = reviews.record(story.book(), point=point)
+        target = folder / "records" / f"{found.file_name}.pdf"
         target.write_bytes(found.pdf)
         written.append(target)
     return written
 
 
 def _summary(story: Story, folder: Path, records: list[Path]) -> None:
-    from gaugelog.commands.story import PASSPHRASE
-
-    program, first = _how_to_type(), records[0].name if records else "FB-1-r1.pdf"
     put(
         "",
         f"The invented job “{story.told['name']}” is in {folder}/:",
         "  input/     the files a planner writes; README.md there explains each",
         "  logbook/   the logbook: journal, ledger, evidence",
         "  keys/      the three people's keys, here only because this is a demo",
-        *(f"  {path.name}  the signed record of a point" for path in records),
+        f"  records/   the newest signed record of each of {len(records)} points",
         "",
-        "Look at: FB-2, where the insulation failed at 0.42 GΩ, was put right and passed.",
+        "Look at:",
+        *(f"  {line}" for line in story.told_by_chapters("look")),
         "",
-        "Type next:",
-        f"  cd {folder}/logbook",
-        "  export GAUGELOG_KEYS=../keys    # the passphrase of everyone: " + PASSPHRASE,
-        f"  {program} journal check    # is every entry as it was signed?",
-        f"  {program} journal show FB-2    # what happened at a point",
-        f"  {program} plan show    # points, lots, circuits, channels, states",
-        f"  {program} step next FB-1    # what a point needs now",
-        f"  {program} record    # the records and their digests",
-        f"  pdfsig ../{first}    # the signatures, judged by a foreign program",
+        *_next_lines(story, folder, records[0]),
         "",
         f"Head of the journal: {story.book().head().printed}",
     )
+
+
+def _next_lines(story: Story, folder: Path, first: Path) -> list[str]:
+    from gaugelog.commands.story import PASSPHRASE
+
+    program = _how_to_type()
+    typed = [*ALWAYS_NEXT, *story.told_by_chapters("next")]
+    return [
+        "Type next:",
+        f"  cd {folder}/logbook",
+        f"  export GAUGELOG_KEYS=../keys    # the passphrase of everyone: {PASSPHRASE}",
+        *(f"  {program} {words}    # {why}" for words, why in typed),
+        f"  pdfsig ../records/{first.name}    # the signatures, judged by a foreign program",
+    ]
 
 
 def _how_to_type() -> str:

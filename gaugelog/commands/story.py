@@ -37,6 +37,7 @@ class Story:
 
     files: Path
     told: dict[str, Any]
+    chapters: list[dict[str, Any]]
     clock: SetClock
     keys: dict[str, UnlockedKey]
     maker: RecordMaker
@@ -49,7 +50,16 @@ class Story:
             ("receive stock, enter meters", self._stock),
             ("load and release the plan", self._plan),
         ]
-        return [*first, *((title_of(act), partial(self._act, act)) for act in self.told["act"])]
+        played = [
+            (title_of(act), partial(self._act, act, _usual(self.told["usual"], chapter)))
+            for chapter in self.chapters
+            for act in chapter["act"]
+        ]
+        return [*first, *played]
+
+    def told_by_chapters(self, what: str) -> list[Any]:
+        """What the chapters say to `look` at, or to type `next`, in their order."""
+        return [line for chapter in self.chapters for line in chapter.get(what, ())]
 
     def book(self) -> Logbook:
         """The logbook, once it is started."""
@@ -57,8 +67,7 @@ class Story:
             raise AssertionError("the story begins with its first act")
         return self.logbook
 
-    def _act(self, act: dict[str, Any]) -> None:
-        usual = self.told["usual"]
+    def _act(self, act: dict[str, Any], usual: dict[str, Any]) -> None:
         play(Stage(self.book(), self.clock, self.keys, self.maker, usual), act)
 
     def _start(self, home: Path) -> None:
@@ -125,11 +134,18 @@ def read_story(maker: RecordMaker) -> Story:
 
     files = demo_files()
     told = _told(files / "story.toml")
-    chapters = [_told(chapter) for chapter in sorted((files / "story").glob("*.toml"))]
-    told["act"] = [act for chapter in chapters for act in chapter["act"]]
     begin = datetime.fromisoformat(told["start"].replace("Z", "+00:00")).astimezone(UTC)
     clock = SetClock(Moment(begin, 60, new_id(), 3_600_000))
-    return Story(files, told, clock, {}, maker)
+    chapters = [_told(chapter) for chapter in sorted((files / "story").glob("*.toml"))]
+    return Story(files, told, chapters, clock, {}, maker)
+
+
+def _usual(general: dict[str, Any], chapter: dict[str, Any]) -> dict[str, Any]:
+    """What is usual in a chapter: its own lines over the general ones, cell by cell."""
+    lines = dict(general["step"])
+    for step, line in chapter.get("usual", {}).items():
+        lines[step] = {**lines.get(step, {}), **line}
+    return {**general, "step": lines}
 
 
 def _told(file: Path) -> dict[str, Any]:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+import shutil
 from itertools import chain
 from pathlib import Path
 
@@ -13,9 +14,12 @@ from gaugelog.intake.circuits import ARRANGEMENTS
 from gaugelog.intake.circuits import COLUMNS as CIRCUITS
 from gaugelog.intake.criteria import STAGES
 from gaugelog.intake.grids import COLUMNS as GRIDS
+from gaugelog.intake.plan import load_plan
 from gaugelog.intake.route import shipped_routes
-from gaugelog.intake.stock import CONSUMABLE_COLUMNS, LOT_COLUMNS
+from gaugelog.intake.stock import CONSUMABLE_COLUMNS, LOT_COLUMNS, load_stock
 from gaugelog.intake.typed import parse_quantity
+from tests.intake.conftest import counter
+from tests.intake.test_workbook import table_of, xlsx
 
 DEMO = Path(__file__).parents[2] / "demo_project"
 README = (DEMO / "README.md").read_text(encoding="utf-8")
@@ -50,3 +54,33 @@ def test_every_file_of_the_demo_is_in_the_readme() -> None:
 def test_quantities_in_the_readme_are_understood(text: str) -> None:
     units = ("GPa", "MPa", "ppm/K", "kg/m3")
     assert parse_quantity(text, units).unit in units
+
+
+def _as_spreadsheet(file: Path) -> None:
+    """The table as a spreadsheet program saves it, numbers as numbers, in place of the text."""
+    file.with_suffix(".xlsx").write_bytes(xlsx(table_of(file)))
+    file.unlink()
+
+
+def test_the_plan_saved_as_spreadsheets_loads_the_same(tmp_path: Path) -> None:
+    stock = load_stock([DEMO / "lots.csv"], counter())
+    lots = {lot.label: lot.id for lot in stock.lots}
+    from_text = load_plan(DEMO / "plan", lots=lots, new_id=counter())
+    folder = Path(shutil.copytree(DEMO / "plan", tmp_path / "plan"))
+    for name in ("grids", "circuits"):
+        _as_spreadsheet(folder / f"{name}.csv")
+    from_sheets = load_plan(folder, lots=lots, new_id=counter())
+    assert (15, 14) == (len(from_text.points), len(from_text.circuits))
+    assert from_text.points == from_sheets.points
+    assert from_text.circuits == from_sheets.circuits
+    assert from_text.campaign == from_sheets.campaign
+
+
+def test_the_stock_saved_as_spreadsheets_loads_the_same(tmp_path: Path) -> None:
+    names = ("lots.csv", "consumables.csv")
+    from_text = load_stock([DEMO / name for name in names], counter())
+    for name in names:
+        shutil.copy(DEMO / name, tmp_path)
+        _as_spreadsheet(tmp_path / name)
+    sheets = [(tmp_path / name).with_suffix(".xlsx") for name in names]
+    assert from_text == load_stock(sheets, counter())

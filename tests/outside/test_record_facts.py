@@ -30,7 +30,7 @@ def _text(record: Path) -> str:
 @needs("pdftotext")
 def test_each_signature_shows_name_time_and_meaning(demo: Path) -> None:  # noqa: F811
     assert "printed name of the signer" in case("C16-01").expected["required"]["value"]
-    text = _text(demo / "FB-1-r1.pdf")
+    text = _text(demo / "records" / "FB-1-r1.pdf")
     for shown in (
         "Tobe Okoro (TO)",
         "I did or saw the work recorded here and submit it for review.",
@@ -65,7 +65,7 @@ def test_a_signature_takes_an_id_and_a_passphrase(demo: Path, command: Command) 
 @needs("pdftotext")
 def test_there_is_enough_to_repeat_the_work(demo: Path) -> None:  # noqa: F811
     assert any("repeat the work" in each for each in case("C16-06").expected["required"]["value"])
-    text = _text(demo / "FB-2-r1.pdf")
+    text = _text(demo / "records" / "FB-2-r1.pdf")
     for shown in ("K7-03/2", "L-3504", "AD-612", "RM-2", "IT-5", "CAL-26-0722", "13.0 degC"):
         assert shown in text, shown
 
@@ -74,7 +74,7 @@ def test_there_is_enough_to_repeat_the_work(demo: Path) -> None:  # noqa: F811
 def test_the_record_carries_what_a_report_carries(demo: Path) -> None:  # noqa: F811
     # ISO/IEC 17025:2017, 7.8.2.1 a) to p), as far as it concerns an installation record.
     assert "customer name and contact" in case("C16-08").expected["required"]["value"]
-    text = _text(demo / "FB-1-r1.pdf")
+    text = _text(demo / "records" / "FB-1-r1.pdf")
     wanted = {
         "title": "Record of a strain gauge installation",
         "who did it, and where they are": "Saltmere Measurement, 4 Weir Yard, Tarnwick",
@@ -96,6 +96,6 @@ def test_the_record_carries_what_a_report_carries(demo: Path) -> None:  # noqa: 
 @needs("pdftotext")
 def test_the_decision_rule_is_agreed_and_told(demo: Path) -> None:  # noqa: F811
     assert any("the rule used" in each for each in case("C16-10").expected["required"]["value"])
-    text = _text(demo / "FB-1-r1.pdf")
+    text = _text(demo / "records" / "FB-1-r1.pdf")
     for shown in ("ILAC-G8:09/2019", "k = 2", "agreed by", "conditional pass"):
         assert shown in text, shown
