@@ -8,7 +8,7 @@ from pathlib import Path
 
 import pytest
 
-from tests.commands.conftest import PASSPHRASE, Command, Outcome
+from tests.commands.conftest import PASSPHRASE, SMALL_JOB, Command, Outcome
 
 WHO = ("technician", "reviewer", "planner")
 
@@ -71,7 +71,7 @@ def test_a_released_plan_is_revised_with_a_reason(
     demo: Path, command: Command, people: dict[str, str], tmp_path: Path
 ) -> None:
     planner, folder = people["planner"], tmp_path / "plan"
-    shutil.copytree(Path(__file__).parents[2] / "demo_project" / "plan", folder)
+    shutil.copytree(SMALL_JOB / "plan", folder)
     criteria = folder / "criteria.toml"
     text = criteria.read_text(encoding="utf-8").replace("coverage = 2", "coverage = 2.5")
     criteria.write_text(text, encoding="utf-8")
