@@ -18,6 +18,7 @@ from gaugelog.commands import (
     instrument,
     journal,
     person,
+    photo,
     plan,
     record,
     review,
@@ -39,7 +40,7 @@ stdout, talk to stderr. Try `gaugelog demo` first.
 SET_UP, WORK, LOOK = "Set up", "Plan and work", "Look, check, compute"
 _PANELS = {
     **dict.fromkeys(("person", "stock", "instrument"), SET_UP),
-    **dict.fromkeys(("plan", "wiring", "step"), WORK),
+    **dict.fromkeys(("plan", "wiring", "step", "photo"), WORK),
     "journal": LOOK,
 }
 
@@ -74,6 +75,7 @@ _GROUPS: dict[str, typer.Typer] = {
     "plan": plan.group,
     "wiring": wiring.group,
     "step": step.group,
+    "photo": photo.group,
     "journal": journal.group,
 }
 _AT_WORK: dict[str, Callable[..., None]] = {

@@ -131,13 +131,17 @@ def rebuild(ctx: typer.Context) -> None:
 def export(
     ctx: typer.Context,
     folder: Annotated[Path, typer.Argument(help="A new or empty folder.")],
+    photos: Annotated[
+        bool, typer.Option("--photos", help="The originals of photos too, with the camera's data.")
+    ] = False,
 ) -> None:
     """Write every entry, certificate and evidence file out, to be checked without Gaugelog.
 
-    The folder's READ ME.txt says how, with openssl and sha256sum only.
+    The folder's READ ME.txt says how, with openssl and sha256sum only. Originals of photos, which
+    may tell the place, are left out unless asked for.
     """
     from gaugelog.work.history import export_journal
 
     logbook = open_logbook(ctx)
-    count = export_journal(logbook, folder)
+    count = export_journal(logbook, folder, photos=photos)
     say(f"{count} entries written to {folder}; READ ME.txt there says how to check them.")

@@ -5,8 +5,14 @@ from __future__ import annotations
 from typing import TYPE_CHECKING
 
 from gaugelog.documents.content.build import build
-from gaugelog.documents.render import Paper, render_record
+from gaugelog.documents.content.model import RecordContent
+from gaugelog.documents.content.workdone import PhotoShown
+from gaugelog.documents.pictures import client_copy
+from gaugelog.documents.render import Drawing, Paper, render_record
 from gaugelog.documents.sign import sign_first, sign_second
+from gaugelog.errors import StorageTrouble
+from gaugelog.journal.entry import sha256
+from gaugelog.journal.evidence import Evidence
 from gaugelog.journal.keys import Signer
 from gaugelog.work.ports import RecordRequest, Stamp
 
@@ -22,7 +28,7 @@ class PdfRecordMaker:
 
     def draft(self, view: View, request: RecordRequest) -> bytes:
         """The record as it would be now, marked as a draft on every page; without signatures."""
-        return render_record(build(view, request), self.paper).pdf
+        return self._drawn(build(view, request), request).pdf
 
     def submitted(self, view: View, request: RecordRequest, signer: Signer) -> bytes:
         """The record with the technician's signature and an empty field for the reviewer's.
@@ -32,8 +38,23 @@ class PdfRecordMaker:
         content = build(view, request, signer.person)
         name = view.name(signer.person)
         stamp = Stamp(signer.person, name, request.meaning, request.moment, request.head)
-        return sign_first(render_record(content, self.paper), stamp, signer)
+        return sign_first(self._drawn(content, request), stamp, signer)
 
     def accepted(self, pdf: bytes, stamp: Stamp, signer: Signer) -> bytes:
         """The submitted record with the reviewer's signature added; its first bytes stay."""
         return sign_second(pdf, stamp, signer)
+
+    def _drawn(self, content: RecordContent, request: RecordRequest) -> Drawing:
+        pictures = [_copy(photo, request.evidence) for photo in content.photos]
+        return render_record(content, self.paper, pictures)
+
+
+def _copy(photo: PhotoShown, evidence: Evidence | None) -> bytes:
+    """What the page shows of a photo. Raises StorageTrouble when its file is not as it was kept."""
+    data = evidence.get(photo.sha256) if evidence is not None else b""
+    if sha256(data) != photo.sha256:
+        raise StorageTrouble(
+            f"The photo {photo.name} is not the file that was kept ({photo.sha256}).",
+            "Restore it from a backup; `gaugelog journal check` names what else is missing.",
+        )
+    return client_copy(photo.name, data)

@@ -65,6 +65,7 @@ def environment(content: RecordContent, lettering: Lettering) -> Environment:
     wall = wording.WallTime(content.drawn.offset)
     made.filters.update(when=wall.when, day=wall.day, exactly=wall.exactly)
     made.filters.update(initials=_initials(content), earlier=_earlier(content))
+    made.filters.update(numbered=_numbered(content))
     return made
 
 
@@ -138,6 +139,12 @@ def _initials(content: RecordContent) -> Any:
 def _earlier(content: RecordContent) -> Any:
     known = {each.id: f"{each.typed} ({each.check}, {each.stage})" for each in content.readings}
     return lambda reading: known.get(reading, reading)
+
+
+def _numbered(content: RecordContent) -> Any:
+    """A photo's number on the page, by its id."""
+    known = {photo.id: number for number, photo in enumerate(content.photos, start=1)}
+    return lambda photo: f"photo {known[photo]}" if photo in known else ""
 
 
 def _window(each: Window, titles: dict[str, str]) -> str:

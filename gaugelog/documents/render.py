@@ -1,10 +1,12 @@
 """HTML into PDF/A-3u with its data attached: the same bytes for the same content and machine.
 
-WeasyPrint draws; it may load the shipped fonts and stylesheets and nothing else.
+WeasyPrint draws; it may load the shipped fonts and stylesheets, the pictures it is handed, and
+nothing else.
 """
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
 from typing import TYPE_CHECKING, Any, Literal
@@ -65,8 +67,12 @@ class Drawing:
     boxes: dict[str, FieldBox]
 
 
-def render_record(content: RecordContent, paper: Paper = "a4") -> Drawing:
+def render_record(
+    content: RecordContent, paper: Paper = "a4", pictures: Sequence[bytes] = ()
+) -> Drawing:
     """Draw a record with its data attached.
+
+    `pictures` are what is shown of the content's photos, in their order, as JPEG.
 
     Raises MachineTrouble when the libraries that draw pages are missing.
     """
@@ -83,15 +89,20 @@ def render_record(content: RecordContent, paper: Paper = "a4") -> Drawing:
         relationship="Data",
     )
     paper_css = template_bytes(f"record-{paper}.css").decode()
-    return draw(record_html(content), paper_css, [attachment])
+    return draw(record_html(content), paper_css, [attachment], pictures)
 
 
-def draw(html: str, size_css: str, attachments: list[Any]) -> Drawing:
-    """Draw a page of our own as PDF/A-3u. `size_css` says how large its pages are."""
+def draw(
+    html: str, size_css: str, attachments: list[Any], pictures: Sequence[bytes] = ()
+) -> Drawing:
+    """Draw a page of our own as PDF/A-3u. `size_css` says how large its pages are.
+
+    `pictures` are JPEG, known to the page as `gaugelog:photo-1` and on.
+    """
     from weasyprint import CSS, HTML
     from weasyprint.text.fonts import FontConfiguration
 
-    fetcher, fonts = memory_fetcher(), FontConfiguration()
+    fetcher, fonts = memory_fetcher(pictures), FontConfiguration()
     with quiet("weasyprint", "fontTools") as complaints:
         sheets = [
             CSS(string=text, url_fetcher=fetcher, font_config=fonts)
@@ -106,13 +117,15 @@ def draw(html: str, size_css: str, attachments: list[Any]) -> Drawing:
     return Drawing(finished(pdf), len(document.pages), _boxes(document))
 
 
-def memory_fetcher() -> MemoryFetcher:
-    """The fetcher that knows the shipped fonts and stylesheets and nothing else."""
+def memory_fetcher(pictures: Sequence[bytes] = ()) -> MemoryFetcher:
+    """The fetcher that knows the shipped fonts and stylesheets, these pictures, nothing else."""
     from gaugelog.documents.fetcher import MemoryFetcher
 
     served = {font.address: (template_bytes(f"fonts/{font.file}"), "font/ttf") for font in FONTS}
     for name in ("record.css", "stamp.css", "wiring.css"):
         served[f"gaugelog:{name}"] = (template_bytes(name), "text/css")
+    for number, picture in enumerate(pictures, start=1):
+        served[f"gaugelog:photo-{number}"] = (picture, "image/jpeg")
     return MemoryFetcher(served)
 
 

@@ -16,20 +16,24 @@ LARGEST = 8 * 1024 * 1024
 _SAVE = "Save it as UTF-8; spreadsheets call that “CSV UTF-8”."
 
 
-def read_bytes(path: Path) -> bytes:
-    """The file's bytes. Raises Faulty when it can't be read, is empty or far too large."""
+def read_bytes(path: Path, largest: int | None = None) -> bytes:
+    """The file's bytes, at most `largest` or LARGEST.
+
+    Raises Faulty when it can't be read, is empty or larger than that.
+    """
+    most = LARGEST if largest is None else largest
     try:
         found = path.stat()
         size = found.st_size
         if not stat.S_ISREG(found.st_mode):
             raise Faulty([Fault(path.name, "is no file.", "Name the file itself.")])
-        data = path.read_bytes() if size <= LARGEST else b""
+        data = path.read_bytes() if size <= most else b""
     except (OSError, ValueError) as error:
         reason = getattr(error, "strerror", None) or "its name can't be one"
         remedy = "See that it is there, is a file, and may be read."
         raise Faulty([Fault(path.name, f"can't be read: {reason}.", remedy)]) from error
-    if size > LARGEST:
-        raise Faulty([Fault(path.name, f"has {size} bytes; {LARGEST} are read at most.")])
+    if size > most:
+        raise Faulty([Fault(path.name, f"has {size} bytes; {most} are read at most.")])
     if not data.removeprefix(codecs.BOM_UTF8).strip():
         raise Faulty([Fault(path.name, "is empty.")])
     return data

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import ssl
-from collections.abc import Callable
+from collections.abc import Callable, Collection
 from pathlib import Path
 
 from cryptography import x509
@@ -21,12 +21,17 @@ Progress = Callable[[int, int], None]
 
 
 def export(
-    reader: Reader, evidence: Evidence, folder: Path, progress: Progress | None = None
+    reader: Reader,
+    evidence: Evidence,
+    folder: Path,
+    progress: Progress | None = None,
+    left_out: Collection[str] = (),
 ) -> int:
     """Write every entry, certificate and evidence file into `folder`; returns how many entries.
 
     An entry is `chain-<id>/000012.header.json`, `.body.json` and, at the end of a deed, `.sig`,
-    each the exact bytes that were hashed or signed. `READ ME.txt` tells how to check them with
+    each the exact bytes that were hashed or signed. Evidence files whose digests are `left_out`
+    are not written, and the guide says so. `READ ME.txt` tells how to check them with
     openssl and sha256sum only. Raises StorageTrouble when the folder holds files or can't be
     written.
     """
@@ -34,8 +39,8 @@ def export(
         _demand_empty(folder)
         count = _write_entries(reader, folder, progress)
         _write_certificates(certificates_of(reader), folder)
-        _write_evidence(evidence, folder)
-        (folder / "READ ME.txt").write_text(guide(_heads(reader)), encoding="utf-8")
+        _write_evidence(evidence, folder, left_out)
+        (folder / "READ ME.txt").write_text(guide(_heads(reader), len(left_out)), encoding="utf-8")
     except OSError as error:
         raise StorageTrouble(
             f"The journal can't be written to {folder}: {error.strerror}.",
@@ -88,10 +93,12 @@ def _write_certificates(certificates: Certificates, folder: Path) -> None:
         (place / f"{issued.fingerprint}.pub.pem").write_bytes(public)
 
 
-def _write_evidence(evidence: Evidence, folder: Path) -> None:
+def _write_evidence(evidence: Evidence, folder: Path, left_out: Collection[str]) -> None:
     place = folder / "evidence"
     place.mkdir()
     for digest in evidence.digests():
+        if digest in left_out:
+            continue
         (place / digest).write_bytes(evidence.get(digest))
 
 

@@ -24,7 +24,7 @@ What is here
   authority.pem                the authority that issued the certificates
   evidence/                    files, each named by the SHA-256 of its bytes
 
-Names of people are not here: entries hold their ids only.
+@LEFT_OUT@Names of people are not here: entries hold their ids only.
 
 1. Each body is the one that its header names
 ---------------------------------------------
@@ -111,7 +111,20 @@ certificates; who it is, you know when you have confirmed its fingerprint:
 """
 
 
-def guide(heads: Sequence[tuple[str, str]]) -> str:
-    """The guide, with the head of each chain (its id and the head as printed)."""
+_LEFT_OUT = """\
+Left out of the evidence on purpose: originals of photos (@COUNT@), which may
+tell where and with what they were taken. Their digests are in the entries; the
+records show smaller copies. Who keeps the logbook has the originals.
+
+"""
+
+
+def guide(heads: Sequence[tuple[str, str]], left_out: int = 0) -> str:
+    """The guide, with the head of each chain (its id and the head as printed).
+
+    `left_out` is how many evidence files are not there on purpose.
+    """
     lines = [f"The head of chain-{chain} at the time of export:\n  {head}" for chain, head in heads]
-    return _GUIDE.replace("@HEADS@", "\n".join(lines) or "The journal holds no entry.")
+    told = _LEFT_OUT.replace("@COUNT@", str(left_out)) if left_out else ""
+    text = _GUIDE.replace("@LEFT_OUT@", told)
+    return text.replace("@HEADS@", "\n".join(lines) or "The journal holds no entry.")

@@ -23,6 +23,7 @@ from gaugelog.ledger import (
     dispositions,
     instruments,
     people,
+    photos,
     points,
     readings,
     restored,
@@ -65,6 +66,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (reviews.PointReturned, reviews.apply_point_returned),
         (reviews.PointReopened, reviews.apply_point_reopened),
         (dispositions.DispositionMade, dispositions.apply_disposition_made),
+        (photos.PhotoKept, photos.apply_photo_kept),
         (standing.StandingSet, standing.apply_standing_set),
         (restored.LogbookRestored, restored.apply_logbook_restored),
     )

@@ -13,7 +13,9 @@ from gaugelog.ledger.rows import At, Change, Known, Put
 StepSubject = Literal["place", "gauge", "grid", "circuit"]
 """What a step is done on. Place and gauge are one a point: a step on the gauge mounts it."""
 
-InputKind = Literal["gauge", "consumable", "instrument", "reading", "quantity", "text", "yes"]
+InputKind = Literal[
+    "gauge", "consumable", "instrument", "reading", "quantity", "text", "yes", "photo"
+]
 SkipRule = Literal["never", "planner", "with reason"]
 
 BOND_LINE = "bond-line temperature"

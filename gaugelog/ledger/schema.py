@@ -16,6 +16,7 @@ from gaugelog.ledger.campaign import CampaignRow, ChannelRow, CriteriaRow
 from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.ledger.instruments import InstrumentRow
 from gaugelog.ledger.people import PersonRow
+from gaugelog.ledger.photos import PhotoRow
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.reviews import RecordRow
@@ -27,7 +28,7 @@ from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 7
+LEDGER_VERSION = 8
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -49,6 +50,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     StoryRow,
     RevisionRow,
     StandingRow,
+    PhotoRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"

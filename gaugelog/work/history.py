@@ -12,6 +12,7 @@ from gaugelog.journal.entry import Entry, Head
 from gaugelog.journal.export import export
 from gaugelog.ledger import fold
 from gaugelog.ledger.people import PersonRow
+from gaugelog.ledger.photos import PhotoRow
 from gaugelog.work.logbook import Logbook
 
 _LONGEST_NUMBER = 15
@@ -53,7 +54,12 @@ def entries_about(logbook: Logbook, what: str) -> list[Entry]:
         return [entry for entry in entries if entry.body_bytes and subject in entry.body.about]
 
 
-def export_journal(logbook: Logbook, folder: Path) -> int:
-    """Write the journal out to be checked without Gaugelog; returns the number of entries."""
+def export_journal(logbook: Logbook, folder: Path, *, photos: bool = False) -> int:
+    """Write the journal out to be checked without Gaugelog; returns the number of entries.
+
+    Originals of photos may tell where they were taken: they go along only when asked for.
+    """
+    with logbook.reading() as view:
+        originals = set() if photos else {row.file for row in view.all(PhotoRow)}
     with logbook.storage.reading() as reader:
-        return export(reader, logbook.evidence, folder)
+        return export(reader, logbook.evidence, folder, left_out=originals)

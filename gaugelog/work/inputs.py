@@ -5,8 +5,10 @@ from __future__ import annotations
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
 from datetime import date
+from pathlib import Path
 
 from gaugelog.errors import Fault, Faulty
+from gaugelog.intake.pictures import Picture, load_pictures
 from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.instruments import InstrumentAdded
@@ -23,12 +25,13 @@ _YES, _NO = frozenset({"yes", "y", "ok", "done"}), frozenset({"no", "n"})
 
 @dataclass
 class Understood:
-    """The inputs of one step as understood; `readings` by the name of their input."""
+    """The inputs of one step as understood; `readings` and `photos` by the name of their input."""
 
     entered: dict[str, Entered] = field(default_factory=dict)
     readings: dict[str, TypedReading] = field(default_factory=dict)
     instrument: InstrumentAdded | None = None
     consumables: list[ConsumableReceived] = field(default_factory=list)
+    photos: dict[str, Picture] = field(default_factory=dict)
 
     @property
     def quantities(self) -> dict[str, Quantity]:
@@ -158,6 +161,10 @@ def _yes(asked: Asked, item: StepInput, text: str, where: str, found: Understood
     found.entered[item.name] = Entered(typed="yes")
 
 
+def _photo(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:
+    found.photos[item.name] = load_pictures([Path(text).expanduser()])[0]
+
+
 _READ: dict[str, Callable[[Asked, StepInput, str, str, Understood], None]] = {
     "gauge": _gauge,
     "consumable": _consumable,
@@ -166,4 +173,5 @@ _READ: dict[str, Callable[[Asked, StepInput, str, str, Understood], None]] = {
     "quantity": _quantity,
     "text": _text,
     "yes": _yes,
+    "photo": _photo,
 }

@@ -47,6 +47,7 @@ class Deed:
     signer: Signer
     moment: Moment
     id: str
+    evidence: FolderEvidence
     facts: list[Fact] = field(default_factory=list)
     repeated: tuple[Entry, ...] = ()
     """What this very deed kept before, where the caller asks again for lack of an answer."""
@@ -138,7 +139,7 @@ class Logbook:
         """Keep the first deed: authority, custodian's certificate, and what `facts` adds."""
         moment, deed = self.clock.now(), new_id()
         with self.storage.writing(self._on_wait) as writer:
-            making = Deed(self._view(writer), writer, self.chain, signer, moment, deed)
+            making = self._deed(writer, signer, moment, deed)
             facts(making)
             kept = begin(writer, making.facts, signer, moment, self.chain, deed, name=self.name)
             fold.keep(writer.connection, kept)
@@ -175,7 +176,7 @@ class Logbook:
                 raise Refused(
                     f"{signer.person} can't sign: {standing}", "Have the person enrolled anew."
                 )
-            making = Deed(self._view(writer), writer, self.chain, signer, moment, deed or new_id())
+            making = self._deed(writer, signer, moment, deed or new_id())
             making.repeated = tuple(writer.deed(making.id))
             yield making
             if making.facts:
@@ -194,6 +195,10 @@ class Logbook:
         """Throw the ledger's tables away and fold them anew from the journal."""
         with self.storage.writing(self._on_wait) as writer:
             fold.rebuild(writer)
+
+    def _deed(self, writer: SqliteWriter, signer: Signer, moment: Moment, deed: str) -> Deed:
+        view = self._view(writer)
+        return Deed(view, writer, self.chain, signer, moment, deed, self.evidence)
 
     def _view(self, reader: SqliteReader) -> View:
         return View(reader.connection, reader.sheet)

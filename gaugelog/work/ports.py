@@ -9,6 +9,7 @@ from gaugelog.journal.clock import Moment
 from gaugelog.journal.keys import Signer
 
 if TYPE_CHECKING:
+    from gaugelog.journal.evidence import Evidence
     from gaugelog.ledger.view import View
 
 
@@ -21,6 +22,8 @@ class RecordRequest:
     head: str
     moment: Moment
     meaning: str
+    evidence: Evidence | None = None
+    """Where the photos are that the record shows."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -6,7 +6,6 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.journal.append import touched_since
-from gaugelog.journal.clock import Moment
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
@@ -54,7 +53,7 @@ def submit(
         row = _point(view, point)
         demand_role(view, signer.person, "technician")
         demand_complete(view, row)
-        request = _request(view, row, head, logbook.clock.now(), meaning)
+        request = _request(view, row, head, meaning, logbook)
         pdf = maker.submitted(view, request, signer)
     file = logbook.evidence.put(pdf)
     with logbook.deed(signer) as deed:
@@ -169,7 +168,7 @@ def draft(logbook: Logbook, maker: RecordMaker, *, point: str) -> RecordFile:
     head = logbook.head().printed
     with logbook.reading() as view:
         row = _point(view, point)
-        pdf = maker.draft(view, _request(view, row, head, logbook.clock.now(), ""))
+        pdf = maker.draft(view, _request(view, row, head, "", logbook))
     return RecordFile(pdf, f"{row.label}-draft", "a draft, not signed")
 
 
@@ -202,9 +201,10 @@ def _point(view: View, label: str) -> PointRow:
     return row
 
 
-def _request(view: View, row: PointRow, head: str, moment: Moment, meaning: str) -> RecordRequest:
+def _request(view: View, row: PointRow, head: str, meaning: str, logbook: Logbook) -> RecordRequest:
     revision = 1 + max((item.revision for item in view.all(RecordRow, point=row.id)), default=0)
-    return RecordRequest(row.id, revision, head, moment, meaning)
+    now = logbook.clock.now()
+    return RecordRequest(row.id, revision, head, now, meaning, logbook.evidence)
 
 
 def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[PointRow, RecordRow]:

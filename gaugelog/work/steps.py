@@ -33,6 +33,7 @@ from gaugelog.work.doing import (
 from gaugelog.work.holds import decide
 from gaugelog.work.inputs import Asked, Understood, understand
 from gaugelog.work.logbook import Deed, Logbook
+from gaugelog.work.photos import Shows, keep_photo
 from gaugelog.work.readings import Observation, reading_taken
 
 __all__ = ["StepOutcome", "do", "next_step", "redo", "skip", "worklist"]
@@ -187,8 +188,10 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
     for reading in readings:
         others = [each for each in (reading.id, reading.gauge, reading.instrument) if each]
         doing.making.keep(reading, about(view, row, reading.subject, *others))
+    photos = _keep_photos(doing, got, readings, note)
     if any(reading.verdict.blocks for reading in readings):
         return StepOutcome(False, shown(readings), _blocked_lines(row, doing.step))
+    got.entered.update(photos)
     _keep_done(doing, got, readings, note)
     return StepOutcome(True, shown(readings), (f"{row.label}: “{doing.step.title}” is done.",))
 
@@ -231,10 +234,6 @@ def _readings(doing: Doing, got: Understood, reason: str) -> list[ReadingTaken]:
     if got.instrument is None:
         return []
     kinds = {item.name: item for item in doing.step.inputs}
-    entered = [
-        entry.id for name, entry in got.entered.items() if kinds[name].kind == "gauge" and entry.id
-    ]
-    gauge = entered[0] if entered else doing.row.gauge
     seen = Observation(
         doing.making.view,
         doing.row,
@@ -245,9 +244,27 @@ def _readings(doing: Doing, got: Understood, reason: str) -> list[ReadingTaken]:
         reason,
     )
     return _each(
-        partial(reading_taken, seen, kinds[name].check, typed, got.instrument, gauge)
+        partial(reading_taken, seen, kinds[name].check, typed, got.instrument, _gauge(doing, got))
         for name, typed in got.readings.items()
     )
+
+
+def _gauge(doing: Doing, got: Understood) -> str:
+    """The piece that the step is done on: the one that it takes, else the one in place."""
+    kinds = {item.name: item.kind for item in doing.step.inputs}
+    taken = (entry.id for name, entry in got.entered.items() if kinds[name] == "gauge")
+    return next((each for each in taken if each), doing.row.gauge)
+
+
+def _keep_photos(
+    doing: Doing, got: Understood, readings: list[ReadingTaken], note: str
+) -> dict[str, Entered]:
+    """Keep the photos of the step, also of one that a reading keeps open; what was entered."""
+    subject, when = doing.found.subject, utc_text(doing.observed)
+    gauge = _gauge(doing, got)
+    shows = Shows(doing.row, doing.step.id, subject, gauge, when, readings, note)
+    kept = {name: keep_photo(doing.making, shows, each) for name, each in got.photos.items()}
+    return {name: Entered(typed=fact.name, id=fact.id) for name, fact in kept.items()}
 
 
 def _each(takings: Iterable[Callable[[], ReadingTaken]]) -> list[ReadingTaken]:

@@ -85,6 +85,7 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "plan.revised": lambda fact: f"draft of revision {fact['revision']}, {fact['reason']}",
     "change.seen": lambda fact: f"plan revision {fact['revision']}, {fact['remark']}",
     "standing.set": lambda fact: f"{fact['label']} {fact['standing']}, {fact['reason']}",
+    "photo.kept": lambda fact: f"{fact['name']}, {fact['width']} × {fact['height']} pixels",
     "disposition.made": lambda fact: f"{fact['disposition']}, {fact['reason']}",
     "point.reopened": lambda fact: f"revision {fact['revision']} amended, {fact['reason']}",
 }

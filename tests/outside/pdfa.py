@@ -1,9 +1,9 @@
 """A check of PDF/A-3u of our own, for the points that a drawn and signed record could miss.
 
 By ISO 19005-3:2012: an output intent (6.2.3), XMP that claims part 3 level U (6.6.4), every font
-embedded with a map to Unicode (6.2.11.4, 6.2.11.7), widgets printed and with an appearance
-(6.3.2, 6.3.3), attachments with a relationship and listed once (6.8), no encryption, no script
-(6.1.3, 6.5.1). Clause numbers are from memory.
+embedded with a map to Unicode (6.2.11.4, 6.2.11.7), pictures not smoothed (6.2.8),
+widgets printed and with an appearance (6.3.2, 6.3.3), attachments with a relationship and listed
+once (6.8), no encryption, no script (6.1.3, 6.5.1). Clause numbers are from memory.
 """
 
 from __future__ import annotations
@@ -28,6 +28,7 @@ def troubles(pdf: bytes) -> list[str]:
             *_widgets(opened),
             *_attachments(opened),
             *_actions(opened),
+            *_pictures(opened),
         ]
 
 
@@ -109,3 +110,9 @@ def _actions(opened: pikepdf.Pdf) -> Iterator[str]:
             yield f"the file acts: {each.get('/S')}"
         if each.get("/Type") == "/ExtGState" and str(each.get("/TR", "")):
             yield "a transfer function is used"
+
+
+def _pictures(opened: pikepdf.Pdf) -> Iterator[str]:
+    for each in _dictionaries(opened):
+        if each.get("/Subtype") == "/Image" and each.get("/Interpolate", False):
+            yield "a picture is smoothed"

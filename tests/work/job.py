@@ -9,6 +9,7 @@ from pathlib import Path
 from typing import Any
 
 from gaugelog.intake.instruments import load_instruments
+from gaugelog.intake.route import shipped_routes
 from gaugelog.intake.stock import load_stock
 from gaugelog.journal.clock import Moment, SetClock
 from gaugelog.journal.ids import new_id
@@ -147,17 +148,34 @@ def start_job(home: Path) -> Job:
     return Job(book, clock, folder, keys)
 
 
-def released_job(home: Path) -> Job:
-    """A logbook with the demo's stock, meters and released plan."""
+def released_job(home: Path, files: Path = DEMO) -> Job:
+    """A logbook with the demo's stock, meters and released plan, or those of other files."""
     job = start_job(home)
     planner = job.keys["c.ward"]
-    received = load_stock([DEMO / "lots.csv", DEMO / "consumables.csv"], new_id=new_id)
+    received = load_stock([files / "lots.csv", files / "consumables.csv"], new_id=new_id)
     stock.receive(job.book, planner, received)
-    meters = load_instruments(DEMO / "instruments.toml", new_id=new_id)
+    meters = load_instruments(files / "instruments.toml", new_id=new_id)
     instruments.add(job.book, planner, meters)
-    plan.load(job.book, planner, plan.understand(job.book, DEMO / "plan"))
+    plan.load(job.book, planner, plan.understand(job.book, files / "plan"))
     plan.release(job.book, planner, meaning="I release.")
     return job
+
+
+def changed_files(home: Path, *changes: tuple[str, str, str]) -> Path:
+    """A copy of the demo's files with texts replaced, each change (file, old, new).
+
+    A file that is not there is a shipped route, copied for the planner to change.
+    """
+    files = home / "files"
+    shutil.copytree(DEMO, files)
+    for name, old, new in changes:
+        path = files / name
+        if not path.exists():
+            path.write_bytes(shipped_routes()[path.stem])
+        text = path.read_text(encoding="utf-8")
+        assert old in text
+        path.write_text(text.replace(old, new), encoding="utf-8")
+    return files
 
 
 def copied(source: Path, target: Path, clock: SetClock | None = None) -> Logbook:

@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 
 from gaugelog import __version__
 from gaugelog.documents.content.frombudget import budget_shown
+from gaugelog.documents.content.fromphotos import photos_shown
 from gaugelog.documents.content.fromplan import (
     Planned,
     article_shown,
@@ -32,7 +33,7 @@ from gaugelog.documents.content.model import (
     SigningShown,
 )
 from gaugelog.documents.content.pointstory import amends_shown, story_shown
-from gaugelog.documents.content.workdone import ReadingShown, StepShown, TurnShown
+from gaugelog.documents.content.workdone import PhotoShown, ReadingShown, StepShown, TurnShown
 from gaugelog.ledger.people import PersonRow
 
 if TYPE_CHECKING:
@@ -48,7 +49,7 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
     """
     plan = planned(view, request.point)
     steps, readings = steps_shown(view, plan), readings_shown(view, plan)
-    story = story_shown(view, plan)
+    story, photos = story_shown(view, plan), photos_shown(view, plan)
     return RecordContent(
         number=f"{plan.campaign.label}-{plan.point.label}-R{request.revision}",
         revision=request.revision,
@@ -65,11 +66,12 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
         route=_route(plan),
         steps=steps,
         readings=readings,
+        photos=photos,
         budget=budget_shown(view, plan.row),
         story=story,
         instruments=instruments_shown(view, plan),
         consumables=consumables_shown(view, plan),
-        people=_people(view, _parts(steps, readings, story, submitted_by)),
+        people=_people(view, _parts(steps, readings, story, photos, submitted_by)),
         signing=_signing(view, request, submitted_by),
         cautions=_cautions(plan),
     )
@@ -113,6 +115,7 @@ def _parts(
     steps: tuple[StepShown, ...],
     readings: tuple[ReadingShown, ...],
     story: tuple[TurnShown, ...],
+    photos: tuple[PhotoShown, ...],
     submitted_by: str | None,
 ) -> dict[str, list[str]]:
     """What each person did, in the order they came in."""
@@ -122,6 +125,7 @@ def _parts(
         (each.entered_by, "entries") for each in readings if each.entered_by != each.observed_by
     ]
     did += [(turn.by, "story") for turn in story]
+    did += [(photo.kept_by, "photos") for photo in photos]
     if submitted_by is not None:
         did.append((submitted_by, "submission"))
     parts: dict[str, list[str]] = {}

@@ -60,6 +60,9 @@ def _inputs(view: View, step: RouteStep, row: StepRow) -> Iterator[InputShown]:
     for asked in step.inputs:
         if asked.name in given and asked.kind != "reading":
             answer = given[asked.name]
+            if asked.kind == "photo":
+                yield InputShown(prompt=asked.prompt, typed=answer.typed, photo=answer.id)
+                continue
             means = _label(view, asked.kind, answer.id) if answer.id else ""
             yield InputShown(prompt=asked.prompt, typed=answer.typed, means=means)
 

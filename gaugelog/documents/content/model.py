@@ -17,7 +17,13 @@ from gaugelog.documents.content.installation import (
     GridShown,
     PointShown,
 )
-from gaugelog.documents.content.workdone import AmendsShown, ReadingShown, StepShown, TurnShown
+from gaugelog.documents.content.workdone import (
+    AmendsShown,
+    PhotoShown,
+    ReadingShown,
+    StepShown,
+    TurnShown,
+)
 from gaugelog.ledger.base import DateText, DecimalText, Id, Quantity, TimeText
 from gaugelog.ledger.instruments import InstrumentRange
 from gaugelog.ledger.people import Qualification
@@ -136,7 +142,7 @@ class PersonShown(Shown):
     roles: tuple[str, ...]
     qualifications: tuple[Qualification, ...] = ()
     part: tuple[str, ...] = ()
-    """What they did: `steps`, `readings`, `holds`, `story`, `submission`."""
+    """What they did: `steps`, `readings`, `holds`, `story`, `photos`, `submission`."""
 
 
 class SigningShown(Shown):
@@ -169,6 +175,8 @@ class RecordContent(Shown):
     route: RouteShown
     steps: tuple[StepShown, ...]
     readings: tuple[ReadingShown, ...]
+    photos: tuple[PhotoShown, ...] = ()
+    """In the order in which the page numbers them."""
     budget: BudgetShown | None = None
     story: tuple[TurnShown, ...] = ()
     """How the record came about, where that took more than one go."""

@@ -17,6 +17,8 @@ class InputShown(Shown):
     typed: str
     means: str = ""
     """Label of the gauge, consumable or instrument meant, where it is not as typed."""
+    photo: Id | None = None
+    """The photo that was given; one of the record's."""
 
 
 class StepShown(Shown):
@@ -63,6 +65,33 @@ class TurnShown(Shown):
     """Title of the step it concerns or goes back to."""
     by: Id
     reason: str = ""
+
+
+class PhotoShown(Shown):
+    """A photo as it was given; the record shows a smaller copy without the camera's data."""
+
+    id: Id
+    step: str = ""
+    """Title of the step that it shows; empty for the point as a whole."""
+    subject: str = ""
+    """Label of the grid or circuit."""
+    readings: tuple[Id, ...] = ()
+    """The readings that it was given with."""
+    earlier_gauge: str = ""
+    """Label of the piece that it shows, where that is not the one in place now."""
+    name: str
+    format: str
+    width: int
+    """Pixels of the original as its file has them, before it is turned upright."""
+    height: int
+    size: int
+    """Bytes of the original."""
+    sha256: str
+    """Of the original, which stays with who keeps the logbook."""
+    note: str = ""
+    observed_at: TimeText
+    kept_by: Id
+    entered_at: TimeText
 
 
 class ReadingShown(Shown):
