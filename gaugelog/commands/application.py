@@ -13,6 +13,7 @@ from gaugelog.commands import (
     backup,
     calc,
     demo,
+    diagnose,
     disposition,
     doctor,
     instrument,
@@ -81,6 +82,7 @@ _GROUPS: dict[str, typer.Typer] = {
 _AT_WORK: dict[str, Callable[..., None]] = {
     "install": screen.install,
     "review": screen.review,
+    "diagnose": diagnose.diagnose,
     "submit": review.submit,
     "accept": review.accept,
     "return": review.give_back,

@@ -10,7 +10,7 @@ from gaugelog.physics.defects import Defect, found
 from gaugelog.physics.network import Network, Resistor
 from gaugelog.physics.pin_fit import Figures, Fit, fit, model
 from gaugelog.physics.pin_network import ARTICLE, SHIELD, pin_network, pins_of
-from gaugelog.physics.suspects import LEAST, Suspect, suspects
+from gaugelog.physics.suspects import CEILING, LEAST, Suspect, suspects
 from gaugelog.physics.transfer import Array, Transfer, solve
 
 APART = 3.0
@@ -96,7 +96,7 @@ def ranked(bench: Bench, figures: Figures) -> list[Trial]:
     trials = [_trial(bench, result, place) for place in range(len(bench.suspected))]
     worth = trials[0].misfit + SIZE_COST - LEAST_GAIN
     kept = [each for each in trials if not each.suspect.sized or each.misfit < worth]
-    return sorted(kept, key=lambda each: each.misfit)
+    return sorted((each for each in kept if not _is_open(each)), key=lambda each: each.misfit)
 
 
 def grouped(trials: Sequence[Trial], figures: Figures) -> list[list[Trial]]:
@@ -114,6 +114,12 @@ def grouped(trials: Sequence[Trial], figures: Figures) -> list[list[Trial]]:
         left = [each for each, same in zip(left, np.logical_not(alike), strict=True) if same]
     # Where nothing need be wrong, that is said first, whatever the noise favours.
     return [sorted(group, key=lambda each: each.defect.kind != "nothing") for group in groups]
+
+
+def _is_open(trial: Trial) -> bool:
+    """Whether a joint adds so much that it is the open circuit, which is a suspect of its own."""
+    size = trial.defect.size
+    return trial.defect.kind == "joint" and size is not None and size > CEILING / 2
 
 
 def _trial(bench: Bench, result: Fit, place: int) -> Trial:

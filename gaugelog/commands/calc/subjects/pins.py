@@ -21,17 +21,7 @@ from gaugelog.physics.circuit import Circuit, circuit_of
 from gaugelog.physics.network import resistance_between
 from gaugelog.physics.pin_network import ARTICLE, SHIELD
 from gaugelog.physics.pin_next import RIVAL
-
-_MEANINGS = {
-    "nothing": "the wiring reads as planned",
-    "open": "no current passes: a broken wire, a lifted tab or a joint that never took",
-    "missing completion": "the completion resistor is absent or not switched in",
-    "short": "two parts touch: bare wires, a solder bridge or a crushed cable",
-    "leak": "damp, flux or damaged insulation conducts between them",
-    "wrong value": "another gauge or resistor than the planned one is fitted there",
-    "joint": "a cold or corroded joint, or a loose contact, adds resistance",
-    "swapped": "these wires have changed places at one end",
-}
+from gaugelog.rules.pinwork import MEANINGS
 
 
 def _compute(values: Values) -> Answer:
@@ -95,7 +85,7 @@ def _expected(sheet: Sheet, circuit: Circuit, between: tuple[str, str], plugged:
 def _answer(sheet: Sheet, name: str, answer: pins.Answer, behind: str) -> None:
     kinds = dict.fromkeys(defect.kind for defect in answer.defects)
     sheet.put(name, answer.sentence + behind)
-    sheet.put(f"{name} means", "; or ".join(_MEANINGS[kind] for kind in kinds))
+    sheet.put(f"{name} means", "; or ".join(MEANINGS[kind] for kind in kinds))
     sheet.put(f"{name} misfit", f"{answer.misfit:.3g}")
 
 
