@@ -80,7 +80,7 @@ def test_the_readmes_job_runs_as_it_is_written(
     monkeypatch.chdir(tmp_path)
     job = README[README.index("## A job from start") : README.index("and so on, step by step")]
     lines = re.findall(r"^    gaugelog (.+?)(?:\s{2,}#.*)?$", job, re.MULTILINE)
-    assert len(lines) == 14
+    assert len(lines) == 15
     for line in lines:
         words = shlex.split(line)
         asks = "--as" in words or words[0] == "start"
