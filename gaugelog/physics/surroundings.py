@@ -7,6 +7,7 @@ holds over water, from −45 to 60 °C.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from math import ceil
 
 from gaugelog.physics._maths import Number, exp, log, nominal
 from gaugelog.physics._order import any_of
@@ -93,19 +94,25 @@ def dew_point_notices(celsius: Number) -> tuple[Notice, ...]:
     return (Notice("dew point", message, MAGNUS_SOURCE),)
 
 
-def window_troubles(window: Window, celsius: float, humidity: float) -> tuple[str, ...]:
+def window_troubles(
+    window: Window, celsius: float | None, humidity: float | None
+) -> tuple[str, ...]:
     """Every way in which the air lies outside a window; nothing when work may go on.
 
-    Units: °C and ratio. Source: the consumable's own sheet; that it rules is common practice.
+    Units: °C and ratio; None is not measured, and only what is measured is judged.
+    Source: the consumable's own sheet; that it rules is common practice.
 
     >>> window_troubles(Window(dampest=0.65), 23.0, 0.7)
     ('The relative humidity of 70 % is above the 65 % allowed.',)
     """
-    finite("celsius", celsius)
-    between("humidity", humidity, 0.0, 1.0)
-    heat = _outside("temperature", celsius, window.coldest, window.hottest, "°C")
-    damp = _outside("relative humidity", humidity, window.driest, window.dampest, "%")
-    return heat + damp
+    troubles: tuple[str, ...] = ()
+    if celsius is not None:
+        finite("celsius", celsius)
+        troubles += _outside("temperature", celsius, window.coldest, window.hottest, "°C")
+    if humidity is not None:
+        between("humidity", humidity, 0.0, 1.0)
+        troubles += _outside("relative humidity", humidity, window.driest, window.dampest, "%")
+    return troubles
 
 
 def dew_troubles(
@@ -113,14 +120,23 @@ def dew_troubles(
 ) -> tuple[str, ...]:
     """Says so when a surface is too near the dew point to bond or coat on.
 
-    `least` is the distance asked for, kelvin. Source: ISO 8502-4; 3 K is common practice.
+    `least` is the distance asked for, kelvin; the temperature it asks of the surface is told,
+    rounded up. Source: ISO 8502-4; 3 K is common practice.
     """
-    margin = dew_margin(surface_celsius, air_celsius, humidity)
+    margin = float(dew_margin(surface_celsius, air_celsius, humidity))
     if margin >= least:
         return ()
+    dew = surface_celsius - margin
+    needed = f"it needs at least {ceil((dew + least) * 10) / 10:.1f} °C"
     if margin <= 0:
-        return (f"The surface lies {-margin:.1f} K below the dew point: it is wet.",)
-    return (f"The surface lies {margin:.1f} K above the dew point; {least:g} K are asked for.",)
+        return (
+            f"The surface lies {-margin:.1f} K below the dew point of {dew:.1f} °C: it is wet; "
+            f"{needed}.",
+        )
+    return (
+        f"The surface lies {margin:.1f} K above the dew point of {dew:.1f} °C; {least:g} K are "
+        f"asked for: {needed}.",
+    )
 
 
 def _outside(

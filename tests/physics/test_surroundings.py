@@ -49,7 +49,7 @@ def test_a_surface_as_warm_as_the_air_lies_above_the_dew_point_by_the_spread() -
 def test_a_cold_surface_in_damp_air_is_called_wet() -> None:
     assert () == dew_troubles(20.0, 20.0, 0.5)
     assert "3 K are asked for" in dew_troubles(11.0, 20.0, 0.5)[0]
-    assert "4.3 K below the dew point: it is wet" in dew_troubles(5.0, 20.0, 0.5)[0]
+    assert "4.3 K below the dew point of 9.3 °C: it is wet" in dew_troubles(5.0, 20.0, 0.5)[0]
 
 
 def test_each_side_of_a_window_is_named() -> None:

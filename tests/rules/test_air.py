@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import pytest
+
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.routes import AIR, HUMIDITY, SURFACE, RouteStep, StepInput
 from gaugelog.ledger.stock import ConsumableReceived
@@ -58,6 +60,27 @@ def test_air_outside_the_adhesives_window_is_refused() -> None:
     )
     told = air_troubles(STEP, _entered("20", "70", "24"), (lot,))
     assert told == ("AD-1: The relative humidity of 70 % is above the 65 % allowed.",)
+
+
+@pytest.mark.parametrize("missing", ["damp", "steel"])
+def test_the_lots_temperature_is_judged_though_the_rest_was_not_entered(missing: str) -> None:
+    lot = _adhesive(temperature_max=Quantity(value="35", unit="degC"))
+    entered = {**_entered("39", "50", "38")}
+    del entered[missing]
+    told = air_troubles(STEP, entered, (lot,))
+    assert ("AD-1: The temperature of 39 °C is above the 35 °C allowed.",) == told
+
+
+def test_the_lots_humidity_is_judged_though_the_air_was_not_entered() -> None:
+    lot = _adhesive(humidity_max=Quantity(value="65", unit="%RH"))
+    told = air_troubles(STEP, {"damp": Quantity(value="70", unit="%RH")}, (lot,))
+    assert ("AD-1: The relative humidity of 70 % is above the 65 % allowed.",) == told
+
+
+def test_a_wet_surface_is_told_with_what_it_needs() -> None:
+    (told,) = air_troubles(STEP, _entered("20", "80", "15"), ())
+    assert "below the dew point of 16.4 °C: it is wet; it needs at least 19.5 °C" in told
+    assert "ISO 8502-4" in told
 
 
 def test_a_step_that_asks_for_no_air_is_never_refused_for_it() -> None:
