@@ -4,12 +4,13 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
+from gaugelog.errors import Refused
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.campaign import CampaignPlanned, CampaignRow
 from gaugelog.ledger.points import PointPlanned
 from gaugelog.ledger.routes import AXIS, PLACE_X, PLACE_Y, RouteStep
 from gaugelog.ledger.view import View
-from gaugelog.physics.placement import misalignment_error
+from gaugelog.physics.placement import axis_error, misalignment_error
 
 SOURCE = "Mohr's circle of uniaxial stress; Timoshenko and Goodier (from memory)"
 
@@ -31,7 +32,7 @@ def placed_troubles(
     return tuple(
         f"The {name} is {given[name]}, planned {aim} ± {tolerance}."
         for name, aim, tolerance in wanted
-        if name in given and _off(given[name], aim) > tolerance.si() * (1 + 1e-9)
+        if name in given and abs(_off(name, given[name], aim)) > tolerance.si() * (1 + 1e-9)
     )
 
 
@@ -43,7 +44,7 @@ def axis_effect(
     For uniaxial stress along the planned axis. Empty where no axis was entered or it is as planned.
     """
     off = [
-        entered[item.name].si() - planned.place.angle.si()
+        _off(AXIS, entered[item.name], planned.place.angle)
         for item in step.inputs
         if item.type == AXIS and item.name in entered
     ]
@@ -59,12 +60,17 @@ def axis_effect(
 
 
 def poisson_at(view: View, planned: PointPlanned) -> float:
-    """Poisson's ratio of the article a point lies on."""
+    """Poisson's ratio of the article a point lies on. Raises Refused when it is not known."""
     campaign = view.get(CampaignRow, planned.campaign)
     articles = CampaignPlanned.model_validate_json(campaign.data).articles if campaign else ()
     found = [each.material.poisson_ratio.si() for each in articles if each.id == planned.article]
-    return found[0] if found else 0.3
+    if not found:
+        raise Refused(f"The article of {planned.label} is not known.", "Check the journal.")
+    return found[0]
 
 
-def _off(found: Quantity, aim: Quantity) -> float:
-    return abs(found.si() - aim.si())
+def _off(name: str, found: Quantity, aim: Quantity) -> float:
+    """How far off it lies, SI unit; an axis has no head and no tail, so half a turn is none."""
+    if name == AXIS:
+        return float(axis_error(found.si(), aim.si()))
+    return found.si() - aim.si()

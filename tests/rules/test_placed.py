@@ -50,6 +50,29 @@ def test_the_effect_of_the_axis_is_told_in_micrometres_per_metre() -> None:
     assert "axis +5° off: -0.99 µm/m at 100 µm/m" in effect
 
 
-@pytest.mark.parametrize("axis", ["0", "0.0"])
+@pytest.mark.parametrize(
+    ("axis", "planned", "told"),
+    [
+        ("180", "0", 0),
+        ("181", "0", 0),
+        ("-179", "0", 0),
+        ("-89", "90", 0),
+        ("359", "0", 0),
+        ("177", "0", 1),
+        ("90", "0", 1),
+    ],
+)
+def test_an_axis_has_no_head_and_no_tail(axis: str, planned: str, told: int) -> None:
+    place = POINT.place.model_copy(update={"angle": Quantity(value=planned, unit="deg")})
+    point = POINT.model_copy(update={"place": place})
+    assert told == len(placed_troubles(STEP, _entered("0", "0", axis), point))
+
+
+def test_the_effect_of_an_axis_counts_from_the_nearer_end() -> None:
+    effect = axis_effect(STEP, _entered("0", "0", "185"), POINT, 0.3)
+    assert "axis +5° off: -0.99 µm/m at 100 µm/m" in effect
+
+
+@pytest.mark.parametrize("axis", ["0", "0.0", "180"])
 def test_an_axis_as_planned_has_no_effect_to_tell(axis: str) -> None:
     assert axis_effect(STEP, _entered("0", "0", axis), POINT, 0.3) == ""

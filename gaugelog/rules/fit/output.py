@@ -31,7 +31,10 @@ def _range(
 ) -> Iterator[PlanFinding]:
     points = plan.points_of(circuit)
     article = plan.article_of(points[0])
-    poisson = article.material.poisson_ratio.si() if article is not None else 0.3
+    if article is None:
+        yield PlanFinding("refusal", circuit.label, "the article of its first point is not known")
+        return
+    poisson = article.material.poisson_ratio.si()
     strains = [value.si() for point in points for value in (point.strain_min, point.strain_max)]
     factor = plan.factor_of(circuit) or lot.grids[0].gauge_factor.si()
     outputs = [
