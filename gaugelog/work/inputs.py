@@ -15,7 +15,7 @@ from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered
-from gaugelog.ledger.stock import ConsumableReceived, LotRow
+from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.barred import why_barred, why_gauge_barred
 
@@ -102,12 +102,21 @@ def _gauge(asked: Asked, item: StepInput, text: str, where: str, found: Understo
     if gauge.state != "on shelf" and gauge.id != asked.point.gauge:
         raise _fault(f"{gauge.label} is {gauge.state}.", "Take one from the shelf.")
     _demand_free(why_gauge_barred(asked.view, gauge))
+    _demand_in_date(asked, gauge.lot)
     found.entered[item.name] = Entered(typed=text, id=gauge.id)
 
 
 def _demand_free(barred: str) -> None:
     if barred:
         raise _fault(f"{barred.rstrip('.')}.", "Take another, or have it freed.")
+
+
+def _demand_in_date(asked: Asked, lot: str) -> None:
+    """A gauge may be bonded on the last day its lot names, and no later."""
+    row = asked.view.get(LotRow, lot)
+    expires = LotReceived.model_validate_json(row.data).expires if row is not None else None
+    if row is not None and expires and date.fromisoformat(expires) < asked.day:
+        raise _fault(f"{row.label} expired on {expires}.", "Take a lot that is in date.")
 
 
 def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:
@@ -119,6 +128,8 @@ def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Und
     if lot.expires and date.fromisoformat(lot.expires) < asked.day:
         raise _fault(f"{lot.label} expired on {lot.expires}.", "Take a lot that is in date.")
     _demand_free(why_barred(asked.view, lot.id))
+    if lot.type == "adhesive":
+        _demand_in_date(asked, asked.point.lot)
     found.entered[item.name] = Entered(typed=text, id=lot.id)
     found.consumables.append(ConsumableReceived.model_validate_json(lot.data))
 

@@ -92,7 +92,7 @@ def _demand_plain_names(facts: PlanFacts) -> None:
 def check(logbook: Logbook) -> list[PlanFinding]:
     """Everything found about the plan: ok, warning or refusal, each with figure and source."""
     with logbook.storage.reading() as reader, _as_drafted(reader.connection) as (view, campaign):
-        return check_plan(view, campaign)
+        return check_plan(view, campaign, logbook.clock.now().local.date())
 
 
 @contextmanager
@@ -120,7 +120,7 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
         if before.state == "released" and drafted(deed.view, before) is None:
             raise Refused(f"Revision {before.revision} is released already.")
         with _as_drafted(deed.writer.connection) as (view, campaign):
-            findings = check_plan(view, campaign)
+            findings = check_plan(view, campaign, deed.moment.local.date())
             points = [row.id for row in view.all(PointRow)]
         refused = [finding for finding in findings if finding.level == "refusal"]
         if refused:

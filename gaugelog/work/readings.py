@@ -26,6 +26,7 @@ from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.plausible import demand_plausible
 from gaugelog.rules.predicted import Expected, judge_prediction
 from gaugelog.rules.verdicts import Judged, Taken, judge_change, judge_value
+from gaugelog.rules.voltage import range_within, voltage_bounds
 from gaugelog.rules.wired import planned_circuit, wired
 
 RECEIVED = "received"
@@ -56,7 +57,8 @@ def reading_taken(
     where = f"point {seen.point.label}, step {seen.step.id}, {check}"
     basis = _basis(seen, gauge)
     demand_plausible(check, typed.quantity, basis.lot, where)
-    span = range_for(instrument, check, typed.quantity, typed.qualifier)
+    bounds = voltage_bounds(basis, check, seen.step.stage)
+    span = range_within(bounds, instrument, check, typed.quantity, typed.qualifier)
     taken = Taken(typed.quantity, typed.qualifier, span)
     earlier = _latest(seen, check, seen.step.stage)
     if earlier is not None and not seen.reason.strip():

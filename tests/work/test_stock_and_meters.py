@@ -10,9 +10,10 @@ from gaugelog.errors import Faulty, Refused
 from gaugelog.intake.instruments import load_instruments
 from gaugelog.intake.stock import load_stock
 from gaugelog.journal.ids import new_id
+from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
-from gaugelog.work import instruments, stock
+from gaugelog.work import instruments, plan, steps, stock
 from tests.work.job import DEMO, Job
 from tests.work.walking import typed_here, walk_to
 
@@ -140,6 +141,47 @@ def test_a_value_beyond_every_range_of_the_meter_is_refused(job: Job) -> None:
     with pytest.raises(Faulty) as caught:
         job.do("t.okoro", {**typed_here(job)[1], "insulation": ">50 GΩ"})
     assert "has no range that reaches 50 GΩ" in _faults(caught)
+
+
+def test_a_tester_with_too_high_a_voltage_is_refused_at_the_step(job: Job) -> None:
+    meters = load_instruments(DEMO / "instruments.toml", new_id=new_id)
+    tester = next(each for each in meters if each.label == "IT-5")
+    ranges = tuple(
+        each.model_copy(update={"test_voltage": Quantity(value="500", unit="V")})
+        for each in tester.ranges
+    )
+    harsh = tester.model_copy(update={"id": new_id(), "label": "IT-500", "ranges": ranges})
+    instruments.add(job.book, job.keys["c.ward"], [harsh])
+    walk_to(job, "insulation")
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", {**typed_here(job)[1], "tester": "IT-500"})
+    assert "tests at 500 V; lot L-3504 allows 50 V at most" in _faults(caught)
+    assert job.do("t.okoro", typed_here(job)[1]).settled
+
+
+@pytest.mark.parametrize("step", ["gauge", "bond"])
+def test_a_gauge_of_an_expired_lot_is_refused(job: Job, step: str) -> None:
+    walk_to(job, step)
+    job.clock.advance(3 * 365 * 86400)  # past the lot's last day, 2029-09-01
+    anew = [_meter(calibrated_on="2029-06-01", due="2030-06-01")]
+    instruments.add(job.book, job.keys["c.ward"], anew)
+    stock.receive(job.book, job.keys["c.ward"], Delivery((), (_consumable("AD-3", expires=None),)))
+    if step == "bond":
+        steps.redo(job.book, job.keys["t.okoro"], point="FB-1", step="condition", reason="late")
+        job.do("t.okoro", {"clean": "yes"})
+    typed = typed_here(job)[1]
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", {**typed, **({"adhesive": "AD-3"} if "adhesive" in typed else {})})
+    assert ["L-3504 expired on 2029-09-01."] == [fault.what for fault in caught.value.faults]
+
+
+def test_the_plan_check_refuses_a_lot_that_has_expired(job: Job) -> None:
+    assert not [each for each in plan.check(job.book) if "expired" in each.figure]
+    job.clock.advance(3 * 365 * 86400)
+    found = [each for each in plan.check(job.book) if "expired" in each.figure]
+    assert [("refusal", "lot L-3504", "expired on 2029-09-01")] == [
+        (each.level, each.subject, each.figure) for each in found
+    ]
 
 
 def test_a_reviewer_alone_receives_nothing_and_adds_no_meter(job: Job) -> None:

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from datetime import date
+
 from gaugelog.ledger.campaign import CampaignRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.fit.arrangement import arrangement_findings
@@ -22,7 +24,6 @@ __all__ = ["Level", "PlanFinding", "check_plan"]
 
 _SUBJECTS = (
     point_findings,
-    stock_findings,
     wiring_findings,
     arrangement_findings,
     dummy_findings,
@@ -36,8 +37,12 @@ _SUBJECTS = (
 _ORDER: dict[Level, int] = {"refusal": 0, "warning": 1, "ok": 2}
 
 
-def check_plan(view: View, campaign: CampaignRow) -> list[PlanFinding]:
-    """Everything found about a plan: refusals first, then warnings, then what is well."""
+def check_plan(view: View, campaign: CampaignRow, day: date) -> list[PlanFinding]:
+    """Everything found about a plan: refusals first, then warnings, then what is well.
+
+    `day` is the day it is looked at: a lot may have expired by then.
+    """
     plan = Plan(view, campaign)
     found = [finding for subject in _SUBJECTS for finding in subject(plan)]
+    found += stock_findings(plan, day)
     return sorted(found, key=lambda finding: _ORDER[finding.level])
