@@ -95,7 +95,7 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
                 name,
                 ", ".join(json_library.loads(row.roles)),
                 "; ".join(_qualification(item) for item in json_library.loads(row.qualifications)),
-                "active" if row.active else "left",
+                "active" if row.active else "revoked",
             ]
             for row, name in people
         ],

@@ -42,14 +42,18 @@ def next_(
         return
     put_table(
         "Worklist",
-        ["point", "zone", "state", "next step", "blocked by"],
-        [[row.point, row.zone, row.state, row.title, " ".join(row.blocks)] for row in rows],
+        ["point", "zone", "state", "next step", "sent back, blocked by"],
+        [
+            [row.point, row.zone, row.state, row.title, " ".join([*row.sent_back, *row.blocks])]
+            for row in rows
+        ],
         empty="No plan is released. Try: gaugelog plan release",
     )
 
 
 def _tell_step(found: NextStep) -> None:
     put(f"{found.point}, zone {found.zone}: {found.state}")
+    put(*(line for told in found.sent_back for line in _wrapped(told, "SENT BACK: ")))
     if found.step is None:
         put(*found.blocks)
         if found.title != "none":
@@ -112,7 +116,10 @@ def do(
         typer.Argument(metavar="NAME=VALUE…", help='What to enter: resistance="350.4 ohm".'),
     ] = None,
     note: Annotated[str, typer.Option(help="A remark kept with the step.")] = "",
-    reason: Annotated[str, typer.Option(help="Why a reading is taken again.")] = "",
+    reason: Annotated[
+        str,
+        typer.Option(help="Why a reading is taken again, or why --at lies before an earlier step."),
+    ] = "",
     refuse: Annotated[
         str | None, typer.Option(help="At a hold: refuse with this reason instead of releasing.")
     ] = None,
@@ -134,7 +141,7 @@ def do(
         typed.update(_ask_missing(found, typed))
     if refuse is not None and not refuse.strip():
         raise Faulty([Fault("--refuse", "is empty.", "Say why the hold is refused.")])
-    steps.rehearse(logbook, point=point, typed=typed, at=at)
+    steps.rehearse(logbook, point=point, typed=typed, at=at, reason=reason)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=_purpose(found))
     outcome = steps.do(
         logbook,

@@ -90,6 +90,8 @@ def plain_environment(lettering: Lettering) -> Environment:
         judged=wording.judged,
         expanded=wording.expanded,
         probability=wording.probability,
+        rule=wording.rule,
+        told_apart=wording.told_apart,
         bound=wording.bound,
         window=_window,
         mood=lambda word: _MOODS.get(word, "plain"),

@@ -6,10 +6,11 @@ from dataclasses import dataclass
 from datetime import datetime, timedelta, timezone
 from decimal import ROUND_HALF_EVEN, ROUND_UP, Decimal
 
-from gaugelog.documents.content.workdone import ReadingShown
+from gaugelog.documents.content.workdone import InputShown, ReadingShown
 from gaugelog.ledger.base import SYMBOLS, Quantity
-from gaugelog.ledger.readings import LimitFound
+from gaugelog.ledger.readings import LimitFound, Verdict
 from gaugelog.ledger.routes import Window
+from gaugelog.rules.digits import probability_text
 
 _MINUS = "−"
 _THIN = "\u202f"
@@ -90,14 +91,24 @@ def judged(reading: ReadingShown) -> str:
 def probability(reading: ReadingShown) -> str:
     """The probability of conformance to three decimals; never rounded up to certainty."""
     text = reading.verdict.probability
-    if text is None:
-        return "–"
-    value = Decimal(text)
-    if value > Decimal("0.9995"):
-        return ">\u00a00.999"
-    if value < Decimal("0.0005"):
-        return "<\u00a00.001"
-    return format(value.quantize(Decimal("0.001"), ROUND_HALF_EVEN), "f")
+    return "–" if text is None else probability_text(text).replace(" ", "\u00a0")
+
+
+def rule(verdict: Verdict) -> str:
+    """What judged a reading, for whoever asks years later: the rule by its name and version."""
+    name, _, version = verdict.rule.rpartition(" ")
+    return f"Judged by this program's rule for {name}, version {version}."
+
+
+def told_apart(entered: InputShown) -> str:
+    """What an answer means beyond what was typed; empty where nothing is left to say.
+
+    A lot typed by its label is not told by its label again.
+    """
+    typed, means = entered.typed.strip(), entered.means
+    if means.startswith(f"{typed}, "):
+        return means[len(typed) + 2 :]
+    return "" if means == typed else means
 
 
 def bound(limit: LimitFound) -> str:

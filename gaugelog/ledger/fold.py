@@ -146,7 +146,7 @@ def fold(entries: Iterable[Entry], *, one_chain: bool = False) -> Buffer:
 def _unfoldable(entry: Entry, error: Exception) -> StorageTrouble:
     """What an entry says can't be followed: a newer program's, or bytes that were altered."""
     try:
-        place = f"Entry {entry.header.seq}, a {entry.header.kind},"
+        place = f"Entry {entry.header.seq} ({entry.header.kind})"
     except GaugelogError:
         place = "An entry whose header can't be read"
     first = str(error).splitlines()[0] if str(error) else type(error).__name__

@@ -57,7 +57,7 @@ class Circuit:
         if odd:
             raise OutOfDomain(
                 "wires",
-                f"of a {self.layout.name} circuit must be {', '.join(self.layout.wires)}; "
+                f"of circuit {self.layout.name} must be {', '.join(self.layout.wires)}; "
                 f"{', '.join(sorted(odd))} does not fit.",
             )
         for pin, resistance in self.wires.items():

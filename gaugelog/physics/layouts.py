@@ -134,5 +134,5 @@ def layout_for(name: str, wires: int) -> Layout:
         fitting = {len(LAYOUTS[name].wires): LAYOUTS[name]}
     if wires not in fitting:
         counts = " or ".join(str(count) for count in sorted(fitting))
-        raise OutOfDomain("wires", f"of a {name} circuit must number {counts}, not {wires}.")
+        raise OutOfDomain("wires", f"of circuit {name} must number {counts}, not {wires}.")
     return fitting[wires]

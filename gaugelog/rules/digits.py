@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from decimal import Decimal
+from decimal import ROUND_HALF_EVEN, Decimal
 
 from gaugelog.ledger.base import UNITS, Quantity
 
@@ -25,6 +25,20 @@ def decimal_text(value: float, digits: int = DIGITS) -> str:
     if "e" not in text:
         return text
     return format(Decimal(text), "f") if 1e-9 < abs(value) < 1e15 else text
+
+
+def probability_text(text: str, places: int = 3) -> str:
+    """A probability (decimal text) to so many places; never rounded to certainty.
+
+    >>> probability_text("4.8e-33"), probability_text("0.94163"), probability_text("1")
+    ('< 0.001', '0.942', '> 0.999')
+    """
+    value, step = Decimal(text), Decimal(1).scaleb(-places)
+    if value >= 1 - step / 2:
+        return f"> {1 - step}"
+    if value <= step / 2:
+        return f"< {step}"
+    return format(value.quantize(step, ROUND_HALF_EVEN), "f")
 
 
 def quantity(value_si: float, unit: str, digits: int = DIGITS) -> Quantity:

@@ -123,7 +123,7 @@ def _loop(known: Expected, taken: Taken, least: float) -> _Comparison:
     layout = known.wired.circuit.layout
     if len(set(layout.wires.values())) == len(layout.wires):
         raise Refused(
-            f"In a {known.planned.arrangement} circuit on {len(layout.wires)} wires no two wires "
+            f"In circuit {known.planned.arrangement} on {len(layout.wires)} wires no two wires "
             "end at one tab, so there is no loop of wires alone.",
             "Skip the step with that reason.",
         )

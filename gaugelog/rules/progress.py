@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import json
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from datetime import datetime
 
 from gaugelog.errors import Refused
@@ -20,6 +20,7 @@ from gaugelog.ledger.view import View
 from gaugelog.physics.validity import OutOfDomain
 from gaugelog.rules.barred import why_place_barred
 from gaugelog.rules.cure import cured
+from gaugelog.rules.sentback import sent_back
 from gaugelog.rules.waiting import waits_for
 from gaugelog.rules.windows import WindowFound, judge_window
 
@@ -59,6 +60,8 @@ class NextStep:
     """A reading of this step was kept and blocks: measuring again needs a reason."""
     facts: tuple[str, ...] = ()
     """What the plan says that the step needs."""
+    sent_back: tuple[str, ...] = ()
+    """Why work was sent back, until that is dealt with."""
 
     @property
     def title(self) -> str:
@@ -98,10 +101,15 @@ def route_for(view: View, point: PointRow) -> RouteAdopted:
 def next_step(
     view: View, point: PointRow, now: Moment, observed: datetime | None = None
 ) -> NextStep:
-    """The next step of a point, with its windows and what blocks it.
+    """The next step of a point, with its windows, what blocks it, and why it was sent back.
 
     `observed` is when the step was done, UTC, if not now.
     """
+    found = _standing(view, point, now, observed)
+    return replace(found, sent_back=tuple(sent_back(view, point, now)))
+
+
+def _standing(view: View, point: PointRow, now: Moment, observed: datetime | None) -> NextStep:
     count = len(route_for(view, point).steps)
     state = state_of(view, point)
     found = open_step(view.known(), point.model_dump())

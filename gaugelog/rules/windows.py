@@ -31,7 +31,7 @@ def judge_window(
         return WindowFound(
             True, False, f"The clock was set since “{title}”; this window is not judged."
         )
-    start = _time(earlier.observed_at)
+    start = time_of(earlier.observed_at)
     bound = start + timedelta(seconds=window.duration.si())
     if window.bound == "not before":
         return _not_before(title, observed, bound, now)
@@ -40,12 +40,14 @@ def judge_window(
 
 def clock_jumped(earlier: StepRow, now: Moment) -> bool:
     """Whether the clock was set between an entry and `now` (see `clock.jump_between`)."""
-    entered = Moment(_time(earlier.entered_at), now.offset_minutes, earlier.boot, earlier.uptime_ms)
+    entered = Moment(
+        time_of(earlier.entered_at), now.offset_minutes, earlier.boot, earlier.uptime_ms
+    )
     return jump_between(entered, now) is not None
 
 
 def _not_before(title: str, observed: datetime, bound: datetime, now: Moment) -> WindowFound:
-    when = f"not before {_local(bound, now)} after “{title}”"
+    when = f"not before {local_text(bound, now)} after “{title}”"
     if observed >= bound:
         return WindowFound(True, True, f"{when}: reached")
     return WindowFound(False, True, f"{when}: {_minutes(bound - observed)} to wait")
@@ -54,19 +56,21 @@ def _not_before(title: str, observed: datetime, bound: datetime, now: Moment) ->
 def _within(
     window: Window, title: str, start: datetime, observed: datetime, bound: datetime, now: Moment
 ) -> WindowFound:
-    when = f"within {window.duration} of “{title}”, until {_local(bound, now)}"
-    if start <= observed <= bound:
+    when = f"within {window.duration} of “{title}”, until {local_text(bound, now)}"
+    if start.replace(second=0) <= observed <= bound:  # people give times to the minute
         return WindowFound(True, True, f"{when}: {_minutes(bound - observed)} left")
-    if observed < start:
-        return WindowFound(False, True, f"{when}: the time given lies before that step")
-    return WindowFound(False, True, f"{when}: over since {_minutes(observed - bound)}")
+    if observed > bound:
+        return WindowFound(False, True, f"{when}: {_minutes(observed - bound)} too late")
+    return WindowFound(False, True, f"{when}: the time given lies before that step")
 
 
-def _time(text: str) -> datetime:
+def time_of(text: str) -> datetime:
+    """The UTC time that a fact carries as text."""
     return datetime.fromisoformat(text.replace("Z", "+00:00")).astimezone(UTC)
 
 
-def _local(when: datetime, now: Moment) -> str:
+def local_text(when: datetime, now: Moment) -> str:
+    """A UTC time as this machine's clock shows it, to the minute."""
     return f"{when + timedelta(minutes=now.offset_minutes):%Y-%m-%d %H:%M}"
 
 

@@ -50,13 +50,17 @@ def shown(readings: Sequence[ReadingTaken]) -> tuple[ReadingShown, ...]:
 
 @dataclass(frozen=True, slots=True)
 class Doing:
-    """A step in hand: the deed it is done in, the point, how far it is, when it was observed."""
+    """A step in hand: the deed it is done in, the point, how far it is, when it was observed.
+
+    `order` says that it was observed before a step that it follows, and why; mostly empty.
+    """
 
     making: Deed
     row: PointRow
     found: NextStep
     step: RouteStep
     observed: datetime
+    order: str = ""
 
     @property
     def day(self) -> date:

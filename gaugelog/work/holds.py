@@ -30,7 +30,7 @@ def decide(doing: Doing, typed: Mapping[str, str], note: str, refuse: str) -> St
         subject=doing.found.subject,
         step=step.id,
         outcome="refused" if refuse else "released",
-        reason="; ".join(text for text in (refuse.strip(), note.strip()) if text),
+        reason="; ".join(text for text in (refuse.strip(), note.strip(), doing.order) if text),
         decided_by=person,
         observed_at=utc_text(doing.observed),
         meaning=REFUSAL_MEANING if refuse else HOLD_MEANING,

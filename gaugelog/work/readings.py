@@ -22,6 +22,7 @@ from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.accuracy import RangeTaken, range_for
+from gaugelog.rules.digits import probability_text
 from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.plausible import demand_plausible
 from gaugelog.rules.predicted import Expected, judge_prediction
@@ -103,7 +104,9 @@ def explain(reading: ReadingTaken) -> list[str]:
             f"(k = {verdict.coverage})"
         )
     if verdict.probability is not None:
-        lines.append(f"probability of conformance {verdict.probability} (flat prior)")
+        chance = probability_text(verdict.probability)
+        equals = "" if chance[0] in "<>" else "= "
+        lines.append(f"P {equals}{chance}, the probability of conformance (flat prior)")
     return [*lines, verdict.reason]
 
 

@@ -155,12 +155,18 @@ def record(logbook: Logbook, *, point: str, revision: int | None = None) -> Reco
         )
     found = rows[-1]
     file = found.accepted_file or found.submitted_file
-    signatures = "both signatures" if found.accepted_file else "one signature, not yet valid"
     return RecordFile(
         logbook.evidence.get(file),
         f"{row.label}-r{found.revision}",
-        f"revision {found.revision}, {found.state}, {signatures}; SHA-256 {file}",
+        f"revision {found.revision}, {found.state}, {_validity(found)}; SHA-256 {file}",
     )
+
+
+def _validity(found: RecordRow) -> str:
+    """What a record's signatures are worth in its state."""
+    if found.accepted_file:
+        return "both signatures"
+    return {"submitted": "one signature, not yet valid"}.get(found.state, "never valid")
 
 
 def draft(logbook: Logbook, maker: RecordMaker, *, point: str) -> RecordFile:

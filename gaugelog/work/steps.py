@@ -9,12 +9,12 @@ from functools import partial
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import PointPlanned, PointRow
-from gaugelog.ledger.progress import SETTLED
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
-from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepRow, StepSkipped
+from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepSkipped
 from gaugelog.rules.air import air_troubles
 from gaugelog.rules.facts import plan_facts
+from gaugelog.rules.order import order_flag
 from gaugelog.rules.piece import demand_one_piece
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
@@ -53,7 +53,9 @@ def next_step(logbook: Logbook, point: str) -> NextStep:
         return replace(found, facts=tuple(facts))
 
 
-def rehearse(logbook: Logbook, *, point: str, typed: Mapping[str, str], at: str = "") -> None:
+def rehearse(
+    logbook: Logbook, *, point: str, typed: Mapping[str, str], at: str = "", reason: str = ""
+) -> None:
     """Look whether a step could be done with these inputs, before anyone signs. Keeps nothing.
 
     Raises Faulty and Refused as `do` would for what is typed and for the time.
@@ -62,6 +64,7 @@ def rehearse(logbook: Logbook, *, point: str, typed: Mapping[str, str], at: str 
     with logbook.reading() as view:
         row = point_row(view, point)
         observed = observed_at(at, moment)
+        order_flag(view, row, observed, moment, reason)
         step = _open(progress(view, row, moment, observed))
         if not step.hold:
             understand(Asked(view, row, step, day_of(observed, moment)), typed)
@@ -89,20 +92,22 @@ def do(  # noqa: PLR0913 (what the person says is each its own word)
 ) -> StepOutcome:
     """Do the next step of a point; a hold is decided, by a second person.
 
-    A reading that blocks is kept by itself and the step stays open. `reason` says why a check is
-    measured again, `refuse` why a hold is refused, `at` when the step was observed, if not now;
-    `deed` is the caller's own id, so that a retry is recognised; `seen` is the step the person
-    looked at, so that nothing is kept when the point went on meanwhile. Raises Faulty with every
-    fault of the input, Refused when a rule forbids the step now.
+    A reading that blocks is kept by itself and the step stays open. `at` is when the step was
+    observed, if not now. `reason` says why a check is measured again, or why `at` lies before an
+    earlier step; `refuse` why a hold is refused. `deed` is the caller's own id, so that a retry
+    is recognised; `seen` is the step the person looked at, so that nothing is kept when the
+    point went on meanwhile. Raises Faulty with every fault of the input, Refused when a rule
+    forbids the step now.
     """
     with logbook.deed(signer, deed) as making:
         row = point_row(making.view, point)
         if making.repeated:
             return _told_again(making, row)
         observed = observed_at(at, making.moment)
+        order = order_flag(making.view, row, observed, making.moment, reason)
         found = progress(making.view, row, making.moment, observed)
         _demand_as_seen(found, seen)
-        doing = Doing(making, row, found, _open(found), observed)
+        doing = Doing(making, row, found, _open(found), observed, order)
         if doing.step.hold:
             return decide(doing, typed, note, refuse)
         if refuse:
@@ -284,7 +289,7 @@ def _each(takings: Iterable[Callable[[], ReadingTaken]]) -> list[ReadingTaken]:
 def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
     entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
     flags = [window.sentence for window in doing.found.windows if not window.judged]
-    flags += _out_of_order(doing)
+    flags += [doing.order] if doing.order else []
     flags += _axis_flag(doing, got)
     flags += [
         f"{reading.check} {reading.stage}: {reading.verdict.word}"
@@ -304,14 +309,6 @@ def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note
     used = [entry.id for entry in entered.values() if entry.id]
     concerned = about(doing.making.view, doing.row, doing.found.subject, *used)
     doing.making.keep(body, concerned)
-
-
-def _out_of_order(doing: Doing) -> list[str]:
-    """Says so when a step was observed before one that it follows; times are never mended."""
-    rows = doing.making.view.all(StepRow, point=doing.row.id)
-    when = utc_text(doing.observed)
-    later = [row for row in rows if row.outcome in SETTLED and row.observed_at > when]
-    return [f"Observed before step {later[-1].step}, which it follows."] if later else []
 
 
 def _entered_readings(

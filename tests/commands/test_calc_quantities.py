@@ -64,7 +64,7 @@ def test_a_wire_size_is_its_area() -> None:
         ("nan ohm", d.RESISTANCE, "not a number with a unit"),
         ("1,5 ohm", d.RESISTANCE, "decimal point"),
         ("1e999 ohm", d.RESISTANCE, "too large"),
-        ("28 AWG", d.LENGTH, "not a length"),
+        ("28 AWG", d.LENGTH, "wire size; length is asked for, like 3 mm"),
         ("", d.RESISTANCE, "not a number with a unit"),
         ("5 ohm; import os", d.RESISTANCE, "no unit"),
     ],

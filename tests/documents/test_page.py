@@ -34,8 +34,8 @@ def test_a_draft_is_marked_and_has_no_place_to_sign() -> None:
 
 def test_number_and_head_are_given_to_the_footers() -> None:
     page = record_html(sample())
-    assert '<div class="number">Record FB7-P1-R1</div>' in page
-    assert f'<div class="head">Journal head {HEAD}</div>' in page
+    assert 'data-number="Record FB7-P1-R1"' in page
+    assert f'data-head="Journal head {HEAD}"' in page
 
 
 def test_every_attempt_is_shown_with_its_reason() -> None:

@@ -117,4 +117,4 @@ def test_every_arrangement_is_planned_with_as_many_wires_as_it_needs(
 def test_wires_that_the_arrangement_has_no_use_for_are_told(plan: Path) -> None:
     set_cell(plan / "circuits.csv", 2, "arrangement", "half bending")
     line = refusal(plan, "wires", "2")
-    assert "of a half bending circuit must number 3 or 5, not 2." in line
+    assert "of circuit half bending must number 3 or 5, not 2." in line

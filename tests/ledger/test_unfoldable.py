@@ -42,7 +42,7 @@ def test_an_entry_that_can_not_be_followed_is_named(
     job: Job, kind: str, content: Mapping[str, JsonValue]
 ) -> None:
     _append_beside_the_ledger(job, kind, content)
-    with pytest.raises(StorageTrouble, match=f"a {kind}, can't be followed") as caught:
+    with pytest.raises(StorageTrouble, match=rf"\({kind}\) can't be followed") as caught:
         job.book.rebuild()
     assert "\n" not in caught.value.message
     report = check_logbook(job.book)

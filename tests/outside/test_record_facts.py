@@ -94,6 +94,20 @@ def test_the_record_carries_what_a_report_carries(demo: Path) -> None:  # noqa: 
 
 
 @needs("pdftotext")
+@pytest.mark.parametrize("record", ["FB-1-r1.pdf", "FB-2-r1.pdf"])
+def test_the_title_reads_as_one_line_and_stands_first(
+    demo: Path,  # noqa: F811
+    record: str,
+) -> None:
+    read = ["pdftotext", "-layout", demo / record, "-"]
+    told = subprocess.run(read, capture_output=True, text=True, check=True).stdout
+    first, second = [" ".join(line.split()) for line in told.splitlines() if line.strip()][:2]
+    title = "Record of a strain gauge installation Valid only with both signatures"
+    assert title == first
+    assert second.startswith(record[:4])
+
+
+@needs("pdftotext")
 def test_the_decision_rule_is_agreed_and_told(demo: Path) -> None:  # noqa: F811
     assert any("the rule used" in each for each in case("C16-10").expected["required"]["value"])
     text = _text(demo / "records" / "FB-1-r1.pdf")

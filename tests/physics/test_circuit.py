@@ -140,7 +140,7 @@ def test_a_dummy_and_a_completion_are_called_what_they_are() -> None:
     ("call", "sentence"),
     [
         (lambda: layout("full five-wire"), "layout must be one of quarter two-wire"),
-        (lambda: layout_for("full bending", 5), "wires of a full bending circuit must number 4 or"),
+        (lambda: layout_for("full bending", 5), "wires of circuit full bending must number 4 or"),
         (lambda: circuit_of("half bending", 3, -1.0, 2.0), "resistance of grid 1 must be greater"),
         (lambda: circuit_of("half bending", 3, 1.0, 2.0, -1.0), "resistance of the supply. wire"),
         (
@@ -157,7 +157,7 @@ def test_a_dummy_and_a_completion_are_called_what_they_are() -> None:
         ),
         (
             lambda: Circuit(LAYOUTS["half three-wire"], ((), (), (), ()), {}),
-            "wires of a half three-wire circuit must be supply",
+            "wires of circuit half three-wire must be supply",
         ),
         (
             lambda: Circuit(

@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
+from datetime import timedelta
 from pathlib import Path
 from typing import Any
 
@@ -99,9 +101,38 @@ def test_a_time_is_understood_on_this_machines_clock(job: Job, at: str, kept: st
     assert kept == _last_fact(job)["observed_at"]
 
 
-def test_a_step_observed_before_the_one_it_follows_is_flagged(job: Job) -> None:
+def test_a_step_observed_before_the_one_it_follows_needs_a_reason(job: Job) -> None:
     walk_to(job, "clean")
-    job.do("t.okoro", typed_here(job)[1], at="08:01")
+    with pytest.raises(Refused, match="08:01 lies before “Take the gauge") as refused:
+        job.do("t.okoro", typed_here(job)[1], at="08:01")
+    assert "--reason" in refused.value.remedy
+    job.do("t.okoro", typed_here(job)[1], at="08:01", reason="done before the gauge was taken")
+    told = "Observed before step gauge, which it follows. Reason: done before the gauge was taken"
+    assert [told] == _last_fact(job)["flags"]
+
+
+def test_a_hold_observed_before_the_step_it_follows_keeps_the_reason(job: Job) -> None:
+    walk_to(job, "layout-hold")
+    with pytest.raises(Refused, match="lies before “Lay out the gauge lines”"):
+        job.do("q.reyes", {}, at="08:01")
+    job.do("q.reyes", {}, at="08:01", reason="looked before lunch")
+    assert str(_last_fact(job)["reason"]).endswith("Reason: looked before lunch")
+
+
+def test_when_a_skip_was_entered_binds_no_later_step(job: Job) -> None:
+    walk_to(job, "finish")
+    steps.skip(job.book, job.keys["c.ward"], point="FB-1", reason="engraved at the works")
+    job.clock.advance(600)
+    steps.redo(job.book, job.keys["t.okoro"], point="FB-1", step="polarity", reason="wrong channel")
+    job.do("t.okoro", typed_here(job)[1], minutes=0, at=f"{job.clock.now().local:%H:%M}")
+    assert [] == _last_fact(job)["flags"]
+
+
+def test_across_a_clock_that_was_set_an_earlier_time_is_kept_and_flagged(job: Job) -> None:
+    walk_to(job, "clean")
+    now = job.clock.now()
+    job.clock.set(replace(now, utc=now.utc - timedelta(hours=1)))
+    job.do("t.okoro", typed_here(job)[1], minutes=1)
     assert ["Observed before step gauge, which it follows."] == _last_fact(job)["flags"]
 
 

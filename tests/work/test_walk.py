@@ -80,7 +80,7 @@ def test_a_blocking_reading_keeps_the_point_from_being_submitted(job: Job) -> No
 
 def test_a_window_that_is_over_refuses_the_step_and_redo_opens_it(job: Job) -> None:
     job.walk(6)
-    with pytest.raises(Refused, match="over since"):
+    with pytest.raises(Refused, match="too late"):
         job.do("t.okoro", WALK[6][1], minutes=60)
     steps.redo(job.book, job.keys["t.okoro"], point="FB-1", step="condition", reason="too late")
     job.do("t.okoro", WALK[5][1])
@@ -195,7 +195,9 @@ def test_a_returned_point_goes_on_from_the_step_named(job: Job) -> None:
 def test_a_returned_point_can_be_submitted_again_as_it_is(job: Job) -> None:
     job.walk()
     job.submit()
+    assert "one signature, not yet valid" in reviews.record(job.book, point="FB-1").description
     reviews.give_back(job.book, job.keys["q.reyes"], point="FB-1", reason="wrong name")
+    assert "returned, never valid" in reviews.record(job.book, point="FB-1").description
     assert job.submit().revision == 2
 
 

@@ -116,7 +116,9 @@ def _wire_area(number: float, dimension: Dimension) -> float:
     from gaugelog.physics.conductors import awg_diameter
 
     if dimension is not AREA:
-        raise NotUnderstood(f"AWG is a wire size, not a {dimension.name}")
+        raise NotUnderstood(
+            f"AWG is a wire size; {dimension.name} is asked for, like {dimension.example}"
+        )
     try:
         return math.pi / 4 * awg_diameter(number) ** 2
     except GaugelogError as error:

@@ -59,7 +59,7 @@ class Numbering:
         said = (header.chain, header.seq, header.deed, header.index, header.kind)
         if filed[:-1] != said:
             place = f"entry {header.seq} of chain {header.chain}"
-            part = f"{header.index} of deed {header.deed}, a {header.kind}"
+            part = f"{header.index} of deed {header.deed}, kind {header.kind}"
             what = f"It is filed otherwise than its header says: {place}, {part}."
             self._findings.trouble(look.position, Trouble(2, look.where, what, RESTORE))
 

@@ -8,6 +8,7 @@ from gaugelog.commands.calc.dimensions import RATIO
 from gaugelog.commands.calc.model import Answer, Argument, Subject, Values
 from gaugelog.commands.calc.sheet import Sheet
 from gaugelog.physics import conformity
+from gaugelog.rules.digits import probability_text
 
 
 def _compute(values: Values) -> Answer:
@@ -22,7 +23,7 @@ def _compute(values: Values) -> Answer:
     )
     sheet.put("verdict", found.word.value)
     if found.probability is not None:
-        sheet.put("probability of conformance", f"{found.probability:.4f}")
+        sheet.put("probability of conformance", probability_text(repr(found.probability), 4))
         sheet.by(
             conformity.probability_of_conformance, values["value"], values["uncertainty"], limits
         )
