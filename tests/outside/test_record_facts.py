@@ -99,7 +99,7 @@ def test_the_title_reads_as_one_line_and_stands_first(
     demo: Path,  # noqa: F811
     record: str,
 ) -> None:
-    read = ["pdftotext", "-layout", str(demo / record), "-"]
+    read = ["pdftotext", "-layout", str(demo / "records" / record), "-"]
     told = subprocess.run(read, capture_output=True, text=True, check=True).stdout
     first, second = [" ".join(line.split()) for line in told.splitlines() if line.strip()][:2]
     title = "Record of a strain gauge installation Valid only with both signatures"
