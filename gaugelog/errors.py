@@ -32,6 +32,8 @@ class ExitCode(IntEnum):
     """Something the machine should have is missing, such as the library that draws PDF pages."""
     UNEXPECTED = 70
     """A defect of Gaugelog itself; nothing half-done was stored."""
+    STOPPED = 130
+    """The person stopped it with Ctrl-C; a deed is kept whole or not at all."""
 
 
 class GaugelogError(Exception):

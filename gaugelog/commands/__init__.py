@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import errno
+import os
 import sys
 from collections.abc import Sequence
 from typing import TYPE_CHECKING
@@ -12,7 +14,9 @@ if TYPE_CHECKING:
 
 def main() -> None:
     """Run the command line on the process's arguments and exit with its code."""
-    sys.exit(run(sys.argv[1:]))
+    code = run(sys.argv[1:])
+    _drop_what_is_stuck()
+    sys.exit(code)
 
 
 def run(arguments: Sequence[str]) -> int:
@@ -21,38 +25,60 @@ def run(arguments: Sequence[str]) -> int:
     What stops the program is told on stderr in plain words, with what to do. With `--debug`
     among the arguments the traceback of an unexpected error is shown too.
     """
-    from gaugelog.commands.application import application
-    from gaugelog.commands.talk import tell_error, tell_unexpected
-    from gaugelog.errors import GaugelogError
+    from gaugelog.commands.talk import be_heard, say, tell_error, tell_unexpected
+    from gaugelog.errors import ExitCode, GaugelogError
 
     try:
-        application()(args=list(arguments), prog_name="gaugelog")
+        be_heard()
+        code = _run(arguments)
+        sys.stdout.flush()
     except GaugelogError as error:
         tell_error(error)
         return int(error.exit_code)
     except OSError as error:
-        trouble = _not_written(error)
+        if error.errno == errno.EPIPE:
+            return int(ExitCode.TROUBLE)
+        trouble = _of_file(error)
         tell_error(trouble)
         return int(trouble.exit_code)
-    except SystemExit as end:
-        return _code(end)
+    except KeyboardInterrupt:
+        code = int(ExitCode.STOPPED)
     except Exception as error:
         return tell_unexpected(error, debug="--debug" in arguments)
+    if code == ExitCode.STOPPED:
+        say("gaugelog: stopped. A deed is kept whole or not at all: see `gaugelog journal show`.")
+    return code
+
+
+def _run(arguments: Sequence[str]) -> int:
+    from gaugelog.commands.application import application
+
+    try:
+        application()(args=list(arguments), prog_name="gaugelog")
+    except SystemExit as end:
+        return end.code if isinstance(end.code, int) else int(end.code is not None)
     return 0
 
 
-def _not_written(error: OSError) -> GaugelogError:
-    """What the system said about a file, in a sentence."""
+def _of_file(error: OSError) -> GaugelogError:
+    """What the system said about a file, in a sentence; a nameless one is most likely stdout."""
     from gaugelog.errors import StorageTrouble
 
-    what = error.filename or "A file"
     reason = error.strerror or type(error).__name__
+    if not error.filename:
+        return StorageTrouble(
+            f"Not all could be written: {reason}.", "Make room there, or name another place."
+        )
     return StorageTrouble(
-        f"{what} can't be read or written: {reason}.", "Name another place, or mend this one."
+        f"{error.filename} can't be read or written: {reason}.",
+        "Name another place, or mend this one.",
     )
 
 
-def _code(end: SystemExit) -> int:
-    if end.code is None:
-        return 0
-    return end.code if isinstance(end.code, int) else 1
+def _drop_what_is_stuck() -> None:
+    """Let go of output that can't be written, or Python complains of it once more at its end."""
+    for stream in (sys.stdout, sys.stderr):
+        try:
+            stream.flush()
+        except OSError:
+            os.dup2(os.open(os.devnull, os.O_WRONLY), stream.fileno())

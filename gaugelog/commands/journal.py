@@ -17,6 +17,12 @@ if TYPE_CHECKING:
 
 group = typer.Typer(help="The journal: check it, print its head, look at it, export it.")
 
+_SIGNS = {"ok": "✓", "trouble": "✗", "not asked": "–", "not finished": "?"}
+_NOTES = {
+    "not asked": " (not asked)",
+    "not finished": " (not finished: no trouble in what could be read)",
+}
+
 
 @group.command()
 def check(
@@ -46,9 +52,7 @@ def check(
 
 def _tell_report(report: Report) -> None:
     for step in report.steps:
-        sign = "–" if step.skipped else ("✓" if not step.troubles else "✗")
-        note = " (not asked)" if step.skipped else ""
-        put(f"{sign} {step.number}. {step.title}{note}")
+        put(f"{_SIGNS[step.outcome]} {step.number}. {step.title}{_NOTES.get(step.outcome, '')}")
         for trouble in step.troubles:
             put(f"    {trouble.where}: {trouble.what}")
             if trouble.remedy:

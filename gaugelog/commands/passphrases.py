@@ -27,7 +27,10 @@ class Secrets:
             )
         import getpass
 
-        return getpass.getpass(f"{prompt}: ", stream=sys.stderr)
+        try:
+            return getpass.getpass(f"{prompt}: ", stream=sys.stderr)
+        except EOFError as error:
+            raise KeyTrouble("No passphrase was typed.", "Run the command again.") from error
 
     def choose(self, prompt: str) -> str:
         """A new passphrase; typed twice at the keyboard. Raises KeyTrouble if they differ."""

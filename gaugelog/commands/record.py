@@ -7,6 +7,7 @@ from typing import Annotated
 
 import typer
 
+from gaugelog.commands.outputs import write_out
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import put, put_json, put_table, say
 
@@ -38,7 +39,7 @@ def record(
     else:
         found = reviews.record(logbook, point=point, revision=revision)
     target = out or Path(f"{found.file_name}.pdf")
-    target.write_bytes(found.pdf)
+    write_out(target, found.pdf)
     say(f"{point}: {found.description}")
     put(str(target))
 

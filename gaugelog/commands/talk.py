@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 import json
+import os
 import sys
 import traceback
 from collections.abc import Callable, Iterable, Sequence
+from contextlib import suppress
 from typing import TYPE_CHECKING, Any
 
 from gaugelog.errors import ExitCode, Fault, Faulty, GaugelogError
@@ -26,10 +28,20 @@ def console(*, stderr: bool = False) -> Console:
     )
 
 
+def be_heard() -> None:
+    """Give a process that was started without stdout or stderr somewhere to write to."""
+    # They stay open until the process ends, as the ones they stand for would.
+    if sys.stdout is None:
+        sys.stdout = open(os.devnull, "w", encoding="utf-8")  # noqa: SIM115, PTH123
+    if sys.stderr is None:
+        sys.stderr = open(os.devnull, "w", encoding="utf-8")  # noqa: SIM115, PTH123
+
+
 def say(*lines: str) -> None:
-    """Talk to the person, on stderr."""
+    """Talk to the person, on stderr; talk that can't be written stops no work."""
     for line in lines:
-        sys.stderr.write(visible(line, keep_newlines=True) + "\n")
+        with suppress(OSError):
+            sys.stderr.write(visible(line, keep_newlines=True) + "\n")
 
 
 def put(*lines: str) -> None:

@@ -7,9 +7,10 @@ from typing import TYPE_CHECKING, Annotated, Literal, cast
 
 import typer
 
+from gaugelog.commands.outputs import write_out
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
-from gaugelog.errors import ExitCode, Fault, Faulty, StorageTrouble
+from gaugelog.errors import ExitCode, Fault, Faulty
 
 if TYPE_CHECKING:
     from gaugelog.work.logbook import Logbook
@@ -92,12 +93,7 @@ def export(
     logbook = open_logbook(ctx)
     wiring = wiring_map(logbook)
     data = _written(logbook, wiring, kind, cast("Literal['a4', 'letter']", paper))
-    try:
-        file.write_bytes(data)
-    except OSError as error:
-        raise StorageTrouble(
-            f"{file} can't be written: {error.strerror}.", "Choose a place that you may write."
-        ) from error
+    write_out(file, data)
     for conflict in wiring.conflicts:
         say(f"  ✗ {conflict}")
     say(f"{len(wiring.circuits)} circuits, {len(wiring.spare)} spare channels.")

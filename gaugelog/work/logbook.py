@@ -19,6 +19,8 @@ from gaugelog.journal.evidence import FolderEvidence
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
 from gaugelog.journal.storage.sqlite import SqliteReader, SqliteStorage, SqliteWriter
+from gaugelog.journal.storage.standin import StandIn
+from gaugelog.journal.storage.troubles import NotWritable
 from gaugelog.ledger import fold, schema
 from gaugelog.ledger.base import FactBody
 from gaugelog.ledger.view import View
@@ -30,6 +32,9 @@ if TYPE_CHECKING:
 
 SIGN = "logbook.toml"
 """The file that makes a folder a logbook."""
+
+DATABASE = "logbook.db"
+"""The file beside it that holds journal and ledger."""
 
 FORMAT = 1
 
@@ -93,7 +98,7 @@ class Logbook:
         self.name = settings["name"]
         self.chain = settings["chain"]
         self.clock = clock or SystemClock()
-        self.storage = SqliteStorage(folder / "logbook.db")
+        self.storage = SqliteStorage(folder / DATABASE)
         self.evidence = FolderEvidence(folder / "evidence")
         self._on_wait = on_wait
 
@@ -132,8 +137,18 @@ class Logbook:
         with logbook.storage.reading() as reader:
             version = schema.ledger_version(reader.connection)
         if version != schema.LEDGER_VERSION:
-            logbook.rebuild()
+            logbook._bring_up_to_date()
         return logbook
+
+    def _bring_up_to_date(self) -> None:
+        """Rebuild the ledger; of a logbook that can't be written, in a copy to read from."""
+        try:
+            self.rebuild()
+        except NotWritable:
+            copy = StandIn(self.storage)
+            with copy.preparing() as writer:
+                fold.rebuild(writer)
+            self.storage = copy
 
     def begin(self, signer: Signer, facts: Callable[[Deed], None]) -> list[Entry]:
         """Keep the first deed: authority, custodian's certificate, and what `facts` adds."""
@@ -226,15 +241,26 @@ def find_logbook(start: Path, asked: Path | None) -> Path:
     if asked is not None:
         if (asked / SIGN).is_file():
             return asked
+        if (asked / DATABASE).is_file():
+            raise _without_sign(asked)
         raise StorageTrouble(
             f"There is no logbook in {asked}.", "Name the folder that holds logbook.toml."
         )
     for folder in (start, *start.parents):
         if (folder / SIGN).is_file():
             return folder
+        if (folder / DATABASE).is_file():
+            raise _without_sign(folder)
     raise StorageTrouble(
         "There is no logbook here or in any folder above.",
         "Go into one, name it with --logbook, or make one with `gaugelog start`.",
+    )
+
+
+def _without_sign(folder: Path) -> StorageTrouble:
+    return StorageTrouble(
+        f"{SIGN} is missing beside {folder / DATABASE}; it names the logbook.",
+        f"Nothing else is lost: put {SIGN} back from a backup.",
     )
 
 

@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.journal.append import touched_since
+from gaugelog.journal.evidence import whole
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
@@ -93,7 +94,7 @@ def accept(
             logbook.clock.now(),
             logbook.head().printed,
         )
-    pdf = maker.accepted(logbook.evidence.get(record.submitted_file), stamp, signer)
+    pdf = maker.accepted(whole(logbook.evidence, record.submitted_file), stamp, signer)
     file = logbook.evidence.put(pdf)
     with logbook.deed(signer) as deed:
         latest, now = _under_review(deed.view, point, signer, "accept it")
@@ -156,7 +157,7 @@ def record(logbook: Logbook, *, point: str, revision: int | None = None) -> Reco
     found = rows[-1]
     file = found.accepted_file or found.submitted_file
     return RecordFile(
-        logbook.evidence.get(file),
+        whole(logbook.evidence, file),
         f"{row.label}-r{found.revision}",
         f"revision {found.revision}, {found.state}, {_validity(found)}; SHA-256 {file}",
     )

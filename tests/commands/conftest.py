@@ -4,30 +4,23 @@ from __future__ import annotations
 
 import os
 import shutil
-from collections.abc import Callable
-from dataclasses import dataclass
+from datetime import timedelta
 from pathlib import Path
 
 import pytest
 
 from gaugelog.commands import run, session, story
+from gaugelog.journal.clock import Moment, SetClock
+from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import KeyFolder
+from gaugelog.work import logbook
+from tests.commands.desk import Command, Desk, Outcome
+from tests.work.job import CHEAP_ROUNDS, START, released_job
 
-CHEAP_ROUNDS = 1000
 SMALL_JOB = Path(__file__).parents[1] / "small_job"
 """Two points of the demo with its first chapter: played in a moment, and steady."""
 
-
-@dataclass(frozen=True)
-class Outcome:
-    """What a command gave: its exit code, data and talk."""
-
-    code: int
-    out: str
-    err: str
-
-
-Command = Callable[..., Outcome]
+__all__ = ["Command", "Outcome"]
 
 
 @pytest.fixture(autouse=True)
@@ -86,6 +79,30 @@ def demo(_played: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> Path
     monkeypatch.chdir(folder / "logbook")
     monkeypatch.setenv(session.KEYS_VARIABLE, str(folder / "keys"))
     return folder
+
+
+@pytest.fixture(scope="session")
+def _walked(tmp_path_factory: pytest.TempPathFactory) -> Path:
+    home = tmp_path_factory.mktemp("walked")
+    job = released_job(home)
+    job.walk()
+    job.submit()
+    job.accept()
+    job.book.storage.close()
+    return home
+
+
+@pytest.fixture
+def desk(_walked: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch, command: Command) -> Desk:
+    """A copy of a small job: its logbook is the current folder, its clock stands a day later."""
+    shutil.copytree(_walked, tmp_path / "desk")
+    folder = tmp_path / "desk" / "book"
+    keys = KeyFolder(tmp_path / "desk" / "keys", CHEAP_ROUNDS)
+    clock = SetClock(Moment(START + timedelta(days=3), 0, new_id(), 1_000_000))
+    monkeypatch.setattr(session, "key_folder", lambda _id: keys)
+    monkeypatch.setattr(logbook, "SystemClock", lambda: clock)
+    monkeypatch.chdir(folder)
+    return Desk(folder, clock, command)
 
 
 PASSPHRASE = story.PASSPHRASE

@@ -43,6 +43,7 @@ class StorageContract:
             assert [] == reader.deed("deed-1")
             assert [] == reader.sheets()
             assert [] == reader.missing_guards()
+            assert [] == reader.damages()
 
     def test_entries_come_back_byte_for_byte_by_chain_and_number(self, storage: Storage) -> None:
         with storage.writing() as writer:

@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING, Annotated
 
 import typer
 
+from gaugelog.commands.outputs import write_out
 from gaugelog.commands.session import Json
 from gaugelog.commands.talk import put, put_json, put_table, say
 from gaugelog.errors import Fault, Faulty
@@ -149,9 +150,5 @@ def _check_plot(subject: str, plot: Path | None, each: Path | None) -> None:
 def _plot(worked: Worked, file: Path) -> None:
     from gaugelog.commands.calc.mohr import draw
 
-    try:
-        file.write_text(draw(worked), encoding="utf-8")
-    except (OSError, ValueError) as error:
-        reason = getattr(error, "strerror", None) or "its name can't be one"
-        raise Faulty([Fault(str(file), f"can't be written: {reason}.")], "no plot") from error
+    write_out(file, draw(worked).encode())
     say(f"Mohr's circle and the directions are drawn in {file}.")

@@ -32,7 +32,9 @@ class Format:
             self._findings.trouble(look.position, trouble)
 
     def finish(self) -> None:
-        """Look at the guards."""
+        """Look at the guards, and at the storage beneath the entries."""
+        for damage in self._reader.damages():
+            self._findings.trouble(0, Trouble(1, "the storage", damage, RESTORE))
         for missing in self._reader.missing_guards():
             remedy = "Find out who took it away; then restore the newest backup that checks."
             self._findings.trouble(0, Trouble(1, "the storage", missing, remedy))

@@ -6,6 +6,7 @@ import hashlib
 from collections.abc import Iterator
 from dataclasses import dataclass
 
+from gaugelog.errors import GaugelogError
 from gaugelog.journal.check.report import Findings, Trouble
 from gaugelog.journal.clock import Moment
 from gaugelog.journal.entry import Body, Entry, Head, Header
@@ -15,6 +16,9 @@ from gaugelog.journal.storage.port import Filed, Reader
 
 RESTORE = "Keep this logbook as it is, and restore the newest backup that checks."
 """What to do when the bytes of the past are not what they were."""
+
+OF_ENTRIES = range(1, 8)
+"""The steps that look at entries, which a storage that fails cuts short."""
 
 _SHORT_CHAIN = 8
 
@@ -71,8 +75,16 @@ def _of_chain(reader: Reader, chain: str, findings: Findings) -> Iterator[Look]:
             last = filed.seq
             yield _look(filed)
     except Exception as error:  # a damaged file brings up anything
-        what = f"The storage can't be read on from here: {error}."
+        what = f"The storage can't be read on from here: {said(error)}"
         findings.trouble(0, Trouble(1, where(chain, last), what, RESTORE))
+        findings.cut_short(*OF_ENTRIES)
+
+
+def said(error: Exception) -> str:
+    """What an error says, as a sentence."""
+    if isinstance(error, GaugelogError):
+        return error.message
+    return f"{type(error).__name__}: {error}."
 
 
 def _look(filed: Filed) -> Look:

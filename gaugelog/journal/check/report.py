@@ -41,19 +41,25 @@ class Notice:
 
 @dataclass(frozen=True, slots=True)
 class StepResult:
-    """What one step found; `skipped` when it was not asked for."""
+    """What one step found; `skipped` when it was not asked for.
+
+    `cut_short` when the storage failed before the step had seen every entry.
+    """
 
     number: int
     title: str
     troubles: tuple[Trouble, ...]
     skipped: bool = False
+    cut_short: bool = False
 
     @property
     def outcome(self) -> str:
-        """`ok`, `trouble` or `not asked`."""
+        """`ok`, `trouble`, `not asked` or `not finished`."""
         if self.skipped:
             return "not asked"
-        return "trouble" if self.troubles else "ok"
+        if self.troubles:
+            return "trouble"
+        return "not finished" if self.cut_short else "ok"
 
 
 @dataclass(frozen=True, slots=True)
@@ -104,6 +110,7 @@ class Findings:
     def __init__(self) -> None:
         self._troubles: list[tuple[int, Trouble]] = []
         self._notices: list[Notice] = []
+        self._cut_short: frozenset[int] = frozenset()
 
     def trouble(self, position: int, trouble: Trouble) -> None:
         """Note a trouble; `position` is the entry's place in the walk, to sort by."""
@@ -113,10 +120,20 @@ class Findings:
         """Note an oddity."""
         self._notices.append(Notice(where, what))
 
+    def cut_short(self, *steps: int) -> None:
+        """Note that steps did not see every entry."""
+        self._cut_short |= frozenset(steps)
+
     def report(self, entries: int, heads: Sequence[Head], skipped: frozenset[int]) -> Report:
         """Everything found, step by step."""
         steps = tuple(
-            StepResult(number, title, self._of_step(number), number in skipped)
+            StepResult(
+                number,
+                title,
+                self._of_step(number),
+                number in skipped,
+                number in self._cut_short,
+            )
             for number, title in TITLES.items()
         )
         return Report(entries, tuple(heads), steps, tuple(self._notices))

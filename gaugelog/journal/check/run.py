@@ -5,11 +5,10 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator, Sequence
 from typing import Protocol
 
-from gaugelog.errors import GaugelogError
 from gaugelog.journal.certificates import Certificates
 from gaugelog.journal.check.kept import Clocks, Kept
 from gaugelog.journal.check.links import Bodies, Chain, Format, Numbering
-from gaugelog.journal.check.look import RESTORE, Look, looks
+from gaugelog.journal.check.look import OF_ENTRIES, RESTORE, Look, looks, said
 from gaugelog.journal.check.report import Findings, Report, Trouble
 from gaugelog.journal.check.signatures import Deeds, Issues, Validity
 from gaugelog.journal.collection import no_collection
@@ -70,7 +69,8 @@ def check(
         with no_collection():
             walk.go(progress)
     except Exception as error:  # whatever foreign bytes bring up is a trouble, not a traceback
-        findings.trouble(0, Trouble(1, "the storage", f"It can't be read: {_said(error)}", RESTORE))
+        findings.trouble(0, Trouble(1, "the storage", f"It can't be read: {said(error)}", RESTORE))
+        findings.cut_short(*OF_ENTRIES)
     finally:
         walk.close()
     if rebuild is not None:
@@ -130,7 +130,7 @@ class _Walk:
         steps = iter(self._steps)
         # After a step that failed, the loop goes on with the next one.
         while step := self._failed_step(steps, look):
-            what = f"It can't be examined: {_said(step[1])}"
+            what = f"It can't be examined: {said(step[1])}"
             trouble = Trouble(step[0].number, look.where, what, RESTORE)
             self._findings.trouble(look.position, trouble)
 
@@ -147,13 +147,13 @@ class _Walk:
         try:
             step.finish()
         except Exception as error:  # as in `check`
-            what = f"The step can't be finished: {_said(error)}"
+            what = f"The step can't be finished: {said(error)}"
             self._findings.trouble(0, Trouble(step.number, "the journal", what, RESTORE))
 
     def _total(self) -> int:
         try:
             heads = [self._reader.head(chain) for chain in self._reader.chains()]
-        except GaugelogError:  # a damaged head; the walk says more of it
+        except Exception:  # a damaged head; the walk says more of it
             return 0
         return sum(head.seq for head in heads if head is not None)
 
@@ -163,11 +163,5 @@ def _compare(rebuild: Rebuild, findings: Findings) -> None:
         for place, trouble in enumerate(rebuild()):
             findings.trouble(place, trouble)
     except Exception as error:  # entries of foreign bytes can stop the rebuilding
-        what = f"It can't be rebuilt: {_said(error)}"
+        what = f"It can't be rebuilt: {said(error)}"
         findings.trouble(0, Trouble(_LEDGER, "the ledger", what, RESTORE))
-
-
-def _said(error: Exception) -> str:
-    if isinstance(error, GaugelogError):
-        return error.message
-    return f"{type(error).__name__}: {error}."

@@ -87,6 +87,10 @@ class MemoryReader:
         """Memory has no guards that could be taken away."""
         return []
 
+    def damages(self) -> list[str]:
+        """Memory is not damaged."""
+        return []
+
 
 class MemoryWriter(MemoryReader):
     """The one writer on a shelf of its own; see `Writer`."""

@@ -71,6 +71,10 @@ class Reader(Protocol):
         """What the storage's own guards against alteration lack, a sentence each."""
         ...
 
+    def damages(self) -> list[str]:
+        """What is broken in the storage itself, whatever the entries say, a sentence each."""
+        ...
+
 
 class Writer(Reader, Protocol):
     """The one writer. What it did is on disk when its `with` ends, and undone on any exception."""

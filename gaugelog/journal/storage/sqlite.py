@@ -6,7 +6,7 @@ import random
 import sqlite3
 import threading
 import time
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from pathlib import Path
 
@@ -14,6 +14,7 @@ from gaugelog.errors import StorageTrouble
 from gaugelog.journal.storage.port import GIVE_UP_SECONDS, OnWait, still_busy
 from gaugelog.journal.storage.schema import GUARDS, TABLES
 from gaugelog.journal.storage.sqlite_tables import SqliteReader, SqliteWriter
+from gaugelog.journal.storage.still import StillConnection, connect_still, is_for_still
 from gaugelog.journal.storage.troubles import told_plainly
 
 __all__ = ["SqliteReader", "SqliteStorage", "SqliteWriter"]
@@ -47,8 +48,8 @@ class SqliteStorage:
 
     @contextmanager
     def reading(self) -> Iterator[SqliteReader]:
-        """Read one unchanging view."""
-        with told_plainly(self.path), self._connection() as connection:
+        """Read one unchanging view; also where nothing may be written, as on read-only media."""
+        with told_plainly(self.path), self._connection(_open_to_read) as connection:
             connection.execute("BEGIN")
             try:
                 # SQLite takes its view at the first read, not at BEGIN.
@@ -60,7 +61,7 @@ class SqliteStorage:
     @contextmanager
     def writing(self, on_wait: OnWait | None = None) -> Iterator[SqliteWriter]:
         """Be the one writer."""
-        with told_plainly(self.path), self._connection() as connection:
+        with told_plainly(self.path), self._connection(_open_to_write) as connection:
             _begin(connection, on_wait)
             writer = SqliteWriter(connection)
             try:
@@ -81,11 +82,13 @@ class SqliteStorage:
                 self._idle.pop().close()
 
     @contextmanager
-    def _connection(self) -> Iterator[sqlite3.Connection]:
+    def _connection(
+        self, opened: Callable[[Path], sqlite3.Connection]
+    ) -> Iterator[sqlite3.Connection]:
         with self._lock:
             connection = self._idle.pop() if self._idle else None
         if connection is None:
-            connection = _connect(self.path, "rw")
+            connection = opened(self.path)
             _demand_journal(connection, self.path)
         try:
             yield connection
@@ -99,8 +102,25 @@ class SqliteStorage:
         self._take_back(connection)
 
     def _take_back(self, connection: sqlite3.Connection) -> None:
+        if isinstance(connection, StillConnection):
+            connection.close()
+            connection.demand_unchanged()
+            return
         with self._lock:
             self._idle.append(connection)
+
+
+def _open_to_write(path: Path) -> sqlite3.Connection:
+    return _connect(path, "rw")
+
+
+def _open_to_read(path: Path) -> sqlite3.Connection:
+    try:
+        return _connect(path, "rw")
+    except sqlite3.Error as error:
+        if not is_for_still(error, path):
+            raise
+        return connect_still(path)
 
 
 def _connect(path: Path, mode: str) -> sqlite3.Connection:
@@ -139,7 +159,12 @@ def _has_journal(connection: sqlite3.Connection) -> bool:
 
 
 def _demand_journal(connection: sqlite3.Connection, path: Path) -> None:
-    if not _has_journal(connection):
+    try:
+        found = _has_journal(connection)
+    except sqlite3.Error:
+        connection.close()
+        raise
+    if not found:
         connection.close()
         raise StorageTrouble(
             f"{path} holds no journal.", "Name another logbook, or restore this file from a backup."

@@ -104,6 +104,11 @@ class SqliteReader:
             if plain(str(found.get(name))) != plain(statement)
         ]
 
+    def damages(self) -> list[str]:
+        """What SQLite's own check of its pages finds; the first few say enough."""
+        found = self.connection.execute("PRAGMA quick_check(3)")
+        return [f"The database is damaged: {plain(row[0])}." for row in found if row[0] != "ok"]
+
     def _first(self, statement: str, *values: str | int) -> tuple[Any, ...] | None:
         found: tuple[Any, ...] | None = self.connection.execute(statement, values).fetchone()
         return found
