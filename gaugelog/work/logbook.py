@@ -145,10 +145,9 @@ class Logbook:
         try:
             self.rebuild()
         except NotWritable:
-            copy = StandIn(self.storage)
-            with copy.preparing() as writer:
-                fold.rebuild(writer)
-            self.storage = copy
+            self.storage = copy = StandIn(self.storage)
+            self.rebuild()
+            copy.seal()
 
     def begin(self, signer: Signer, facts: Callable[[Deed], None]) -> list[Entry]:
         """Keep the first deed: authority, custodian's certificate, and what `facts` adds."""

@@ -20,7 +20,7 @@ from tests.work.job import CHEAP_ROUNDS, START, released_job
 SMALL_JOB = Path(__file__).parents[1] / "small_job"
 """Two points of the demo with its first chapter: played in a moment, and steady."""
 
-__all__ = ["Command", "Outcome"]
+__all__ = ["CHEAP_ROUNDS", "Command", "Outcome"]
 
 
 @pytest.fixture(autouse=True)

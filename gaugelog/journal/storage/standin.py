@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from contextlib import AbstractContextManager
+from collections.abc import Iterator
+from contextlib import contextmanager
 from pathlib import Path
 from tempfile import TemporaryDirectory
 
@@ -26,13 +27,19 @@ class StandIn(SqliteStorage):
             copy_database(reader, copy)
         super().__init__(copy)
 
-    def preparing(self) -> AbstractContextManager[SqliteWriter]:
-        """Write to the copy, to make it fit for reading."""
-        return super().writing()
+        self._sealed = False
 
-    def writing(self, on_wait: OnWait | None = None) -> AbstractContextManager[SqliteWriter]:
-        """Refuse: what is new belongs into the original. Raises NotWritable."""
-        raise not_writable(self._original.path)
+    def seal(self) -> None:
+        """From now on refuse writing: the copy is fit for reading."""
+        self._sealed = True
+
+    @contextmanager
+    def writing(self, on_wait: OnWait | None = None) -> Iterator[SqliteWriter]:
+        """Write to the copy until it is sealed. Then raises NotWritable, naming the original."""
+        if self._sealed:
+            raise not_writable(self._original.path)
+        with super().writing(on_wait) as writer:
+            yield writer
 
     def close(self) -> None:
         """Close the connections and take the copy away."""
