@@ -154,7 +154,7 @@ def _open(path: Path) -> StorageTrouble:
 
 
 def test_a_file_that_is_not_there_is_said_so_and_not_made(tmp_path: Path) -> None:
-    assert "can't be opened" in _open(tmp_path / "none.db").message
+    assert "is not there" in _open(tmp_path / "none.db").message
     assert [] == list(tmp_path.iterdir())
 
 
