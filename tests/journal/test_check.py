@@ -18,7 +18,7 @@ from gaugelog.journal.certificates import (
 )
 from gaugelog.journal.check import Report, Trouble, check
 from gaugelog.journal.clock import SetClock
-from gaugelog.journal.entry import Fact, Head, PrintedHead
+from gaugelog.journal.entry import Entry, Fact, Head, PrintedHead
 from gaugelog.journal.keys import UnlockedKey, new_key
 from gaugelog.journal.storage.memory import MemoryStorage
 from tests.journal.samples import CHAIN, START, SampleJournal, authority, note, signer, stranger
@@ -143,6 +143,44 @@ def test_a_revoked_certificate_is_no_good_after_its_deed(journal: SampleJournal)
     step, where, what = only_trouble(journal)
     assert (6, f"entry 7 of chain {CHAIN}") == (step, where)
     assert "revoked" in what
+
+
+def revoke_technician(journal: SampleJournal) -> None:
+    """The technician's key is lost."""
+    fingerprint = signer("technician").fingerprint
+    journal.keep(certificate_revoked("technician", fingerprint, "lost"), by=signer())
+
+
+def written_into_the_past(journal: SampleJournal) -> Entry:
+    """An entry of a lost key in a chain of its own, which claims to know only the beginning."""
+    first = journal.entries()[-1]
+    forger = SampleJournal(MemoryStorage(), journal.evidence, SetClock(START), "a")
+    with journal.storage.reading() as reader, forger.storage.writing() as writer:
+        for entry in reader.entries():
+            writer.insert(entry)
+    forged = forger.keep(by=signer("technician"))[0]
+    assert forged.header.heads[0].seq == first.header.seq
+    return forged
+
+
+def test_a_lost_key_cannot_write_into_the_past(journal: SampleJournal) -> None:
+    forged = written_into_the_past(journal)
+    revoke_technician(journal)
+    with journal.storage.writing() as writer:
+        writer.insert(forged)
+    step, where, what = only_trouble(journal)
+    assert (6, "entry 1 of chain a") == (step, where)
+    assert "can't be proven" in what
+    assert "no entry says whose copy" in report_of(journal).notices[0].what
+
+
+def test_what_a_revocation_knew_of_another_chain_stays_good(journal: SampleJournal) -> None:
+    laptop = replace(journal, chain="laptop")
+    laptop.keep(by=signer("technician"))
+    revoke_technician(journal)
+    assert report_of(journal).ok
+    laptop.keep(by=signer("technician"))
+    assert (6, "entry 2 of chain laptop") == only_trouble(journal)[:2]
 
 
 def test_a_person_enrolled_again_signs_with_the_new_certificate(journal: SampleJournal) -> None:

@@ -10,6 +10,7 @@ from gaugelog.journal.check.kept import Clocks, Kept
 from gaugelog.journal.check.links import Bodies, Chain, Format, Numbering
 from gaugelog.journal.check.look import OF_ENTRIES, RESTORE, Look, looks, said
 from gaugelog.journal.check.report import Findings, Report, Trouble
+from gaugelog.journal.check.revocations import Unproven
 from gaugelog.journal.check.signatures import Deeds, Issues, Validity
 from gaugelog.journal.collection import no_collection
 from gaugelog.journal.entry import PrintedHead
@@ -56,12 +57,13 @@ def check(
     3. Chain: each entry names the hash of the one before; known and printed heads are met.
     4. Bodies: each body has the hash its header names, and can be read.
     5. Deeds and signatures: each deed is whole, and its last entry signed over its header bytes.
-    6. Certificates valid then: issued before by the authority, to the actor, in force, not revoked.
+    6. Certificates valid then: issued before by the authority, to the actor, in force, not revoked;
+       what a revoked key signed is known to have been there before.
     7. Evidence: each file and identity sheet named is there and whole, or erased by an entry.
     8. Ledger rebuilt and compared: by `rebuild`; "not asked" when None.
 
     `printed` are heads from paper. With `may_withhold` a missing body is no trouble, as in a
-    packet that shows a client only what concerns them.
+    copy that shows a client only what concerns them.
     """
     findings = Findings()
     walk = _Walk(reader, evidence, findings, printed, may_withhold)
@@ -105,6 +107,7 @@ class _Walk:
             Issues(findings, certificates),
             self._deeds,  # 5
             Validity(findings, certificates),  # 6
+            Unproven(findings),
             Kept(findings, reader, evidence),  # 7
         )
 
