@@ -37,6 +37,7 @@ from gaugelog.ledger import (
 )
 from gaugelog.ledger.base import FactBody
 from gaugelog.ledger.buffer import Buffer
+from gaugelog.ledger.rights import Judge, misgivings
 from gaugelog.ledger.rows import Apply, At, Change, Known, Row
 
 _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
@@ -73,12 +74,14 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
 }
 """Kind and version of a fact to its body and how it changes the tables."""
 
+_PAST_THE_PROGRAM = "It was written past the program: ask who signed it, and have it put right."
+
 _STEP = 8
 """The step of the journal's check that compares the ledger."""
 
 
-def apply(known: Known, entry: Entry) -> Iterator[Change]:
-    """How one entry changes the tables, given what is known before it.
+def apply(known: Known, entry: Entry, judge: Judge | None = None) -> Iterator[Change]:
+    """How one entry changes the tables, given what is known before it; `judge` looks at it first.
 
     Kinds that this version does not know, and withheld bodies, change nothing.
     """
@@ -97,6 +100,8 @@ def apply(known: Known, entry: Entry) -> Iterator[Change]:
         header["uptime_ms"],
         _text_of(entry.body_bytes, body),
     )
+    if judge is not None:
+        judge(known, at, body.fact)
     yield from function(known, at, body.fact)
 
 
@@ -127,8 +132,10 @@ def keep(connection: sqlite3.Connection, entries: Iterable[Entry]) -> None:
     schema.write(connection, buffer)
 
 
-def fold(entries: Iterable[Entry], *, one_chain: bool = False) -> Buffer:
-    """The whole ledger from the whole journal, in memory.
+def fold(
+    entries: Iterable[Entry], *, one_chain: bool = False, judge: Judge | None = None
+) -> Buffer:
+    """The whole ledger from the whole journal, in memory; `judge` looks at each fact before.
 
     With `one_chain` the entries are those of a single chain, in its own order already. Raises
     StorageTrouble naming an entry that can't be followed.
@@ -137,7 +144,7 @@ def fold(entries: Iterable[Entry], *, one_chain: bool = False) -> Buffer:
     with no_collection():
         for entry in entries if one_chain else ledger_order(entries):
             try:
-                buffer.take(apply(buffer, entry))
+                buffer.take(apply(buffer, entry, judge))
             except (LookupError, ValueError, TypeError) as error:
                 raise _unfoldable(entry, error) from error
     return buffer
@@ -165,10 +172,18 @@ def rebuild(reader: SqliteReader) -> None:
 
 
 def compare(reader: SqliteReader) -> list[Trouble]:
-    """Rebuild the ledger in memory and name each row of the tables that differs from it."""
+    """Rebuild the ledger in memory; name what nobody might say, and each row that differs."""
     connection = reader.connection
-    wanted = fold(reader.entries(), one_chain=len(reader.chains()) == 1).rows
-    return [
+    found: list[Trouble] = []
+
+    def judge(known: Known, at: At, fact: FactBody) -> None:
+        found.extend(
+            Trouble(_STEP, f"entry {at.seq}, a {fact.kind}", what, _PAST_THE_PROGRAM)
+            for what in misgivings(known, at, fact)
+        )
+
+    wanted = fold(reader.entries(), one_chain=len(reader.chains()) == 1, judge=judge).rows
+    return found + [
         trouble
         for table in schema.names()
         for trouble in _differences(
