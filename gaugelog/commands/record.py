@@ -10,6 +10,7 @@ import typer
 from gaugelog.commands.outputs import write_out
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import put, put_json, put_table, say
+from gaugelog.errors import Refused
 
 
 def record(
@@ -39,9 +40,16 @@ def record(
     else:
         found = reviews.record(logbook, point=point, revision=revision)
     target = out or Path(f"{found.file_name}.pdf")
+    _demand_free(target, found.pdf, draft and out is None)
     write_out(target, found.pdf)
     say(f"{point}: {found.description}")
     put(str(target))
+
+
+def _demand_free(target: Path, pdf: bytes, drawn_again: bool) -> None:
+    """Raise Refused rather than write over another file; a draft takes the earlier one's place."""
+    if not drawn_again and target.is_file() and target.read_bytes() != pdf:
+        raise Refused(f"{target} is there already and is another file.", "Name one with --out.")
 
 
 def _short(name: str, value: object) -> str:

@@ -19,7 +19,17 @@ class Evidence(Protocol):
         ...
 
     def get(self, digest: str) -> bytes:
-        """The bytes kept under a digest. Raises StorageTrouble when they are not there."""
+        """The bytes kept under a digest.
+
+        Raises StorageTrouble when they are not there, or are no longer the ones that were kept.
+        """
+        ...
+
+    def as_it_lies(self, digest: str) -> bytes:
+        """The bytes under a digest whatever they are now: for copies that others will check.
+
+        Raises StorageTrouble when there are none.
+        """
         ...
 
     def has(self, digest: str) -> bool:
@@ -65,7 +75,11 @@ class FolderEvidence:
         return digest
 
     def get(self, digest: str) -> bytes:
-        """The bytes kept under a digest; whether they still fit it is for the check to say."""
+        """The bytes kept under a digest. Raises StorageTrouble where they are gone or altered."""
+        return _held_to(digest, self.as_it_lies(digest))
+
+    def as_it_lies(self, digest: str) -> bytes:
+        """The bytes under a digest whatever they are now."""
         if not self.has(digest):
             raise _not_there(digest)
         try:
@@ -90,7 +104,7 @@ class FolderEvidence:
 
 
 class MemoryEvidence:
-    """Evidence in memory, for tests and for checking a packet."""
+    """Evidence in memory, for tests and for checks without a folder."""
 
     def __init__(self) -> None:
         self._kept: dict[str, bytes] = {}
@@ -103,6 +117,10 @@ class MemoryEvidence:
 
     def get(self, digest: str) -> bytes:
         """The bytes kept under a digest."""
+        return _held_to(digest, self.as_it_lies(digest))
+
+    def as_it_lies(self, digest: str) -> bytes:
+        """The bytes under a digest whatever they are now."""
         if not self.has(digest):
             raise _not_there(digest)
         return self._kept[digest]
@@ -114,6 +132,15 @@ class MemoryEvidence:
     def digests(self) -> list[str]:
         """All digests."""
         return sorted(self._kept)
+
+
+def _held_to(digest: str, data: bytes) -> bytes:
+    """The bytes, if they are the ones that the digest names: nothing else is ever handed out."""
+    if sha256(data) != digest:
+        raise StorageTrouble(
+            f"The file {digest} was altered or swapped.", "Restore it from a backup."
+        )
+    return data
 
 
 def _not_there(digest: str) -> StorageTrouble:

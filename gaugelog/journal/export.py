@@ -99,7 +99,7 @@ def _write_evidence(evidence: Evidence, folder: Path, left_out: Collection[str])
     for digest in evidence.digests():
         if digest in left_out:
             continue
-        (place / digest).write_bytes(evidence.get(digest))
+        (place / digest).write_bytes(evidence.as_it_lies(digest))
 
 
 def _heads(reader: Reader) -> list[tuple[str, str]]:

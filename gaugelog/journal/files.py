@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import errno
 import os
 import secrets
 from pathlib import Path
@@ -27,13 +28,23 @@ def write_whole(path: Path, data: bytes, *, mode: int = 0o644) -> None:
 
 
 def settle(draft: Path, path: Path) -> None:
-    """See a draft that was written beside `path` onto the disk, then give it its name.
+    """See a draft that was written beside `path` onto the disk, then give it its new name.
 
-    Raises OSError.
+    Nothing is ever overwritten: raises FileExistsError when the name is taken, else OSError.
     """
     with draft.open("rb+") as file:
         os.fsync(file.fileno())
-    draft.replace(path)
+    try:
+        # Unlike a renaming, a link fails where the name has been taken meanwhile.
+        os.link(draft, path)
+    except FileExistsError:
+        raise
+    except OSError:  # a file system without links
+        if path.exists():
+            raise FileExistsError(errno.EEXIST, os.strerror(errno.EEXIST), str(path)) from None
+        draft.replace(path)
+    else:
+        draft.unlink()
     _sync_folder(path.parent)
 
 

@@ -67,3 +67,12 @@ def test_a_failed_write_leaves_no_litter(tmp_path: Path) -> None:
     with pytest.raises(StorageTrouble):
         FolderEvidence(tmp_path).put(b"x")
     assert [digest] == [path.name for path in (tmp_path / digest[:2]).iterdir()]
+
+
+def test_what_was_swapped_is_never_handed_out_but_can_be_looked_at(tmp_path: Path) -> None:
+    evidence = FolderEvidence(tmp_path)
+    digest = evidence.put(b"revision 2")
+    (tmp_path / digest[:2] / digest).write_bytes(b"revision 1")
+    with pytest.raises(StorageTrouble, match="altered or swapped"):
+        evidence.get(digest)
+    assert b"revision 1" == evidence.as_it_lies(digest)

@@ -119,3 +119,13 @@ def test_what_is_unknown_or_stands_so_already_or_has_no_reason_is_refused(job: J
         _set(job, "K7-03", "free")
     with pytest.raises(Faulty):
         _set(job, "K7-03", "quarantined", reason=" ")
+
+
+def test_a_record_refused_for_its_stock_leaves_no_file_with_both_signatures(job: Job) -> None:
+    job.walk()
+    job.submit()
+    before = job.book.evidence.digests()
+    _set(job, "L-3504", "quarantined", "t.okoro")
+    with pytest.raises(Refused):
+        job.accept()
+    assert before == job.book.evidence.digests()

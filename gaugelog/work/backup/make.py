@@ -56,7 +56,7 @@ def backup(logbook: Logbook, target: Path) -> BackedUp:
     when `target` is there, StorageTrouble when it can't be written; then nothing is left.
     """
     if target.exists():
-        raise Refused(f"{target} is there already.", "Give each backup a name of its own.")
+        raise _taken(target)
     with _written_plainly(target), _scratch(target) as scratch:
         _demand_room(target, logbook.storage.path.stat().st_size)
         with logbook.storage.reading() as reader:
@@ -69,9 +69,16 @@ def backup(logbook: Logbook, target: Path) -> BackedUp:
         draft = scratch / "backup.zip"
         files = _pack(logbook, head, scratch / DATABASE, draft)
         size = draft.stat().st_size
-        settle(draft, target)
+        try:
+            settle(draft, target)
+        except FileExistsError:
+            raise _taken(target) from None
     with opened(target) as archive:
         return BackedUp(target, head, files, size, archive.digest(), report)
+
+
+def _taken(target: Path) -> Refused:
+    return Refused(f"{target} is there already.", "Give each backup a name of its own.")
 
 
 def _pack(logbook: Logbook, head: Head, database: Path, draft: Path) -> int:
@@ -86,7 +93,7 @@ def _pack(logbook: Logbook, head: Head, database: Path, draft: Path) -> int:
         packing.add(SIGN, io.BytesIO(settings))
         packing.add(DATABASE, snapshot)
         for digest in logbook.evidence.digests():
-            packing.add(evidence_name(digest), io.BytesIO(logbook.evidence.get(digest)))
+            packing.add(evidence_name(digest), io.BytesIO(logbook.evidence.as_it_lies(digest)))
         sums = sums_text(packing.sums)
         packing.add(SUMS, io.BytesIO(sums.encode()))
     return len(packing.sums) - len((ABOUT, SUMS))
