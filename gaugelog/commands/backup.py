@@ -124,7 +124,7 @@ def _tell_restored(done: Restored, *, asked: bool) -> None:
     else:
         say(
             "No head was given: what may be missing after the backup is not known.",
-            "  Look at the newest record or packet; restore anew with --head if it goes further.",
+            "  Look at the newest record; restore anew with --head if it goes further.",
         )
     for trouble in done.troubles:
         say(f"  ✗ lost before the backup: {trouble}")

@@ -23,7 +23,7 @@ from gaugelog.journal.keyfile import SealedKey, unseal
 _YEAR = timedelta(days=365.25)
 _AUTHORITY_YEARS = 30
 _LONGEST_NAME = 64
-"""The longest common name that X.509 has room for."""
+"""The longest common name that X.509 has room for, in bytes of UTF-8."""
 
 _ONE_DAY = timedelta(days=1)
 
@@ -36,7 +36,7 @@ def new_key() -> ec.EllipticCurvePrivateKey:
 def check_person_id(person: str) -> None:
     """Refuse a person's id that can't stand in a certificate and a file name. Raises Faulty."""
     if NAME.fullmatch(person) is None:
-        remedy = "Use 1 to 64 letters, digits, dots, hyphens or underscores; begin with a letter."
+        remedy = "Use 1 to 64 letters, digits, dots, hyphens, underscores; the first no sign."
         raise Faulty([Fault("person", f"{person!r} can't be the id of a person.", remedy)])
 
 
@@ -71,7 +71,7 @@ class Authority:
     def create(cls, logbook_name: str, clock: Clock) -> Authority:
         """A new authority for a logbook, good for 30 years."""
         key = new_key()
-        name = _common_name(f"Gaugelog authority of {logbook_name}"[:_LONGEST_NAME].strip())
+        name = _common_name(_cut(f"Gaugelog authority of {logbook_name}"))
         start = _day_before(clock)
         builder = (
             _builder(name, name, key.public_key(), start, start + _AUTHORITY_YEARS * _YEAR)
@@ -126,6 +126,11 @@ class Authority:
         except x509.ExtensionNotFound:
             return x509.AuthorityKeyIdentifier.from_issuer_public_key(self._key.public_key())
         return x509.AuthorityKeyIdentifier.from_issuer_subject_key_identifier(own.value)
+
+
+def _cut(name: str) -> str:
+    """The name, no longer than a certificate has room for, and no letter cut in half."""
+    return name.encode()[:_LONGEST_NAME].decode(errors="ignore").strip()
 
 
 def _common_name(name: str) -> x509.Name:

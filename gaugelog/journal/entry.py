@@ -95,7 +95,7 @@ class Body:
 class Entry:
     """One entry, as the exact bytes that were hashed and signed.
 
-    `body_bytes` is None where the body is withheld, as in a packet for another client;
+    `body_bytes` is None where the body is withheld, as in a copy for another client;
     `signature` is ECDSA P-256 with SHA-256 over the header bytes (DER), on the last entry of a
     deed only.
     """

@@ -41,17 +41,6 @@ class Evidence(Protocol):
         ...
 
 
-def whole(evidence: Evidence, digest: str) -> bytes:
-    """The bytes kept under a digest, and they are the ones. Raises StorageTrouble if not."""
-    data = evidence.get(digest)
-    if sha256(data) != digest:
-        raise StorageTrouble(
-            f"The file {digest} was altered or swapped since it was kept.",
-            "Restore it from a backup; its digest says whether it is the right one.",
-        )
-    return data
-
-
 class FolderEvidence:
     """Evidence in a folder: `ab/abcdef…`, the first two digits of the digest as sub-folder."""
 
@@ -138,7 +127,8 @@ def _held_to(digest: str, data: bytes) -> bytes:
     """The bytes, if they are the ones that the digest names: nothing else is ever handed out."""
     if sha256(data) != digest:
         raise StorageTrouble(
-            f"The file {digest} was altered or swapped.", "Restore it from a backup."
+            f"The file {digest} was altered or swapped since it was kept.",
+            "Restore it from a backup; its digest says whether it is the right one.",
         )
     return data
 

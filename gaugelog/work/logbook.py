@@ -16,6 +16,7 @@ from gaugelog.journal.certificates import certificates_of
 from gaugelog.journal.clock import Clock, Moment, SystemClock
 from gaugelog.journal.entry import Entry, Fact, Head
 from gaugelog.journal.evidence import FolderEvidence
+from gaugelog.journal.header import NAME
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
 from gaugelog.journal.storage.sqlite import SqliteReader, SqliteStorage, SqliteWriter
@@ -136,6 +137,12 @@ class Logbook:
         logbook = cls(folder, _read_settings(folder), clock=clock, on_wait=on_wait)
         with logbook.storage.reading() as reader:
             version = schema.ledger_version(reader.connection)
+        if version > schema.LEDGER_VERSION:
+            raise StorageTrouble(
+                f"The logbook in {folder} was last used with a newer Gaugelog "
+                f"(ledger {version}, this one knows {schema.LEDGER_VERSION}).",
+                "Update Gaugelog: this one would pass over what it does not know.",
+            )
         if version != schema.LEDGER_VERSION:
             logbook._bring_up_to_date()
         return logbook
@@ -151,8 +158,9 @@ class Logbook:
 
     def begin(self, signer: Signer, facts: Callable[[Deed], None]) -> list[Entry]:
         """Keep the first deed: authority, custodian's certificate, and what `facts` adds."""
-        moment, deed = self.clock.now(), new_id()
+        deed = new_id()
         with self.storage.writing(self._on_wait) as writer:
+            moment = self.clock.now()
             making = self._deed(writer, signer, moment, deed)
             facts(making)
             kept = begin(writer, making.facts, signer, moment, self.chain, deed, name=self.name)
@@ -181,8 +189,9 @@ class Logbook:
         Raises Refused when the signer's certificate is not in force, and StorageTrouble when the
         logbook can't be written.
         """
-        moment = self.clock.now()
         with self.storage.writing(self._on_wait) as writer, _ledger_told():
+            # Not before: another may have written while this one waited.
+            moment = self.clock.now()
             standing = certificates_of(writer).standing(
                 signer.fingerprint, signer.person, moment.utc
             )
@@ -287,12 +296,20 @@ def _read_settings(folder: Path) -> dict[str, str]:
     return parse_settings(data, str(folder / SIGN))
 
 
+def _demand_names(settings: dict[str, str]) -> None:
+    """The ids name folders and chains, so they may be nothing but names. Raises ValueError."""
+    for key in ("id", "chain"):
+        if NAME.fullmatch(settings[key]) is None:
+            raise ValueError(f"{key} is no name.")
+
+
 def parse_settings(data: bytes, where: str) -> dict[str, str]:
     """What `logbook.toml` says: `id`, `name`, `chain`. Raises StorageTrouble naming `where`."""
     try:
         found = tomllib.loads(data.decode())
         settings = {key: str(found[key]) for key in ("id", "name", "chain")}
         version = int(found["format"])
+        _demand_names(settings)
     except (tomllib.TOMLDecodeError, UnicodeDecodeError, KeyError, ValueError, TypeError) as error:
         raise StorageTrouble(f"{where} is damaged.", "Restore it from a backup.") from error
     if version > FORMAT:

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from pathlib import Path
 from typing import get_args
 
-from gaugelog.errors import Fault, Faulty, Refused
+from gaugelog.errors import Fault, Faulty, GaugelogError, KeyTrouble, Refused
 from gaugelog.journal.authority import Authority, check_person_id, new_key
 from gaugelog.journal.canonical import canonical
 from gaugelog.journal.certificates import (
@@ -17,7 +17,7 @@ from gaugelog.journal.certificates import (
     certificates_of,
     sheet_erased,
 )
-from gaugelog.journal.clock import Clock
+from gaugelog.journal.clock import Clock, SystemClock
 from gaugelog.journal.keyfile import check_passphrase
 from gaugelog.journal.keys import KeyFolder, Signer, UnlockedKey
 from gaugelog.ledger.people import (
@@ -65,8 +65,8 @@ def start(
     _demand(_faults(custodian))
     check_passphrase(passphrase)
     given = None if authority is None else Authority.from_pkcs12(*authority)
+    ours = given or Authority.create(text_to_keep(name), clock or SystemClock())
     logbook = Logbook.create(folder, name, clock=clock)
-    ours = given or Authority.create(name, logbook.clock)
     try:
         keys = keys_of(logbook.id)
         signer = _certified(logbook, ours, custodian.person)
@@ -100,13 +100,21 @@ def enrol(
         _demand_own_authority(deed, authority)
         if "custodian" not in newcomer.roles:
             _demand_custodian_left(deed, newcomer.person)
+        _demand_own_id(deed, newcomer.person)
         fresh = _certified(logbook, authority, newcomer.person)
         again = deed.view.get(PersonRow, newcomer.person) is not None
         reason = "enrolled anew" if again else "enrolled"
+        _revoke_all(deed, newcomer.person, "enrolled anew with another key")
         deed.keep_fact(certificate_issued(newcomer.person, fresh.certificate, reason))
         _keep_person(deed, newcomer)
     # Only now: a deed that was refused must not push the key in use aside.
-    _save(keys, fresh, passphrase)
+    try:
+        _save(keys, fresh, passphrase)
+    except GaugelogError as error:
+        raise KeyTrouble(
+            f"{newcomer.person} was enrolled, but the key was not kept. {error.message}",
+            "Make room or leave to write there, then enrol the person anew.",
+        ) from error
     return fresh
 
 
@@ -123,13 +131,26 @@ def revoke(
         demand_role(deed.view, custodian.person, "custodian")
         row = _known(deed, person)
         _demand_custodian_left(deed, person)
-        certificates = certificates_of(deed.writer)
-        for issued in certificates.of_person(person):
-            if not certificates.is_revoked(issued.fingerprint):
-                deed.keep_fact(certificate_revoked(person, issued.fingerprint, reason))
+        _revoke_all(deed, person, reason)
         deed.keep(PersonLeft(person=person, reason=reason), [person])
         if erase_name:
             _erase(deed, row, reason)
+
+
+def _revoke_all(deed: Deed, person: str, reason: str) -> None:
+    """Revoke what certificates of the person are still in force, as part of the deed."""
+    certificates = certificates_of(deed.writer)
+    for issued in certificates.of_person(person):
+        if not certificates.is_revoked(issued.fingerprint):
+            deed.keep_fact(certificate_revoked(person, issued.fingerprint, reason))
+
+
+def _demand_own_id(deed: Deed, person: str) -> None:
+    """Raise Faulty for an id that differs from another only by capitals: keys are files."""
+    for row in deed.view.all(PersonRow):
+        if row.id != person and row.id.casefold() == person.casefold():
+            what = f"{person!r} differs from {row.id} only by capital letters."
+            raise Faulty([Fault("person", what, "Choose an id that nobody takes for theirs.")])
 
 
 def _known(deed: Deed, person: str) -> PersonRow:

@@ -6,7 +6,6 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.journal.append import touched_since
-from gaugelog.journal.evidence import whole
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
@@ -56,10 +55,10 @@ def submit(
         demand_complete(view, row)
         request = _request(view, row, head, meaning, logbook)
         pdf = maker.submitted(view, request, signer)
-    file = logbook.evidence.put(pdf)
     with logbook.deed(signer) as deed:
         _demand_untouched(deed, row, request)
         demand_complete(deed.view, row)
+        file = logbook.evidence.put(pdf)
         amended = under_amendment(deed.view, row.id)
         body = PointSubmitted(
             point=row.id,
@@ -85,8 +84,7 @@ def accept(
     demand_meaning(meaning)
     with logbook.reading() as view:
         row, record = _under_review(view, point, signer, "accept it")
-        demand_untouched(view, row, record)
-        demand_changes_seen(row)
+        _demand_fit(view, row, record)
         stamp = Stamp(
             signer.person,
             view.name(signer.person),
@@ -94,15 +92,15 @@ def accept(
             logbook.clock.now(),
             logbook.head().printed,
         )
-    pdf = maker.accepted(whole(logbook.evidence, record.submitted_file), stamp, signer)
-    file = logbook.evidence.put(pdf)
+    pdf = maker.accepted(logbook.evidence.get(record.submitted_file), stamp, signer)
     with logbook.deed(signer) as deed:
         latest, now = _under_review(deed.view, point, signer, "accept it")
-        demand_untouched(deed.view, latest, now)
-        demand_changes_seen(latest)
-        demand_place_free(deed.view, latest)
         if now.id != record.id:
             raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
+        _demand_fit(deed.view, latest, now)
+        _demand_told(deed, latest, now)
+        # Only now: a file with both signatures is never left behind by a deed that was refused.
+        file = logbook.evidence.put(pdf)
         body = PointAccepted(
             point=row.id,
             revision=record.revision,
@@ -157,7 +155,7 @@ def record(logbook: Logbook, *, point: str, revision: int | None = None) -> Reco
     found = rows[-1]
     file = found.accepted_file or found.submitted_file
     return RecordFile(
-        whole(logbook.evidence, file),
+        logbook.evidence.get(file),
         f"{row.label}-r{found.revision}",
         f"revision {found.revision}, {found.state}, {_validity(found)}; SHA-256 {file}",
     )
@@ -227,6 +225,24 @@ def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[Po
             "Have a second person review it; the two signatures are of two people.",
         )
     return row, rows[-1]
+
+
+def _demand_fit(view: View, row: PointRow, record: RecordRow) -> None:
+    """Raise Refused when what the record tells no longer holds at the point."""
+    demand_untouched(view, row, record)
+    demand_changes_seen(row)
+    demand_place_free(view, row)
+
+
+def _demand_told(deed: Deed, row: PointRow, record: RecordRow) -> None:
+    """Raise Refused when the journal holds more about the point than its record can tell."""
+    later = touched_since(deed.writer, _about(deed.view, row), record.seq, deed.chain)
+    if later:
+        raise Refused(
+            f"{row.label} changed since its record was submitted (entry {later[0].header.seq}, "
+            f"{later[0].header.kind}).",
+            "Return it; it is submitted anew with what is new.",
+        )
 
 
 def _demand_untouched(deed: Deed, row: PointRow, request: RecordRequest) -> None:

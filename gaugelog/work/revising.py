@@ -102,6 +102,7 @@ def see(
         row = point_row(deed.view, point)
         demand_role(deed.view, signer.person, "reviewer")
         demand_second_person(deed.view, signer.person, row.id, "look at its changes")
+        _demand_not_own(deed, signer.person)
         if not json.loads(row.touched):
             raise Refused(f"No change of the plan waits at {row.label}.")
         if redo_from:
@@ -124,6 +125,16 @@ def released_campaign(view: View) -> CampaignRow:
     if not rows:
         raise Refused("No plan is released.", "Load one with `gaugelog plan load FOLDER`.")
     return rows[-1]
+
+
+def _demand_not_own(deed: Deed, person: str) -> None:
+    """Raise Refused when the one who looks at a revision released it."""
+    last = list(deed.writer.of_kinds([PlanReleased.kind]))[-1:]
+    if last and last[0].header.actor == person:
+        raise Refused(
+            f"{person} released this revision and can't look at its changes.",
+            "Have another reviewer look.",
+        )
 
 
 def _demand_open(deed: Deed, row: PointRow, step: str) -> None:

@@ -3,11 +3,15 @@
 from __future__ import annotations
 
 import sqlite3
+from collections.abc import Iterator
+from contextlib import contextmanager
 from pathlib import Path
 
 import pytest
 
 from gaugelog.errors import StorageTrouble
+from gaugelog.journal.storage.port import OnWait
+from gaugelog.journal.storage.sqlite import SqliteStorage, SqliteWriter
 from gaugelog.work import steps
 from gaugelog.work.history import check_logbook
 from gaugelog.work.logbook import SIGN, Logbook, find_logbook
@@ -93,3 +97,34 @@ def test_any_name_of_a_logbook_is_read_back(tmp_path: Path, name: str) -> None:
     made = Logbook.create(tmp_path / "book", name)
     assert name == made.name
     assert name == Logbook.open(tmp_path / "book").name
+
+
+def test_a_logbook_of_a_newer_version_is_left_alone(job: Job) -> None:
+    with sqlite3.connect(job.book.folder / "logbook.db") as database:
+        database.execute("UPDATE ledger_version SET value = 9999")
+    database.close()
+    with pytest.raises(StorageTrouble, match="newer Gaugelog"):
+        Logbook.open(job.book.folder)
+
+
+@pytest.mark.parametrize("change", [('id = "', 'id = "../'), ('chain = "', 'chain = "x y')])
+def test_settings_that_are_no_names_are_refused(job: Job, change: tuple[str, str]) -> None:
+    file = job.book.folder / "logbook.toml"
+    file.write_text(file.read_text().replace(*change))
+    with pytest.raises(StorageTrouble, match="damaged"):
+        Logbook.open(job.book.folder)
+
+
+def test_a_deed_that_waited_bears_the_time_it_was_kept(job: Job) -> None:
+    before = job.book.clock.now().utc
+
+    class Waiting(SqliteStorage):
+        @contextmanager
+        def writing(self, on_wait: OnWait | None = None) -> Iterator[SqliteWriter]:
+            job.clock.advance(20)
+            with super().writing(on_wait) as writer:
+                yield writer
+
+    job.book.storage = Waiting(job.book.folder / "logbook.db")
+    with job.book.deed(job.keys["t.okoro"]) as deed:
+        assert 20 == (deed.moment.utc - before).total_seconds()

@@ -6,7 +6,7 @@ from pathlib import Path
 
 import pytest
 
-from gaugelog.errors import Faulty, KeyTrouble, Refused
+from gaugelog.errors import Faulty, KeyTrouble, Refused, StorageTrouble
 from gaugelog.ledger.people import PersonRow
 from gaugelog.work import people, steps
 from gaugelog.work.history import check_logbook
@@ -116,3 +116,39 @@ def test_a_name_is_erased_once(staff: Job) -> None:
     with pytest.raises(Refused, match="erased already"):
         people.revoke(staff.book, custodian, person="t.okoro", reason="again", erase_name=True)
     assert steps.worklist(staff.book) == []
+
+
+def test_enrolled_anew_the_earlier_key_signs_no_more(staff: Job) -> None:
+    old = staff.keys["t.okoro"]
+    _enrol(staff, Newcomer("t.okoro", "Tobe Okoro", "TO", ("technician",)))
+    with pytest.raises(Refused, match="revoked"), staff.book.deed(old):
+        pass
+    with staff.book.deed(staff.keys["t.okoro"]):
+        pass
+    assert check_logbook(staff.book).ok
+
+
+def test_a_custodian_enrolls_herself_anew_with_the_key_that_ends_there(staff: Job) -> None:
+    _enrol(staff, Newcomer("c.ward", "Cleo Ward", "CW", ("custodian", "planner")))
+    _enrol(staff, SECOND)
+    assert check_logbook(staff.book).ok
+
+
+def test_an_id_that_differs_by_capitals_alone_is_refused(staff: Job) -> None:
+    with pytest.raises(Faulty) as raised:
+        _enrol(staff, Newcomer("T.Okoro", "Another", "AO", ("technician",)))
+    assert "differs from t.okoro only by capital" in raised.value.faults[0].what
+
+
+def test_a_key_that_cannot_be_kept_is_told_with_what_was_kept(
+    staff: Job, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    def full(*_: object) -> None:
+        raise StorageTrouble("The disk is full.", "Make room.")
+
+    monkeypatch.setattr(people, "_save", full)
+    with pytest.raises(KeyTrouble, match="was enrolled, but the key was not kept") as raised:
+        _enrol(staff, Newcomer("n.ew", "Nia Ew", "NE", ("technician",)))
+    assert "enrol the person anew" in raised.value.remedy
+    monkeypatch.undo()
+    _enrol(staff, Newcomer("n.ew", "Nia Ew", "NE", ("technician",)))

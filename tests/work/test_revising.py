@@ -12,9 +12,10 @@ from gaugelog.ledger.campaign import CampaignRow
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.revisions import PlanRevised
 from gaugelog.ledger.story import StoryRow
-from gaugelog.work import plan, reviews, revising, steps
+from gaugelog.work import people, plan, reviews, revising, steps
 from gaugelog.work.history import check_logbook
-from tests.work.job import DEMO, WALK, Job
+from gaugelog.work.people import Newcomer
+from tests.work.job import DEMO, WALK, WORD, Job
 
 WHY = "drawing revision C"
 SHIFT = ("150,220,outside", "180,220,outside")
@@ -223,7 +224,7 @@ def test_an_accepted_point_keeps_its_record_and_its_state(planner: Planner) -> N
     assert ["submitted", "accepted", "plan changed", "change seen"] == turns
 
 
-def test_a_point_under_review_is_not_accepted_before_its_change_is_seen(planner: Planner) -> None:
+def test_a_point_under_review_whose_plan_changed_is_submitted_anew(planner: Planner) -> None:
     job = planner.job
     job.walk()
     job.submit()
@@ -232,7 +233,28 @@ def test_a_point_under_review_is_not_accepted_before_its_change_is_seen(planner:
     with pytest.raises(Refused, match="The plan changed under FB-1"):
         job.accept()
     _see(job)
-    assert 1 == job.accept().revision
+    # The record tells what the plan said before; nobody signs that.
+    with pytest.raises(Refused, match="changed since its record was submitted"):
+        job.accept()
+    reviews.give_back(job.book, job.keys["q.reyes"], point="FB-1", reason="the plan changed")
+    job.submit()
+    assert 2 == job.accept().revision
+
+
+def test_who_released_a_revision_does_not_look_at_its_changes(planner: Planner) -> None:
+    job = planner.job
+    job.walk(3)
+    planner.edit("grids.csv", ",0,0,underside", ",40,0,underside").draft()
+    people.enrol(
+        *(job.book, job.keys["c.ward"], job.folder.unlock_authority(WORD), job.folder),
+        newcomer=Newcomer("r.both", "Ro Both", "RB", ("planner", "reviewer")),
+        passphrase=WORD,
+    )
+    job.keys["r.both"] = job.folder.unlock("r.both", WORD)
+    plan.release(job.book, job.keys["r.both"], meaning="I release.")
+    with pytest.raises(Refused, match="released this revision"):
+        _see(job, who="r.both")
+    _see(job)
 
 
 def test_a_dropped_point_goes_where_nothing_was_done_and_else_is_withdrawn(

@@ -177,3 +177,10 @@ def test_a_name_with_quotes_and_line_breaks_comes_back_as_it_was(tmp_path: Path)
     name = 'Bridge "A" \\ 1\nsecond line \u007f'
     book = _start(tmp_path / "book", tmp_path / "keys", name=name)
     assert name == Logbook.open(book.folder).name
+
+
+@pytest.mark.parametrize("name", ["Prüfstand für große Brückenträger und Übergänge Süd", "桥" * 60])
+def test_a_long_name_of_letters_beyond_ascii_starts_a_logbook(tmp_path: Path, name: str) -> None:
+    book = _start(tmp_path / "book", tmp_path / "keys", name=name)
+    assert name == book.name
+    assert check_logbook(book).ok

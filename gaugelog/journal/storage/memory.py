@@ -1,4 +1,4 @@
-"""A storage in memory: for tests, for trying a deed, and for checking a packet."""
+"""A storage in memory: for tests, and for checks without a file."""
 
 from __future__ import annotations
 
