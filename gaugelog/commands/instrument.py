@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections import Counter
 from pathlib import Path
 from typing import TYPE_CHECKING, Annotated
 
@@ -12,7 +13,9 @@ from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put_json, put_table, say
 
 if TYPE_CHECKING:
+    from gaugelog.intake.papers import Paper
     from gaugelog.ledger.instruments import InstrumentAdded
+    from gaugelog.ledger.papers import PaperOf
 
 group = typer.Typer(help="Instruments: add with their certificates, list.")
 
@@ -24,40 +27,69 @@ def add(
     as_: As = "",
     secret_fd: SecretFd = None,
 ) -> None:
-    """Add instruments, or enter an instrument's new certificate (same label)."""
+    """Add instruments, or enter an instrument's new certificate (same label).
+
+    A key certificate_file names the file of the certificate, beside the table.
+    """
     from gaugelog.intake.instruments import load_instruments
     from gaugelog.journal.ids import new_id
     from gaugelog.work import instruments
 
     logbook = open_logbook(ctx)
-    facts = load_instruments(file, new_id=new_id)
+    papers: dict[str, Paper] = {}
+    facts = load_instruments(file, new_id=new_id, papers=papers)
     signer = unlock(logbook, as_, Secrets(secret_fd))
-    instruments.add(logbook, signer, facts)
-    say(f"{len(facts)} instruments entered.")
+    instruments.add(logbook, signer, facts, papers)
+    kept = f", {len(papers)} certificates kept" if papers else ""
+    say(f"{len(facts)} instruments entered{kept}.")
+
+
+@group.command()
+def certificate(
+    ctx: typer.Context,
+    label: Annotated[str, typer.Argument(help="Label of the instrument.")],
+    file: Annotated[Path, typer.Argument(help="The certificate: a PDF, a scan, any file.")],
+    note: Annotated[str, typer.Option(help="A remark kept with it.")] = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Keep the file of an instrument's certificate in force as evidence, by its SHA-256."""
+    from gaugelog.intake.papers import load_paper
+    from gaugelog.work import papers
+
+    logbook = open_logbook(ctx)
+    paper = load_paper(file)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    kinds: tuple[PaperOf, ...] = ("instrument",)
+    kept = papers.add(logbook, signer, paper, label=label, kinds=kinds, note=note)
+    say(f"{kept.label}, {kept.number}: {kept.name} is kept; SHA-256 {kept.file}")
 
 
 @group.command("list")
 def list_(ctx: typer.Context, json: Json = False) -> None:
     """List the instruments with their due dates and ranges."""
     from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+    from gaugelog.ledger.papers import CertificateRow
 
     logbook = open_logbook(ctx)
     with logbook.reading() as view:
         rows = view.all(InstrumentRow)
+        papers = Counter((row.item, row.number) for row in view.all(CertificateRow))
     found = [InstrumentAdded.model_validate_json(row.data) for row in rows]
+    counted = [(item, papers[item.id, item.certificate_number]) for item in found]
     if json:
-        put_json([as_json(item) for item in found])
+        put_json([as_json(item) | {"certificates": files} for item, files in counted])
         return
     put_table(
         "Instruments",
-        ["label", "type", "serial", "certificate", "due", "range", ">accuracy"],
-        [cells for item in found for cells in _rows(item)],
+        ["label", "type", "serial", "certificate", ">files", "due", "range", ">accuracy"],
+        [cells for item, files in counted for cells in _rows(item, files)],
         empty="No instrument is entered. Try: gaugelog instrument add instruments.toml",
     )
 
 
-def _rows(item: InstrumentAdded) -> list[list[str]]:
-    head = [item.label, item.type, item.serial, item.certificate_number, item.due]
+def _rows(item: InstrumentAdded, files: int) -> list[list[str]]:
+    head = [item.label, item.type, item.serial, item.certificate_number, str(files), item.due]
     return [
         [
             *(head if index == 0 else [""] * len(head)),

@@ -13,12 +13,13 @@ from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import put_json, put_table, say
 
 if TYPE_CHECKING:
+    from gaugelog.ledger.papers import PaperOf
     from gaugelog.ledger.standing import Standing
     from gaugelog.ledger.stock import ConsumableReceived, LotReceived
     from gaugelog.ledger.view import View
 
 group = typer.Typer(
-    help="Stock: receive gauge lots and consumables, list them, set what may be used."
+    help="Stock: receive lots, keep their certificates, list them, set what may be used."
 )
 
 Label = Annotated[
@@ -39,7 +40,9 @@ def receive(
 ) -> None:
     """Receive gauge lots and consumables from CSV or XLSX files.
 
-    Every fault of every file is named at once; nothing is stored unless all is right.
+    Every fault of every file is named at once; nothing is stored unless all is right. More packs
+    of a lot that is in stock are received in the same way. A column certificate_file names the
+    file of the certificate, beside the table.
     """
     from gaugelog.intake.stock import load_stock
     from gaugelog.journal.ids import new_id
@@ -48,8 +51,31 @@ def receive(
     logbook = open_logbook(ctx)
     facts = load_stock(files, new_id=new_id)
     signer = unlock(logbook, as_, Secrets(secret_fd))
-    stock.receive(logbook, signer, facts)
-    say(f"Received: {len(facts.lots)} gauge lots, {len(facts.consumables)} consumables.")
+    done = stock.receive(logbook, signer, facts, facts.papers)
+    more = f", {done.packs} packs more of lots in stock" if done.packs else ""
+    papers = f", {done.certificates} certificates" if done.certificates else ""
+    say(f"Received: {done.lots} gauge lots{more}, {done.consumables} consumables{papers}.")
+
+
+@group.command()
+def certificate(
+    ctx: typer.Context,
+    label: Annotated[str, typer.Argument(help="A gauge lot or a consumable lot.")],
+    file: Annotated[Path, typer.Argument(help="The certificate: a PDF, a scan, any file.")],
+    note: Annotated[str, typer.Option(help="A remark kept with it.")] = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Keep the certificate of a lot as evidence, bit for bit, by its SHA-256."""
+    from gaugelog.intake.papers import load_paper
+    from gaugelog.work import papers
+
+    logbook = open_logbook(ctx)
+    paper = load_paper(file)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    kinds: tuple[PaperOf, ...] = ("lot", "consumable")
+    kept = papers.add(logbook, signer, paper, label=label, kinds=kinds, note=note)
+    say(f"{kept.item_kind} {kept.label}: {kept.name} is kept; SHA-256 {kept.file}")
 
 
 @group.command("list")
@@ -64,13 +90,13 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
         return
     put_table(
         "Gauge lots",
-        ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other"],
+        ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other", ">certificates"],
         [[str(value) for value in row.values()] for row in lots],
         empty="No gauge lot has been received. Try: gaugelog stock receive lots.csv",
     )
     put_table(
         "Consumables",
-        ["lot", "kind", "name", "expires"],
+        ["lot", "kind", "name", "expires", ">certificates"],
         [[str(value) for value in row.values()] for row in consumables],
         empty="No consumable has been received.",
     )
@@ -139,11 +165,13 @@ def _standing(view: View) -> list[dict[str, str]]:
 def _lots(view: View) -> list[dict[str, Any]]:
     from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 
+    papers = _papers(view)
     states: dict[str, Counter[str]] = {}
     for gauge in view.all(GaugeRow):
         states.setdefault(gauge.lot, Counter())[gauge.state] += 1
     return [
         _lot(LotReceived.model_validate_json(row.data), states.get(row.id, Counter()))
+        | {"certificates": papers[row.id]}
         for row in view.all(LotRow)
     ]
 
@@ -165,7 +193,19 @@ def _consumables(view: View) -> list[dict[str, Any]]:
     from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow
 
     rows = view.all(ConsumableRow)
-    return [_consumable(ConsumableReceived.model_validate_json(row.data)) for row in rows]
+    papers = _papers(view)
+    return [
+        _consumable(ConsumableReceived.model_validate_json(row.data))
+        | {"certificates": papers[row.id]}
+        for row in rows
+    ]
+
+
+def _papers(view: View) -> Counter[str]:
+    """How many certificates are kept of what, by its id."""
+    from gaugelog.ledger.papers import CertificateRow
+
+    return Counter(row.item for row in view.all(CertificateRow))
 
 
 def _consumable(lot: ConsumableReceived) -> dict[str, Any]:

@@ -8,6 +8,7 @@ from pathlib import Path
 from gaugelog.errors import Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct
 from gaugelog.intake.files import read_bytes, toml_of
+from gaugelog.intake.papers import Paper, paper_of
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange
 
 QUANTITY_UNITS: dict[str, tuple[str, ...]] = {
@@ -22,12 +23,23 @@ QUANTITY_UNITS: dict[str, tuple[str, ...]] = {
 """What an instrument may measure, and the units its ranges are given in."""
 
 
-def load_instruments(path: Path, new_id: Callable[[], str]) -> tuple[InstrumentAdded, ...]:
-    """Understand an instruments file. Raises Faulty naming every fault at once."""
+def load_instruments(
+    path: Path, new_id: Callable[[], str], papers: dict[str, Paper] | None = None
+) -> tuple[InstrumentAdded, ...]:
+    """Understand an instruments file. Raises Faulty naming every fault at once.
+
+    The certificates' files that it names are added to `papers`, by the id of the instrument.
+    """
+    given = papers if papers is not None else {}
     faults: Gathered = []
     top = Fields(path.name, toml_of(path.name, read_bytes(path)), faults, joint=", ")
     tables = top.tables("instrument")
     found = [_instrument(each, new_id) for each in tables]
+    for each, item in zip(tables, found, strict=True):
+        paper = paper_of(each, path.parent)
+        if paper is not None:
+            given[item.id] = paper
+        each.done()
     distinct(tables, "label", [item.label for item in found])
     top.done()
     if faults:
@@ -53,7 +65,6 @@ def _instrument(each: Fields, new_id: Callable[[], str]) -> InstrumentAdded:
     )
     if each.sound("due", "calibrated_on") and found.due < found.calibrated_on:
         each.fault("due", "lies before the calibration.")
-    each.done()
     return found
 
 

@@ -15,6 +15,7 @@ from gaugelog.ledger.buffer import Buffer
 from gaugelog.ledger.campaign import CampaignRow, ChannelRow, CriteriaRow
 from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.ledger.instruments import InstrumentRow
+from gaugelog.ledger.papers import CertificateRow
 from gaugelog.ledger.people import PersonRow
 from gaugelog.ledger.photos import PhotoRow
 from gaugelog.ledger.points import GridRow, PointRow
@@ -28,7 +29,7 @@ from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 8
+LEDGER_VERSION = 9
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -51,6 +52,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     RevisionRow,
     StandingRow,
     PhotoRow,
+    CertificateRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"

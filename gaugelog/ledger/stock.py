@@ -8,7 +8,7 @@ from typing import ClassVar, Literal
 from sqlmodel import Field, SQLModel
 
 from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
-from gaugelog.ledger.rows import At, Change, Known, Put
+from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 GaugeState = Literal["on shelf", "in service", "removed", "scrapped"]
 ConsumableKind = Literal["adhesive", "coating", "solder", "cable", "cleaner", "other"]
@@ -61,6 +61,17 @@ class LotReceived(FactBody):
     packs: tuple[PackReceived, ...]
     certificate: str = ""
     """Digest of the certificate among the evidence, or empty."""
+
+
+class PacksReceived(FactBody):
+    """More packs of a lot that is in stock, under the same certificate."""
+
+    kind: ClassVar[str] = "packs.received"
+
+    lot: Id
+    label: str
+    received_on: DateText
+    packs: tuple[PackReceived, ...]
 
 
 class CurePoint(Part):
@@ -120,6 +131,8 @@ class GaugeRow(SQLModel, table=True):
     state: str
     point: str
     """The point it was taken for, or empty."""
+    received_on: str
+    """The day its pack came."""
 
 
 class ConsumableRow(SQLModel, table=True):
@@ -151,21 +164,29 @@ def apply_lot_received(_known: Known, at: At, fact: LotReceived) -> Iterator[Cha
             "seq": at.seq,
         },
     )
-    for pack in fact.packs:
+    yield from _gauges(fact.id, fact.packs, fact.received_on)
+
+
+def apply_packs_received(known: Known, _at: At, fact: PacksReceived) -> Iterator[Change]:
+    """The gauges of the packs are on the shelf with the others of their lot."""
+    have(known, "lot", fact.lot)
+    yield from _gauges(fact.lot, fact.packs, fact.received_on)
+
+
+def _gauges(lot: str, packs: tuple[PackReceived, ...], received_on: str) -> Iterator[Change]:
+    for pack in packs:
         for number, piece in enumerate(pack.pieces, start=1):
-            yield Put("gauge", _gauge(fact, pack, number, piece))
-
-
-def _gauge(lot: LotReceived, pack: PackReceived, number: int, piece: str) -> dict[str, object]:
-    return {
-        "id": piece,
-        "label": f"{pack.label}/{number}",
-        "lot": lot.id,
-        "pack": pack.id,
-        "number": number,
-        "state": "on shelf",
-        "point": "",
-    }
+            gauge = {
+                "id": piece,
+                "label": f"{pack.label}/{number}",
+                "lot": lot,
+                "pack": pack.id,
+                "number": number,
+                "state": "on shelf",
+                "point": "",
+                "received_on": received_on,
+            }
+            yield Put("gauge", gauge)
 
 
 def apply_consumable_received(_known: Known, at: At, fact: ConsumableReceived) -> Iterator[Change]:

@@ -2,18 +2,27 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Mapping
+from types import MappingProxyType
 
+from gaugelog.intake.papers import Paper
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.rules.who import demand_role
 from gaugelog.work.logbook import Logbook
+from gaugelog.work.papers import Item, keep_paper
 
 
-def add(logbook: Logbook, signer: Signer, facts: Iterable[InstrumentAdded]) -> None:
+def add(
+    logbook: Logbook,
+    signer: Signer,
+    facts: Iterable[InstrumentAdded],
+    papers: Mapping[str, Paper] = MappingProxyType({}),
+) -> None:
     """Add instruments; one whose label is known keeps its id and gets the new certificate.
 
-    Raises Refused without a fitting role.
+    `papers` are the certificates' files by the id in `facts`. Raises Refused without a fitting
+    role.
     """
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner", "technician", "custodian")
@@ -23,3 +32,7 @@ def add(logbook: Logbook, signer: Signer, facts: Iterable[InstrumentAdded]) -> N
             instrument = fact.model_copy(update={"id": there})
             evidence = [fact.certificate] if fact.certificate else []
             deed.keep(instrument, [instrument.id], evidence=evidence)
+            if fact.id in papers:
+                number = instrument.certificate_number
+                item: Item = ("instrument", instrument.id, instrument.label, number)
+                keep_paper(deed, item, papers[fact.id])

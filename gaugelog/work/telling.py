@@ -64,6 +64,8 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "person.enrolled": lambda fact: f"{fact['person']} as {', '.join(fact['roles'])}",
     "person.left": lambda fact: f"{fact['person']}, {fact['reason']}",
     "lot.received": lambda fact: f"{fact['label']}, {_shown(fact['nominal_resistance'])}",
+    "packs.received": lambda fact: f"{fact['label']}, {len(fact['packs'])} packs more",
+    "certificate.kept": lambda fact: f"{fact['label']}, {fact['name']}",
     "consumable.received": lambda fact: f"{fact['label']}, {fact['type']}",
     "instrument.added": lambda fact: f"{fact['label']}, due {fact['due']}",
     "campaign.planned": lambda fact: str(fact["label"]),

@@ -12,11 +12,13 @@ import pytest
 from gaugelog.intake.campaign import WIRES
 from gaugelog.intake.circuits import ARRANGEMENTS
 from gaugelog.intake.circuits import COLUMNS as CIRCUITS
+from gaugelog.intake.consumables import CONSUMABLE_COLUMNS
 from gaugelog.intake.criteria import STAGES
 from gaugelog.intake.grids import COLUMNS as GRIDS
+from gaugelog.intake.lots import LOT_COLUMNS
 from gaugelog.intake.plan import load_plan
 from gaugelog.intake.route import shipped_routes
-from gaugelog.intake.stock import CONSUMABLE_COLUMNS, LOT_COLUMNS, load_stock
+from gaugelog.intake.stock import load_stock
 from gaugelog.intake.typed import parse_quantity
 from tests.intake.conftest import counter
 from tests.intake.test_workbook import table_of, xlsx

@@ -9,11 +9,13 @@ from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from gaugelog.intake.circuits import COLUMNS as CIRCUIT_COLUMNS
+from gaugelog.intake.consumables import CONSUMABLE_COLUMNS
 from gaugelog.intake.files import toml_of
 from gaugelog.intake.grids import COLUMNS as GRID_COLUMNS
 from gaugelog.intake.instruments import load_instruments
+from gaugelog.intake.lots import LOT_COLUMNS
 from gaugelog.intake.route import read_route, shipped_routes
-from gaugelog.intake.stock import CONSUMABLE_COLUMNS, LOT_COLUMNS, load_stock
+from gaugelog.intake.stock import load_stock
 from tests.intake.conftest import DEMO, counter, set_cell, told, understood
 
 PLAN_FILES = ("campaign.toml", "criteria.toml", "grids.csv", "circuits.csv")

@@ -6,6 +6,7 @@ from pathlib import Path
 
 import pytest
 
+from gaugelog.intake.papers import Paper
 from gaugelog.intake.stock import load_stock
 from tests.intake.conftest import DEMO, change, counter, faults_of
 
@@ -68,6 +69,47 @@ def test_negative_and_zero_figures_are_told(tmp_path: Path) -> None:
         fault.where.rsplit(" ", 1)[1] for fault in faults_of(lambda: load_stock([file], counter()))
     }
     assert {"resistance_ohm", "resistance_tolerance_percent"} <= columns
+
+
+@pytest.mark.parametrize(
+    ("name", "said"),
+    [
+        ("instruments.toml", "is TOML, no table of what was received."),
+        ("plan/grids.csv", "holds neither gauge lots nor consumables."),
+        ("plan/circuits.csv", "holds neither gauge lots nor consumables."),
+        ("plan/campaign.toml", "is TOML, no table of what was received."),
+    ],
+)
+def test_another_kind_of_file_is_one_fault(name: str, said: str) -> None:
+    found = faults_of(lambda: load_stock([DEMO / name, DEMO / "lots.csv"], counter()))
+    assert [(Path(name).name, said)] == [(fault.where, fault.what) for fault in found]
+
+
+@pytest.mark.parametrize("data", [b"just a note\n", b"\x89PNG\r\n\x1a\n\0", b'"'])
+def test_a_text_or_a_picture_given_for_a_table_is_one_fault(tmp_path: Path, data: bytes) -> None:
+    (tmp_path / "a.csv").write_bytes(data)
+    (fault,) = faults_of(lambda: load_stock([tmp_path / "a.csv"], counter()))
+    assert "a.csv" == fault.where.split(",")[0]
+
+
+def test_the_certificate_that_a_row_names_is_read_from_beside_the_table(tmp_path: Path) -> None:
+    lots, others = _copy("lots.csv", tmp_path), _copy("consumables.csv", tmp_path)
+    for file, first in ((lots, "L-3504"), (others, "AD-612")):
+        head, *rows = file.read_text(encoding="utf-8").splitlines()
+        named = [f"{row},{'cert.pdf' if row.startswith(first) else ''}" for row in rows]
+        file.write_text("\n".join([f"{head},certificate_file", *named]), encoding="utf-8")
+    found = faults_of(lambda: load_stock([lots, others], counter()))
+    assert [
+        "lots.csv, row 2, column certificate_file",
+        "lots.csv, row 3, column certificate_file",
+        "consumables.csv, row 2, column certificate_file",
+    ] == [fault.where for fault in found]
+    assert found[0].what.startswith("cert.pdf can't be read: ")
+    (tmp_path / "cert.pdf").write_bytes(b"%PDF-1.7 certificate")
+    stock = load_stock([lots, others], counter())
+    adhesive = next(item for item in stock.consumables if item.label == "AD-612")
+    paper = Paper("cert.pdf", b"%PDF-1.7 certificate")
+    assert {stock.lots[0].id: (paper,), adhesive.id: (paper,)} == stock.papers
 
 
 def test_a_missing_file_is_told(tmp_path: Path) -> None:

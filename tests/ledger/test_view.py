@@ -19,7 +19,7 @@ from tests.work.job import released_job
 
 def _gauge(number: int, label: str) -> Put:
     row = {"id": f"g{number}", "label": label, "lot": "l", "pack": "p", "number": number}
-    return Put("gauge", {**row, "state": "on shelf", "point": ""})
+    return Put("gauge", {**row, "state": "on shelf", "point": "", "received_on": ""})
 
 
 @pytest.fixture

@@ -14,7 +14,9 @@ from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
 from gaugelog.work import instruments, plan, steps, stock
-from tests.work.job import DEMO, Job
+from gaugelog.work.history import check_logbook
+from gaugelog.work.standing import set_standing
+from tests.work.job import DEMO, WALK, Job
 from tests.work.walking import typed_here, walk_to
 
 
@@ -46,11 +48,12 @@ def test_what_was_received_before_is_told_all_at_once(job: Job) -> None:
     again = load_stock([DEMO / "lots.csv", DEMO / "consumables.csv"], new_id=new_id)
     with pytest.raises(Faulty) as caught:
         stock.receive(job.book, job.keys["c.ward"], again)
-    assert len(again.lots) + len(again.consumables) == len(caught.value.faults)
+    packs = sum(len(lot.packs) for lot in again.lots)
+    assert packs + len(again.consumables) == len(caught.value.faults)
 
 
 def test_one_that_is_there_keeps_the_whole_delivery_out(job: Job) -> None:
-    delivery = Delivery((_lot("L-9", "P9"), _lot("l-3504", "P8")))
+    delivery = Delivery((_lot("L-9", "P9"),), (_consumable("ad-612"),))
     with pytest.raises(Faulty):
         stock.receive(job.book, job.keys["c.ward"], delivery)
     with job.book.reading() as view:
@@ -61,6 +64,55 @@ def test_two_packs_of_one_label_are_refused(job: Job) -> None:
     with pytest.raises(Faulty) as caught:
         stock.receive(job.book, job.keys["c.ward"], Delivery((_lot("L-9", "k7-03"),)))
     assert "lot L-9, pack k7-03: has the label of a pack that is in stock" in _faults(caught)
+
+
+def test_packs_that_come_later_join_their_lot(job: Job) -> None:
+    later = _lot("l-3504", "K7-09").model_copy(update={"received_on": "2026-11-16"})
+    done = stock.receive(job.book, job.keys["c.ward"], Delivery((later,)))
+    assert (0, 1, 0) == (done.lots, done.packs, done.consumables)
+    with job.book.reading() as view:
+        (lot,) = view.all(LotRow)
+        gauge = view.gauge("K7-09/5")
+    assert gauge is not None
+    assert (lot.id, "on shelf", "2026-11-16") == (gauge.lot, gauge.state, gauge.received_on)
+    job.walk(1)
+    assert job.do("t.okoro", {**WALK[1][1], "gauge": "K7-09/5"}).settled
+    assert check_logbook(job.book).ok
+
+
+def test_packs_of_another_certificate_are_no_packs_of_the_lot(job: Job) -> None:
+    lot = _lot("L-3504", "K7-09")
+    grids = (lot.grids[0].model_copy(update={"gauge_factor": Quantity(value="2.10", unit="1")}),)
+    other = lot.model_copy(update={"grids": grids, "expires": "2030-01-01"})
+    with pytest.raises(Faulty) as caught:
+        stock.receive(job.book, job.keys["c.ward"], Delivery((other,)))
+    assert ["lot L-3504, gauge_factor", "lot L-3504, expires"] == [
+        fault.where for fault in caught.value.faults
+    ]
+    with job.book.reading() as view:
+        assert view.gauge("K7-09/1") is None
+
+
+def test_a_figure_written_otherwise_is_the_same_figure(job: Job) -> None:
+    lot = _lot("L-3504", "K7-09")
+    same = lot.model_copy(update={"nominal_resistance": Quantity(value="350.0", unit="ohm")})
+    assert 1 == stock.receive(job.book, job.keys["c.ward"], Delivery((same,))).packs
+
+
+def test_a_lot_that_is_scrapped_gets_no_more_packs_and_one_in_quarantine_lends_none(
+    job: Job,
+) -> None:
+    planner = job.keys["c.ward"]
+    set_standing(job.book, planner, label="L-3504", standing="quarantined", reason="recalled")
+    stock.receive(job.book, planner, Delivery((_lot("L-3504", "K7-09"),)))
+    job.walk(1)
+    with pytest.raises(Faulty) as taken:
+        job.do("t.okoro", {**WALK[1][1], "gauge": "K7-09/1"})
+    assert "lot L-3504 is quarantined: recalled" in _faults(taken)
+    set_standing(job.book, planner, label="L-3504", standing="scrapped", reason="recalled.")
+    with pytest.raises(Faulty) as caught:
+        stock.receive(job.book, planner, Delivery((_lot("L-3504", "K7-10"),)))
+    assert "lot L-3504: is scrapped: recalled." in _faults(caught)
 
 
 def test_a_gauge_of_another_lot_than_planned_is_refused(job: Job) -> None:

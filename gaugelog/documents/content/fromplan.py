@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING, TypeVar
 
 from gaugelog.documents.content.installation import (
     ArticleShown,
+    CertificateShown,
     ChannelShown,
     CircuitShown,
     ElementShown,
@@ -27,6 +28,7 @@ from gaugelog.ledger.campaign import (
     Module,
 )
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
+from gaugelog.ledger.papers import CertificateRow
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
@@ -162,7 +164,7 @@ def gauge_shown(view: View, row: PointRow) -> GaugeShown | None:
     if gauge is None:
         return None
     lot = LotReceived.model_validate_json(needed(view.get(LotRow, gauge.lot)).data)
-    own = {"id", "label", "generation", "lot"}
+    own = {"id", "label", "generation", "lot", "received_on", "certificates"}
     figures = {name: getattr(lot, name) for name in GaugeShown.model_fields if name not in own}
     return GaugeShown.model_validate(
         {
@@ -171,8 +173,16 @@ def gauge_shown(view: View, row: PointRow) -> GaugeShown | None:
             "label": gauge.label,
             "generation": row.generation,
             "lot": lot.label,
+            "received_on": gauge.received_on,
+            "certificates": certificates_shown(view, gauge.lot),
         }
     )
+
+
+def certificates_shown(view: View, item: str, number: str = "") -> tuple[CertificateShown, ...]:
+    """The certificates that are kept of a lot, or of an instrument's certificate `number`."""
+    rows = view.all(CertificateRow, item=item, number=number)
+    return tuple(CertificateShown(name=row.name, sha256=row.file, kept_at=row.at) for row in rows)
 
 
 def circuit_shown(view: View, plan: Planned, circuit: CircuitPlanned) -> CircuitShown:

@@ -6,7 +6,7 @@ import json
 from collections.abc import Iterable, Iterator
 from typing import TYPE_CHECKING
 
-from gaugelog.documents.content.fromplan import Planned, needed
+from gaugelog.documents.content.fromplan import Planned, certificates_shown, needed
 from gaugelog.documents.content.model import ConsumableShown, InstrumentShown
 from gaugelog.documents.content.workdone import InputShown, ReadingShown, StepShown
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
@@ -134,7 +134,9 @@ def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
 def _instrument(view: View, instrument: str, ranges: set[str]) -> InstrumentShown:
     row = needed(view.get(InstrumentRow, instrument))
     body = InstrumentAdded.model_validate_json(row.data)
-    fields = {name: getattr(body, name) for name in InstrumentShown.model_fields}
+    own = {"certificates"}
+    fields = {n: getattr(body, n) for n in InstrumentShown.model_fields if n not in own}
+    fields["certificates"] = certificates_shown(view, instrument, body.certificate_number)
     fields["ranges"] = tuple(each for each in body.ranges if each.name in ranges)
     return InstrumentShown.model_validate(fields)
 
@@ -151,9 +153,9 @@ def consumables_shown(view: View, plan: Planned) -> tuple[ConsumableShown, ...]:
 
 def _consumable(view: View, lot: str) -> ConsumableShown:
     body = ConsumableReceived.model_validate_json(needed(view.get(ConsumableRow, lot)).data)
-    return ConsumableShown.model_validate(
-        {name: getattr(body, name) for name in ConsumableShown.model_fields}
-    )
+    own = {"certificates"}
+    fields = {n: getattr(body, n) for n in ConsumableShown.model_fields if n not in own}
+    return ConsumableShown.model_validate({**fields, "certificates": certificates_shown(view, lot)})
 
 
 def _entered_ids(view: View, plan: Planned, kind: str) -> Iterable[str]:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from pydantic import Field
 
 from gaugelog.documents.content.base import Shown
-from gaugelog.ledger.base import DateText, Id, Quantity
+from gaugelog.ledger.base import DateText, Id, Quantity, TimeText
 from gaugelog.ledger.campaign import Material, ShuntSpec, SurfaceAllowance
 from gaugelog.ledger.circuits import ElementKind
 from gaugelog.ledger.points import Place
@@ -69,6 +69,14 @@ class GridShown(Shown):
     """Built angle from grid 1, counter-clockwise for the viewer of the gauge."""
 
 
+class CertificateShown(Shown):
+    """The file of a certificate, which stays with who keeps the logbook."""
+
+    name: str
+    sha256: str
+    kept_at: TimeText
+
+
 class GaugeShown(Shown):
     """The physical gauge, its lot and what the lot's certificate says."""
 
@@ -92,8 +100,11 @@ class GaugeShown(Shown):
     test_voltage_max: Quantity | None = None
     expires: DateText | None = None
     received_on: DateText
+    """The day its pack came."""
     certificate: str = ""
-    """SHA-256 of the lot's certificate among the evidence."""
+    """SHA-256 of the lot's certificate among the evidence, as an earlier program kept it."""
+    certificates: tuple[CertificateShown, ...] = ()
+    """The certificates of the lot that are kept."""
 
 
 class ElementShown(Shown):

@@ -12,6 +12,7 @@ from typing import Literal
 from gaugelog.documents.content.base import OffsetText, Shown
 from gaugelog.documents.content.installation import (
     ArticleShown,
+    CertificateShown,
     CircuitShown,
     GaugeShown,
     GridShown,
@@ -119,6 +120,8 @@ class InstrumentShown(Shown):
     due: DateText
     ranges: tuple[InstrumentRange, ...]
     """Only the ranges that were used."""
+    certificates: tuple[CertificateShown, ...] = ()
+    """The files that are kept of the certificate in force."""
 
 
 class ConsumableShown(Shown):
@@ -131,6 +134,7 @@ class ConsumableShown(Shown):
     name: str
     received_on: DateText
     expires: DateText | None = None
+    certificates: tuple[CertificateShown, ...] = ()
 
 
 class PersonShown(Shown):

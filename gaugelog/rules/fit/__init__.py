@@ -7,6 +7,7 @@ from datetime import date
 from gaugelog.ledger.campaign import CampaignRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.fit.arrangement import arrangement_findings
+from gaugelog.rules.fit.cables import cable_findings
 from gaugelog.rules.fit.dummies import dummy_findings
 from gaugelog.rules.fit.finding import Level, PlanFinding
 from gaugelog.rules.fit.leads import lead_findings
@@ -29,6 +30,7 @@ _SUBJECTS = (
     dummy_findings,
     pattern_findings,
     lead_findings,
+    cable_findings,
     supply_findings,
     output_findings,
     warmth_findings,

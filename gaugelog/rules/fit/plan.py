@@ -10,7 +10,14 @@ from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteAdopted, RouteRow
 from gaugelog.ledger.standing import StandingRow
-from gaugelog.ledger.stock import ConsumableRow, GaugeRow, GridData, LotReceived, LotRow
+from gaugelog.ledger.stock import (
+    ConsumableReceived,
+    ConsumableRow,
+    GaugeRow,
+    GridData,
+    LotReceived,
+    LotRow,
+)
 from gaugelog.ledger.view import View
 
 
@@ -30,7 +37,10 @@ class Plan:
         body = CampaignPlanned.model_validate_json(campaign.data)
         self.articles = {article.id: article for article in body.articles}
         gone = _withdrawn(view)
-        barred = {row.id for row in view.all(StandingRow) if row.standing != "free"}
+        self.barred = {
+            row.id: row.standing for row in view.all(StandingRow) if row.standing != "free"
+        }
+        """Stock in quarantine or scrapped: its standing by its id."""
         self.points = [
             PointPlanned.model_validate_json(row.data)
             for row in view.all(PointRow, campaign=campaign.id)
@@ -50,14 +60,18 @@ class Plan:
             row.id: PlannedChannel(row.label, row.module, Channel.model_validate_json(row.data))
             for row in view.all(ChannelRow, campaign=campaign.id)
         }
+        self.consumables = {
+            row.label.casefold(): ConsumableReceived.model_validate_json(row.data)
+            for row in view.all(ConsumableRow)
+        }
         self.reels = frozenset(
-            row.label.casefold() for row in view.all(ConsumableRow, type="cable")
+            label for label, lot in self.consumables.items() if lot.type == "cable"
         )
         """Labels of the cable lots in stock."""
         self.shelf = Counter(
             gauge.lot
             for gauge in view.all(GaugeRow, state="on shelf")
-            if barred.isdisjoint((gauge.id, gauge.pack, gauge.lot))
+            if self.barred.keys().isdisjoint((gauge.id, gauge.pack, gauge.lot))
         )
         self.taken = frozenset(gauge.point for gauge in view.all(GaugeRow, state="in service"))
         """Points that have their gauge already, in a plan that is revised."""

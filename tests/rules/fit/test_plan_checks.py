@@ -14,6 +14,7 @@ from gaugelog.journal.keys import KeyFolder
 from gaugelog.rules.fit import PlanFinding
 from gaugelog.work import people, plan, stock
 from gaugelog.work.people import Newcomer
+from gaugelog.work.standing import set_standing
 
 DEMO = Path(__file__).parents[2] / "small_job"
 WORD = "long enough"
@@ -26,7 +27,7 @@ Check = Callable[..., list[PlanFinding]]
 def check(tmp_path: Path) -> Check:
     """Load the demo's plan with changes (file, old, new) and give what the check finds."""
 
-    def found(*changes: Change) -> list[PlanFinding]:
+    def found(*changes: Change, quarantined: tuple[str, ...] = ()) -> list[PlanFinding]:
         files = tmp_path / "files"
         shutil.copytree(DEMO, files)
         for file, old, new in changes:
@@ -43,7 +44,10 @@ def check(tmp_path: Path) -> Check:
             passphrase=WORD,
         )
         key = keys.unlock("p.lind", WORD)
-        stock.receive(book, key, load_stock([files / "lots.csv"], new_id=new_id))
+        received = load_stock([files / "lots.csv", files / "consumables.csv"], new_id=new_id)
+        stock.receive(book, key, received)
+        for label in quarantined:
+            set_standing(book, key, label=label, standing="quarantined", reason="burnt")
         plan.load(book, key, plan.understand(book, files / "plan"))
         return plan.check(book)
 
@@ -167,3 +171,41 @@ def test_abrasion_where_nothing_may_be_removed_is_refused(check: Check) -> None:
     old = 'removal_allowed = "paint and mill scale, no base metal"'
     found = check(("plan/campaign.toml", old, 'removal_allowed = "none"'))
     assert _one(found, "refusal", "nothing may be removed").source.startswith("Works Department")
+
+
+def test_the_lead_wires_of_the_plan_are_those_of_the_reel(check: Check) -> None:
+    found = [each for each in check() if "cable in stock" in each.what]
+    assert {("ok", "0.055 Ω/m planned, 0.055 Ω/m of CB-19")} == {
+        (each.level, each.figure) for each in found
+    }
+
+
+def test_a_reel_of_another_resistance_than_planned_is_warned_of(check: Check) -> None:
+    found = check(("consumables.csv", ",0.055", ",0.072"))
+    warned = [each for each in _of(found, "warning") if "is not that of the cable" in each.what]
+    assert ["C-1", "C-2"] == [each.subject for each in warned]
+    assert "0.055 Ω/m planned, 0.072 Ω/m of CB-19" == warned[0].figure
+
+
+def test_a_reel_whose_resistance_nobody_knows_is_warned_of(check: Check) -> None:
+    found = check(("consumables.csv", ",0.055", ","))
+    assert "0.055 Ω/m planned" in {each.figure for each in _of(found, "warning")}
+
+
+def test_a_name_that_is_no_reel_is_taken_as_a_cable_and_said_to_be(check: Check) -> None:
+    found = _of(check(("plan/circuits.csv", "CB-19", "CB-91")), "warning")
+    assert ["C-1", "C-2"] == [
+        each.subject for each in found if "cable CB-91 is no lot in stock" in each.what
+    ]
+
+
+def test_what_is_no_cable_or_is_in_quarantine_does_for_none(check: Check) -> None:
+    found = check(("plan/circuits.csv", "CB-19", "SO-17"))
+    assert "SO-17 is a lot of solder, not of cable" in {each.what for each in _of(found, "refusal")}
+
+
+def test_a_reel_in_quarantine_is_refused(check: Check) -> None:
+    refused = _of(check(quarantined=("CB-19",)), "refusal")
+    assert ["C-1", "C-2"] == [
+        each.subject for each in refused if "cable CB-19 is quarantined" in each.what
+    ]
