@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING, Annotated
 
 import typer
 
+from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.talk import console, put, say
 from gaugelog.errors import Refused
 
@@ -27,6 +28,7 @@ ALWAYS_NEXT = (
 
 def demo(
     folder: Annotated[Path, typer.Argument(help="Where to play it; a new folder.")] = FOLDER,
+    paper: PaperAsked = "",
 ) -> None:
     """Play an invented job: three people, fifteen points, signed records at the end.
 
@@ -36,22 +38,32 @@ def demo(
     from gaugelog.commands.story import read_story
     from gaugelog.documents.maker import PdfRecordMaker
 
+    size = demand_paper(paper)
     if folder.exists() and any(folder.iterdir()):
         raise Refused(
             f"{folder} is there already.",
             f"Look into it, or play anew elsewhere: gaugelog demo {folder}-2",
         )
     story = read_story(PdfRecordMaker())
-    _copy_files(story.files, folder)
+    story.files = _copy_files(story.files, folder, size)
     _play(story, folder)
     records = _hand_out(story, folder)
     _summary(story, folder, records)
 
 
-def _copy_files(files: Path, folder: Path) -> None:
+def _copy_files(files: Path, folder: Path, paper: str | None) -> Path:
+    """The files as the demo plays them: where another paper is asked for, the campaign says so."""
+    import re
     import shutil
 
-    shutil.copytree(files, folder / "input", ignore=shutil.ignore_patterns("__pycache__"))
+    copy = folder / "input"
+    shutil.copytree(files, copy, ignore=shutil.ignore_patterns("__pycache__"))
+    if paper:
+        campaign = copy / "plan" / "campaign.toml"
+        text = campaign.read_text(encoding="utf-8")
+        told = re.sub('(?m)^paper = "[a-z0-9]+"', f'paper = "{paper}"', text)
+        campaign.write_text(told, encoding="utf-8", newline="\n")
+    return copy
 
 
 def _play(story: Story, folder: Path) -> None:

@@ -8,6 +8,7 @@ from typing import Annotated
 import typer
 
 from gaugelog.commands.outputs import write_out
+from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import put, put_json, put_table, say
 from gaugelog.errors import Refused
@@ -21,6 +22,7 @@ def record(
     draft: Annotated[
         bool, typer.Option("--draft", help="Draw the record as it stands, marked as a draft.")
     ] = False,
+    paper: PaperAsked = "",
     json: Json = False,
 ) -> None:
     """Hand out the signed record of a point. It is never drawn or signed again.
@@ -31,12 +33,18 @@ def record(
     from gaugelog.documents.maker import PdfRecordMaker
     from gaugelog.work import reviews
 
+    size = demand_paper(paper)
+    if size and not draft:
+        raise Refused(
+            "A signed record is handed out as it was drawn; --paper is for a --draft.",
+            "Its size is chosen when it is submitted: gaugelog submit POINT --paper letter",
+        )
     logbook = open_logbook(ctx)
     if not point:
         _list(reviews.records(logbook), json)
         return
     if draft:
-        found = reviews.draft(logbook, PdfRecordMaker(), point=point)
+        found = reviews.draft(logbook, PdfRecordMaker(size), point=point)
     else:
         found = reviews.record(logbook, point=point, revision=revision)
     target = out or Path(f"{found.file_name}.pdf")

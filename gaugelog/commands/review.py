@@ -6,6 +6,7 @@ from typing import Annotated
 
 import typer
 
+from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import say
@@ -18,6 +19,7 @@ def submit(
     ctx: typer.Context,
     point: Point,
     meaning: Annotated[str, typer.Option(help="What the signature means.")] = SUBMIT_MEANING,
+    paper: PaperAsked = "",
     as_: As = "",
     secret_fd: SecretFd = None,
 ) -> None:
@@ -25,9 +27,10 @@ def submit(
     from gaugelog.documents.maker import PdfRecordMaker
     from gaugelog.work import reviews
 
+    maker = PdfRecordMaker(demand_paper(paper))
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"submit {point}")
-    done = reviews.submit(logbook, signer, PdfRecordMaker(), point=point, meaning=meaning)
+    done = reviews.submit(logbook, signer, maker, point=point, meaning=meaning)
     say(
         f"{point}: record revision {done.revision} signed and submitted; head {done.head}.",
         f"Next, by a reviewer: gaugelog accept {point} --as ID",

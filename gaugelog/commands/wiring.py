@@ -3,16 +3,18 @@
 from __future__ import annotations
 
 from pathlib import Path
-from typing import TYPE_CHECKING, Annotated, Literal, cast
+from typing import TYPE_CHECKING, Annotated
 
 import typer
 
 from gaugelog.commands.outputs import write_out
+from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 from gaugelog.errors import ExitCode, Fault, Faulty
 
 if TYPE_CHECKING:
+    from gaugelog.ledger.campaign import Paper
     from gaugelog.work.logbook import Logbook
     from gaugelog.work.wiring import CircuitWired, WiringMap
 
@@ -80,7 +82,7 @@ def _grouped(names: list[str], rows: list[list[str]]) -> list[list[str]]:
 def export(
     ctx: typer.Context,
     file: Annotated[Path, typer.Argument(help="The file: .csv, .xlsx or .pdf.")],
-    paper: Annotated[str, typer.Option(help="Size of PDF pages: a4 or letter.")] = "a4",
+    paper: PaperAsked = "",
 ) -> None:
     """Write the wiring map to a file: a table to work on, or pages to take along.
 
@@ -89,10 +91,10 @@ def export(
     """
     from gaugelog.work.wiring import wiring_map
 
-    kind = _demand_kind(file, paper)
+    kind, size = _demand_kind(file, paper)
     logbook = open_logbook(ctx)
     wiring = wiring_map(logbook)
-    data = _written(logbook, wiring, kind, cast("Literal['a4', 'letter']", paper))
+    data = _written(logbook, wiring, kind, size)
     write_out(file, data)
     for conflict in wiring.conflicts:
         say(f"  ✗ {conflict}")
@@ -100,28 +102,32 @@ def export(
     put(str(file))
 
 
-def _demand_kind(file: Path, paper: str) -> str:
+def _demand_kind(file: Path, paper: str) -> tuple[str, Paper | None]:
     kind = file.suffix.lower()
     faults = []
     if kind not in {".csv", ".xlsx", ".pdf"}:
         what = f"“{file.name}” ends in none of .csv, .xlsx, .pdf."
         faults.append(Fault("file", what, "The ending says what is written."))
-    if paper not in {"a4", "letter"}:
-        faults.append(Fault("paper", f"“{paper}” is neither a4 nor letter."))
+    size = None
+    try:
+        size = demand_paper(paper)
+    except Faulty as error:
+        faults += error.faults
     if faults:
         raise Faulty(faults, "nothing was written")
-    return kind
+    return kind, size
 
 
-def _written(
-    logbook: Logbook, wiring: WiringMap, kind: str, paper: Literal["a4", "letter"]
-) -> bytes:
+def _written(logbook: Logbook, wiring: WiringMap, kind: str, paper: Paper | None) -> bytes:
     from gaugelog.documents import spreadsheet
     from gaugelog.documents.wiring_map import wiring_pdf, wiring_rows
+    from gaugelog.rules.pages import paper_of
 
     moment = logbook.clock.now()
     if kind == ".pdf":
-        return wiring_pdf(wiring, moment, paper).pdf
+        with logbook.reading() as view:
+            size = paper or paper_of(view)
+        return wiring_pdf(wiring, moment, size).pdf
     rows = wiring_rows(wiring)
     if kind == ".xlsx":
         return spreadsheet.xlsx_bytes("Wiring", rows, moment.utc)

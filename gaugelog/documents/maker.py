@@ -8,12 +8,14 @@ from gaugelog.documents.content.build import build
 from gaugelog.documents.content.model import RecordContent
 from gaugelog.documents.content.workdone import PhotoShown
 from gaugelog.documents.pictures import client_copy
-from gaugelog.documents.render import Drawing, Paper, render_record
+from gaugelog.documents.render import Drawing, render_record
 from gaugelog.documents.sign import sign_first, sign_second
 from gaugelog.errors import StorageTrouble
 from gaugelog.journal.entry import sha256
 from gaugelog.journal.evidence import Evidence
 from gaugelog.journal.keys import Signer
+from gaugelog.ledger.campaign import Paper
+from gaugelog.rules.pages import paper_of
 from gaugelog.work.ports import RecordRequest, Stamp
 
 if TYPE_CHECKING:
@@ -21,14 +23,17 @@ if TYPE_CHECKING:
 
 
 class PdfRecordMaker:
-    """Implements `work.ports.RecordMaker` with PDF/A files; `paper` is their size."""
+    """Implements `work.ports.RecordMaker` with PDF/A files.
 
-    def __init__(self, paper: Paper = "a4") -> None:
-        self.paper: Paper = paper
+    `paper` is their size; left out, it is the campaign's own.
+    """
+
+    def __init__(self, paper: Paper | None = None) -> None:
+        self.paper = paper
 
     def draft(self, view: View, request: RecordRequest) -> bytes:
         """The record as it would be now, marked as a draft on every page; without signatures."""
-        return self._drawn(build(view, request), request).pdf
+        return self._drawn(view, build(view, request), request).pdf
 
     def submitted(self, view: View, request: RecordRequest, signer: Signer) -> bytes:
         """The record with the technician's signature and an empty field for the reviewer's.
@@ -38,15 +43,15 @@ class PdfRecordMaker:
         content = build(view, request, signer.person)
         name = view.name(signer.person)
         stamp = Stamp(signer.person, name, request.meaning, request.moment, request.head)
-        return sign_first(self._drawn(content, request), stamp, signer)
+        return sign_first(self._drawn(view, content, request), stamp, signer)
 
     def accepted(self, pdf: bytes, stamp: Stamp, signer: Signer) -> bytes:
         """The submitted record with the reviewer's signature added; its first bytes stay."""
         return sign_second(pdf, stamp, signer)
 
-    def _drawn(self, content: RecordContent, request: RecordRequest) -> Drawing:
+    def _drawn(self, view: View, content: RecordContent, request: RecordRequest) -> Drawing:
         pictures = [_copy(photo, request.evidence) for photo in content.photos]
-        return render_record(content, self.paper, pictures)
+        return render_record(content, self.paper or paper_of(view), pictures)
 
 
 def _copy(photo: PhotoShown, evidence: Evidence | None) -> bytes:

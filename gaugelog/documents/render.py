@@ -9,7 +9,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
-from typing import TYPE_CHECKING, Any, Literal
+from typing import TYPE_CHECKING, Any
 
 from gaugelog.documents.content import RecordContent
 from gaugelog.documents.finish import finished
@@ -19,11 +19,11 @@ from gaugelog.documents.pango import need_pango
 from gaugelog.documents.quiet import quiet
 from gaugelog.documents.shipped import template_bytes
 from gaugelog.errors import GaugelogError
+from gaugelog.ledger.campaign import Paper
 
 if TYPE_CHECKING:
     from gaugelog.documents.fetcher import MemoryFetcher
 
-Paper = Literal["a4", "letter"]
 ATTACHMENT = "record.json"
 _POINTS_PER_PX = 0.75
 

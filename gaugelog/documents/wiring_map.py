@@ -10,9 +10,10 @@ from gaugelog.documents import wording
 from gaugelog.documents.fonts import Lettering
 from gaugelog.documents.page import notices_of, plain_environment, texts_in
 from gaugelog.documents.pango import need_pango
-from gaugelog.documents.render import Drawing, Paper, draw
+from gaugelog.documents.render import Drawing, draw
 from gaugelog.documents.shipped import template_bytes
 from gaugelog.journal.clock import Moment
+from gaugelog.ledger.campaign import Paper
 
 if TYPE_CHECKING:
     from gaugelog.documents.spreadsheet import Row

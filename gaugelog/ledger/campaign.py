@@ -11,6 +11,7 @@ from gaugelog.ledger.base import DecimalText, FactBody, Id, Part, Quantity
 from gaugelog.ledger.progress import grids_of, set_states
 from gaugelog.ledger.rows import At, Change, Drop, Known, Put, Row, have
 
+Paper = Literal["a4", "letter"]
 Surroundings = Literal["laboratory", "field"]
 Conditional = Literal["goes on", "blocks"]
 
@@ -111,6 +112,8 @@ class CampaignPlanned(FactBody):
     contract: str = ""
     document: str = ""
     site: str = ""
+    paper: Paper = "a4"
+    """The size of records and wiring maps, unless another is asked for."""
     surroundings: Surroundings
     articles: tuple[Article, ...]
     modules: tuple[Module, ...]
