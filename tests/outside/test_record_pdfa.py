@@ -13,8 +13,9 @@ import pikepdf
 import pytest
 from jsonschema import Draft202012Validator
 
-from gaugelog.documents.render import Paper, render_record
+from gaugelog.documents.render import render_record
 from gaugelog.documents.schema import shipped_schema
+from gaugelog.ledger.campaign import Paper
 from tests.documents.drawn import accepted, draft, drawing, submitted
 from tests.documents.sample import HEAD, sample
 from tests.foreign import needs
