@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass
 
 from gaugelog.errors import Refused
@@ -20,6 +21,8 @@ from gaugelog.physics.reading import PlannedCircuit
 from gaugelog.physics.temperature import SCATTER_RATES, mismatch_output
 from gaugelog.physics.transverse import uncorrected_error
 from gaugelog.physics.uncertainty import Budget
+from gaugelog.rules.compensated import SOURCE as COMPENSATED
+from gaugelog.rules.compensated import thermal_share
 from gaugelog.rules.wired import Wired, planned_circuit, wired
 
 TRANSVERSE_WIDTH = 0.002
@@ -184,14 +187,21 @@ def _corrections(known: _Known) -> tuple[Correction, ...]:
                 "Kt (r + ν0)/(1 − ν0 Kt), ASTM E251 (from memory)",
             )
         )
-    if known.lot.expansion_class is not None:
-        rates = known.article.material.expansion.si(), known.lot.expansion_class.si()
-        per_kelvin = float(mismatch_output(*rates, 1.0)) * 1e6
-        found.append(
-            Correction(
-                "thermal output by mismatch, to be taken off",
-                f"{per_kelvin:+.2f} µm/m per K",
-                "(αs − αm) ΔT, Dally and Riley (from memory); the lot's own curve is better",
-            )
-        )
-    return tuple(found)
+    return (*found, *_thermal_correction(known))
+
+
+def _thermal_correction(known: _Known) -> Iterator[Correction]:
+    """Of the circuit's reading: none where its gauges cancel each other's thermal output."""
+    if known.lot.expansion_class is None:
+        return
+    share = thermal_share(known.planned, known.article.material.poisson_ratio.si())
+    if not share:
+        yield Correction("thermal output by mismatch", "cancels", COMPENSATED)
+        return
+    rates = known.article.material.expansion.si(), known.lot.expansion_class.si()
+    per_kelvin = float(mismatch_output(*rates, 1.0)) * share * 1e6
+    yield Correction(
+        "thermal output by mismatch, to be taken off",
+        f"{per_kelvin:+.2f} µm/m per K",
+        "(αs − αm) ΔT, Dally and Riley (from memory); the lot's own curve is better",
+    )

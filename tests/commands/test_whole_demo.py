@@ -8,6 +8,7 @@ import shlex
 import shutil
 import subprocess
 from pathlib import Path
+from typing import Any
 
 import pikepdf
 import pytest
@@ -115,13 +116,30 @@ def test_foreign_programs_find_every_record_whole_and_signed(whole: Path) -> Non
         subprocess.run(["qpdf", "--check", record], capture_output=True, check=True)
 
 
+def _data(record: Path) -> dict[str, Any]:
+    """The data that a record carries."""
+    with pikepdf.open(record) as opened:
+        found: dict[str, Any] = json.loads(
+            opened.attachments["record.json"].get_file().read_bytes()
+        )
+    return found
+
+
 def test_each_record_carries_its_circuits_as_data(whole: Path, command: Command) -> None:
     circuits = {row["point"]: row["circuit"].split(", ") for row in _plan(command)}
     for record in (whole / "records").iterdir():
-        with pikepdf.open(record) as opened:
-            data = json.loads(opened.attachments["record.json"].get_file().read_bytes())
         point = record.name.rsplit("-r", 1)[0]
-        assert circuits[point] == [each["label"] for each in data["circuits"]]
+        assert circuits[point] == [each["label"] for each in _data(record)["circuits"]]
+
+
+@pytest.mark.parametrize(
+    ("point", "value"),
+    [("FB-1", "+0.70 µm/m per K"), ("FB-4", "cancels"), ("PB-1", "cancels"), ("SH-1", "cancels")],
+)
+def test_a_record_says_what_warmth_does_to_its_circuit(point: str, value: str, whole: Path) -> None:
+    corrections = _data(whole / "records" / f"{point}-r1.pdf")["budget"]["corrections"]
+    said = [each["value"] for each in corrections if each["name"].startswith("thermal output")]
+    assert [value] == said
 
 
 def test_what_the_summary_says_to_type_runs(
