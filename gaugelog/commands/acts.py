@@ -1,10 +1,11 @@
-"""The acts of the demo's story: walk a point, submit, return, accept, amend, replace a gauge."""
+"""The acts of the demo's story: walk, photo, submit, return, accept, amend, replace."""
 
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
 from datetime import timedelta
+from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
@@ -16,6 +17,7 @@ if TYPE_CHECKING:
 
 PLAYED_BY = {
     "walk": "technician",
+    "photo": "technician",
     "submit": "technician",
     "amend": "technician",
     "replace": "technician",
@@ -31,13 +33,14 @@ class StoryFault(Exception):
 
 @dataclass(frozen=True)
 class Stage:
-    """What every act needs: the logbook, its clock, the unlocked keys, and what is usual."""
+    """What every act needs: logbook, clock, unlocked keys, what is usual, the story's files."""
 
     book: Logbook
     clock: SetClock
     keys: Mapping[str, UnlockedKey]
     maker: RecordMaker
     usual: Mapping[str, Any]
+    files: Path
 
 
 def title_of(act: Mapping[str, Any]) -> str:
@@ -56,7 +59,7 @@ def play(stage: Stage, act: Mapping[str, Any]) -> None:
     if kind == "walk":
         _Walk(stage, act, key, _lines(act.get("typed", {}))).play()
     else:
-        _SIGNED[kind](stage, act, key)
+        _DEEDS[kind](stage, act, key)
 
 
 def _wait(stage: Stage, act: Mapping[str, Any]) -> None:
@@ -117,7 +120,17 @@ def _replace(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
     )
 
 
-_SIGNED: dict[str, Callable[[Stage, Mapping[str, Any], UnlockedKey], None]] = {
+def _photo(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
+    from gaugelog.intake.pictures import load_pictures
+    from gaugelog.work import photos
+
+    pictures = load_pictures([stage.files / act["file"]])
+    step, note = act.get("step", ""), act.get("note", "")
+    photos.add(stage.book, key, pictures, point=act["photo"], step=step, note=note)
+
+
+_DEEDS: dict[str, Callable[[Stage, Mapping[str, Any], UnlockedKey], None]] = {
+    "photo": _photo,
     "submit": _submit,
     "accept": _accept,
     "return": _give_back,

@@ -68,7 +68,7 @@ class Story:
         return self.logbook
 
     def _act(self, act: dict[str, Any], usual: dict[str, Any]) -> None:
-        play(Stage(self.book(), self.clock, self.keys, self.maker, usual), act)
+        play(Stage(self.book(), self.clock, self.keys, self.maker, usual, self.files), act)
 
     def _start(self, home: Path) -> None:
         from gaugelog.work import people

@@ -28,7 +28,7 @@ def job(tmp_path: Path) -> Job:
 @pytest.fixture
 def stage(job: Job) -> Stage:
     """The job as the stage of a story."""
-    return Stage(job.book, job.clock, job.keys, PlainMaker(), USUAL)
+    return Stage(job.book, job.clock, job.keys, PlainMaker(), USUAL, SMALL_JOB)
 
 
 def _next(job: Job, point: str = "FB-1") -> str:
@@ -65,7 +65,7 @@ def test_a_line_for_a_step_that_never_comes_is_a_defect(stage: Stage) -> None:
 def test_what_is_usual_is_typed_once_only(stage: Stage) -> None:
     failing = {"gauge": "K7-03/1", "resistance": "355.1 ohm"}
     usual = {**USUAL, "step": {**USUAL["step"], "gauge": {"wait": 1, "meter": "RM-2", **failing}}}
-    again = Stage(stage.book, stage.clock, stage.keys, stage.maker, usual)
+    again = Stage(stage.book, stage.clock, stage.keys, stage.maker, usual, SMALL_JOB)
     with pytest.raises(StoryFault, match="did not settle gauge"):
         play(again, {"walk": "FB-1", "until": "clean"})
 
