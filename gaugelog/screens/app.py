@@ -29,6 +29,12 @@ PLACES: dict[str, Callable[[str], Room]] = {
 }
 """Where one can go, and how the screen there is made for a point (empty: none in particular)."""
 
+_SCREENS: dict[str, type[Room]] = {
+    "worklist": WorklistScreen,
+    "step": StepScreen,
+    "review": ReviewScreen,
+}
+
 TICK_SECONDS = 1.0
 LOOK_AGAIN_TICKS = 15
 """Windows and cures run: what is shown is read anew this often even if nothing was kept."""
@@ -69,8 +75,12 @@ class FullScreen(App[None]):
         self.set_interval(TICK_SECONDS, self.tick)
 
     def rooms(self) -> list[Room]:
-        """The screens that are open, the topmost last."""
-        return [screen for screen in self.screen_stack if isinstance(screen, Room)]
+        """The screens that are open, the topmost last; not one being built or taken down."""
+        return [
+            screen
+            for screen in self.screen_stack
+            if isinstance(screen, Room) and screen.ready and screen.children
+        ]
 
     def go(self, place: str, point: str = "") -> None:
         """Open a screen above the worklist; going to the worklist closes what is above it."""
@@ -86,8 +96,10 @@ class FullScreen(App[None]):
 
     def check_action(self, action: str, parameters: tuple[object, ...]) -> bool | None:
         """A key is shown only where it works now."""
-        if action in {"go", "hand_over"}:
-            return self.desk.seat is not None and not isinstance(self.screen, Dialog)
+        if action in {"go", "hand_over"} and (self.desk.seat is None or self._asking()):
+            return False
+        if action == "go":
+            return not isinstance(self.screen, _SCREENS[str(parameters[0])])
         return True
 
     def action_hand_over(self) -> None:
@@ -144,6 +156,9 @@ class FullScreen(App[None]):
                     lambda action=binding.action: self.call_later(self.run_action, action),
                 )
 
+    def _asking(self) -> bool:
+        return isinstance(self.screen, Dialog)
+
     def _something_kept(self) -> bool:
         try:
             seq = self.desk.logbook.head().seq
@@ -175,8 +190,8 @@ class FullScreen(App[None]):
             room.seat_changed()
 
     def _close_all_but_home(self) -> None:
-        self._leaving()
-        while len(self.rooms()) > 1:
+        while isinstance(self.screen, Room) and not isinstance(self.screen, WorklistScreen):
+            self.screen.closing()
             self.pop_screen()
 
     def _leaving(self) -> None:

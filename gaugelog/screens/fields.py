@@ -40,8 +40,8 @@ def unit_text(item: StepInput) -> str:
     """The unit as it stands beside the field."""
     if item.kind == "reading" and not takes_bare_number(item):
         units = [SYMBOLS.get(unit, unit) for unit in CHECKS[item.check].units]
-        return f"type {units[-3]}, {units[-2]}…" if len(units) > _FEW_UNITS else units[0]
-    return SYMBOLS.get(item.unit, item.unit)
+        return f"{units[-3]}, {units[-2]}" if len(units) > _FEW_UNITS else units[0]
+    return "y" if item.kind == "yes" else SYMBOLS.get(item.unit, item.unit)
 
 
 def completed(item: StepInput, typed: str) -> str:

@@ -28,7 +28,6 @@ class ReviewScreen(Room):
 
     def on_mount(self) -> None:
         """Read the queue."""
-        super().on_mount()
         self.facts_changed()
 
     def facts_changed(self) -> None:

@@ -41,8 +41,12 @@ class Room(Screen[None]):
 
     def __init__(self) -> None:
         super().__init__()
+        self.ready = False
+        """Whether its widgets are there: until then nothing is drawn or changed."""
         self._doing = ""
         self._since = 0.0
+        self._where, self._who = Words(id="where"), Words(id="who")
+        self._talk = Words(id="talk")
 
     @property
     def full(self) -> FullScreen:
@@ -77,17 +81,23 @@ class Room(Screen[None]):
     def leaving(self) -> None:
         """The program ends, or the desk is locked: put away what is half done."""
 
+    def closing(self) -> None:
+        """The person goes to another screen: put away what is half done."""
+        self.leaving()
+
     def compose(self) -> ComposeResult:
         """The bar, the body, the talk, the keys."""
         with Horizontal(id="bar"):
-            yield Words(id="where")
-            yield Words(id="who")
+            yield self._where
+            yield self._who
         yield from self.body()
-        yield Words(id="talk")
+        yield self._talk
         yield Footer(show_command_palette=False)
 
     def on_mount(self) -> None:
-        """Fill the bar, and keep it so."""
+        """Fill the bar, and keep it so. Textual calls this besides a subclass's own `on_mount`."""
+        self.ready = True
+        show(self._talk, bool(self._talk.text))
         self.draw_bar()
         self.set_interval(0.5, self._draw_doing)
 
@@ -95,13 +105,11 @@ class Room(Screen[None]):
         """Show where we are, who sits here, and the time of this machine."""
         book, seat = self.desk.logbook, self.desk.seat
         about = self.title_text()
-        self.query_one("#where", Words).say(f" {book.name}" + (f" · {about}" if about else ""))
+        self._where.say(f" {book.name}" + (f" · {about}" if about else ""))
         moment = book.clock.now()
         clock = f"{moment.utc + timedelta(minutes=moment.offset_minutes):%H:%M}"
         who = seat.name if seat is not None else "nobody signed on"
-        self.query_one("#who", Words).say(
-            Content(" · ").join([plain(who), *self._left(), plain(f"{clock} ")])
-        )
+        self._who.say(Content(" · ").join([plain(who), *self._left(), plain(f"{clock} ")]))
 
     def _left(self) -> list[Content]:
         left = self.desk.seconds_left
@@ -110,7 +118,8 @@ class Room(Screen[None]):
 
     def tell(self, text: Content | str) -> None:
         """Say something to the person; it stands until something else is said."""
-        self.query_one("#talk", Words).say(text)
+        self._talk.say(text)
+        show(self._talk, bool(self._talk.text))
 
     def tell_error(self, error: GaugelogError) -> None:
         """Say what stopped a deed, and what to do."""
@@ -119,7 +128,7 @@ class Room(Screen[None]):
     @property
     def talk(self) -> str:
         """What was said last."""
-        return self.query_one("#talk", Words).text
+        return self._talk.text
 
     def in_background(
         self,
@@ -157,7 +166,7 @@ class Room(Screen[None]):
         message.stop()
         self._doing = ""
         if self.is_mounted:
-            self.query_one("#talk", Words).say("")
+            self.tell("")
             message.act()
 
     def _tell_defect(self, error: Exception) -> None:

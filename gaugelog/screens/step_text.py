@@ -23,6 +23,8 @@ _OUTCOMES = {
     "reopened": ("↺", WAIT),
 }
 
+_TAIL = 0.0001
+
 
 def route_text(hand: InHand, width: int, height: int) -> Content:
     """The route, a line a step: sign, number, title; the step in hand is marked and in view."""
@@ -60,7 +62,8 @@ def title_text(found: NextStep) -> Content:
     """Number and title of the step in hand, or the end of the route."""
     if found.step is None:
         return Content.assemble(plain("End of the route: ", "bold"), state_word(found.state))
-    on = f"  ({found.step.subject} {found.subject_label})" if found.subject_label else ""
+    other = found.subject_label not in {"", found.point}
+    on = f"  ({found.step.subject} {found.subject_label})" if other else ""
     hold = "HOLD: a second person decides. " if found.step.hold else ""
     return Content.assemble(
         plain(f"{found.number}/{found.count} ", CALM),
@@ -70,14 +73,18 @@ def title_text(found: NextStep) -> Content:
     )
 
 
-def cautions_text(cautions: Sequence[str], acknowledged: bool) -> Content:
+def cautions_text(found: NextStep, waiting: bool) -> Content:
     """The cautions of a step: in full until they are acknowledged, then a line that they were."""
-    if not cautions:
+    step = found.step
+    if step is None or not step.cautions or found.blocks:
         return plain("")
-    if acknowledged:
-        return plain(f"✓ {len(cautions)} caution{'s'[: len(cautions) > 1]} read", CALM)
-    told = [Content.assemble(plain("⚠ CAUTION ", f"bold {WAIT}"), plain(each)) for each in cautions]
-    return lines(*told, plain("Space: I have read this and act by it.", "bold"))
+    if not waiting and not step.hold:
+        return plain(f"✓ cautions read: {len(step.cautions)}", CALM)
+    told = [
+        Content.assemble(plain("⚠ CAUTION ", f"bold {WAIT}"), plain(each)) for each in step.cautions
+    ]
+    ask = [plain("Space: I have read this and act by it.", "bold")] if waiting else []
+    return lines(*told, *ask)
 
 
 def facts_text(facts: Sequence[str]) -> Content:
@@ -152,5 +159,33 @@ def _margin(reading: ReadingTaken) -> list[str]:
     if margin is None:
         return []
     probability = reading.verdict.probability
-    chance = [f"probability of conformance {probability}"] if probability is not None else []
+    chance = [] if probability is None else [f"conforms with probability {_chance(probability)}"]
     return [f"margin {margin.amount}", *chance]
+
+
+def _chance(probability: str) -> str:
+    """A probability as people read it; its far tails are named by their bound."""
+    value = float(probability)
+    if value < _TAIL:
+        return f"below {_TAIL}"
+    return f"above {1 - _TAIL}" if value > 1 - _TAIL else f"{value:.4f}"
+
+
+def step_key(hand: InHand) -> str:
+    """What is in hand at a point: the step and its subject, or the end and the state there."""
+    step = hand.next.step
+    return f"{step.id}/{hand.next.subject}" if step is not None else f"end/{hand.next.state}"
+
+
+def at_the_end(state: str) -> str:
+    """What stands in place of an instruction when the route is walked."""
+    return _ENDS.get(
+        state, "Every step is done. Submit the record: you sign it, a reviewer signs it after you."
+    )
+
+
+_ENDS = {
+    "awaiting review": "The record is signed once and waits for a reviewer.",
+    "accepted": "The record carries both signatures.",
+    "withdrawn": "Nothing more is done here.",
+}

@@ -71,5 +71,9 @@ class SkipDialog(Dialog[StepOutcome]):
         """Skip it."""
         desk = self.full.desk
         return steps.skip(
-            desk.logbook, desk.signer, point=self._found.point, reason=given["reason"]
+            desk.logbook,
+            desk.signer,
+            point=self._found.point,
+            reason=given["reason"],
+            seen=self._found,
         )

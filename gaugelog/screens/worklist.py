@@ -77,7 +77,6 @@ class WorklistScreen(Room):
 
     def on_mount(self) -> None:
         """Read the list."""
-        super().on_mount()
         self.query_one("#find", Input).focus()
         self.facts_changed()
 

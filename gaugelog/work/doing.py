@@ -101,9 +101,10 @@ def observed_at(text: str, now: Moment) -> datetime:
         return now.utc
     zone = timezone(timedelta(minutes=now.offset_minutes))
     try:
-        if len(text.strip()) <= len("14:30:00"):
-            text = f"{now.utc.astimezone(zone):%Y-%m-%d} {text.strip()}"
-        found = datetime.fromisoformat(text.strip())
+        whole = text.strip()
+        if len(whole) <= len("14:30:00"):
+            whole = f"{now.utc.astimezone(zone):%Y-%m-%d} {whole}"
+        found = datetime.fromisoformat(whole)
         when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
     except (ValueError, OverflowError):
         fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")

@@ -115,16 +115,19 @@ def do(  # noqa: PLR0913 (what the person says is each its own word)
         return _do(doing, typed, note, reason)
 
 
-def skip(logbook: Logbook, signer: Signer, *, point: str, reason: str) -> StepOutcome:
+def skip(
+    logbook: Logbook, signer: Signer, *, point: str, reason: str, seen: NextStep | None = None
+) -> StepOutcome:
     """Skip the next step of a point, with a reason, where its skip rule lets the person.
 
-    Raises Refused when it does not.
+    Raises Refused when it does not, or the point went on since the person had `seen` it.
     """
     if not reason.strip():
         raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])
     with logbook.deed(signer) as making:
         row = point_row(making.view, point)
         found = progress(making.view, row, making.moment)
+        _demand_as_seen(found, seen)
         if found.step is None:
             raise Refused(f"{row.label} has no step left.")
         if found.forbidden:

@@ -37,29 +37,47 @@ class Seen:
         return self.app.rooms()[-1]
 
     async def keys(self, *names: str) -> None:
-        """Press keys; then wait until what they began has ended."""
-        await self.pilot.press(*names)
-        await self.rest()
+        """Press keys, each after what the one before began has ended."""
+        driver = self.app._driver
+        assert driver is not None
+        for name in names:
+            char = _CHARACTERS.get(name, name if len(name) == 1 else None)
+            event = events.Key(name, char)
+            event.set_sender(self.app)
+            driver.send_message(event)
+            await self.rest()
 
     async def type(self, text: str, *, enter: bool = True) -> None:
         """Give a value at once, as a scanner does, and Enter."""
         focused = self.app.screen.focused
         assert focused is not None
         focused.post_message(events.Paste(text))
-        await self.pilot.pause()
+        await self.rest()
         if enter:
             await self.keys("enter")
 
     async def rest(self) -> None:
-        """Wait until no slow work runs and everything is drawn."""
-        for _ in range(200):
-            await self.pilot.pause()
-            running = [each for each in self.app.workers if not each.is_finished]
-            if not running:
+        """Wait until no slow work runs, no message waits and everything is drawn.
+
+        Pilot's own waiting takes a tenth of a second a key; this takes as long as the work does.
+        """
+        quiet = 0
+        for _ in range(2000):
+            await self.pilot._wait_for_screen()
+            await asyncio.sleep(_LOOK_SECONDS)
+            quiet = quiet + 1 if self._quiet() else 0
+            if quiet == _QUIET_LOOKS:
                 break
-            await asyncio.sleep(0.01)
-        await self.pilot.pause()
-        await self.pilot.pause()
+        assert self.app._exception is None, self.app._exception
+
+    def _quiet(self) -> bool:
+        if not all(each.is_finished for each in self.app.workers):
+            return False
+        nodes = [self.app, *self.app.screen_stack, *self.app.screen.walk_children()]
+        waiting = any(node.message_queue_size or node._next_callbacks for node in nodes)
+        screen = self.app.screen
+        drawn = not (screen._dirty_widgets or screen._layout_required or screen._callbacks)
+        return drawn and not waiting
 
     async def sign_on(self, person: str = "t.okoro", word: str = WORD) -> None:
         """Sign on as a person."""
@@ -75,6 +93,9 @@ class Seen:
         """The same in one string."""
         return "\n".join(self.lines())
 
+
+_CHARACTERS = {"enter": "\r", "space": " ", "tab": "\t"}
+_LOOK_SECONDS, _QUIET_LOOKS = 0.004, 3
 
 Play = Callable[[Seen], Awaitable[None]]
 

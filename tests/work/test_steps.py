@@ -170,9 +170,8 @@ def test_nothing_is_skipped_without_a_reason_or_ahead_of_the_release(stocked: Jo
     changed = route.model_copy(update={"steps": (*lenient, *route.steps[1:])})
     object.__setattr__(facts, "routes", (changed,))
     plan.load(stocked.book, stocked.keys["c.ward"], facts)
-    skip = {"point": "FB-1", "reason": "not needed"}
     with pytest.raises(Refused, match="can't be skipped now: The plan is not released"):
-        steps.skip(stocked.book, stocked.keys["t.okoro"], **skip)
+        steps.skip(stocked.book, stocked.keys["t.okoro"], point="FB-1", reason="not needed")
     with pytest.raises(Faulty):
         steps.skip(stocked.book, stocked.keys["t.okoro"], point="FB-1", reason="")
 
@@ -251,3 +250,15 @@ def test_a_worklist_names_what_each_point_needs(tmp_path: Path, job: Job) -> Non
     assert ("FB-1", "access") == (first.point, first.step.id if first.step else "")
     assert (5, len(WALK), "on hold") == (second.number, second.count, second.state)
     assert [] == steps.worklist(start_job(tmp_path / "other").book)
+
+
+def test_nothing_is_kept_of_a_step_when_the_point_went_on_since_it_was_seen(job: Job) -> None:
+    seen = steps.next_step(job.book, "FB-1")
+    job.do("t.okoro", {"safe": "yes"})
+    head = job.book.head()
+    with pytest.raises(Refused, match="FB-1 went on meanwhile: it is at “Take the gauge"):
+        job.do("t.okoro", {"safe": "yes"}, seen=seen)
+    with pytest.raises(Refused, match="FB-1 went on meanwhile"):
+        steps.skip(job.book, job.keys["t.okoro"], point="FB-1", reason="r", seen=seen)
+    assert head == job.book.head()
+    job.do("t.okoro", WALK[1][1], seen=steps.next_step(job.book, "FB-1"))
