@@ -126,7 +126,7 @@ class FullScreen(App[None]):
 
     def tick(self) -> None:
         """Every second: lock an idle desk, and look whether something was kept by anyone."""
-        if self.desk.seat is None:
+        if self.desk.seat is None or not self.is_running:
             return
         if self.desk.seconds_left <= 0:
             minutes = self.desk.idle_seconds / 60

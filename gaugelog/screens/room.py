@@ -165,7 +165,7 @@ class Room(Screen[None]):
         """Slow work ended: say or show what came of it."""
         message.stop()
         self._doing = ""
-        if self.is_mounted:
+        if self.app.is_running:
             self.tell("")
             message.act()
 

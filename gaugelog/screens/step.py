@@ -21,6 +21,7 @@ from gaugelog.screens.drafts import Draft
 from gaugelog.screens.entry import Entry
 from gaugelog.screens.fields import NOTE, OWN, REASON, WHEN, FieldRow, inputs_of
 from gaugelog.screens.hold import HoldDialog
+from gaugelog.screens.pins import METER, PinsScreen
 from gaugelog.screens.rail import Rail
 from gaugelog.screens.room import Room, show
 from gaugelog.screens.step_keys import cautions_wait, working_keys
@@ -40,6 +41,7 @@ class StepScreen(Room):
         Binding("enter", "do", "Done"),
         Binding("f5", "hold", "Decide the hold"),
         Binding("f5", "submit", "Submit the record"),
+        Binding("f6", "pins", "Find the cause"),
         Binding("f7", "redo", "Earlier step"),
         Binding("f9", "skip", "Skip"),
         Binding("ctrl+n", "add('note')", "Note", show=False),
@@ -119,6 +121,8 @@ class StepScreen(Room):
         self.hand = hand
         self._draw_around()
         self.entry.expire(self.draft, self._now())
+        if self.focused is None:  # a window opened: the fields can be typed in again
+            self._focus_first()
 
     def leaving(self) -> None:
         """Put away what is half typed."""
@@ -139,6 +143,8 @@ class StepScreen(Room):
 
     async def _show(self, hand: InHand, moved: bool = False) -> None:
         """Show a step anew: its fields with what was half typed or is carried."""
+        if not self.app.is_running:
+            return
         self.hand = hand
         self.point = hand.next.point
         if moved:
@@ -280,6 +286,13 @@ class StepScreen(Room):
     def action_submit(self) -> None:
         """Sign the record and hand it to review."""
         self.full.push_screen(SubmitDialog(self.point), self._signed_off)
+
+    def action_pins(self) -> None:
+        """Look for the cause of a failed check by resistances between the circuit's pins."""
+        now = self._now()
+        meter = self.draft.offered(METER, now)
+        self._keep_draft()
+        self.full.push_screen(PinsScreen(self.point, meter.typed if meter is not None else ""))
 
     def action_redo(self) -> None:
         """Go back to an earlier step."""

@@ -26,6 +26,7 @@ def working_keys(found: NextStep, waiting: bool) -> dict[str, bool]:
         "add": free and not hold and not waiting,
         "hold": free and hold,
         "submit": step is None and found.title != "none" and not found.blocks,
+        "pins": found.again and step is not None and step.subject in {"grid", "circuit"},
         "redo": found.state not in _AT_REST,
         "skip": skippable and not found.forbidden,
     }

@@ -109,7 +109,7 @@ def outcome_text(outcome: StepOutcome) -> Content:
     told = [reading_text(each) for each in outcome.readings]
     told += [plain(line) for line in outcome.lines if not line.startswith("Find the cause")]
     if not outcome.settled and outcome.readings:
-        told.append(plain("Find the cause, then measure again: it asks why."))
+        told.append(plain("Find the cause (F6), then measure again: it asks why."))
     return lines(*told) if told else plain("")
 
 

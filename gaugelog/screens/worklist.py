@@ -221,7 +221,7 @@ def _row(each: Listed, widths: tuple[int, int, int, int]) -> Content:
     sign, style = STATES.get(found.state, ("?", ""))
     told, told_style = _held(each)
     return Content.assemble(
-        f" {'▸' if each.wanted else ' '} ",
+        "   ",
         (_cell(found.point, point), "bold" if each.wanted else ""),
         " ",
         (_cell(f"{sign} {found.state}", state), style),

@@ -1,0 +1,74 @@
+"""How the main states look, as text at both sizes: drawn again, they must look the same.
+
+To draw them anew after a change that was meant:
+`GAUGELOG_DRAW_DUMPS=1 pytest tests/screens/test_dumps.py`, then look at what changed.
+"""
+
+from __future__ import annotations
+
+import os
+from collections.abc import Awaitable, Callable
+from pathlib import Path
+
+import pytest
+
+from tests.screens.conftest import At
+from tests.screens.pilot import LARGE, SMALL, Seen, run_screen
+
+DUMPS = Path(__file__).parent / "dumps"
+
+
+async def _sign_on(seen: Seen) -> None:
+    await seen.rest()
+
+
+async def _worklist(seen: Seen) -> None:
+    await seen.sign_on()
+
+
+async def _step(seen: Seen) -> None:
+    await seen.sign_on()
+    await seen.type("FB-1")
+
+
+async def _failed(seen: Seen) -> None:
+    await _step(seen)
+    await seen.keys("space")
+    for typed in ("yes", "IT-5", "0.4 GΩ"):
+        await seen.type(typed)
+
+
+async def _hold(seen: Seen) -> None:
+    await _step(seen)
+    await seen.keys("f5")
+
+
+STATES: dict[str, tuple[int, Callable[[Seen], Awaitable[None]]]] = {
+    "sign-on": (0, _sign_on),
+    "worklist": (7, _worklist),
+    "step-first": (0, _step),
+    "step-bond": (6, _step),
+    "step-waits": (7, _step),
+    "step-failed": (9, _failed),
+    "step-wires": (8, _step),
+    "hold": (10, _hold),
+    "end": (18, _step),
+}
+
+
+@pytest.mark.parametrize("size", [SMALL, LARGE], ids=["80x24", "120x40"])
+@pytest.mark.parametrize("state", STATES)
+def test_the_screen_looks_as_it_was_drawn(at: At, state: str, size: tuple[int, int]) -> None:
+    count, go = STATES[state]
+    kept = DUMPS / f"{state}-{size[0]}x{size[1]}.txt"
+
+    async def play(seen: Seen) -> None:
+        await go(seen)
+        assert max(len(line) for line in seen.lines()) <= size[0]
+        drawn = seen.text() + "\n"
+        if os.environ.get("GAUGELOG_DRAW_DUMPS"):
+            kept.write_text(drawn, encoding="utf-8")
+        assert kept.read_text(encoding="utf-8") == drawn
+
+    job = at(count)
+    run_screen(job.book, job.folder, play, size=size)
