@@ -91,7 +91,10 @@ def _written(value: JsonValue) -> bytes:
 
 
 def _allow(value: object) -> None:
-    if isinstance(value, str):
+    if type(value) is str:
+        if not value.isascii():
+            _allow_text(value)
+    elif isinstance(value, str):
         _allow_text(value)
     elif isinstance(value, dict):
         for name, member in value.items():

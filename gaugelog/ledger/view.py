@@ -3,10 +3,12 @@
 from __future__ import annotations
 
 import sqlite3
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from functools import cache
 from typing import TypeVar
 
+from sqlalchemy import inspect
+from sqlalchemy.orm import configure_mappers
 from sqlmodel import SQLModel
 
 from gaugelog.errors import Refused
@@ -46,7 +48,7 @@ class View:
         query = select(table) + (f" WHERE {where}" if where else "") + _order(model)
         names = _columns(model)
         rows = self._connection.execute(query, tuple(equals.values()))
-        return [model(**dict(zip(names, row, strict=True))) for row in rows]
+        return [_row(model, names, row) for row in rows]
 
     def known(self) -> Buffer:
         """The same look as plain rows, for the functions that the fold shares with the rules."""
@@ -113,7 +115,25 @@ class View:
         query = f"{select(table_of(model).name)} WHERE label = ? COLLATE NOCASE{_order(model)}"
         names = _columns(model)
         found = self._connection.execute(query, (wanted,)).fetchall()
-        return [model(**dict(zip(names, row, strict=True))) for row in found]
+        return [_row(model, names, row) for row in found]
+
+
+def _row(model: type[T], names: tuple[str, ...], values: Sequence[object]) -> T:
+    """A row object of what the table holds, made as SQLAlchemy makes one that it loads.
+
+    The class's own way goes through each column's descriptor, for rows that are to be stored;
+    these are only looked at, and there may be many.
+    """
+    row: T = _maker(model)()
+    row.__dict__.update(zip(names, values, strict=True))
+    return row
+
+
+@cache
+def _maker(model: type[T]) -> Callable[[], T]:
+    configure_mappers()
+    made: Callable[[], T] = inspect(model).class_manager.new_instance
+    return made
 
 
 @cache

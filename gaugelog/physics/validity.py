@@ -133,6 +133,8 @@ def _ends(name: str, value: Number) -> tuple[float, float]:
 
     Two passes over an array without a copy: a formula is checked for little beside its own cost.
     """
+    if type(value) is float:
+        return value, value
     try:
         if is_array(value):
             plain = nominal(value)

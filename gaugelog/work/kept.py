@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping, Sequence
 from urllib.parse import quote
 
 from gaugelog.errors import Fault, Faulty
@@ -17,10 +16,10 @@ def fit_to_keep(value: JsonValue) -> JsonValue:
     Faulty for text that holds bytes of another encoding.
     """
     if isinstance(value, str):
-        return text_to_keep(value)
-    if isinstance(value, Mapping):
+        return value if value.isascii() else text_to_keep(value)
+    if isinstance(value, dict):
         return {name: fit_to_keep(member) for name, member in value.items()}
-    if isinstance(value, Sequence):
+    if isinstance(value, list | tuple):
         return [fit_to_keep(member) for member in value]
     return value
 

@@ -11,6 +11,7 @@ from sqlite3 import Connection
 
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.plan import PlanFacts, load_plan
+from gaugelog.journal.collection import no_collection
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.campaign import CampaignRow, ChannelRow, PlanLoaded, PlanReleased
@@ -43,6 +44,7 @@ class PlannedPoint:
     """What plan revisions changed here since a reviewer last looked."""
 
 
+@no_collection()
 def understand(logbook: Logbook, folder: Path) -> PlanFacts:
     """Read the planner's files in `folder`. Raises Faulty naming every fault of every file."""
     with logbook.reading() as view:
@@ -50,6 +52,7 @@ def understand(logbook: Logbook, folder: Path) -> PlanFacts:
     return load_plan(folder, lots=lots, new_id=new_id)
 
 
+@no_collection()
 def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
     """Keep a plan as the draft; an earlier draft is replaced. Returns what was loaded.
 
@@ -89,6 +92,7 @@ def _demand_plain_names(facts: PlanFacts) -> None:
         raise Faulty(faults)
 
 
+@no_collection()
 def check(logbook: Logbook) -> list[PlanFinding]:
     """Everything found about the plan: ok, warning or refusal, each with figure and source."""
     with logbook.storage.reading() as reader, _as_drafted(reader.connection) as (view, campaign):
@@ -108,6 +112,7 @@ def _as_drafted(connection: Connection) -> Iterator[tuple[View, CampaignRow]]:
         yield view, _planned(view)
 
 
+@no_collection()
 def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
     """Release the draft for work: plan and criteria are frozen. Returns what was released.
 
@@ -151,6 +156,7 @@ def is_released(logbook: Logbook) -> bool:
     return campaign is not None and campaign.state == "released"
 
 
+@no_collection()
 def overview(logbook: Logbook) -> list[PlannedPoint]:
     """Every point of the plan with its lot, circuit, channel and state."""
     with logbook.reading() as view:
