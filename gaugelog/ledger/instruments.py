@@ -61,8 +61,21 @@ class InstrumentRow(SQLModel, table=True):
     seq: int
 
 
+class CalibrationRow(SQLModel, table=True):
+    """One certificate of an instrument: in force from its entry until the next one's."""
+
+    __tablename__ = "calibration"
+
+    id: str = Field(primary_key=True)
+    """The instrument's id and the entry's number."""
+    instrument: str = Field(index=True)
+    data: str
+    """The whole of `InstrumentAdded` as JSON."""
+    seq: int
+
+
 def apply_instrument_added(_known: Known, at: At, fact: InstrumentAdded) -> Iterator[Change]:
-    """The instrument is known under this certificate."""
+    """The instrument is known under this certificate; those it had before are kept beside it."""
     yield Put(
         "instrument",
         {
@@ -71,6 +84,15 @@ def apply_instrument_added(_known: Known, at: At, fact: InstrumentAdded) -> Iter
             "type": fact.type,
             "serial": fact.serial,
             "due": fact.due,
+            "data": at.data,
+            "seq": at.seq,
+        },
+    )
+    yield Put(
+        "calibration",
+        {
+            "id": f"{fact.id}/{at.seq}",
+            "instrument": fact.id,
             "data": at.data,
             "seq": at.seq,
         },

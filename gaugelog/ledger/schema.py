@@ -14,7 +14,7 @@ from sqlmodel import SQLModel
 from gaugelog.ledger.buffer import Buffer
 from gaugelog.ledger.campaign import CampaignRow, ChannelRow, CriteriaRow
 from gaugelog.ledger.circuits import CircuitRow
-from gaugelog.ledger.instruments import InstrumentRow
+from gaugelog.ledger.instruments import CalibrationRow, InstrumentRow
 from gaugelog.ledger.papers import CertificateRow
 from gaugelog.ledger.people import PersonRow
 from gaugelog.ledger.photos import PhotoRow
@@ -29,7 +29,7 @@ from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 9
+LEDGER_VERSION = 10
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -38,6 +38,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     GaugeRow,
     ConsumableRow,
     InstrumentRow,
+    CalibrationRow,
     CampaignRow,
     CriteriaRow,
     ChannelRow,

@@ -17,6 +17,8 @@ class RangeTaken:
 
     instrument: str
     range: InstrumentRange
+    certificate: str = ""
+    """Number and date of its certificate then: calibrated anew, it errs anew."""
 
     @property
     def accuracy(self) -> Accuracy:
@@ -26,6 +28,12 @@ class RangeTaken:
     def uncertainty(self, value: float) -> float:
         """Standard uncertainty of a reading of `value`, SI unit."""
         return float(self.accuracy.uncertainty(value))
+
+
+def taken_on(instrument: InstrumentAdded, span: InstrumentRange) -> RangeTaken:
+    """A range of an instrument under the certificate it has."""
+    certificate = f"{instrument.certificate_number}, {instrument.calibrated_on}"
+    return RangeTaken(instrument.id, span, certificate)
 
 
 def range_for(
@@ -44,11 +52,11 @@ def range_for(
         )
     fitting.sort(key=lambda item: item.high.si())
     if value is None or qualifier == "overload":
-        return RangeTaken(instrument.id, fitting[-1])
+        return taken_on(instrument, fitting[-1])
     size = abs(value.si()) if check in SIGNED else value.si()
     for item in fitting:
         if item.low.si() <= size <= item.high.si():
-            return RangeTaken(instrument.id, item)
+            return taken_on(instrument, item)
     spans = "; ".join(f"{item.low} to {item.high}" for item in fitting)
     raise Faulty(
         [Fault(instrument.label, f"has no range that reaches {value}.", f"Its ranges: {spans}.")]

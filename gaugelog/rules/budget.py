@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from gaugelog.errors import Refused
 from gaugelog.ledger.campaign import Article, CampaignPlanned, CampaignRow
 from gaugelog.ledger.circuits import CircuitPlanned
-from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange, InstrumentRow
+from gaugelog.ledger.instruments import InstrumentRange
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.stock import GridData, LotReceived, LotRow
@@ -17,10 +17,12 @@ from gaugelog.physics.arrangements import arrangement
 from gaugelog.physics.circuit_budget import circuit_budget
 from gaugelog.physics.estimates import Estimate, normal, rectangular
 from gaugelog.physics.leads import correction_factor
+from gaugelog.physics.leakage import leakage_strain
 from gaugelog.physics.reading import PlannedCircuit
 from gaugelog.physics.temperature import SCATTER_RATES, mismatch_output
 from gaugelog.physics.transverse import uncorrected_error
 from gaugelog.physics.uncertainty import Budget
+from gaugelog.rules.certificate import certificate_at
 from gaugelog.rules.compensated import SOURCE as COMPENSATED
 from gaugelog.rules.compensated import thermal_share
 from gaugelog.rules.wired import Wired, planned_circuit, wired
@@ -135,14 +137,42 @@ def _warmth(known: _Known) -> dict[str, Estimate]:
     return found
 
 
-def _leakage(known: _Known) -> dict[str, Estimate]:
-    """Leakage of the last insulation read: it may be all there is, or none."""
+def _insulation(known: _Known) -> float | None:
+    """The insulation last read, ohm."""
     rows = [
         ReadingTaken.model_validate_json(row.data)
         for row in known.view.all(ReadingRow, point=known.point.id, check="insulation", latest=1)
     ]
     values = [row.value.si() for row in rows if row.value is not None and row.value.si() > 0]
-    return {"leak": rectangular(0.0, 1 / values[-1])} if values else {}
+    return values[-1] if values else None
+
+
+def _leakage(known: _Known) -> dict[str, Estimate]:
+    """Leakage of the last insulation read, as a conductance from 0 to 1/R.
+
+    It may lie across the grid as a whole or not at all: rectangular about 1/2R, half-width 1/2R.
+    What the middle makes of a reading is among the corrections (`_leak_middle`).
+    """
+    insulation = _insulation(known)
+    if insulation is None:
+        return {}
+    half = 1 / (2 * insulation)
+    return {"leak": rectangular(half, half)}
+
+
+def _leak_middle(known: _Known) -> list[Correction]:
+    insulation = _insulation(known)
+    if insulation is None:
+        return []
+    factor = known.grid.gauge_factor.si()
+    shown = float(leakage_strain(known.wired.resistance, factor, 2 * insulation))
+    return [
+        Correction(
+            "leakage, on the middle between none and all across the grid: reads too much by",
+            f"{shown * 1e6:+.2g} µm/m",
+            "−R/(K (R + 2 Ri)), parallel resistance and ASTM E251 (from memory)",
+        )
+    ]
 
 
 def _instrument(known: _Known) -> dict[str, Estimate]:
@@ -157,13 +187,13 @@ def _instrument(known: _Known) -> dict[str, Estimate]:
 
 
 def _strain_range(known: _Known) -> InstrumentRange | None:
-    """The range of the module that read the shunt, in strain."""
-    for row in known.view.all(ReadingRow, subject=known.planned.id, check="shunt"):
-        instrument = known.view.get(InstrumentRow, row.instrument)
-        if instrument is not None:
-            body = InstrumentAdded.model_validate_json(instrument.data)
-            return next((each for each in body.ranges if each.quantity == "strain"), None)
-    return None
+    """The range on which the module last read the shunt, in strain, as it was certified then."""
+    rows = known.view.all(ReadingRow, subject=known.planned.id, check="shunt", latest=1)
+    if not rows:
+        return None
+    name = ReadingTaken.model_validate_json(rows[-1].data).range
+    module = certificate_at(known.view, rows[-1].instrument, rows[-1].seq)
+    return next((each for each in module.ranges if each.name == name), None)
 
 
 def _corrections(known: _Known) -> tuple[Correction, ...]:
@@ -174,7 +204,7 @@ def _corrections(known: _Known) -> tuple[Correction, ...]:
             "lead wires: multiply by",
             f"{leads:.5f}",
             "(R + n RL)/R, Dally and Riley (from memory)",
-        )
+        ),
     ]
     if not arrangement(known.planned.arrangement).needs_poisson:
         poisson = known.article.material.poisson_ratio.si()
@@ -187,7 +217,7 @@ def _corrections(known: _Known) -> tuple[Correction, ...]:
                 "Kt (r + ν0)/(1 − ν0 Kt), ASTM E251 (from memory)",
             )
         )
-    return (*found, *_thermal_correction(known))
+    return (*found, *_thermal_correction(known), *_leak_middle(known))
 
 
 def _thermal_correction(known: _Known) -> Iterator[Correction]:

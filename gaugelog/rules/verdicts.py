@@ -70,7 +70,8 @@ def judge_value(basis: Basis, check: str, stage: str, taken: Taken) -> Judged:
 def judge_change(basis: Basis, stage: str, before: Taken, after: Taken) -> Judged:
     """Judge a resistance by its change against an earlier one, in per cent of the earlier.
 
-    On one range of one meter, gain and offset errors cancel (`change.difference_uncertainty`).
+    On one range of one meter under one certificate, gain and offset errors cancel
+    (`change.difference_uncertainty`).
     """
     limits = _both_ways(limits_for(basis, "resistance", stage))
     allowed = strictest(limits)
@@ -80,7 +81,7 @@ def judge_change(basis: Basis, stage: str, before: Taken, after: Taken) -> Judge
     if after.qualifier != "=" or before.qualifier != "=":
         return Judged(limits, _changed_beyond(basis, after, allowed, rule))
     share = float(relative_change(before.si, after.si))
-    same = before.on.instrument == after.on.instrument and before.on.range == after.on.range
+    same = before.on == after.on
     first, second = before.on.accuracy, after.on.accuracy
     spread = float(
         difference_uncertainty(

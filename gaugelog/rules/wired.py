@@ -6,7 +6,6 @@ from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
-from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.stock import GaugeRow, GridData, LotReceived, LotRow
@@ -14,6 +13,7 @@ from gaugelog.ledger.view import View
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.circuit import Element as Part
 from gaugelog.rules.accuracy import range_for
+from gaugelog.rules.certificate import certificate_at
 from gaugelog.rules.layout import layout_of
 from gaugelog.rules.placed import poisson_at
 
@@ -101,12 +101,14 @@ def _grid(view: View, grid: str) -> _Grid:
     factor = grid_data(lot, row.number).gauge_factor.si()
     poisson = poisson_at(view, PointPlanned.model_validate_json(point.data)) if point else 0.0
     nominal = lot.nominal_resistance.si()
-    reading = _last_resistance(view, grid)
-    if reading is None or reading.value is None:
+    read = _last_resistance(view, grid)
+    reading = ReadingTaken.model_validate_json(read.data) if read is not None else None
+    if read is None or reading is None or reading.value is None:
         spread = nominal * lot.resistance_tolerance.si() / 3**0.5
         return _Grid(row.label, nominal, spread, factor, nominal, False, poisson)
     value = reading.value.si()
-    spread = _uncertainty(view, reading, value)
+    meter = certificate_at(view, reading.instrument, read.seq)
+    spread = range_for(meter, "resistance", reading.value, reading.qualifier).uncertainty(value)
     return _Grid(row.label, value, spread, factor, nominal, True, poisson)
 
 
@@ -115,15 +117,7 @@ def grid_data(lot: LotReceived, number: int) -> GridData:
     return next((grid for grid in lot.grids if grid.number == number), lot.grids[0])
 
 
-def _last_resistance(view: View, grid: str) -> ReadingTaken | None:
+def _last_resistance(view: View, grid: str) -> ReadingRow | None:
     rows = view.all(ReadingRow, subject=grid, check="resistance", latest=1)
     sound = [row for row in rows if not row.blocks]
-    return ReadingTaken.model_validate_json(sound[-1].data) if sound else None
-
-
-def _uncertainty(view: View, reading: ReadingTaken, value: float) -> float:
-    row = view.get(InstrumentRow, reading.instrument)
-    if row is None:
-        return 0.0
-    body = InstrumentAdded.model_validate_json(row.data)
-    return range_for(body, "resistance", reading.value, reading.qualifier).uncertainty(value)
+    return sound[-1] if sound else None

@@ -3,8 +3,10 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
+from datetime import date
 from types import MappingProxyType
 
+from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.papers import Paper
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
@@ -21,11 +23,13 @@ def add(
 ) -> None:
     """Add instruments; one whose label is known keeps its id and gets the new certificate.
 
-    `papers` are the certificates' files by the id in `facts`. Raises Refused without a fitting
-    role.
+    `papers` are the certificates' files by the id in `facts`. Raises Faulty for a calibration in
+    the future, Refused without a fitting role.
     """
+    facts = tuple(facts)
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner", "technician", "custodian")
+        _demand_calibrated(facts, deed.moment.local.date())
         known = {row.label.casefold(): row.id for row in deed.view.all(InstrumentRow)}
         for fact in facts:
             there = known.get(fact.label.casefold(), fact.id)
@@ -36,3 +40,17 @@ def add(
                 number = instrument.certificate_number
                 item: Item = ("instrument", instrument.id, instrument.label, number)
                 keep_paper(deed, item, papers[fact.id])
+
+
+def _demand_calibrated(facts: Iterable[InstrumentAdded], today: date) -> None:
+    faults = [
+        Fault(
+            f"instrument {fact.label}",
+            f"was calibrated on {fact.calibrated_on}, which lies in the future.",
+            "Give the date on its certificate.",
+        )
+        for fact in facts
+        if date.fromisoformat(fact.calibrated_on) > today
+    ]
+    if faults:
+        raise Faulty(faults)

@@ -15,13 +15,14 @@ from gaugelog.ledger.campaign import (
     CriteriaRow,
 )
 from gaugelog.ledger.checks import CHECKS
-from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
+from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import LimitFound, ReadingRow, ReadingTaken
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
-from gaugelog.rules.accuracy import RangeTaken, range_for
+from gaugelog.rules.accuracy import range_for, taken_on
+from gaugelog.rules.certificate import certificate_at
 from gaugelog.rules.digits import probability_text
 from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.plausible import demand_plausible
@@ -131,7 +132,7 @@ def _judge(seen: Observation, basis: Basis, check: str, taken: Taken) -> tuple[J
             f"{seen.point.label} has no {check} as received to compare with.",
             "Measure it as received first.",
         )
-    before = _taken_before(seen.view, ReadingTaken.model_validate_json(row.data))
+    before = _taken_before(seen.view, row)
     return judge_change(basis, seen.step.stage, before, taken), row.id
 
 
@@ -152,14 +153,10 @@ def _judges_change(basis: Basis, check: str, stage: str) -> bool:
     )
 
 
-def _taken_before(view: View, reading: ReadingTaken) -> Taken:
-    row = view.get(InstrumentRow, reading.instrument)
-    if row is None:
-        raise Refused("The instrument of the earlier reading is not known.")
-    body = InstrumentAdded.model_validate_json(row.data)
-    span = next(
-        (RangeTaken(body.id, item) for item in body.ranges if item.name == reading.range), None
-    )
+def _taken_before(view: View, row: ReadingRow) -> Taken:
+    reading = ReadingTaken.model_validate_json(row.data)
+    body = certificate_at(view, reading.instrument, row.seq)
+    span = next((taken_on(body, item) for item in body.ranges if item.name == reading.range), None)
     if span is None:
         span = range_for(body, reading.check, reading.value, reading.qualifier)
     return Taken(reading.value, reading.qualifier, span)

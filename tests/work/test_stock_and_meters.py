@@ -171,21 +171,36 @@ def test_a_meter_calibrated_anew_keeps_its_id(job: Job) -> None:
     assert job.do("t.okoro", typed_here(job)[1]).settled
 
 
-@pytest.mark.parametrize(
-    ("changed", "told"),
-    [
-        ({"due": "2026-11-16"}, "was due for calibration on 2026-11-16"),
-        ({"calibrated_on": "2026-11-18"}, "was calibrated only on 2026-11-18"),
-    ],
-)
-def test_a_meter_outside_its_certificate_is_refused(
-    job: Job, changed: dict[str, object], told: str
-) -> None:
-    instruments.add(job.book, job.keys["c.ward"], [_meter(**changed)])
+def test_a_meter_that_is_overdue_is_refused(job: Job) -> None:
+    instruments.add(job.book, job.keys["c.ward"], [_meter(due="2026-11-16")])
     walk_to(job, "gauge")
     with pytest.raises(Faulty) as caught:
         job.do("t.okoro", typed_here(job)[1])
-    assert told in _faults(caught)
+    assert "was due for calibration on 2026-11-16" in _faults(caught)
+
+
+def test_a_meter_is_not_used_before_the_day_it_was_calibrated(job: Job) -> None:
+    walk_to(job, "gauge")
+    job.clock.advance(86400)
+    instruments.add(job.book, job.keys["c.ward"], [_meter(calibrated_on="2026-11-18")])
+    with pytest.raises(Faulty) as caught:
+        job.do("t.okoro", typed_here(job)[1], at="2026-11-17 10:00")
+    assert "was calibrated only on 2026-11-18" in _faults(caught)
+
+
+def test_a_calibration_in_the_future_is_refused(job: Job) -> None:
+    meters = [_meter(calibrated_on="2026-11-18"), _meter(label="RM-9", calibrated_on="2027-01-01")]
+    with pytest.raises(Faulty) as caught:
+        instruments.add(job.book, job.keys["c.ward"], meters)
+    assert (
+        "instrument RM-2: was calibrated on 2026-11-18, which lies in the future. Give the date on "
+        "its certificate.\ninstrument RM-9: was calibrated on 2027-01-01"
+    ) in _faults(caught)
+    assert "RM-9" not in _meters(job)
+
+
+def test_a_calibration_of_today_is_taken(job: Job) -> None:
+    instruments.add(job.book, job.keys["c.ward"], [_meter(calibrated_on="2026-11-17")])
 
 
 def test_a_value_beyond_every_range_of_the_meter_is_refused(job: Job) -> None:

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import json
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterator, Sequence
 from typing import TYPE_CHECKING
 
 from gaugelog.documents.content.fromplan import Planned, certificates_shown, needed
@@ -14,6 +14,7 @@ from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.steps import Entered, StepRow
 from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, GaugeRow
+from gaugelog.rules.certificate import certificate_at
 from gaugelog.rules.taken import readings_at
 
 if TYPE_CHECKING:
@@ -89,10 +90,27 @@ def readings_shown(view: View, plan: Planned) -> tuple[ReadingShown, ...]:
     """Every attempt of every check, in the order they were entered."""
     rows = readings_at(view, plan.point.id)
     labels = dict(plan.subjects("grid") + plan.subjects("circuit") + plan.subjects("place"))
-    return tuple(_reading(view, plan, row, labels) for row in rows)
+    meters = _meters(view, rows)
+    return tuple(_reading(view, plan, row, labels, meters) for row in rows)
 
 
-def _reading(view: View, plan: Planned, row: ReadingRow, labels: dict[str, str]) -> ReadingShown:
+def _meters(view: View, rows: Sequence[ReadingRow]) -> dict[str, str]:
+    """The instrument of each reading; with its certificate where it had several at this point."""
+    under = {row.id: certificate_at(view, row.instrument, row.seq) for row in rows}
+    had: dict[str, set[str]] = {}
+    for meter in under.values():
+        had.setdefault(meter.id, set()).add(meter.certificate_number)
+    return {
+        reading: f"{meter.label} ({meter.certificate_number})"
+        if len(had[meter.id]) > 1
+        else meter.label
+        for reading, meter in under.items()
+    }
+
+
+def _reading(
+    view: View, plan: Planned, row: ReadingRow, labels: dict[str, str], meters: dict[str, str]
+) -> ReadingShown:
     taken = ReadingTaken.model_validate_json(row.data)
     fields = {
         name: getattr(taken, name)
@@ -105,7 +123,7 @@ def _reading(view: View, plan: Planned, row: ReadingRow, labels: dict[str, str])
             "subject": labels.get(row.subject, row.subject),
             "latest": bool(row.latest),
             "earlier_gauge": _earlier_gauge(view, plan, taken),
-            "instrument": needed(view.get(InstrumentRow, row.instrument)).label,
+            "instrument": meters[row.id],
             "entered_at": row.entered_at,
             "entered_by": row.entered_by,
         }
@@ -120,30 +138,40 @@ def _earlier_gauge(view: View, plan: Planned, taken: ReadingTaken) -> str:
 
 
 def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
-    """The instruments that were used, each with the ranges that were used."""
-    used: dict[str, set[str]] = {}
+    """The instruments that were used, each with the ranges that were used.
+
+    One that was calibrated anew meanwhile stands there once for each certificate it was used under.
+    """
+    used: dict[tuple[str, str], InstrumentAdded] = {}
+    ranges: dict[tuple[str, str], set[str]] = {}
+    for instrument, seq, span in _uses(view, plan):
+        meter = certificate_at(view, instrument, seq)
+        key = meter.id, meter.certificate_number
+        used[key] = meter
+        ranges.setdefault(key, set()).update(span)
+    shown = (_instrument(view, meter, ranges[key]) for key, meter in used.items())
+    return tuple(sorted(shown, key=lambda each: (each.label, each.calibrated_on)))
+
+
+def _uses(view: View, plan: Planned) -> Iterator[tuple[str, int, tuple[str, ...]]]:
+    """Each use of an instrument: its id, the entry that tells of it, the range if it was read."""
     for row in readings_at(view, plan.point.id):
-        taken = ReadingTaken.model_validate_json(row.data)
-        used.setdefault(row.instrument, set()).add(taken.range)
-    for instrument in _entered_ids(view, plan, "instrument"):
-        used.setdefault(instrument, set())
-    shown = (_instrument(view, each, ranges) for each, ranges in used.items())
-    return tuple(sorted(shown, key=lambda each: each.label))
+        yield row.instrument, row.seq, (ReadingTaken.model_validate_json(row.data).range,)
+    for step, instrument in _entered_ids(view, plan, "instrument"):
+        yield instrument, step.seq, ()
 
 
-def _instrument(view: View, instrument: str, ranges: set[str]) -> InstrumentShown:
-    row = needed(view.get(InstrumentRow, instrument))
-    body = InstrumentAdded.model_validate_json(row.data)
+def _instrument(view: View, body: InstrumentAdded, ranges: set[str]) -> InstrumentShown:
     own = {"certificates"}
     fields = {n: getattr(body, n) for n in InstrumentShown.model_fields if n not in own}
-    fields["certificates"] = certificates_shown(view, instrument, body.certificate_number)
+    fields["certificates"] = certificates_shown(view, body.id, body.certificate_number)
     fields["ranges"] = tuple(each for each in body.ranges if each.name in ranges)
     return InstrumentShown.model_validate(fields)
 
 
 def consumables_shown(view: View, plan: Planned) -> tuple[ConsumableShown, ...]:
     """The lots that were used, the cable's among them where the plan names one."""
-    lots = dict.fromkeys(_entered_ids(view, plan, "consumable"))
+    lots = dict.fromkeys(lot for _row, lot in _entered_ids(view, plan, "consumable"))
     for circuit in plan.circuits:
         if circuit.leads.cable:
             named = view.all(ConsumableRow, label=circuit.leads.cable)
@@ -158,17 +186,14 @@ def _consumable(view: View, lot: str) -> ConsumableShown:
     return ConsumableShown.model_validate({**fields, "certificates": certificates_shown(view, lot)})
 
 
-def _entered_ids(view: View, plan: Planned, kind: str) -> Iterable[str]:
-    """Ids entered for inputs of this kind, in the route's order, each once."""
+def _entered_ids(view: View, plan: Planned, kind: str) -> Iterator[tuple[StepRow, str]]:
+    """Ids entered for inputs of this kind, in the route's order, with the step of each."""
     asked = {step.id: {i.name for i in step.inputs if i.kind == kind} for step in plan.route.steps}
     order = {step.id: number for number, step in enumerate(plan.route.steps)}
     rows = sorted(
         view.all(StepRow, point=plan.point.id), key=lambda row: order.get(row.step, len(order))
     )
-    found = (
-        answer.id
-        for row in rows
-        for name, answer in entered(row).items()
-        if name in asked.get(row.step, ())
-    )
-    return dict.fromkeys(each for each in found if each)
+    for row in rows:
+        for name, answer in entered(row).items():
+            if name in asked.get(row.step, ()) and answer.id:
+                yield row, answer.id
