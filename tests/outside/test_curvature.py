@@ -62,6 +62,7 @@ def test_curvature_adds_the_thermal_output_of_the_longer_arc() -> None:
 
 
 def test_a_grid_above_a_swelling_pipe_shows_the_strain_of_its_own_circle() -> None:
+    """Geometry: arcs of concentric circles, each longer by the same displacement."""
     height, radius, moved = 1e-4, 0.005, 1e-6
     shown = arc(radius + height + moved) / arc(radius + height) - 1
     surface = arc(radius + moved) / arc(radius) - 1

@@ -49,6 +49,7 @@ def step(route: RouteAdopted, name: str) -> RouteStep:
 
 
 def test_the_order_of_work_follows_the_subjects_of_astm_e1237(route: RouteAdopted) -> None:
+    # ASTM E1237, the order of its subjects (from memory of its headings)
     order = [each.id for each in route.steps]
     assert sorted(ASTM_E1237, key=order.index) == list(ASTM_E1237)
     assert "ASTM E1237" in route.basis
@@ -56,6 +57,7 @@ def test_the_order_of_work_follows_the_subjects_of_astm_e1237(route: RouteAdopte
 
 @pytest.mark.parametrize("name", CAUTIONS)
 def test_dangerous_steps_carry_their_cautions(route: RouteAdopted, name: str) -> None:
+    # common practice: what safety data sheets and tool manuals warn of
     text = " ".join(step(route, name).cautions).casefold()
     assert [] == [word for word in CAUTIONS[name] if word not in text]
 
@@ -87,6 +89,7 @@ def test_nothing_is_measured_before_its_cure(route: RouteAdopted) -> None:
 def test_checks_are_read_in_the_order_of_the_work(
     route: RouteAdopted,
 ) -> None:
+    # ASTM E1237 (from memory): resistance, then insulation; on the channel last, common practice
     read = [
         (item.check, each.stage)
         for each in route.steps

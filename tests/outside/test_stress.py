@@ -94,6 +94,8 @@ def test_turned_and_principal_stresses_are_those_of_the_tensor() -> None:
 
 
 def test_equal_moduli_make_an_orthotropic_layer_isotropic() -> None:
+    # Hooke's law with E1 = E2 and G = E/(2 (1 + ν)); Jones, Mechanics of Composite Materials (from
+    # memory)
     state = PlaneStrain(500e-6, -100e-6, 300e-6)
     plain = stress.isotropic_stress(state, 70e9, 0.33)
     layer = stress.orthotropic_stress(state, 70e9, 70e9, 0.33, stress.shear_modulus(70e9, 0.33))
