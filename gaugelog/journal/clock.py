@@ -7,7 +7,7 @@ be set by anyone, the second only runs: where they disagree, the clock jumped.
 from __future__ import annotations
 
 import time
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
 from datetime import UTC, datetime, timedelta, timezone
 from pathlib import Path
 from typing import Protocol
@@ -25,13 +25,15 @@ class Moment:
     """A time in UTC to the microsecond, the local offset, and the machine's own running time.
 
     `offset_minutes` is east of Greenwich; `boot` names the run of the machine; `uptime_ms` is
-    the time since it started, sleep included, in milliseconds.
+    the time since it started, sleep included, in milliseconds. `zoned` says that the machine's
+    time zone tells the offset of other days; else the offset holds on every day.
     """
 
     utc: datetime
     offset_minutes: int
     boot: str
     uptime_ms: int
+    zoned: bool = field(default=False, compare=False)
 
     def __post_init__(self) -> None:
         if self.utc.tzinfo is None or self.utc.utcoffset() != timedelta(0):
@@ -51,7 +53,25 @@ class Moment:
     @property
     def local(self) -> datetime:
         """The time on the wall where it was recorded, as an aware time."""
-        return self.utc.astimezone(timezone(timedelta(minutes=self.offset_minutes)))
+        return self.utc.astimezone(self._fixed)
+
+    def wall(self, utc: datetime) -> datetime:
+        """Another time, UTC, on the wall where this moment was recorded, as an aware time.
+
+        Summer time counts where the zone is known: it is the offset of that day, not of this one.
+        """
+        return utc.astimezone() if self.zoned else utc.astimezone(self._fixed)
+
+    def from_wall(self, wall: datetime) -> datetime:
+        """A time read off the wall there, without an offset, in UTC.
+
+        An hour that summer time's end brings twice is taken as the first of the two.
+        """
+        return (wall if self.zoned else wall.replace(tzinfo=self._fixed)).astimezone(UTC)
+
+    @property
+    def _fixed(self) -> timezone:
+        return timezone(timedelta(minutes=self.offset_minutes))
 
 
 class Clock(Protocol):
@@ -72,7 +92,7 @@ class SystemClock:
         """The moment it is on this machine."""
         utc = datetime.now(UTC)
         offset = utc.astimezone().utcoffset() or timedelta(0)
-        return Moment(utc, round(offset / timedelta(minutes=1)), self._boot, _uptime_ms())
+        return Moment(utc, round(offset / timedelta(minutes=1)), self._boot, _uptime_ms(), True)
 
 
 class SetClock:

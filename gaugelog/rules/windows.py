@@ -70,8 +70,8 @@ def time_of(text: str) -> datetime:
 
 
 def local_text(when: datetime, now: Moment) -> str:
-    """A UTC time as this machine's clock shows it, to the minute."""
-    return f"{when + timedelta(minutes=now.offset_minutes):%Y-%m-%d %H:%M}"
+    """A UTC time as this machine's clock shows it on that day, to the minute."""
+    return f"{now.wall(when):%Y-%m-%d %H:%M}"
 
 
 def _minutes(span: timedelta) -> str:

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from datetime import UTC, date, datetime, timedelta, timezone
+from datetime import UTC, date, datetime, timedelta
 
 from gaugelog.errors import ExitCode, Fault, Faulty, Refused
 from gaugelog.journal.clock import Moment
@@ -70,7 +70,7 @@ class Doing:
 
 def day_of(observed: datetime, moment: Moment) -> date:
     """The calendar day of an observation (UTC) where the work is done."""
-    return (observed + timedelta(minutes=moment.offset_minutes)).date()
+    return moment.wall(observed).date()
 
 
 def point_row(view: View, label: str) -> PointRow:
@@ -95,17 +95,17 @@ def about(view: View, row: PointRow, subject: str, *others: str) -> list[str]:
 def observed_at(text: str, now: Moment) -> datetime:
     """When something was observed, UTC: `14:30` or `2026-12-01 14:30` on this machine's clock.
 
-    Raises Faulty when it is no time or lies in the future.
+    The offset is that of the day it was observed on, summer time or not. Raises Faulty when it is
+    no time or lies in the future.
     """
     if not text.strip():
         return now.utc
-    zone = timezone(timedelta(minutes=now.offset_minutes))
     try:
         whole = text.strip()
         if len(whole) <= len("14:30:00"):
-            whole = f"{now.utc.astimezone(zone):%Y-%m-%d} {whole}"
+            whole = f"{now.local:%Y-%m-%d} {whole}"
         found = datetime.fromisoformat(whole)
-        when = (found if found.tzinfo else found.replace(tzinfo=zone)).astimezone(UTC)
+        when = found.astimezone(UTC) if found.tzinfo else now.from_wall(found)
     except (ValueError, OverflowError):
         fault = Fault("at", f"“{text}” is no time.", "Like 14:30, or 2026-12-01 14:30.")
         raise Faulty([fault]) from None
