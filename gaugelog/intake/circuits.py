@@ -123,7 +123,7 @@ def _leads(row: Fields) -> Leads:
 
 
 def _marks(row: Fields) -> dict[str, str]:
-    """`signal+=white; supply-=blue`: the user's own marks by the wire's function."""
+    """`signal+=W1; supply-=W2`: the user's own marks by the wire's function."""
     marks: dict[str, str] = {}
     for part in row.text("marks", needed=False).split(";"):
         if not part.strip():
@@ -131,7 +131,7 @@ def _marks(row: Fields) -> dict[str, str]:
         name, equals, mark = (piece.strip() for piece in part.partition("="))
         shown = part.strip()[:40]
         if not (equals and mark):
-            row.fault("marks", f"“{shown}” is no wire=mark.", "Like: signal+=white.")
+            row.fault("marks", f"“{shown}” is no wire=mark.", "Like: signal+=W1.")
         elif name not in WIRES:
             row.fault("marks", f"“{shown}” names no wire.", f"Wires: {', '.join(WIRES)}.")
         elif name in marks:

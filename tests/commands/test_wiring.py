@@ -52,7 +52,7 @@ SPARE = """
 ONE_CHANNEL: Change = ("circuits.csv", ",M1,2,", ",M1,1,")
 ONE_CONNECTOR: Change = ("campaign.toml", 'connector = "J2"', 'connector = "J1"')
 ONE_CABLE: Change = ("circuits.csv", ",CB-19,", ",MC-7,")
-ONE_MARK: Change = ("circuits.csv", "red; completion=white", "red; completion=Red")
+ONE_MARK: Change = ("circuits.csv", "W2; completion=W3", "W2; completion=w2")
 
 
 @pytest.fixture
@@ -94,7 +94,7 @@ def test_each_wire_stands_with_its_pin_and_mark(demo: Path, command: Command) ->
     assert told.code == 0
     assert "girder midspan: x 0 mm, y 0 mm, underside" in told.out
     wire = next(line for line in told.out.splitlines() if line.strip().startswith("C-1   "))
-    assert ["C-1", "J1", "supply-", "1", "black", "CB-19", "18"] == wire.split()
+    assert ["C-1", "J1", "supply-", "1", "W1", "CB-19", "18"] == wire.split()
 
 
 def test_the_screen_table_fits_eighty_columns(demo: Path, command: Command) -> None:
@@ -114,7 +114,7 @@ def test_the_map_is_given_as_json(demo: Path, command: Command) -> None:
     assert [{"arm": 1, "grid": "FB-1"}] == [
         {"arm": grid["arm"], "grid": grid["grid"]} for grid in first["grids"]
     ]
-    assert {"function": "signal+", "pin": "2", "mark": "red", "conflict": ""} in first["wires"]
+    assert {"function": "signal+", "pin": "2", "mark": "W2", "conflict": ""} in first["wires"]
     assert ([], []) == (told["spare"], told["conflicts"])
 
 
@@ -136,10 +136,10 @@ def test_a_reels_marks_are_each_circuits_own(wired: Wired, command: Command) -> 
 CONFLICTS: dict[str, tuple[Change, str]] = {
     "a channel": (ONE_CHANNEL, "channel M1/1: is used by C-1, C-2"),
     "a pin": (ONE_CONNECTOR, "M1, connector J1: pin 2 serves 2 functions, of channel M1/1, M1/2"),
-    "a mark in one cable": (ONE_CABLE, "MC-7: the mark red stands on C-1 signal+, C-2 signal+"),
+    "a mark in one cable": (ONE_CABLE, "MC-7: the mark W2 stands on C-1 signal+, C-2 signal+"),
     "a mark in one circuit": (
         ONE_MARK,
-        "circuit C-1: the mark Red stands on C-1 completion, C-1 signal+",
+        "circuit C-1: the mark w2 stands on C-1 completion, C-1 signal+",
     ),
 }
 
@@ -209,9 +209,7 @@ HOSTILE = (
 @pytest.mark.parametrize("text", HOSTILE)
 def test_hostile_text_stays_text_in_every_output(text: str, wired: Wired, command: Command) -> None:
     cell = text.replace('"', '""')
-    job = wired(
-        ("circuits.csv", "supply-=black; signal+=red; completion=white", f'"supply-={cell}"')
-    )
+    job = wired(("circuits.csv", "supply-=W1; signal+=W2; completion=W3", f'"supply-={cell}"'))
     shown = command("wiring", "show").out
     assert text in shown
     marks = [row["mark"] for row in _table(_exported(command, "w.csv").decode())]
@@ -248,7 +246,7 @@ def test_a_spreadsheet_reads_the_map_back(demo: Path, command: Command) -> None:
     assert ["Wiring"] == book.sheetnames
     heading, *rows = book["Wiring"].iter_rows(values_only=True)
     first = dict(zip(heading, rows[0], strict=True))
-    assert ("C-1", "1", "black", 18) == (
+    assert ("C-1", "1", "W1", 18) == (
         first["circuit"],
         first["pin"],
         first["mark"],
@@ -297,8 +295,8 @@ def test_a_foreign_reader_finds_every_wire_on_the_page(wired: Wired, command: Co
     text = subprocess.run(
         ["pdftotext", "-layout", "w.pdf", "-"], check=True, capture_output=True, text=True
     ).stdout
-    for word in ("TARN-BRIDGE", "C-1", "C-2", "FB-1", "completion", "white", "M1/10", "CB-19"):
+    for word in ("TARN-BRIDGE", "C-1", "C-2", "FB-1", "completion", "W3", "M1/10", "CB-19"):
         assert word in text
     assert "DRAFT plan, not released" in text
     assert "channel M1/1: is used by C-1, C-2" in text
-    assert re.search(r"signal\+\s+2\s+red", text)
+    assert re.search(r"signal\+\s+2\s+W2", text)

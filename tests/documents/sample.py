@@ -221,7 +221,7 @@ def circuit() -> dict[str, Any]:
             "length": q("18", "m"),
             "resistance_per_length": q("0.09", "ohm/m"),
             "cable": "CB-3",
-            "marks": {"supply-": "red", "signal+": "white", "completion": "black"},
+            "marks": {"supply-": "W1", "signal+": "W2", "completion": "W3"},
         },
         "channel": {
             "label": "M1/3",

@@ -16,13 +16,13 @@ from tests.documents.sample import circuit
 
 SVG = "{http://www.w3.org/2000/svg}"
 MARKS = {
-    "supply+": "red",
-    "supply-": "black",
-    "signal+": "green",
-    "signal-": "white",
-    "sense+": "blue",
-    "sense-": "grey",
-    "completion": "brown",
+    "supply+": "W1",
+    "supply-": "W2",
+    "signal+": "W3",
+    "signal-": "W4",
+    "sense+": "W5",
+    "sense-": "W6",
+    "completion": "W7",
 }
 ARRANGED = {
     "quarter two-wire": "quarter two-wire",

@@ -73,9 +73,9 @@ def test_a_channel_that_no_module_has_lists_those_there_are(plan: Path) -> None:
 @pytest.mark.parametrize(
     ("text", "what"),
     [
-        ("white", "“white” is no wire=mark."),
+        ("W3", "“W3” is no wire=mark."),
         ("signal+=", "“signal+=” is no wire=mark."),
-        ("earth=green", "“earth=green” names no wire. Wires: supply+, supply-"),
+        ("earth=W9", "“earth=W9” names no wire. Wires: supply+, supply-"),
         ("signal+=a; signal+=b", "signal+ stands twice."),
     ],
 )

@@ -72,7 +72,7 @@ CIRCUITS = {
     (2, "wires"): "three",
     (2, "length_m"): "0",
     (2, "wire_ohm_per_m"): "0,055",
-    (2, "marks"): "earth=green",
+    (2, "marks"): "earth=W9",
     (3, "arm1"): "grid FB-7",
     (3, "arm2"): "module 350 mohm",
     (3, "wires"): "99",

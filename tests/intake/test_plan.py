@@ -17,7 +17,7 @@ def test_the_demos_plan_is_understood(plan: Path) -> None:
     assert facts.points[0].article == facts.campaign.articles[0].id
     assert facts.points[0].route == facts.routes[0].id
     assert facts.circuits[0].grids == (facts.points[0].grids[0].id,)
-    assert facts.circuits[0].leads.marks["signal+"] == "red"
+    assert facts.circuits[0].leads.marks["signal+"] == "W2"
     assert set(facts.digests) == set(facts.files)
 
 
