@@ -74,7 +74,8 @@ def _cure(row: Fields) -> tuple[CurePoint, ...]:
         hot, _, long = (piece.strip() for piece in part.partition("="))
         celsius, minutes = number_of(hot), number_of(long)
         if celsius is None or minutes is None or float(minutes) <= 0:
-            remedy = "Like: 150=60; 175=30, each °C=minutes."
+            comma = " Write decimal points, no commas." if "," in part else ""
+            remedy = f"Like: 150=60; 175=30, each °C=minutes.{comma}"
             row.fault("cure_schedule", f"“{part.strip()[:40]}” is no °C=minutes.", remedy)
             return ()
         found.append(

@@ -9,7 +9,7 @@ from typing import Any
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.texts import LONGEST, Untidy, listed, tidied
-from gaugelog.intake.typed import has_comma, number_of, parse_quantity
+from gaugelog.intake.typed import number_of, parse_quantity, pointed
 from gaugelog.ledger.base import Quantity
 from gaugelog.visible import visible
 
@@ -159,8 +159,7 @@ class Fields:
         text = _short(value)
         number = number_of(text)
         if number is None:
-            remedy = "Use a decimal point." if has_comma(text) else "Type a number without a unit."
-            self.fault(name, f"“{text[:40]}” is no number of this trade.", remedy)
+            self._no_number(name, text)
             return None
         found = Quantity(value=number, unit=unit)
         return self._above_nothing(name, found) if positive else found
@@ -191,7 +190,8 @@ class Fields:
             return None
         text = _short(value)
         if isinstance(value, bool) or _WHOLE.fullmatch(text) is None:
-            self.fault(name, f"“{text[:40]}” is no whole number.")
+            comma = "It has a decimal comma." if pointed(text) else ""
+            self.fault(name, f"“{text[:40]}” is no whole number.", comma)
             return None
         if not least <= int(text) <= most:
             self.fault(name, f"“{text}” must be from {least} to {most}.")
@@ -290,6 +290,14 @@ class Fields:
                 self._missing(name)
             return None
         return self._values[name]
+
+    def _no_number(self, name: str, text: str) -> None:
+        point = pointed(text)
+        if point is not None:
+            self.fault(name, f"“{text[:40]}” has a decimal comma.", f"Write {point[:40]}.")
+            return
+        what = f"“{text[:40]}” is no number of this trade."
+        self.fault(name, what, "Type a number like 12.5, without a unit.")
 
     def _missing(self, name: str, remedy: str = "") -> None:
         if name not in self._absent:

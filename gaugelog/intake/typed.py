@@ -23,7 +23,7 @@ _TYPED = re.compile(
     re.ASCII,
 )
 _NUMBER = re.compile(r"[+-]?(?P<digits>\d+(\.\d*)?|\.\d+)([eE][+-]?\d{1,3})?", re.ASCII)
-_COMMA = re.compile(r"[+-]?\d+,\d+", re.ASCII)
+_COMMA = re.compile(r"[+−-]?\d+,\d+([eE][+-]?\d+)?", re.ASCII)
 _OVERLOAD = frozenset({"ol", "o.l", "o.l.", "overload", "over", "0l"})
 _MILLI_OR_MEGA = frozenset({"mohm", "mohms", "mω"})
 
@@ -87,9 +87,14 @@ def number_of(text: str) -> str | None:
     return plain.removeprefix("+")
 
 
-def has_comma(text: str) -> bool:
-    """Whether a number is written with a decimal comma."""
-    return _COMMA.fullmatch(text.strip()) is not None
+def pointed(text: str) -> str | None:
+    """A number written with a decimal comma as it should be, or None when it has none.
+
+    >>> pointed("2,08"), pointed("2.08"), pointed("1,234.5")
+    ('2.08', None, None)
+    """
+    plain = text.strip()
+    return plain.replace(",", ".") if _COMMA.fullmatch(plain) else None
 
 
 def _match(typed: str, what: str, units: Sequence[str]) -> re.Match[str]:
@@ -107,9 +112,10 @@ def _is_overload(typed: str, units: Sequence[str]) -> bool:
 
 def _quantity(match: re.Match[str], units: Sequence[str], typed: str) -> Quantity:
     number, unit = match["number"], match["unit"].strip()
-    if has_comma(number):
-        point = f"{number.replace(',', '.')} {unit}".strip()
-        raise _fault(typed, "has a decimal comma.", f"Type a decimal point: {point}.")
+    point = pointed(number)
+    if point is not None:
+        asked = f"Type a decimal point: {point} {unit}".rstrip()
+        raise _fault(typed, "has a decimal comma.", f"{asked}.")
     value = number_of(number)
     if value is None:
         raise _fault(typed, "is no number of this trade.", f"Type it like {_example(units)}.")

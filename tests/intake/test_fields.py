@@ -112,7 +112,7 @@ def test_what_is_no_number_of_the_trade_is_told(value: object) -> None:
 def test_a_decimal_comma_is_told_to_be_a_point() -> None:
     table = Table(size="0,5")
     table.fields.number("size", "mm")
-    assert table.lines[0].endswith("Use a decimal point.")
+    assert table.lines[0].endswith("has a decimal comma. Write 0.5.")
 
 
 def test_true_is_neither_a_number_nor_a_whole_one() -> None:

@@ -4,7 +4,10 @@ from __future__ import annotations
 
 from pathlib import Path
 
+import pytest
+
 from tests.intake.conftest import change, places_of, set_cell, understood
+from tests.intake.test_workbook import table_of, xlsx
 
 CAMPAIGN = {
     'label = "TARN-BRIDGE"': ('label = "TARN BRIDGE"', "campaign.label"),
@@ -82,7 +85,14 @@ CIRCUITS = {
 }
 
 
-def test_sixty_faults_of_four_files_are_each_named_to_their_place(plan: Path) -> None:
+def _as_workbook(file: Path) -> None:
+    """The table as a spreadsheet in its place, numbers as numbers where they are."""
+    file.with_suffix(".xlsx").write_bytes(xlsx(table_of(file)))
+    file.unlink()
+
+
+@pytest.mark.parametrize("kind", ["csv", "xlsx"])
+def test_sixty_faults_of_four_files_are_each_named_to_their_place(plan: Path, kind: str) -> None:
     expected = set()
     for name, slips in (("campaign.toml", CAMPAIGN), ("criteria.toml", CRITERIA)):
         for before, (after, key) in slips.items():
@@ -91,7 +101,9 @@ def test_sixty_faults_of_four_files_are_each_named_to_their_place(plan: Path) ->
     for name, cells in (("grids.csv", GRIDS), ("circuits.csv", CIRCUITS)):
         for (row, column), text in cells.items():
             set_cell(plan / name, row, column, text)
-            expected.add(f"{name}, row {row}, column {column}")
+            expected.add(f"{name.replace('csv', kind)}, row {row}, column {column}")
+        if kind == "xlsx":
+            _as_workbook(plan / name)
     found = places_of(lambda: understood(plan))
     assert 60 == len(expected)
     assert set() == expected - set(found)
@@ -100,8 +112,8 @@ def test_sixty_faults_of_four_files_are_each_named_to_their_place(plan: Path) ->
     consequences = set(found) - expected
     assert {
         "campaign.toml, campaign.customer",
-        "grids.csv, row 2, column article",
-        "grids.csv, row 3, column article",
-        "grids.csv, row 3, column zone",
-        "circuits.csv, row 2, column arm1",
+        f"grids.{kind}, row 2, column article",
+        f"grids.{kind}, row 3, column article",
+        f"grids.{kind}, row 3, column zone",
+        f"circuits.{kind}, row 2, column arm1",
     } >= consequences, consequences

@@ -11,10 +11,10 @@ from hypothesis import strategies as st
 from gaugelog.errors import Faulty
 from gaugelog.intake.typed import (
     LONGEST,
-    has_comma,
     number_of,
     parse_quantity,
     parse_reading,
+    pointed,
 )
 from gaugelog.ledger.base import UNITS, Quantity
 from tests.intake.conftest import faults_of, lines_of, told
@@ -172,9 +172,12 @@ def test_a_foreign_unit_of_another_kind_is_refused() -> None:
         parse_quantity("0.5 in", OHMS)
 
 
-@pytest.mark.parametrize(("text", "told"), [("0,5", True), ("0.5", False), ("1,234.5", False)])
-def test_a_decimal_comma_is_known_when_seen(text: str, told: bool) -> None:
-    assert told == has_comma(text)
+@pytest.mark.parametrize(
+    ("text", "point"),
+    [("0,5", "0.5"), ("-1,5e3", "-1.5e3"), ("−2,08", "−2.08"), ("0.5", None), ("1,234.5", None)],
+)
+def test_a_decimal_comma_is_known_when_seen(text: str, point: str | None) -> None:
+    assert point == pointed(text)
 
 
 @given(st.decimals(min_value=0, max_value=10**20, places=4, allow_nan=False))

@@ -70,7 +70,8 @@ def understand(text: str, dimension: Dimension) -> Understood:
             f"“{text}” is not a number with a unit; type it like {dimension.example}"
         )
     if _DECIMAL_COMMA.match(plain):
-        raise NotUnderstood(f"“{text}” has a comma; type a decimal point")
+        point = text.strip().replace(",", ".", 1)
+        raise NotUnderstood(f"“{text}” has a comma; type a decimal point: {point}")
     value = _value(float(match[1]), match[2], dimension)
     if not math.isfinite(value * _scale(dimension.base, dimension.shown)):
         raise NotUnderstood(f"“{text}” is too large a number")
