@@ -37,11 +37,22 @@ def be_heard() -> None:
         sys.stderr = open(os.devnull, "w", encoding="utf-8")  # noqa: SIM115, PTH123
 
 
+_LONGEST_TALK = 4000
+
+
 def say(*lines: str) -> None:
     """Talk to the person, on stderr; talk that can't be written stops no work."""
     for line in lines:
         with suppress(OSError):
-            sys.stderr.write(visible(line, keep_newlines=True) + "\n")
+            sys.stderr.write(visible(_brief(line), keep_newlines=True) + "\n")
+
+
+def _brief(line: str) -> str:
+    """The talk with its middle left out where somebody typed what no screen can hold."""
+    if len(line) <= _LONGEST_TALK:
+        return line
+    kept = _LONGEST_TALK // 2
+    return f"{line[:kept]} … {len(line) - 2 * kept} characters left out … {line[-kept:]}"
 
 
 def put(*lines: str) -> None:
