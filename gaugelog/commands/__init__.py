@@ -51,13 +51,22 @@ def run(arguments: Sequence[str]) -> int:
 
 
 def _run(arguments: Sequence[str]) -> int:
+    from typer.exceptions import Abort, TyperException
+
     from gaugelog.commands.application import application
+    from gaugelog.commands.talk import tell_usage
+    from gaugelog.errors import ExitCode
 
     try:
-        application()(args=list(arguments), prog_name="gaugelog")
+        code = application()(args=list(arguments), prog_name="gaugelog", standalone_mode=False)
+    except TyperException as error:
+        tell_usage(error)
+        return int(ExitCode.USAGE)
+    except Abort:  # the end of the input at a question
+        return int(ExitCode.STOPPED)
     except SystemExit as end:
-        return end.code if isinstance(end.code, int) else int(end.code is not None)
-    return 0
+        code = end.code
+    return code if isinstance(code, int) else int(code is not None)
 
 
 def _of_file(error: OSError) -> GaugelogError:

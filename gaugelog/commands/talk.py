@@ -15,6 +15,7 @@ from gaugelog.visible import visible
 
 if TYPE_CHECKING:
     from rich.console import Console
+    from typer.exceptions import TyperException
 
 
 def console(*, stderr: bool = False) -> Console:
@@ -127,6 +128,19 @@ def tell_faults(faults: Iterable[Fault]) -> None:
         say(f"  ✗ {fault.where}: {fault.what}")
         if fault.remedy:
             say(f"      → {fault.remedy}")
+
+
+def tell_usage(error: TyperException) -> None:
+    """Say why a command line can't be understood; one without any word was shown the help."""
+    message = error.format_message()
+    if not message:
+        return
+    context = getattr(error, "ctx", None)
+    if context is not None:
+        say(context.get_usage())
+    say(f"gaugelog: {message}")
+    if context is not None:
+        say(f"  See `{context.command_path} --help`.")
 
 
 def tell_unexpected(error: Exception, *, debug: bool) -> int:
