@@ -8,16 +8,19 @@ from typing import TYPE_CHECKING, Annotated
 
 import typer
 
+from gaugelog.commands.calc.engine import parse_pairs
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
-from gaugelog.commands.talk import as_json, put_json, put_table, say
+from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+from gaugelog.errors import Fault, Faulty
 
 if TYPE_CHECKING:
     from gaugelog.intake.papers import Paper
     from gaugelog.ledger.instruments import InstrumentAdded
     from gaugelog.ledger.papers import PaperOf
+    from gaugelog.ledger.shiftchecks import MeterChecked
 
-group = typer.Typer(help="Instruments: add with their certificates, list.")
+group = typer.Typer(help="Instruments: add with their certificates, check on a reference, list.")
 
 
 @group.command()
@@ -63,6 +66,83 @@ def certificate(
     kinds: tuple[PaperOf, ...] = ("instrument",)
     kept = papers.add(logbook, signer, paper, label=label, kinds=kinds, note=note)
     say(f"{kept.label}, {kept.number}: {kept.name} is kept; SHA-256 {kept.file}")
+
+
+@group.command()
+def check(
+    ctx: typer.Context,
+    meter: Annotated[str, typer.Argument(help="Label of the meter.")],
+    pairs: Annotated[
+        list[str] | None,
+        typer.Argument(
+            metavar="NAME=VALUE…",
+            help='reference=RB-1 reads="350.02 ohm"; value="350 ohm" where it has several.',
+        ),
+    ] = None,
+    note: Annotated[str, typer.Option(help="A remark kept with it.")] = "",
+    at: At = "",
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Check a meter on a reference at the start of a shift; kept with its verdict.
+
+    It agrees when it is off by no more than its accuracy and the reference's uncertainty allow
+    together (E_n of 1 or less). Where the criteria ask for it, a meter that was not checked, or
+    that failed, is not taken at a step.
+    """
+    from gaugelog.work import shift
+
+    logbook = open_logbook(ctx)
+    typed = _check_inputs(pairs or [])
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    done = shift.check(logbook, signer, meter=meter, note=note, at=at, **typed)
+    put(*done.lines)
+    raise typer.Exit(int(done.exit_code))
+
+
+def _check_inputs(pairs: list[str]) -> dict[str, str]:
+    """What was typed of a check. Raises Faulty naming all that is missing or not asked for."""
+    typed = parse_pairs(pairs)
+    faults = [
+        Fault(name, "is not asked for here.", "Asked for: reference, reads, value.")
+        for name in typed
+        if name not in {"reference", "reads", "value"}
+    ]
+    faults += [
+        Fault(name, "is missing.", 'Like reference=RB-1 reads="350.02 ohm".')
+        for name in ("reference", "reads")
+        if not typed.get(name, "").strip()
+    ]
+    if faults:
+        raise Faulty(faults)
+    return typed
+
+
+@group.command()
+def checks(
+    ctx: typer.Context,
+    meter: Annotated[str, typer.Argument(help="Label of a meter; left out: all.")] = "",
+    json: Json = False,
+) -> None:
+    """List the checks of meters on references, every one that was kept."""
+    from gaugelog.work import shift
+
+    found = shift.checks(open_logbook(ctx), meter)
+    if json:
+        put_json([as_json(fact) for fact in found])
+        return
+    put_table(
+        "Checks of meters",
+        ["meter", "reference", ">known", ">reads", ">off", ">at most", "outcome", "when", "by"],
+        [_check_cells(fact) for fact in found],
+        empty="No meter was checked. Try: gaugelog instrument check METER reference=… reads=…",
+    )
+
+
+def _check_cells(fact: MeterChecked) -> list[str]:
+    figures = [str(each) for each in (fact.value, fact.reads, fact.off, fact.at_most)]
+    told = [fact.outcome, fact.observed_at, fact.checked_by]
+    return [fact.label, fact.reference_label, *figures, *told]
 
 
 @group.command("list")

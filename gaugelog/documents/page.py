@@ -87,6 +87,7 @@ def plain_environment(lettering: Lettering) -> Environment:
     )
     made.filters.update(
         q=wording.quantity,
+        tidy=wording.tidy,
         judged=wording.judged,
         expanded=wording.expanded,
         probability=wording.probability,

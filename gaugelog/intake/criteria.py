@@ -7,8 +7,9 @@ from typing import Literal, cast, get_args
 
 from gaugelog.intake.fields import Fields, Gathered, nothing_at
 from gaugelog.intake.files import toml_of
+from gaugelog.intake.instruments import QUANTITY_UNITS
 from gaugelog.intake.typed import CHECK_UNITS
-from gaugelog.ledger.campaign import CheckCriterion, Conditional, CriteriaAgreed
+from gaugelog.ledger.campaign import CheckCriterion, Conditional, CriteriaAgreed, ShiftDemand
 from gaugelog.ledger.checks import CHECKS
 
 STAGES = (
@@ -41,6 +42,7 @@ def read_criteria(
         conditional_pass=_word(decision, "conditional_pass"),
         conditional_fail=_word(decision, "conditional_fail"),
         checks=tuple(_check(each) for each in tables),
+        shift_check=_shift(top.table("shift_check", needed=False)),
     )
     decision.done()
     top.done()
@@ -57,6 +59,26 @@ def _coverage(decision: Fields) -> str:
 
 def _word(decision: Fields, name: str) -> Conditional:
     return cast("Conditional", decision.choice(name, get_args(Conditional)))
+
+
+def _shift(each: Fields | None) -> ShiftDemand | None:
+    """How often a meter is checked on a reference; None where the criteria do not ask for it."""
+    if each is None:
+        return None
+    of = each.texts("of")
+    for item in of:
+        if item not in QUANTITY_UNITS:
+            known = ", ".join(QUANTITY_UNITS)
+            each.fault("of", f"“{item[:40]}” is nothing that a meter measures.", f"Known: {known}.")
+    if not of and each.sound("of"):
+        each.fault("of", "is missing.", 'Say what must be checked, like ["resistance"].')
+    found = ShiftDemand(
+        within=each.quantity("within", ("h", "min", "d"), positive=True),
+        of=of,
+        source=each.text("source"),
+    )
+    each.done()
+    return found
 
 
 def _check(each: Fields) -> CheckCriterion:

@@ -9,7 +9,7 @@ from gaugelog.errors import Faulty
 from gaugelog.intake.fields import Fields, Gathered, distinct
 from gaugelog.intake.files import read_bytes, toml_of
 from gaugelog.intake.papers import Paper, paper_of
-from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange
+from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRange, ReferenceValue
 
 QUANTITY_UNITS: dict[str, tuple[str, ...]] = {
     "resistance": ("ohm", "kohm"),
@@ -48,7 +48,8 @@ def load_instruments(
 
 
 def _instrument(each: Fields, new_id: Callable[[], str]) -> InstrumentAdded:
-    ranges = each.tables("range")
+    ranges = each.tables("range", needed=not each.has("value"))
+    values = each.tables("value", needed=False)
     read = tuple(_range(span) for span in ranges)
     distinct(ranges, "name", [span.name for span in read])
     found = InstrumentAdded(
@@ -62,9 +63,25 @@ def _instrument(each: Fields, new_id: Callable[[], str]) -> InstrumentAdded:
         calibrated_on=each.day("calibrated_on"),
         due=each.day("due"),
         ranges=read,
+        values=tuple(_value(known) for known in values),
     )
     if each.sound("due", "calibrated_on") and found.due < found.calibrated_on:
         each.fault("due", "lies before the calibration.")
+    return found
+
+
+def _value(known: Fields) -> ReferenceValue:
+    """What a reference is known to be, with the expanded uncertainty of its certificate."""
+    quantity = known.choice("quantity", tuple(QUANTITY_UNITS))
+    units = QUANTITY_UNITS[quantity]
+    coverage = known.maybe_number("coverage", "1", positive=True)
+    found = ReferenceValue(
+        quantity=quantity,
+        value=known.quantity("value", units),
+        uncertainty=known.quantity("uncertainty", units, positive=True),
+        coverage=coverage.value if coverage is not None else "2",
+    )
+    known.done()
     return found
 
 

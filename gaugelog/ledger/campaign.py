@@ -134,6 +134,16 @@ class CheckCriterion(Part):
     source: str
 
 
+class ShiftDemand(Part):
+    """Meters are checked on a reference at the start of a shift, or they may not be read."""
+
+    within: Quantity
+    """How long before a reading at most."""
+    of: tuple[str, ...]
+    """What must be checked: `resistance`, `insulation` …"""
+    source: str
+
+
 class CriteriaAgreed(FactBody):
     """The acceptance criteria, agreed with the plan; frozen at its release."""
 
@@ -148,6 +158,7 @@ class CriteriaAgreed(FactBody):
     conditional_fail: Conditional
     checks: tuple[CheckCriterion, ...]
     agreed_by: str = ""
+    shift_check: ShiftDemand | None = None
 
 
 class PlanLoaded(FactBody):

@@ -7,7 +7,7 @@ from typing import ClassVar
 
 from sqlmodel import Field, SQLModel
 
-from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+from gaugelog.ledger.base import DateText, DecimalText, FactBody, Id, Part, Quantity
 from gaugelog.ledger.rows import At, Change, Known, Put
 
 
@@ -27,6 +27,16 @@ class InstrumentRange(Part):
     test_voltage: Quantity | None = None
 
 
+class ReferenceValue(Part):
+    """One known value of a reference: a resistor, a setting of a decade box."""
+
+    quantity: str
+    value: Quantity
+    uncertainty: Quantity
+    """Expanded, as certified, in the unit of the quantity."""
+    coverage: DecimalText = "2"
+
+
 class InstrumentAdded(FactBody):
     """An instrument with its present certificate; added again when it is calibrated anew."""
 
@@ -44,6 +54,8 @@ class InstrumentAdded(FactBody):
     ranges: tuple[InstrumentRange, ...]
     certificate: str = ""
     """Digest of the certificate among the evidence, or empty."""
+    values: tuple[ReferenceValue, ...] = ()
+    """Of a reference: what it is known to be."""
 
 
 class InstrumentRow(SQLModel, table=True):

@@ -74,6 +74,8 @@ class ReadingTaken(FactBody):
     """The attempt before this one."""
     compared_with: Id | None = None
     """The earlier reading that this one is held against."""
+    shift_check: Id | None = None
+    """The check of the meter that speaks for this reading."""
     result: Quantity | None = None
     """What was judged, where it is not the value itself: a change in per cent."""
     limits: tuple[LimitFound, ...] = ()

@@ -24,12 +24,13 @@ from gaugelog.ledger.reviews import RecordRow
 from gaugelog.ledger.revisions import RevisionRow
 from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.rows import Row
+from gaugelog.ledger.shiftchecks import MeterCheckRow
 from gaugelog.ledger.standing import StandingRow
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import ConsumableRow, GaugeRow, LotRow
 from gaugelog.ledger.story import StoryRow
 
-LEDGER_VERSION = 10
+LEDGER_VERSION = 11
 """Raise it when a table or an apply function changes: older logbooks are replayed when opened."""
 
 TABLES: tuple[type[SQLModel], ...] = (
@@ -54,6 +55,7 @@ TABLES: tuple[type[SQLModel], ...] = (
     StandingRow,
     PhotoRow,
     CertificateRow,
+    MeterCheckRow,
 )
 
 _VERSION_TABLE = "CREATE TABLE IF NOT EXISTS ledger_version (id TEXT PRIMARY KEY, value INTEGER)"

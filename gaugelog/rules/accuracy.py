@@ -45,15 +45,26 @@ def range_for(
     measure that, or no range reaches the value.
     """
     quantity = CHECKS[check].quantity
+    reached = None if qualifier == "overload" else value
+    return range_of(instrument, quantity, reached, signed=check in SIGNED)
+
+
+def range_of(
+    instrument: InstrumentAdded, quantity: str, value: Quantity | None, *, signed: bool = True
+) -> RangeTaken:
+    """The range that `quantity` was read on: the finest that reaches `value`, or the farthest.
+
+    Raises Faulty when the instrument does not measure that, or no range reaches the value.
+    """
     fitting = [item for item in instrument.ranges if item.quantity == quantity]
     if not fitting:
         raise Faulty(
             [Fault(instrument.label, f"does not measure {quantity}.", "Take a meter that does.")]
         )
     fitting.sort(key=lambda item: item.high.si())
-    if value is None or qualifier == "overload":
+    if value is None:
         return taken_on(instrument, fitting[-1])
-    size = abs(value.si()) if check in SIGNED else value.si()
+    size = abs(value.si()) if signed else value.si()
     for item in fitting:
         if item.low.si() <= size <= item.high.si():
             return taken_on(instrument, item)

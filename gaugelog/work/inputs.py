@@ -4,13 +4,14 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
-from datetime import date
+from datetime import date, datetime
 from pathlib import Path
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.pictures import Picture, load_pictures
 from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
 from gaugelog.ledger.base import Quantity
+from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.routes import RouteStep, StepInput
@@ -18,6 +19,7 @@ from gaugelog.ledger.steps import Entered
 from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.barred import why_barred, why_gauge_barred
+from gaugelog.rules.shift import shift_demand, why_unchecked
 
 LONGEST_TEXT = 2000
 _YES, _NO = frozenset({"yes", "y", "ok", "done"}), frozenset({"no", "n"})
@@ -52,6 +54,8 @@ class Asked:
     step: RouteStep
     day: date
     """The calendar day where the work is done: lots expire and meters fall due at its end."""
+    observed: datetime
+    """When the step was observed, UTC."""
 
 
 def understand(asked: Asked, typed: Mapping[str, str]) -> Understood:
@@ -145,8 +149,23 @@ def _instrument(asked: Asked, item: StepInput, text: str, where: str, found: Und
         raise _fault(f"{row.label} was calibrated only on {body.calibrated_on}.")
     if item.type and all(span.quantity != item.type for span in body.ranges):
         raise _fault(f"{row.label} does not measure {item.type}.", "Take one that does.")
+    _demand_checked(asked, item, body)
     found.entered[item.name] = Entered(typed=text, id=row.id)
     found.instrument = body
+
+
+def _demand_checked(asked: Asked, item: StepInput, meter: InstrumentAdded) -> None:
+    """What the criteria ask of a meter at the start of a shift, for what is read on it here."""
+    readings = [CHECKS[each.check].quantity for each in asked.step.inputs if each.check]
+    measured = dict.fromkeys(readings or [item.type])
+    demand = shift_demand(asked.view, asked.point.campaign)
+    remedy = f"Take another, or: gaugelog instrument check {meter.label} reference=… reads=…"
+    faults = [
+        Fault("", what, remedy)
+        for what in why_unchecked(asked.view, meter, measured, asked.observed, demand)
+    ]
+    if faults:
+        raise Faulty(faults)
 
 
 def _reading(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:

@@ -27,8 +27,10 @@ from gaugelog.rules.digits import probability_text
 from gaugelog.rules.limits import Basis, criteria_for
 from gaugelog.rules.plausible import demand_plausible
 from gaugelog.rules.predicted import Expected, judge_prediction
+from gaugelog.rules.shift import in_force
 from gaugelog.rules.verdicts import Judged, Taken, judge_change, judge_value
 from gaugelog.rules.voltage import range_within, voltage_bounds
+from gaugelog.rules.windows import time_of
 from gaugelog.rules.wired import planned_circuit, wired
 
 RECEIVED = "received"
@@ -86,10 +88,16 @@ def reading_taken(
         reason=seen.reason if earlier is not None else "",
         repeats=earlier.id if earlier is not None else None,
         compared_with=compared,
+        shift_check=_checked(seen, basis, check, instrument) or None,
         result=judged.result,
         limits=judged.limits,
         verdict=judged.verdict,
     )
+
+
+def _checked(seen: Observation, basis: Basis, check: str, instrument: InstrumentAdded) -> str:
+    when, measured = time_of(seen.observed_at), CHECKS[check].quantity
+    return in_force(seen.view, instrument.id, measured, when, basis.criteria.shift_check)
 
 
 def explain(reading: ReadingTaken) -> list[str]:

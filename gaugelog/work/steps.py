@@ -67,7 +67,7 @@ def rehearse(
         order_flag(view, row, observed, moment, reason)
         step = _open(progress(view, row, moment, observed))
         if not step.hold:
-            understand(Asked(view, row, step, day_of(observed, moment)), typed)
+            understand(Asked(view, row, step, day_of(observed, moment), observed), typed)
 
 
 def worklist(logbook: Logbook) -> list[NextStep]:
@@ -188,7 +188,7 @@ def _told_again(making: Deed, row: PointRow) -> StepOutcome:
 def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
-    got = understand(Asked(view, row, doing.step, doing.day), typed)
+    got = understand(Asked(view, row, doing.step, doing.day, doing.observed), typed)
     _demand_air(doing, got)
     _demand_place(doing, got)
     demand_one_piece(view, row, doing.step, doing.found.subject, got.entered)

@@ -65,6 +65,10 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "person.left": lambda fact: f"{fact['person']}, {fact['reason']}",
     "lot.received": lambda fact: f"{fact['label']}, {_shown(fact['nominal_resistance'])}",
     "packs.received": lambda fact: f"{fact['label']}, {len(fact['packs'])} packs more",
+    "meter.checked": lambda fact: (
+        f"{fact['label']} on {fact['reference_label']} reads {_shown(fact['reads'])}, "
+        f"{fact['outcome'].upper()}"
+    ),
     "certificate.kept": lambda fact: f"{fact['label']}, {fact['name']}",
     "consumable.received": lambda fact: f"{fact['label']}, {fact['type']}",
     "instrument.added": lambda fact: f"{fact['label']}, due {fact['due']}",

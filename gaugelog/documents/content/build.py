@@ -33,7 +33,7 @@ from gaugelog.documents.content.model import (
     SigningShown,
 )
 from gaugelog.documents.content.pointstory import amends_shown, story_shown
-from gaugelog.documents.content.workdone import PhotoShown, ReadingShown, StepShown, TurnShown
+from gaugelog.documents.content.workdone import ReadingShown, StepShown, TurnShown
 from gaugelog.ledger.people import PersonRow
 
 if TYPE_CHECKING:
@@ -50,6 +50,9 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
     plan = planned(view, request.point)
     steps, readings = steps_shown(view, plan), readings_shown(view, plan)
     story, photos = story_shown(view, plan), photos_shown(view, plan)
+    instruments = instruments_shown(view, plan)
+    given = [(photo.kept_by, "photos") for photo in photos]
+    given += [(check.checked_by, "meter checks") for each in instruments for check in each.checks]
     return RecordContent(
         number=f"{plan.campaign.label}-{plan.point.label}-R{request.revision}",
         revision=request.revision,
@@ -69,9 +72,9 @@ def build(view: View, request: RecordRequest, submitted_by: str | None = None) -
         photos=photos,
         budget=budget_shown(view, plan.row),
         story=story,
-        instruments=instruments_shown(view, plan),
+        instruments=instruments,
         consumables=consumables_shown(view, plan),
-        people=_people(view, _parts(steps, readings, story, photos, submitted_by)),
+        people=_people(view, _parts(steps, readings, story, given, submitted_by)),
         signing=_signing(view, request, submitted_by),
         cautions=_cautions(plan),
     )
@@ -115,7 +118,7 @@ def _parts(
     steps: tuple[StepShown, ...],
     readings: tuple[ReadingShown, ...],
     story: tuple[TurnShown, ...],
-    photos: tuple[PhotoShown, ...],
+    given: list[tuple[str, str]],
     submitted_by: str | None,
 ) -> dict[str, list[str]]:
     """What each person did, in the order they came in."""
@@ -125,7 +128,7 @@ def _parts(
         (each.entered_by, "entries") for each in readings if each.entered_by != each.observed_by
     ]
     did += [(turn.by, "story") for turn in story]
-    did += [(photo.kept_by, "photos") for photo in photos]
+    did += given
     if submitted_by is not None:
         did.append((submitted_by, "submission"))
     parts: dict[str, list[str]] = {}

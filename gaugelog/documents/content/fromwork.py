@@ -3,15 +3,17 @@
 from __future__ import annotations
 
 import json
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterable, Iterator, Sequence
+from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
 from gaugelog.documents.content.fromplan import Planned, certificates_shown, needed
-from gaugelog.documents.content.model import ConsumableShown, InstrumentShown
+from gaugelog.documents.content.model import ConsumableShown, InstrumentShown, MeterCheckShown
 from gaugelog.documents.content.workdone import InputShown, ReadingShown, StepShown
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow
 from gaugelog.ledger.readings import ReadingRow, ReadingTaken
 from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.shiftchecks import MeterChecked, MeterCheckRow
 from gaugelog.ledger.steps import Entered, StepRow
 from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, GaugeRow
 from gaugelog.rules.certificate import certificate_at
@@ -144,26 +146,50 @@ def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
     """
     used: dict[tuple[str, str], InstrumentAdded] = {}
     ranges: dict[tuple[str, str], set[str]] = {}
-    for instrument, seq, span in _uses(view, plan):
-        meter = certificate_at(view, instrument, seq)
+    checks: dict[tuple[str, str], dict[str, None]] = {}
+    for use in _uses(view, plan):
+        meter = certificate_at(view, use.instrument, use.seq)
         key = meter.id, meter.certificate_number
         used[key] = meter
-        ranges.setdefault(key, set()).update(span)
-    shown = (_instrument(view, meter, ranges[key]) for key, meter in used.items())
+        ranges.setdefault(key, set()).update(use.ranges)
+        checks.setdefault(key, {}).update(dict.fromkeys(use.checks))
+    shown = (_instrument(view, meter, ranges[key], checks[key]) for key, meter in used.items())
     return tuple(sorted(shown, key=lambda each: (each.label, each.calibrated_on)))
 
 
-def _uses(view: View, plan: Planned) -> Iterator[tuple[str, int, tuple[str, ...]]]:
-    """Each use of an instrument: its id, the entry that tells of it, the range if it was read."""
+@dataclass(frozen=True, slots=True)
+class _Use:
+    """A use of an instrument: the entry that tells of it; range and check, if it was read."""
+
+    instrument: str
+    seq: int
+    ranges: tuple[str, ...] = ()
+    checks: tuple[str, ...] = ()
+
+
+def _uses(view: View, plan: Planned) -> Iterator[_Use]:
     for row in readings_at(view, plan.point.id):
-        yield row.instrument, row.seq, (ReadingTaken.model_validate_json(row.data).range,)
+        taken = ReadingTaken.model_validate_json(row.data)
+        check = (taken.shift_check,) if taken.shift_check is not None else ()
+        yield _Use(row.instrument, row.seq, (taken.range,), check)
     for step, instrument in _entered_ids(view, plan, "instrument"):
-        yield instrument, step.seq, ()
+        yield _Use(instrument, step.seq)
 
 
-def _instrument(view: View, body: InstrumentAdded, ranges: set[str]) -> InstrumentShown:
-    own = {"certificates"}
+def _check(view: View, check: str) -> MeterCheckShown:
+    row = needed(view.get(MeterCheckRow, check))
+    body = MeterChecked.model_validate_json(row.data)
+    return MeterCheckShown.model_validate(
+        {name: getattr(body, name) for name in MeterCheckShown.model_fields}
+    )
+
+
+def _instrument(
+    view: View, body: InstrumentAdded, ranges: set[str], checks: Iterable[str]
+) -> InstrumentShown:
+    own = {"certificates", "checks"}
     fields = {n: getattr(body, n) for n in InstrumentShown.model_fields if n not in own}
+    fields["checks"] = tuple(_check(view, each) for each in checks)
     fields["certificates"] = certificates_shown(view, body.id, body.certificate_number)
     fields["ranges"] = tuple(each for each in body.ranges if each.name in ranges)
     return InstrumentShown.model_validate(fields)

@@ -106,6 +106,25 @@ class RouteShown(Shown):
     """SHA-256 of the route's file."""
 
 
+class MeterCheckShown(Shown):
+    """A check of an instrument on a known value, before readings of this record."""
+
+    id: Id
+    quantity: str
+    range: str
+    reference_label: str
+    value: Quantity
+    value_uncertainty: Quantity
+    """Expanded, k = 2."""
+    reads: Quantity
+    off: Quantity
+    at_most: Quantity
+    """Expanded uncertainty of the difference, k = 2."""
+    outcome: str
+    observed_at: TimeText
+    checked_by: Id
+
+
 class InstrumentShown(Shown):
     """An instrument that was used, under the certificate it had."""
 
@@ -122,6 +141,8 @@ class InstrumentShown(Shown):
     """Only the ranges that were used."""
     certificates: tuple[CertificateShown, ...] = ()
     """The files that are kept of the certificate in force."""
+    checks: tuple[MeterCheckShown, ...] = ()
+    """The start-of-shift checks that speak for readings of this record."""
 
 
 class ConsumableShown(Shown):

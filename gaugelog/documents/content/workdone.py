@@ -112,6 +112,8 @@ class ReadingShown(Shown):
     result: Quantity | None = None
     """What was judged, where it is not the value itself: a change in per cent."""
     compared_with: Id | None = None
+    shift_check: Id | None = None
+    """The check of the instrument that speaks for it; one of the instrument's."""
     instrument: str
     """Label of the instrument."""
     range: str
