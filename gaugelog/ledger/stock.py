@@ -62,6 +62,10 @@ class LotReceived(FactBody):
     certificate: str = ""
     """Digest of the certificate among the evidence, or empty."""
 
+    def grid(self, number: int) -> GridData:
+        """What the certificate says of the grid with this number; one grid stands for all."""
+        return next((each for each in self.grids if each.number == number), self.grids[0])
+
 
 class PacksReceived(FactBody):
     """More packs of a lot that is in stock, under the same certificate."""

@@ -106,7 +106,7 @@ def _known(view: View, row: PointRow) -> _Known | None:
     except Refused:
         return None
     body = LotReceived.model_validate_json(lot.data)
-    data = next((each for each in body.grids if each.number == grids[0].number), body.grids[0])
+    data = body.grid(grids[0].number)
     return _Known(view, point, article, body, data, planned, as_wired)
 
 

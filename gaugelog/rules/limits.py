@@ -33,8 +33,7 @@ class Basis:
     @property
     def factor(self) -> float:
         """The gauge factor of the grid."""
-        own = [each for each in self.lot.grids if each.number == self.grid]
-        return (own or self.lot.grids)[0].gauge_factor.si()
+        return self.lot.grid(self.grid).gauge_factor.si()
 
 
 def criteria_for(basis: Basis, check: str, stage: str) -> list[CheckCriterion]:

@@ -8,7 +8,7 @@ from gaugelog.errors import Refused
 from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow, Element
 from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.readings import ReadingRow, ReadingTaken
-from gaugelog.ledger.stock import GaugeRow, GridData, LotReceived, LotRow
+from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.physics.circuit import Circuit
 from gaugelog.physics.circuit import Element as Part
@@ -98,7 +98,7 @@ def _grid(view: View, grid: str) -> _Grid:
     if row is None or lot_row is None:
         raise Refused("A grid of this circuit has no gauge yet.", "Do its first steps first.")
     lot = LotReceived.model_validate_json(lot_row.data)
-    factor = grid_data(lot, row.number).gauge_factor.si()
+    factor = lot.grid(row.number).gauge_factor.si()
     poisson = poisson_at(view, PointPlanned.model_validate_json(point.data)) if point else 0.0
     nominal = lot.nominal_resistance.si()
     read = _last_resistance(view, grid)
@@ -110,11 +110,6 @@ def _grid(view: View, grid: str) -> _Grid:
     meter = certificate_at(view, reading.instrument, read.seq)
     spread = range_for(meter, "resistance", reading.value, reading.qualifier).uncertainty(value)
     return _Grid(row.label, value, spread, factor, nominal, True, poisson)
-
-
-def grid_data(lot: LotReceived, number: int) -> GridData:
-    """What the lot's certificate says of the grid with this number."""
-    return next((grid for grid in lot.grids if grid.number == number), lot.grids[0])
 
 
 def _last_resistance(view: View, grid: str) -> ReadingRow | None:

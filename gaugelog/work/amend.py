@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from gaugelog.errors import Fault, Faulty, Refused
+from gaugelog.errors import Refused
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.reviews import PointReopened
 from gaugelog.rules.amended import record_in_force
 from gaugelog.rules.progress import demand_step, demand_walked
 from gaugelog.rules.who import demand_role
 from gaugelog.work.doing import about, point_row
+from gaugelog.work.kept import demand_reason
 from gaugelog.work.logbook import Logbook
 
 
@@ -42,9 +43,3 @@ def amend(
         )
         deed.keep(body, about(deed.view, row, row.id))
     return body
-
-
-def demand_reason(reason: str) -> None:
-    """Raise Faulty unless a reason is given."""
-    if not reason.strip():
-        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])

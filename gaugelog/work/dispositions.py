@@ -12,9 +12,8 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.amended import record_in_force
 from gaugelog.rules.progress import route_for, state_of
 from gaugelog.rules.who import demand_role
-from gaugelog.work.amend import demand_reason
 from gaugelog.work.doing import about, point_row
-from gaugelog.work.kept import demand_meaning
+from gaugelog.work.kept import demand_meaning, demand_reason
 from gaugelog.work.logbook import Logbook
 
 

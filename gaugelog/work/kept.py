@@ -46,6 +46,13 @@ def name_to_keep(text: str) -> str:
     return text if text.isascii() else quote(text_to_keep(text), safe=" /")
 
 
+def demand_reason(reason: str, outcome: str = "") -> None:
+    """Raise Faulty unless a reason is given; `outcome` says what was not done for want of it."""
+    if not reason.strip():
+        fault = Fault("reason", "is empty.", "Say why; it is kept in the journal.")
+        raise Faulty([fault], outcome) if outcome else Faulty([fault])
+
+
 def demand_meaning(meaning: str) -> None:
     """Raise Faulty unless a sign-off says what it means (21 CFR 11.50 asks for it)."""
     if not meaning.strip():

@@ -29,7 +29,7 @@ from gaugelog.ledger.people import (
     Role,
 )
 from gaugelog.rules.who import demand_role, roles_of
-from gaugelog.work.kept import text_to_keep
+from gaugelog.work.kept import demand_reason, text_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 
 _LONGEST = 200
@@ -125,8 +125,7 @@ def revoke(
 
     Raises Refused when the person is unknown or the only custodian, or the one who acts is none.
     """
-    if not reason.strip():
-        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the journal.")])
+    demand_reason(reason)
     with logbook.deed(custodian) as deed:
         demand_role(deed.view, custodian.person, "custodian")
         row = _known(deed, person)

@@ -21,6 +21,7 @@ from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.stock import LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.fit import PlanFinding, check_plan
+from gaugelog.rules.planned import latest_campaign, planned_campaign
 from gaugelog.rules.progress import worst_state
 from gaugelog.rules.who import demand_role
 from gaugelog.work.kept import demand_meaning, name_to_keep
@@ -64,7 +65,7 @@ def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
         logbook.evidence.put(data)
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner")
-        earlier = _campaign(deed.view)
+        earlier = latest_campaign(deed.view)
         if earlier is not None and earlier.state == "released":
             raise Refused(
                 f"The plan of {earlier.label} is released.",
@@ -103,13 +104,13 @@ def check(logbook: Logbook) -> list[PlanFinding]:
 def _as_drafted(connection: Connection) -> Iterator[tuple[View, CampaignRow]]:
     """What is checked and released: the draft, or the revision of the plan as if it stood."""
     now = View(connection, lambda _sheet: None)
-    campaign = _planned(now)
+    campaign = planned_campaign(now)
     draft = drafted(now, campaign)
     if draft is None:
         yield now, campaign
         return
     with as_released(connection, draft) as view:
-        yield view, _planned(view)
+        yield view, planned_campaign(view)
 
 
 @no_collection()
@@ -121,7 +122,7 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
     demand_meaning(meaning)
     with logbook.deed(signer) as deed:
         demand_role(deed.view, signer.person, "planner")
-        before = _planned(deed.view)
+        before = planned_campaign(deed.view)
         if before.state == "released" and drafted(deed.view, before) is None:
             raise Refused(f"Revision {before.revision} is released already.")
         with _as_drafted(deed.writer.connection) as (view, campaign):
@@ -152,7 +153,7 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
 def is_released(logbook: Logbook) -> bool:
     """Whether a plan is released, so that the next load is a revision of it."""
     with logbook.reading() as view:
-        campaign = _campaign(view)
+        campaign = latest_campaign(view)
     return campaign is not None and campaign.state == "released"
 
 
@@ -190,18 +191,6 @@ class _Names:
             worst_state([grid.state for grid in grids]),
             tuple(json.loads(row.touched)),
         )
-
-
-def _campaign(view: View) -> CampaignRow | None:
-    rows = view.all(CampaignRow)
-    return rows[-1] if rows else None
-
-
-def _planned(view: View) -> CampaignRow:
-    found = _campaign(view)
-    if found is None:
-        raise Refused("No plan is loaded.", "Load one with `gaugelog plan load FOLDER`.")
-    return found
 
 
 def _loaded(facts: PlanFacts, earlier: CampaignRow | None) -> PlanLoaded:

@@ -15,7 +15,8 @@ from gaugelog.rules.barred import demand_place_free
 from gaugelog.rules.progress import demand_changes_seen, demand_complete, demand_step
 from gaugelog.rules.untouched import demand_untouched
 from gaugelog.rules.who import demand_role, demand_second_person
-from gaugelog.work.kept import demand_meaning
+from gaugelog.work.doing import point_row
+from gaugelog.work.kept import demand_meaning, demand_reason
 from gaugelog.work.logbook import Deed, Logbook
 from gaugelog.work.ports import RecordMaker, RecordRequest, Stamp
 
@@ -50,7 +51,7 @@ def submit(
     # The head comes first: what is kept after it, even before the view opens, counts as a touch.
     head = logbook.head().printed
     with logbook.reading() as view:
-        row = _point(view, point)
+        row = point_row(view, point)
         demand_role(view, signer.person, "technician")
         demand_complete(view, row)
         request = _request(view, row, head, meaning, logbook)
@@ -118,10 +119,10 @@ def give_back(
 ) -> None:
     """Return a submitted point with a reason; work goes on from step `redo_from`, if named.
 
-    Raises Refused when nothing is submitted, the reviewer did a step, or the step is unknown.
+    Raises Faulty without a reason, Refused when nothing is submitted, the reviewer did a step, or
+    the step is unknown.
     """
-    if not reason.strip():
-        raise Refused("A point is returned with a reason.", "Say why with --reason.")
+    demand_reason(reason)
     with logbook.deed(signer) as deed:
         row, record = _under_review(deed.view, point, signer, "return it")
         if redo_from:
@@ -142,7 +143,7 @@ def record(logbook: Logbook, *, point: str, revision: int | None = None) -> Reco
     Raises Refused when there is none.
     """
     with logbook.reading() as view:
-        row = _point(view, point)
+        row = point_row(view, point)
         rows = [
             item
             for item in view.all(RecordRow, point=row.id)
@@ -172,7 +173,7 @@ def draft(logbook: Logbook, maker: RecordMaker, *, point: str) -> RecordFile:
     """The record as it stands now, marked as a draft on every page."""
     head = logbook.head().printed
     with logbook.reading() as view:
-        row = _point(view, point)
+        row = point_row(view, point)
         pdf = maker.draft(view, _request(view, row, head, "", logbook))
     return RecordFile(pdf, f"{row.label}-draft", "a draft, not signed")
 
@@ -199,13 +200,6 @@ def records(logbook: Logbook) -> list[dict[str, str]]:
         ]
 
 
-def _point(view: View, label: str) -> PointRow:
-    row = view.point(label)
-    if row is None:
-        raise Refused(f"There is no point {label}.", "See `gaugelog plan show`.")
-    return row
-
-
 def _request(view: View, row: PointRow, head: str, meaning: str, logbook: Logbook) -> RecordRequest:
     revision = 1 + max((item.revision for item in view.all(RecordRow, point=row.id)), default=0)
     now = logbook.clock.now()
@@ -213,7 +207,7 @@ def _request(view: View, row: PointRow, head: str, meaning: str, logbook: Logboo
 
 
 def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[PointRow, RecordRow]:
-    row = _point(view, point)
+    row = point_row(view, point)
     demand_role(view, signer.person, "reviewer")
     demand_second_person(view, signer.person, row.id, what)
     rows = view.all(RecordRow, point=row.id)

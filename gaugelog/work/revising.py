@@ -24,10 +24,9 @@ from gaugelog.ledger.rows import At, Change, Known
 from gaugelog.ledger.view import View
 from gaugelog.rules.progress import demand_step, demand_walked, state_of
 from gaugelog.rules.who import demand_role, demand_second_person
-from gaugelog.work.amend import demand_reason
 from gaugelog.work.compared import compared
 from gaugelog.work.doing import about, point_row
-from gaugelog.work.kept import demand_meaning, name_to_keep
+from gaugelog.work.kept import demand_meaning, demand_reason, name_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 from gaugelog.work.recognised import recognised, released_plan
 

@@ -13,7 +13,7 @@ from gaugelog.ledger.standing import Standing, StandingRow, StandingSet, StockKi
 from gaugelog.ledger.stock import GaugeRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.who import demand_role
-from gaugelog.work.amend import demand_reason
+from gaugelog.work.kept import demand_reason
 from gaugelog.work.logbook import Logbook
 
 _MAY: dict[Standing, tuple[Role, ...]] = {

@@ -32,6 +32,7 @@ from gaugelog.work.doing import (
 )
 from gaugelog.work.holds import decide
 from gaugelog.work.inputs import Asked, Understood, understand
+from gaugelog.work.kept import demand_reason
 from gaugelog.work.logbook import Deed, Logbook
 from gaugelog.work.photos import Shows, keep_photo
 from gaugelog.work.readings import Observation, reading_taken
@@ -120,10 +121,10 @@ def skip(
 ) -> StepOutcome:
     """Skip the next step of a point, with a reason, where its skip rule lets the person.
 
-    Raises Refused when it does not, or the point went on since the person had `seen` it.
+    Raises Faulty without a reason, Refused when it does not, or the point went on since the person
+    had `seen` it.
     """
-    if not reason.strip():
-        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])
+    demand_reason(reason)
     with logbook.deed(signer) as making:
         row = point_row(making.view, point)
         found = progress(making.view, row, making.moment)
@@ -147,10 +148,10 @@ def skip(
 def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str) -> StepOutcome:
     """Go back to a step: it and those after it are to be done again.
 
-    Raises Refused when the point is under review or accepted, or the step is ahead of the work.
+    Raises Faulty without a reason, Refused when the point is under review or accepted, or the
+    step is ahead of the work.
     """
-    if not reason.strip():
-        raise Faulty([Fault("reason", "is empty.", "Say why; it is kept in the record.")])
+    demand_reason(reason)
     with logbook.deed(signer) as making:
         row = point_row(making.view, point)
         demand_role(making.view, signer.person, "technician")

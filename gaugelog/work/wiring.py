@@ -6,14 +6,12 @@ import re
 from collections.abc import Collection, Iterator
 from dataclasses import dataclass
 
-from gaugelog.errors import Refused
 from gaugelog.intake.campaign import WIRES
-from gaugelog.ledger.campaign import CampaignRow
 from gaugelog.ledger.circuits import CircuitPlanned, Element
 from gaugelog.ledger.points import PointPlanned
-from gaugelog.ledger.view import View
 from gaugelog.rules.fit.conflicts import Conflict, conflicts
 from gaugelog.rules.fit.plan import Plan, PlannedChannel
+from gaugelog.rules.planned import planned_campaign
 from gaugelog.work.logbook import Logbook
 
 
@@ -83,7 +81,7 @@ def wiring_map(logbook: Logbook) -> WiringMap:
     """The wiring of the plan that is loaded. Raises Refused when none is."""
     head = logbook.head().printed
     with logbook.reading() as view:
-        campaign = _campaign(view)
+        campaign = planned_campaign(view)
         drawing = _Drawing(Plan(view, campaign))
     return WiringMap(
         campaign.label,
@@ -96,13 +94,6 @@ def wiring_map(logbook: Logbook) -> WiringMap:
         tuple(drawing.spare()),
         tuple(f"{each.finding.subject}: {each.finding.what}" for each in drawing.found),
     )
-
-
-def _campaign(view: View) -> CampaignRow:
-    found = view.all(CampaignRow)
-    if not found:
-        raise Refused("No plan is loaded.", "Load one with `gaugelog plan load FOLDER`.")
-    return found[-1]
 
 
 class _Drawing:

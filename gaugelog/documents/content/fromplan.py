@@ -34,7 +34,6 @@ from gaugelog.ledger.routes import RouteAdopted, RouteRow
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
 from gaugelog.physics.validity import OutOfDomain
 from gaugelog.rules.layout import layout_of
-from gaugelog.rules.wired import grid_data
 
 if TYPE_CHECKING:
     from gaugelog.ledger.view import View
@@ -142,7 +141,7 @@ def grids_shown(view: View, plan: Planned) -> tuple[GridShown, ...]:
 
 
 def _figures(lot: LotReceived, number: int) -> dict[str, Quantity]:
-    data = grid_data(lot, number)
+    data = lot.grid(number)
     return {
         "gauge_factor": data.gauge_factor,
         "gauge_factor_tolerance": data.gauge_factor_tolerance,

@@ -87,7 +87,7 @@ class Plan:
         if lot is None or point is None:
             return None
         number = next(each.number for each in point.grids if each.id == grid)
-        return next((each for each in lot.grids if each.number == number), lot.grids[0])
+        return lot.grid(number)
 
     def factor_of(self, circuit: CircuitPlanned) -> float | None:
         """The mean gauge factor of a circuit's active grids, as far as they are in stock."""

@@ -8,7 +8,7 @@ from contextlib import contextmanager
 from dataclasses import dataclass
 from pathlib import Path
 
-from gaugelog.errors import Fault, Faulty, StorageTrouble
+from gaugelog.errors import StorageTrouble
 from gaugelog.journal.check import Report, check
 from gaugelog.journal.clock import Clock
 from gaugelog.journal.entry import Head, PrintedHead
@@ -18,6 +18,7 @@ from gaugelog.ledger.restored import EntriesMissing, LogbookRestored
 from gaugelog.rules.who import demand_role
 from gaugelog.work.backup.archive import Archive
 from gaugelog.work.backup.missing import missing_entries, parse_heads
+from gaugelog.work.kept import demand_reason
 from gaugelog.work.logbook import SIGN, Logbook
 
 _EVIDENCE_STEP = 7
@@ -58,9 +59,7 @@ def restore(
     StorageTrouble; then nothing is left in the folder.
     """
     heads = parse_heads(printed)
-    if not reason.strip():
-        fault = Fault("reason", "is empty.", "Say why; it is kept in the journal.")
-        raise Faulty([fault], "nothing was restored")
+    demand_reason(reason, "nothing was restored")
     with _claimed(folder):
         archive.unpack(folder)
         logbook = Logbook(folder, archive.settings, clock=clock)
