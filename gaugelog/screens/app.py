@@ -48,7 +48,7 @@ class FullScreen(App[None]):
 
     TITLE = "Gaugelog"
     CSS_PATH = "look.tcss"
-    HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (100, "-wide")]  # noqa: RUF012 (as App has it)
+    HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (110, "-wide")]  # noqa: RUF012 (as App has it)
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("f2", "go('worklist')", "Worklist"),
         Binding("f3", "go('review')", "Review"),

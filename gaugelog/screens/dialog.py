@@ -12,9 +12,10 @@ from textual.containers import Horizontal, VerticalScroll
 from textual.content import Content
 from textual.message import Message
 from textual.screen import ModalScreen
-from textual.widgets import Footer, Input
+from textual.widgets import Input
 
 from gaugelog.errors import GaugelogError
+from gaugelog.screens.keys_line import KeysLine
 from gaugelog.screens.words import CALM, Words, plain, told
 
 if TYPE_CHECKING:
@@ -85,7 +86,7 @@ class Dialog(ModalScreen[T | None], Generic[T]):
             for question in self.questions():
                 yield from _field(question)
             yield Words(id="trouble")
-        yield Footer(show_command_palette=False)
+        yield KeysLine()
 
     def on_mount(self) -> None:
         """Begin at the first field that is empty."""

@@ -13,9 +13,9 @@ from textual.content import Content
 from textual.message import Message
 from textual.screen import Screen
 from textual.widget import Widget
-from textual.widgets import Footer
 
 from gaugelog.errors import GaugelogError
+from gaugelog.screens.keys_line import KeysLine
 from gaugelog.screens.words import BAD, CALM, WAIT, Words, plain, told
 
 if TYPE_CHECKING:
@@ -92,7 +92,7 @@ class Room(Screen[None]):
             yield self._who
         yield from self.body()
         yield self._talk
-        yield Footer(show_command_palette=False)
+        yield KeysLine()
 
     def on_mount(self) -> None:
         """Fill the bar, and keep it so. Textual calls this besides a subclass's own `on_mount`."""
