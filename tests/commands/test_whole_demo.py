@@ -142,6 +142,14 @@ def test_a_record_says_what_warmth_does_to_its_circuit(point: str, value: str, w
     assert [value] == said
 
 
+def test_only_a_gauge_that_was_given_up_is_said_to_be_gone(whole: Path) -> None:
+    gone = {
+        record.name: {each["earlier_gauge"] for each in _data(record)["readings"]} - {""}
+        for record in (whole / "records").iterdir()
+    }
+    assert {name: gauges for name, gauges in gone.items() if gauges} == {"DK-1-r1.pdf": {"C6-01/1"}}
+
+
 def test_what_the_summary_says_to_type_runs(
     whole: Path, played: tuple[Path, str], command: Command
 ) -> None:

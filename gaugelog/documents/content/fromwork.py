@@ -133,10 +133,14 @@ def _reading(
 
 
 def _earlier_gauge(view: View, plan: Planned, taken: ReadingTaken) -> str:
+    """The gauge of a reading that has left; a reading of a shared circuit may name another's."""
     if taken.gauge is None or taken.gauge == plan.row.gauge:
         return ""
     gauge = view.get(GaugeRow, taken.gauge)
-    return gauge.label if gauge is not None else taken.gauge
+    if gauge is None:
+        return taken.gauge
+    elsewhere = taken.point != plan.point.id and gauge.state == "in service"
+    return "" if elsewhere else gauge.label
 
 
 def instruments_shown(view: View, plan: Planned) -> tuple[InstrumentShown, ...]:
