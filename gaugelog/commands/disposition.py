@@ -25,11 +25,15 @@ def replace(
 
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"replace the gauge of {point}")
-    dispositions.replace(logbook, signer, point=point, reason=reason, meaning=REPLACE_MEANING)
+    done = dispositions.replace(
+        logbook, signer, point=point, reason=reason, meaning=REPLACE_MEANING
+    )
     say(
         f"{point}: the gauge is removed; its readings stay with it.",
         f"Next, from the start: gaugelog step next {point}",
     )
+    for other in dispositions.left_behind(logbook, done):
+        say(f"{other} shares its circuit: its record tells of the old bridge. Amend or return it.")
 
 
 def withdraw(

@@ -2,9 +2,18 @@
 
 from __future__ import annotations
 
+from gaugelog.ledger.circuits import CircuitPlanned, CircuitRow
 from gaugelog.ledger.points import GridRow
 from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.view import View
+
+
+def circuits_of(view: View, point: str) -> list[str]:
+    """The ids of every circuit that holds a grid of a point (by its id), its dummy's among them."""
+    grids = {grid.id for grid in view.all(GridRow, point=point)}
+    rows = view.all(CircuitRow)
+    held = ((row.id, CircuitPlanned.model_validate_json(row.data).grids) for row in rows)
+    return [circuit for circuit, found in held if not grids.isdisjoint(found)]
 
 
 def readings_at(view: View, point: str) -> list[ReadingRow]:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from gaugelog.ledger.circuits import CircuitRow
+from gaugelog.ledger.points import GridRow
 from gaugelog.ledger.progress import SETTLED, OpenStep, route_of, step_key, subjects_of
 from gaugelog.ledger.routes import RouteStep
 from gaugelog.ledger.rows import Known, Row, have
@@ -24,9 +25,16 @@ def waits_for(view: View, point: str, found: OpenStep) -> Iterator[str]:
     circuit = view.get(CircuitRow, found.subject)
     for other in points_in(known, found.subject):
         row = have(known, "point", other)
+        if other != point and circuit is not None and _is_withdrawn(view, other):
+            yield f"{circuit.label} holds a grid of {row['label']}, withdrawn: plan it anew."
+            continue
         still = _first_open(known, row, found.step.id) if other != point else None
         if still is not None and circuit is not None:
             yield f"{circuit.label} waits for {row['label']}: “{still.title}” is open there."
+
+
+def _is_withdrawn(view: View, point: str) -> bool:
+    return {grid.state for grid in view.all(GridRow, point=point)} == {"withdrawn"}
 
 
 def _first_open(known: Known, point: Row, before: str) -> RouteStep | None:

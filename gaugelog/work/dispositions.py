@@ -2,15 +2,19 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator, Sequence
+
 from gaugelog.errors import Refused
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.dispositions import DispositionMade
 from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.readings import ReadingRow
+from gaugelog.ledger.sharing import points_in
 from gaugelog.ledger.steps import was_mounted
 from gaugelog.ledger.view import View
 from gaugelog.rules.amended import record_in_force
 from gaugelog.rules.progress import route_for, state_of
+from gaugelog.rules.taken import circuits_of
 from gaugelog.rules.who import demand_role
 from gaugelog.work.doing import about, point_row
 from gaugelog.work.kept import demand_meaning, demand_reason
@@ -33,18 +37,20 @@ def replace(
         _demand_open(deed.view, row)
         _demand_mounted(deed.view, row)
         accepted = record_in_force(deed.view, row.id)
-        latest = deed.view.all(ReadingRow, point=row.id, latest=1)
+        circuits = circuits_of(deed.view, row.id)
         body = DispositionMade(
             point=row.id,
             disposition="replace",
             reason=reason,
             gauge=row.gauge,
-            readings=tuple(reading.id for reading in latest),
+            readings=tuple(_latest(deed.view, row.id, circuits)),
+            circuits=tuple(circuits),
             revision=accepted.revision if accepted is not None else None,
             decided_by=signer.person,
             meaning=meaning,
         )
-        deed.keep(body, about(deed.view, row, row.id, row.gauge))
+        others = [each for circuit in circuits for each in points_in(deed.view.known(), circuit)]
+        deed.keep(body, about(deed.view, row, row.id, row.gauge, *circuits, *others))
     return body
 
 
@@ -73,6 +79,23 @@ def withdraw(
         gauge = [row.gauge] if row.gauge else []
         deed.keep(body, about(deed.view, row, row.id, *gauge))
     return body
+
+
+def left_behind(logbook: Logbook, made: DispositionMade) -> list[str]:
+    """Labels of other points of the circuits whose records, submitted or accepted, are behind."""
+    with logbook.reading() as view:
+        known = view.known()
+        others = (each for circuit in made.circuits for each in points_in(known, circuit))
+        rows = [view.get(PointRow, each) for each in dict.fromkeys(others) if each != made.point]
+        behind = {"awaiting review", "accepted"}
+        return [row.label for row in rows if row is not None and state_of(view, row) in behind]
+
+
+def _latest(view: View, point: str, circuits: Sequence[str]) -> Iterator[str]:
+    """The latest readings of a point, and of its circuits wherever they were taken."""
+    found = view.all(ReadingRow, point=point, latest=1)
+    found += [row for each in circuits for row in view.all(ReadingRow, subject=each, latest=1)]
+    yield from dict.fromkeys(row.id for row in found)
 
 
 def _demand_open(view: View, row: PointRow) -> None:
