@@ -14,6 +14,7 @@ from gaugelog.ledger.base import Quantity
 from gaugelog.visible import visible
 
 _LABEL = re.compile(r"[^\s,;/\"'<>|\\]{1,40}")
+LONGEST_LABEL = 40
 _WHOLE = re.compile(r"[+-]?\d{1,18}", re.ASCII)
 _NO_DAY = "1970-01-01"
 
@@ -93,7 +94,7 @@ class Fields:
         if text and (_LABEL.fullmatch(text) is None or visible(text) != text):
             remedy = "Use up to 40 letters, digits, dots, hyphens; no space, comma, slash, quote."
             self.fault(name, f"“{text[:60]}” can't be a label.", remedy)
-        return text
+        return text[:LONGEST_LABEL]
 
     def choice(
         self, name: str, options: Sequence[str], default: str | None = None, *, trailing: str = ""

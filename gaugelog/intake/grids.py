@@ -6,7 +6,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Literal, cast
 
-from gaugelog.intake.fields import Fields, Gathered, in_order
+from gaugelog.intake.fields import LONGEST_LABEL, Fields, Gathered, in_order
 from gaugelog.intake.gridrows import grids_in, grouped, settle_labels, told_alike
 from gaugelog.intake.patterned import pattern_facts
 from gaugelog.intake.tables import Columns, rows_of
@@ -105,7 +105,7 @@ def _point(label: str, row: Fields, campaign: str, new_id: Callable[[], str]) ->
         permitted_error=row.number("permitted_error_um_per_m", "um/m", positive=True),
         place=_place(row),
         lot=row.label("lot") or "-",
-        route=row.text("route") or "-",
+        route=row.text("route", longest=LONGEST_LABEL) or "-",
         pattern=pattern,
         numbering=numbering,
         seen_from=seen_from,

@@ -5,6 +5,7 @@ from __future__ import annotations
 import csv
 import io
 import json
+from dataclasses import replace
 from pathlib import Path
 
 import pytest
@@ -169,6 +170,27 @@ def test_a_cell_that_starts_like_a_formula_is_guarded() -> None:
     out = io.StringIO()
     write_each(found, out)
     assert "'=" in out.getvalue()
+
+
+@pytest.mark.parametrize(
+    ("cell", "written"),
+    [
+        ("=1+1", "'=1+1"),
+        ("-1+2", "'-1+2"),
+        ("+cmd|' /C calc'!A0", "'+cmd|' /C calc'!A0"),
+        ("@SUM(1)", "'@SUM(1)"),
+        ("\t=1", "‹U+0009›=1"),
+        ("-12.5 °C", "-12.5 °C"),
+        ("+100 µm/m", "+100 µm/m"),
+        ("-3", "-3"),
+    ],
+)
+def test_a_cell_of_many_rows_is_text_or_a_figure_to_a_spreadsheet(cell: str, written: str) -> None:
+    worked = work_out(SUBJECTS["dewpoint"], {"air": "20 degC", "humidity": "50 %RH"})
+    out = io.StringIO()
+    write_each([replace(worked, inputs={"a": cell})], out)
+    row = list(csv.reader(io.StringIO(out.getvalue(), newline="")))[1]
+    assert written == row[0]
 
 
 def test_a_kind_lists_its_own_arguments(capsys: pytest.CaptureFixture[str]) -> None:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import csv
+import re
 import sys
 from collections.abc import Iterator, Sequence
 from pathlib import Path
@@ -11,8 +12,9 @@ from typing import TextIO
 from gaugelog.commands.calc.engine import work_out
 from gaugelog.commands.calc.model import Family, Subject, Worked
 from gaugelog.errors import Fault, Faulty
+from gaugelog.visible import visible
 
-_FORMULA_STARTS = ("=", "+", "-", "@", "\t", "\r")
+_FIGURE = re.compile(r"[+-]?\d+(\.\d+)?([eE][+-]?\d+)? ?[A-Za-zΩµ°%/²³·^ ]*")
 
 
 def work_out_each(subject: Subject | Family, file: Path, common: dict[str, str]) -> list[Worked]:
@@ -68,6 +70,7 @@ def write_each(found: Sequence[Worked], out: TextIO | None = None) -> None:
 
 
 def _guarded(cell: str) -> str:
-    if cell.startswith(_FORMULA_STARTS) and not cell[1:2].isdigit():
-        return "'" + cell
-    return cell
+    """The cell, made safe to open; a figure with its unit is no formula."""
+    from gaugelog.documents.spreadsheet import guarded
+
+    return visible(cell) if _FIGURE.fullmatch(cell) else guarded(cell)
