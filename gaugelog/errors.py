@@ -11,6 +11,8 @@ from dataclasses import dataclass
 from enum import IntEnum
 from typing import ClassVar
 
+from gaugelog.visible import counted
+
 
 class ExitCode(IntEnum):
     """What the command's exit status means; documented in the README."""
@@ -100,6 +102,6 @@ class Faulty(GaugelogError):
         self.faults = tuple(faults)
         count = len(self.faults)
         super().__init__(
-            f"{count} fault{'' if count == 1 else 's'} found; {outcome}.",
-            "Put them right and try again.",
+            f"{counted(count, 'fault')} found; {outcome}.",
+            f"Put {'it' if count == 1 else 'them'} right and try again.",
         )

@@ -28,3 +28,12 @@ def _shown(char: str, keep_newlines: bool) -> str:
     if unicodedata.category(char) in _UNSEEN:
         return f"‹U+{ord(char):04X}›"
     return char
+
+
+def counted(count: int, one: str, many: str = "") -> str:
+    """A count with its noun; `many` where the plural is not `one` with an s.
+
+    >>> counted(1, "fault"), counted(3, "entry", "entries")
+    ('1 fault', '3 entries')
+    """
+    return f"{count} {one if count == 1 else many or one + 's'}"

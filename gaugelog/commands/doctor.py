@@ -14,7 +14,7 @@ import typer
 
 from gaugelog import __version__
 from gaugelog.commands.session import Json, keys_home, open_logbook
-from gaugelog.commands.talk import put, put_json
+from gaugelog.commands.talk import put_json, put_prose
 from gaugelog.errors import ExitCode, GaugelogError
 
 
@@ -41,9 +41,9 @@ def doctor(ctx: typer.Context, json: Json = False) -> None:
         put_json([vars(finding) for finding in findings])
     else:
         for finding in findings:
-            put(f"{_SIGNS[finding.level]} {finding.subject}: {finding.what}")
+            put_prose(f"{_SIGNS[finding.level]} {finding.subject}: {finding.what}")
             if finding.remedy:
-                put(f"    → {finding.remedy}")
+                put_prose(f"    → {finding.remedy}")
     if any(finding.level == "trouble" for finding in findings):
         raise typer.Exit(int(ExitCode.TROUBLE))
 

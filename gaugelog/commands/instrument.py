@@ -13,6 +13,7 @@ from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 from gaugelog.errors import Fault, Faulty
+from gaugelog.visible import counted
 
 if TYPE_CHECKING:
     from gaugelog.intake.papers import Paper
@@ -43,8 +44,8 @@ def add(
     facts = load_instruments(file, new_id=new_id, papers=papers)
     signer = unlock(logbook, as_, Secrets(secret_fd))
     instruments.add(logbook, signer, facts, papers)
-    kept = f", {len(papers)} certificates kept" if papers else ""
-    say(f"{len(facts)} instruments entered{kept}.")
+    kept = f", {counted(len(papers), 'certificate')} kept" if papers else ""
+    say(f"{counted(len(facts), 'instrument')} entered{kept}. Next: gaugelog instrument list")
 
 
 @group.command()
@@ -156,15 +157,15 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
         rows = view.all(InstrumentRow)
         papers = Counter((row.item, row.number) for row in view.all(CertificateRow))
     found = [InstrumentAdded.model_validate_json(row.data) for row in rows]
-    counted = [(item, papers[item.id, item.certificate_number]) for item in found]
+    filed = [(item, papers[item.id, item.certificate_number]) for item in found]
     if json:
-        put_json([as_json(item) | {"certificates": files} for item, files in counted])
+        put_json([as_json(item) | {"certificates": files} for item, files in filed])
         return
     put_table(
         "Instruments",
         ["label", "type", "serial", "certificate", ">files", "due", "range", ">accuracy"],
-        [cells for item, files in counted for cells in _rows(item, files)],
-        empty="No instrument is entered. Try: gaugelog instrument add instruments.toml",
+        [cells for item, files in filed for cells in _rows(item, files)],
+        empty="No instrument is entered. Next: gaugelog instrument add instruments.toml",
     )
 
 

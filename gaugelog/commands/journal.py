@@ -8,19 +8,20 @@ from typing import TYPE_CHECKING, Annotated, Any
 import typer
 
 from gaugelog.commands.session import Json, open_logbook
-from gaugelog.commands.talk import put, put_json, put_table, say
+from gaugelog.commands.talk import put, put_json, put_prose, put_table, say
 from gaugelog.errors import ExitCode
+from gaugelog.visible import counted
 
 if TYPE_CHECKING:
-    from gaugelog.journal.check import Report
+    from gaugelog.journal.check.report import Report, StepResult
     from gaugelog.journal.entry import Entry
 
 group = typer.Typer(help="The journal: check it, print its head, look at it, export it.")
 
 _SIGNS = {"ok": "✓", "trouble": "✗", "not asked": "–", "not finished": "?"}
 _NOTES = {
-    "not asked": " (not asked)",
-    "not finished": " (not finished: no trouble in what could be read)",
+    "not asked": "not asked",
+    "not finished": "not finished; no trouble in what could be read",
 }
 
 
@@ -45,21 +46,50 @@ def check(
     if json:
         put_json(report.as_json())
     else:
-        _tell_report(report)
+        _tell_report(report, head or [])
     if not report.ok:
         raise typer.Exit(int(ExitCode.TROUBLE))
 
 
-def _tell_report(report: Report) -> None:
+def _tell_report(report: Report, heads: list[str]) -> None:
     for step in report.steps:
-        put(f"{_SIGNS[step.outcome]} {step.number}. {step.title}{_NOTES.get(step.outcome, '')}")
+        put_prose(f"{_SIGNS[step.outcome]} {step.number}. {step.title}: {_found(step)}")
         for trouble in step.troubles:
-            put(f"    {trouble.where}: {trouble.what}")
+            put_prose(f"    {trouble.where}: {trouble.what}")
             if trouble.remedy:
-                put(f"      → {trouble.remedy}")
+                put_prose(f"      → {trouble.remedy}")
     for notice in report.notices:
-        put(f"· {notice.where}: {notice.what}")
-    put("", report.summary)
+        put_prose(f"· {notice.where}: {notice.what}")
+    put_prose("", report.summary, *_about_heads(report, heads))
+
+
+def _found(step: StepResult) -> str:
+    if step.troubles:
+        return counted(len(step.troubles), "trouble")
+    return _NOTES.get(step.outcome) or _SOUND[step.number]
+
+
+_SOUND = {
+    1: "every entry has a form that this program knows",
+    2: "the entries are numbered without a gap",
+    3: "each entry holds the hash of the one before",
+    4: "each entry says what its hash was taken of",
+    5: "each deed is whole and signed by who acted",
+    6: "each signer's certificate was in force",
+    7: "every file is there, with the SHA-256 that was signed",
+    8: "the tables say what the journal says",
+}
+"""What is so when a step of the check finds nothing."""
+
+
+def _about_heads(report: Report, heads: list[str]) -> list[str]:
+    """What the printed heads that were given prove, or what stays open without any."""
+    if not heads:
+        return [
+            "No printed head was given: entries cut off at the end would not show. Take one from "
+            "a record or a backup: gaugelog journal check --head 137:ABC…"
+        ]
+    return [f"Nothing is cut off up to {', '.join(heads)}."] if report.ok else []
 
 
 @group.command()
@@ -99,7 +129,7 @@ def show(
             "Journal",
             [">entry", "time (UTC)", "by", "what", "about"],
             [_entry_row(entry, names) for entry in found],
-            empty="No entry is about that.",
+            empty="No entry is about that. Next: gaugelog journal show",
         )
 
 

@@ -99,7 +99,7 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
             ]
             for row, name in people
         ],
-        empty="Nobody is enrolled yet. Try: gaugelog person enrol --help",
+        empty="Nobody is enrolled yet. Next: gaugelog person enrol --help",
     )
 
 

@@ -9,8 +9,9 @@ import typer
 
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
-from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+from gaugelog.commands.talk import as_json, put, put_json, put_prose, put_table, say
 from gaugelog.errors import ExitCode
+from gaugelog.visible import counted
 
 if TYPE_CHECKING:
     from gaugelog.ledger.revisions import PlanRevised
@@ -58,8 +59,8 @@ def load(
         return
     loaded = plan.load(logbook, signer, facts)
     say(
-        f"Draft revision {loaded.revision} loaded: {len(loaded.points)} points, "
-        f"{len(loaded.circuits)} circuits.",
+        f"Draft revision {loaded.revision} loaded: {counted(len(loaded.points), 'point')}, "
+        f"{counted(len(loaded.circuits), 'circuit')}.",
         "Next: gaugelog plan check",
     )
 
@@ -85,11 +86,12 @@ def _tell_findings(findings: list[PlanFinding]) -> None:
     for finding in findings:
         figure = f" [{finding.figure}]" if finding.figure else ""
         source = f" ({finding.source})" if finding.source else ""
-        put(f"{_SIGNS[finding.level]} {finding.subject}: {finding.what}{figure}{source}")
+        put_prose(f"{_SIGNS[finding.level]} {finding.subject}: {finding.what}{figure}{source}")
     levels = [finding.level for finding in findings]
     put(
         "",
-        f"{levels.count('refusal')} refusals, {levels.count('warning')} warnings, "
+        f"{counted(levels.count('refusal'), 'refusal')}, "
+        f"{counted(levels.count('warning'), 'warning')}, "
         f"{levels.count('ok')} ok.",
     )
 
@@ -145,32 +147,38 @@ def show(ctx: typer.Context, json: Json = False) -> None:
     if json:
         put_json([as_json(row) for row in rows])
         return
+    routes = {row.route for row in rows}
+    shared = routes.pop() if len(routes) == 1 else ""
     put_table(
-        "Plan",
-        [
-            "point",
-            "zone",
-            "lot",
-            "circuit",
-            "channel",
-            "route",
-            ">permitted error",
-            "state",
-            "touched by",
-        ],
-        [_cells(row) for row in rows],
-        empty="No plan is loaded. Try: gaugelog plan load FOLDER",
+        f"Plan; every point by route {shared}" if shared else "Plan",
+        list(_COLUMNS),
+        [_cells(row, shared) for row in rows],
+        empty="No plan is loaded. Next: gaugelog plan load FOLDER",
     )
 
 
-def _cells(row: Any) -> list[str]:
+_COLUMNS = (
+    "point",
+    "zone",
+    "lot",
+    "circuit",
+    "channel",
+    "route",
+    ">permitted error",
+    "state",
+    "touched by",
+)
+
+
+def _cells(row: Any, shared: str) -> list[str]:
+    """A point's cells; a route that all share stands in the title instead, for it is long."""
     return [
         row.point,
         row.zone,
         row.lot,
         row.circuit,
         row.channel,
-        row.route,
+        "" if shared else row.route,
         row.permitted_error,
         row.state,
         "; ".join(row.touched),

@@ -73,5 +73,5 @@ def _list(rows: list[dict[str, str]], json: bool) -> None:
         "Records",
         ["point", ">revision", "state", "submitted by", "accepted by", "head", "SHA-256", "reason"],
         [[_short(name, value) for name, value in row.items()] for row in rows],
-        empty="No point has been submitted yet.",
+        empty="No record is signed yet. Next: gaugelog step next",
     )

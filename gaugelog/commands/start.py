@@ -52,5 +52,5 @@ def start(
     say(
         f"Logbook “{name}” started in {folder}.",
         f"Head {logbook.head().printed}",
-        "Next: enrol people with `gaugelog person enrol`.",
+        f"Next: cd {folder}; gaugelog person enrol --help",
     )

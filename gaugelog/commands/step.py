@@ -9,15 +9,16 @@ import typer
 from gaugelog.commands.calc.engine import parse_pairs
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
-from gaugelog.commands.talk import as_json, put, put_json, put_table, say
+from gaugelog.commands.steptext import prompt_for, tell_outcome, tell_step, tell_what_follows
+from gaugelog.commands.talk import as_json, ask, put_json, put_table, say
+from gaugelog.commands.walk import walk
 from gaugelog.errors import Fault, Faulty
 
 if TYPE_CHECKING:
-    from gaugelog.ledger.routes import StepInput
     from gaugelog.rules.progress import NextStep
-    from gaugelog.work.steps import StepOutcome
 
-group = typer.Typer(help="Steps: what comes next, do it, skip it.")
+group = typer.Typer(help="Steps: what comes next, do it, walk on, go back, skip.")
+group.command()(walk)
 
 Point = Annotated[str, typer.Argument(help="Label of the point.")]
 
@@ -34,7 +35,7 @@ def next_(
     logbook = open_logbook(ctx)
     if point:
         found = steps.next_step(logbook, point)
-        put_json(as_json(found)) if json else _tell_step(found)
+        put_json(as_json(found)) if json else tell_step(found)
         return
     rows = steps.worklist(logbook)
     if json:
@@ -47,64 +48,8 @@ def next_(
             [row.point, row.zone, row.state, row.title, " ".join([*row.sent_back, *row.blocks])]
             for row in rows
         ],
-        empty="No plan is released. Try: gaugelog plan release",
+        empty="No plan is loaded. Next: gaugelog plan load FOLDER",
     )
-
-
-def _tell_step(found: NextStep) -> None:
-    put(f"{found.point}, zone {found.zone}: {found.state}")
-    put(*(line for told in found.sent_back for line in _wrapped(told, "SENT BACK: ")))
-    if found.step is None:
-        put(*found.blocks)
-        if found.title != "none":
-            put(f"Next: gaugelog submit {found.point}")
-        return
-    step = found.step
-    hold = ", a HOLD: a second person decides" if step.hold else ""
-    put(f"Step {found.number} of {found.count}{hold}: {step.title} [{step.id}]", "")
-    put(*_wrapped(step.instruction))
-    for caution in step.cautions:
-        put(*_wrapped(caution, "CAUTION: "))
-    if found.facts:
-        put("", "From the plan:", *(line for fact in found.facts for line in _wrapped(fact)))
-    if step.inputs:
-        put("", "To enter:", *(_input_line(item) for item in step.inputs))
-    put(*(f"  time: {window.sentence}" for window in found.windows if window.open))
-    put("", *(f"BLOCKED: {block}" for block in found.blocks))
-    put(*([] if found.blocks else [f"Next: {_command(found)}"]), *_ways_back(found))
-
-
-def _ways_back(found: NextStep) -> list[str]:
-    """Where a window is over, the step to go back to."""
-    if found.step is None:
-        return []
-    pairs = zip(found.step.windows, found.windows, strict=False)
-    return [
-        f"Next: gaugelog step redo {found.point} {planned.after} --reason WHY"
-        for planned, window in pairs
-        if not window.open and planned.bound == "within"
-    ]
-
-
-def _wrapped(text: str, lead: str = "") -> list[str]:
-    import textwrap
-
-    indent = " " * (len(text) - len(text.lstrip()) + 2)
-    return textwrap.wrap(
-        lead + text.strip(), 78, initial_indent=indent, subsequent_indent=f"{indent}  "
-    )
-
-
-def _input_line(item: StepInput) -> str:
-    unit = f", in {item.unit}" if item.unit else ""
-    left_out = "" if item.required else ", may be left out"
-    return f"  {item.name} = {item.prompt}{unit}{left_out}"
-
-
-def _command(found: NextStep) -> str:
-    names = " ".join(f"{item.name}=…" for item in found.step.inputs) if found.step else ""
-    again = " --reason WHY" if found.again else ""
-    return " ".join(f"gaugelog step do {found.point} {names}{again}".split())
 
 
 @group.command()
@@ -153,8 +98,8 @@ def do(
         refuse=refuse or "",
         at=at,
     )
-    _tell_outcome(outcome)
-    _tell_what_follows(steps.next_step(logbook, point), outcome)
+    tell_outcome(outcome)
+    tell_what_follows(steps.next_step(logbook, point), outcome)
     raise typer.Exit(int(outcome.exit_code))
 
 
@@ -171,29 +116,8 @@ def _ask_missing(found: NextStep, typed: dict[str, str]) -> dict[str, str]:
         return {}
     missing = [item for item in found.step.inputs if item.name not in typed and item.required]
     if missing:
-        _tell_step(found)
-    return {
-        item.name: typer.prompt(f"{item.prompt}{f' ({item.unit})' if item.unit else ''}", err=True)
-        for item in missing
-    }
-
-
-def _tell_outcome(outcome: StepOutcome) -> None:
-    for shown in outcome.readings:
-        reading = shown.reading
-        put(f"{reading.check} {reading.stage} {reading.typed}: {reading.verdict.word.upper()}")
-        put(*(f"  {line}" for line in shown.explained))
-    say(*outcome.lines)
-
-
-def _tell_what_follows(found: NextStep, outcome: StepOutcome) -> None:
-    if not outcome.settled:
-        return
-    if found.step is None:
-        say(f"Next: {found.title} of {found.point}: gaugelog submit {found.point}")
-        return
-    hold = ", a hold for a second person" if found.step.hold else ""
-    say(f"Next, {found.number} of {found.count}{hold}: {found.step.title}")
+        tell_step(found)
+    return {item.name: ask(prompt_for(item), needed=True) for item in missing}
 
 
 @group.command()

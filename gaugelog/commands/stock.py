@@ -11,6 +11,7 @@ import typer
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import put_json, put_table, say
+from gaugelog.visible import counted
 
 if TYPE_CHECKING:
     from gaugelog.ledger.papers import PaperOf
@@ -52,9 +53,13 @@ def receive(
     facts = load_stock(files, new_id=new_id)
     signer = unlock(logbook, as_, Secrets(secret_fd))
     done = stock.receive(logbook, signer, facts, facts.papers)
-    more = f", {done.packs} packs more of lots in stock" if done.packs else ""
-    papers = f", {done.certificates} certificates" if done.certificates else ""
-    say(f"Received: {done.lots} gauge lots{more}, {done.consumables} consumables{papers}.")
+    more = f", {counted(done.packs, 'pack')} more of lots in stock" if done.packs else ""
+    papers = f", {counted(done.certificates, 'certificate')}" if done.certificates else ""
+    say(
+        f"Received: {counted(done.lots, 'gauge lot')}{more}, "
+        f"{counted(done.consumables, 'consumable')}{papers}.",
+        "Next: gaugelog stock list",
+    )
 
 
 @group.command()
@@ -92,13 +97,13 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
         "Gauge lots",
         ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other", ">certificates"],
         [[str(value) for value in row.values()] for row in lots],
-        empty="No gauge lot has been received. Try: gaugelog stock receive lots.csv",
+        empty="No gauge lot was received. Next: gaugelog stock receive lots.csv",
     )
     put_table(
         "Consumables",
         ["lot", "kind", "name", "expires", ">certificates"],
         [[str(value) for value in row.values()] for row in consumables],
-        empty="No consumable has been received.",
+        empty="No consumable was received. Next: gaugelog stock receive consumables.csv",
     )
     if standing:
         put_table(
@@ -141,7 +146,7 @@ def _set(
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(fd))
     done = set_standing(logbook, signer, label=label, standing=standing, reason=reason)
-    scrapped = f"; {len(done.scraps)} gauges leave the shelf" if done.scraps else ""
+    scrapped = f"; {counted(len(done.scraps), 'gauge')} taken off the shelf" if done.scraps else ""
     say(f"{done.item_kind} {done.label} is {done.standing}{scrapped}.")
 
 

@@ -10,6 +10,7 @@ from collections.abc import Callable, Iterable, Sequence
 from contextlib import suppress
 from typing import TYPE_CHECKING, Any
 
+from gaugelog.commands.folding import folded
 from gaugelog.errors import ExitCode, Fault, Faulty, GaugelogError
 from gaugelog.visible import visible
 
@@ -42,10 +43,11 @@ _LONGEST_TALK = 4000
 
 
 def say(*lines: str) -> None:
-    """Talk to the person, on stderr; talk that can't be written stops no work."""
+    """Talk to the person, on stderr, folded to the terminal; what can't be told stops no work."""
     for line in lines:
         with suppress(OSError):
-            sys.stderr.write(visible(_brief(line), keep_newlines=True) + "\n")
+            for part in folded(visible(_brief(line), keep_newlines=True), sys.stderr):
+                sys.stderr.write(part + "\n")
 
 
 def _brief(line: str) -> str:
@@ -60,6 +62,27 @@ def put(*lines: str) -> None:
     """Give data, on stdout."""
     for line in lines:
         sys.stdout.write(visible(line, keep_newlines=True) + "\n")
+
+
+def ask(prompt: str, *, default: str = "", needed: bool = False) -> str:
+    """What a person answers at the terminal, told on stderr; Enter alone takes `default`.
+
+    With `needed` an empty answer is asked for again. Raises typer.Abort when nobody is left to
+    ask, or at Ctrl-C.
+    """
+    import typer
+
+    shown = bool(default)
+    while True:
+        answer = typer.prompt(visible(prompt), default=default, show_default=shown, err=True)
+        if answer.strip() or not needed:
+            return str(answer).strip()
+
+
+def put_prose(*lines: str) -> None:
+    """Give sentences as data, on stdout, folded between words to fit the terminal."""
+    for line in lines:
+        put(*folded(visible(line, keep_newlines=True), sys.stdout))
 
 
 def put_json(value: object) -> None:
@@ -80,7 +103,8 @@ def put_table(
 ) -> None:
     """Give a table on stdout; a column whose heading starts with `>` is aligned right.
 
-    With no rows, `empty` is told on stderr instead: stdout stays free of talk.
+    A column that says nothing in any row is left out. With no rows, `empty` is told on stderr
+    instead: stdout stays free of talk.
     """
     from rich import box
     from rich.table import Table
@@ -90,6 +114,9 @@ def put_table(
     if not body:
         say(empty)
         return
+    told = [place for place in range(len(columns)) if any(cells[place].plain for cells in body)]
+    columns = [columns[place] for place in told]
+    body = [[cells[place] for place in told] for cells in body]
     table = Table(title=Text(title), title_justify="left", box=box.SIMPLE_HEAD, pad_edge=False)
     for place, column in enumerate(columns):
         right, heading = column.startswith(">"), column.removeprefix(">")

@@ -12,6 +12,7 @@ from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.session import Json, open_logbook
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 from gaugelog.errors import ExitCode, Fault, Faulty
+from gaugelog.visible import counted
 
 if TYPE_CHECKING:
     from gaugelog.ledger.campaign import Paper
@@ -98,7 +99,8 @@ def export(
     write_out(file, data)
     for conflict in wiring.conflicts:
         say(f"  ✗ {conflict}")
-    say(f"{len(wiring.circuits)} circuits, {len(wiring.spare)} spare channels.")
+    circuits = counted(len(wiring.circuits), "circuit")
+    say(f"{circuits}, {counted(len(wiring.spare), 'spare channel')}.")
     put(str(file))
 
 

@@ -48,6 +48,41 @@ def job(tmp_path: Path, monkeypatch: pytest.MonkeyPatch, command: Command) -> Pa
     return folder
 
 
+@pytest.fixture
+def empty(tmp_path: Path, monkeypatch: pytest.MonkeyPatch, command: Command) -> Path:
+    """A logbook that was started just now; the current folder."""
+    monkeypatch.setenv(session.KEYS_VARIABLE, str(tmp_path / "keys"))
+    folder = tmp_path / "fresh"
+    told = command(
+        *("start", str(folder), "--name", "Job 8", "--custodian", "c.ward"),
+        *("--custodian-name", "C. Ward", "--initials", "CW"),
+        secrets=f"{WORD}\n",
+    )
+    assert f"Next: cd {folder}; gaugelog person enrol" in told.err
+    monkeypatch.chdir(folder)
+    return folder
+
+
+@pytest.mark.parametrize(
+    ("words", "following"),
+    [
+        (("plan", "show"), "gaugelog plan load FOLDER"),
+        (("plan", "check"), "gaugelog plan load FOLDER"),
+        (("wiring", "show"), "gaugelog plan load FOLDER"),
+        (("step", "next"), "gaugelog plan load FOLDER"),
+        (("stock", "list"), "gaugelog stock receive lots.csv"),
+        (("instrument", "list"), "gaugelog instrument add instruments.toml"),
+        (("record",), "gaugelog step next"),
+    ],
+)
+def test_where_nothing_is_yet_the_next_command_is_told(
+    empty: Path, command: Command, words: tuple[str, ...], following: str
+) -> None:
+    told = command(*words)
+    assert following in told.err
+    assert "" == told.out
+
+
 def _do(command: Command, *words: str, who: str = "t.okoro") -> str:
     told = command("step", "do", "FB-1", *words, "--as", who, secrets=f"{WORD}\n")
     assert told.code == 0, told.err

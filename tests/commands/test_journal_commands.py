@@ -17,6 +17,27 @@ def test_a_played_demo_is_sound(demo: Path, command: Command) -> None:
     assert "sound" in told.out
 
 
+def test_the_check_says_what_is_so_and_what_only_a_head_would_prove(
+    demo: Path, command: Command
+) -> None:
+    told = command("journal", "check").out
+    assert "✓ 7. Evidence: every file is there, with the SHA-256 that was signed" in told
+    assert "No printed head was given" in told
+    head = command("journal", "head").out.strip()
+    told = command("journal", "check", "--head", head).out
+    assert f"Nothing is cut off up to {head}." in told
+    assert "No printed head was given" not in told
+
+
+def test_the_check_of_troubles_counts_them_in_their_step(demo: Path, command: Command) -> None:
+    with sqlite3.connect(demo / "logbook" / "logbook.db") as database:
+        database.execute("UPDATE reading SET word = 'pass' WHERE word = 'fail'")
+    told = command("journal", "check", "--head", "1:AAAAAAAAAAAAAAAAAAAAAAAAAA").out
+    assert "✗ 3. Chain: 1 trouble\n" in told
+    assert "✗ 8. Ledger rebuilt and compared: 1 trouble\n" in told
+    assert "Nothing is cut off" not in told
+
+
 def test_the_check_as_json_lists_its_steps(demo: Path, command: Command) -> None:
     found = json.loads(command("journal", "check", "--json").out)
     assert [step["number"] for step in found["steps"]] == [1, 2, 3, 4, 5, 6, 7, 8]

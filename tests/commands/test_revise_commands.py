@@ -104,4 +104,4 @@ def test_stock_is_quarantined_freed_and_scrapped(
     assert 4 == _act(command, people["technician"], "stock", "free", lot, "--reason", "ok").code
     assert 0 == _act(command, people["planner"], "stock", "free", lot, "--reason", "ok").code
     told = _act(command, people["planner"], "stock", "scrap", lot, "--reason", "too old")
-    assert (0, True) == (told.code, "leave the shelf" in told.err), told.err
+    assert (0, True) == (told.code, "gauges taken off the shelf" in told.err), told.err

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 
 from gaugelog.journal.canonical import JsonValue
 from gaugelog.journal.head import Head
+from gaugelog.visible import counted
 
 TITLES: dict[int, str] = {
     1: "Format",
@@ -84,12 +85,12 @@ class Report:
     @property
     def summary(self) -> str:
         """The outcome in one sentence."""
-        checked = _counted(self.entries, "entry", "entries")
+        checked = counted(self.entries, "entry", "entries")
         heads = ", ".join(head.printed for head in self.heads)
         upto = f", head {heads}" if heads else ""
         if self.ok:
             return f"The journal is sound: {checked} checked{upto}."
-        found = _counted(len(self.troubles), "trouble", "troubles")
+        found = counted(len(self.troubles), "trouble")
         return f"The journal is NOT sound: {found} found in {checked}{upto}."
 
     def as_json(self) -> dict[str, JsonValue]:
@@ -141,10 +142,6 @@ class Findings:
     def _of_step(self, number: int) -> tuple[Trouble, ...]:
         found = [item for item in self._troubles if item[1].step == number]
         return tuple(trouble for _, trouble in sorted(found, key=lambda item: item[0]))
-
-
-def _counted(count: int, one: str, many: str) -> str:
-    return f"{count} {one if count == 1 else many}"
 
 
 def _head_json(head: Head) -> dict[str, JsonValue]:
