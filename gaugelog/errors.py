@@ -11,8 +11,6 @@ from dataclasses import dataclass
 from enum import IntEnum
 from typing import ClassVar
 
-from gaugelog.visible import counted
-
 
 class ExitCode(IntEnum):
     """What the command's exit status means; documented in the README."""
@@ -102,6 +100,6 @@ class Faulty(GaugelogError):
         self.faults = tuple(faults)
         count = len(self.faults)
         super().__init__(
-            f"{counted(count, 'fault')} found; {outcome}.",
+            f"{count} fault{'' if count == 1 else 's'} found; {outcome}.",
             f"Put {'it' if count == 1 else 'them'} right and try again.",
         )
