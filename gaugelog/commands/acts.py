@@ -1,4 +1,4 @@
-"""The acts of the demo's story: walk, photo, submit, return, accept, amend, replace."""
+"""The acts of the demo's story: walk, check, photo, submit, return, accept, amend, replace."""
 
 from __future__ import annotations
 
@@ -17,6 +17,7 @@ if TYPE_CHECKING:
 
 PLAYED_BY = {
     "walk": "technician",
+    "check": "technician",
     "photo": "technician",
     "submit": "technician",
     "amend": "technician",
@@ -120,6 +121,14 @@ def _replace(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
     )
 
 
+def _check(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
+    from gaugelog.work import shift
+
+    told = {name: act[name] for name in ("reference", "value", "reads")}
+    if shift.check(stage.book, key, meter=act["check"], **told).fact.outcome != "pass":
+        raise StoryFault(f"{title_of(act)}: does not agree")
+
+
 def _photo(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
     from gaugelog.intake.pictures import load_pictures
     from gaugelog.work import photos
@@ -130,6 +139,7 @@ def _photo(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
 
 
 _DEEDS: dict[str, Callable[[Stage, Mapping[str, Any], UnlockedKey], None]] = {
+    "check": _check,
     "photo": _photo,
     "submit": _submit,
     "accept": _accept,
