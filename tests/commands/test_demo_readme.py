@@ -18,8 +18,9 @@ SIGNED = {"stock receive", "instrument add", "plan load", "plan release"}
 
 
 def _named() -> list[str]:
-    """The commands in the order in which the README names them; the demo plays itself."""
-    text = " ".join((DEMO / "README.md").read_text(encoding="utf-8").split())
+    """The commands that the README begins with, in their order; the demo plays itself."""
+    readme = (DEMO / "README.md").read_text(encoding="utf-8")
+    text = " ".join(readme[: readme.index("## What holds")].split())
     return [line for line in re.findall(r"`gaugelog ([^`]+)`", text) if line != "demo"]
 
 
