@@ -113,10 +113,26 @@ def _sides(each: Fields, found: CheckCriterion) -> None:
             each.fault("at_most", "mixes per cent with ohms.", "Give both in one unit.")
         elif least.si() > most.si():
             each.fault("at_most", "lies below at_least.")
+    _expectation(each, found)
     for item in found.physics if each.sound("kind") else ():
         if item not in CHECKS[found.check].physics:
             known = ", ".join(CHECKS[found.check].physics) or "none"
             each.fault("physics", f"“{item[:60]}” adds nothing here.", f"Known: {known}.")
+
+
+def _expectation(each: Fields, found: CheckCriterion) -> None:
+    """What is expected lies on the good side of one limit, in its unit."""
+    if found.expected is None or not each.sound("expected", "at_least", "at_most"):
+        return
+    limit = found.at_least or found.at_most
+    if limit is None or (found.at_least is not None and found.at_most is not None):
+        each.fault("expected", "stands beside one limit.", "Give at_least or at_most with it.")
+    elif (limit.unit == "%") != (found.expected.unit == "%"):
+        each.fault("expected", "mixes per cent with ohms.", "Give it in the limit's unit.")
+    elif found.at_least is not None and found.expected.si() < limit.si():
+        each.fault("expected", "lies below at_least.")
+    elif found.at_most is not None and found.expected.si() > limit.si():
+        each.fault("expected", "lies above at_most.")
 
 
 def _twice(tables: list[Fields], checks: tuple[CheckCriterion, ...]) -> None:

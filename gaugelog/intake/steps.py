@@ -57,6 +57,7 @@ def read_step(each: Fields) -> RouteStep:
         refused_to=each.text("refused_to", needed=False),
         windows=tuple(_window(item) for item in each.tables("window", needed=False)),
         skip=cast("SkipRule", each.choice("skip", get_args(SkipRule), "never")),
+        qualification=each.text("qualification", needed=False),
         reaches=cast(
             "Literal['', 'ready to coat']", each.choice("reaches", ("", "ready to coat"), "")
         ),

@@ -130,6 +130,7 @@ class CheckCriterion(Part):
     physics: tuple[str, ...] = ()
     """`permitted error` and the like: also hold the reading to what physics demands."""
     expected: Quantity | None = None
+    """What good work reaches: short of it, though within the limit, the reviewer is told."""
     largest_test_voltage: Quantity | None = None
     source: str
 

@@ -71,6 +71,8 @@ class RouteStep(Part):
     refused_to: str = ""
     windows: tuple[Window, ...] = ()
     skip: SkipRule = "never"
+    qualification: str = ""
+    """What the person who does the step must be qualified for, on that day; empty asks nothing."""
     reaches: Literal["", "ready to coat"] = ""
     """The state the grids reach when the step is done, where it has a name of its own."""
 

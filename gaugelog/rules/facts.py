@@ -10,6 +10,7 @@ from gaugelog.ledger.points import PointPlanned, PointRow
 from gaugelog.ledger.routes import AXIS, PLACE_X, PLACE_Y, RouteStep
 from gaugelog.ledger.stock import GaugeRow, LotRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.article import article_of
 from gaugelog.rules.barred import why_gauge_barred
 
 _MOST_PIECES = 5
@@ -23,6 +24,10 @@ def plan_facts(view: View, row: PointRow, step: RouteStep, subject: str, number:
         facts += _permits(view, planned)
     if any(item.kind == "gauge" for item in step.inputs):
         facts += _gauges(view, row)
+    if any(item.type == "cleaner" for item in step.inputs):
+        facts += _cleaners(view, planned)
+    if step.qualification:
+        facts.append(f"qualification: {step.qualification}")
     if step.hold or any(item.type in {PLACE_X, PLACE_Y, AXIS} for item in step.inputs):
         facts += _place(planned)
     circuit = view.get(CircuitRow, subject)
@@ -49,6 +54,13 @@ def _gauges(view: View, row: PointRow) -> Iterator[str]:
     free = [gauge.label for gauge in shelf if not why_gauge_barred(view, gauge)]
     more = f" and {len(free) - _MOST_PIECES} more" if len(free) > _MOST_PIECES else ""
     yield f"lot {lot.label}, {lot.type}; on the shelf: {', '.join(free[:_MOST_PIECES])}{more}"
+
+
+def _cleaners(view: View, planned: PointPlanned) -> Iterator[str]:
+    """The plan forbids by kind as well as by name, so the person reads what it says."""
+    article = article_of(view, planned)
+    for word in article.surface.forbidden_cleaners:
+        yield f"forbidden on {article.label}: {word}"
 
 
 def _place(planned: PointPlanned) -> Iterator[str]:

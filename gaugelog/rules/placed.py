@@ -4,13 +4,12 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
-from gaugelog.errors import Refused
 from gaugelog.ledger.base import Quantity
-from gaugelog.ledger.campaign import CampaignPlanned, CampaignRow
 from gaugelog.ledger.points import PointPlanned
 from gaugelog.ledger.routes import AXIS, PLACE_X, PLACE_Y, RouteStep
 from gaugelog.ledger.view import View
 from gaugelog.physics.placement import axis_error, misalignment_error
+from gaugelog.rules.article import article_of
 
 SOURCE = "Mohr's circle of uniaxial stress; Timoshenko and Goodier (from memory)"
 
@@ -61,12 +60,7 @@ def axis_effect(
 
 def poisson_at(view: View, planned: PointPlanned) -> float:
     """Poisson's ratio of the article a point lies on. Raises Refused when it is not known."""
-    campaign = view.get(CampaignRow, planned.campaign)
-    articles = CampaignPlanned.model_validate_json(campaign.data).articles if campaign else ()
-    found = [each.material.poisson_ratio.si() for each in articles if each.id == planned.article]
-    if not found:
-        raise Refused(f"The article of {planned.label} is not known.", "Check the journal.")
-    return found[0]
+    return article_of(view, planned).material.poisson_ratio.si()
 
 
 def _off(name: str, found: Quantity, aim: Quantity) -> float:

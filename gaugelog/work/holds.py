@@ -6,6 +6,7 @@ from collections.abc import Mapping
 
 from gaugelog.errors import Fault, Faulty
 from gaugelog.ledger.steps import HoldDecided
+from gaugelog.rules.qualified import demand_qualified
 from gaugelog.rules.who import demand_role, demand_second_person
 from gaugelog.work.doing import Doing, StepOutcome, about, utc_text
 from gaugelog.work.inputs import Asked, understand
@@ -24,6 +25,7 @@ def decide(doing: Doing, typed: Mapping[str, str], note: str, refuse: str) -> St
         raise Faulty([Fault("refuse", "is empty.", "Say why the hold is refused.")])
     understand(Asked(making.view, row, step, doing.day, doing.observed), typed)
     demand_role(making.view, person, "technician", "reviewer")
+    demand_qualified(making.view, person, step, doing.day)
     demand_second_person(making.view, person, row.id, "decide this hold")
     body = HoldDecided(
         point=row.id,

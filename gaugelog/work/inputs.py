@@ -13,11 +13,12 @@ from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded
-from gaugelog.ledger.points import PointRow
+from gaugelog.ledger.points import PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered
-from gaugelog.ledger.stock import ConsumableReceived, LotReceived, LotRow
+from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.article import article_of, forbids_cleaner
 from gaugelog.rules.barred import why_barred, why_gauge_barred
 from gaugelog.rules.shift import shift_demand, why_unchecked
 
@@ -123,6 +124,17 @@ def _demand_in_date(asked: Asked, lot: str) -> None:
         raise _fault(f"{row.label} expired on {expires}.", "Take a lot that is in date.")
 
 
+def _demand_allowed(asked: Asked, lot: ConsumableRow) -> None:
+    article = article_of(asked.view, PointPlanned.model_validate_json(asked.point.data))
+    word = forbids_cleaner(article, lot.name)
+    if word:
+        by = f", by {article.surface.agreed_by}" if article.surface.agreed_by else ""
+        raise _fault(
+            f"{lot.label} is {lot.name}; {article.label} must not be cleaned with {word}{by}.",
+            "Take another cleaner.",
+        )
+
+
 def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:
     lot = asked.view.consumable(text)
     if lot is None:
@@ -131,6 +143,8 @@ def _consumable(asked: Asked, item: StepInput, text: str, where: str, found: Und
         raise _fault(f"{lot.label} is a lot of {lot.type}, not of {item.type}.")
     if lot.expires and date.fromisoformat(lot.expires) < asked.day:
         raise _fault(f"{lot.label} expired on {lot.expires}.", "Take a lot that is in date.")
+    if lot.type == "cleaner":
+        _demand_allowed(asked, lot)
     _demand_free(why_barred(asked.view, lot.id))
     if lot.type == "adhesive":
         _demand_in_date(asked, asked.point.lot)

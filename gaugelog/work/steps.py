@@ -13,12 +13,14 @@ from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.routes import RouteStep, StepInput
 from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, StepSkipped
 from gaugelog.rules.air import air_troubles
+from gaugelog.rules.expected import short_of_expected
 from gaugelog.rules.facts import plan_facts
 from gaugelog.rules.order import order_flag
 from gaugelog.rules.piece import demand_one_piece
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
 from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
 from gaugelog.rules.progress import next_step as progress
+from gaugelog.rules.qualified import demand_qualified, lapsed_flags
 from gaugelog.rules.who import demand_role, roles_of
 from gaugelog.work.doing import (
     Doing,
@@ -189,6 +191,7 @@ def _told_again(making: Deed, row: PointRow) -> StepOutcome:
 def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepOutcome:
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
+    demand_qualified(view, doing.making.signer.person, doing.step, doing.day)
     got = understand(Asked(view, row, doing.step, doing.day, doing.observed), typed)
     _demand_air(doing, got)
     _demand_place(doing, got)
@@ -202,7 +205,8 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
         return StepOutcome(False, shown(readings), _blocked_lines(row, doing.step))
     got.entered.update(photos)
     _keep_done(doing, got, readings, note)
-    return StepOutcome(True, shown(readings), (f"{row.label}: “{doing.step.title}” is done.",))
+    done = f"{row.label}: “{doing.step.title}” is done."
+    return StepOutcome(True, shown(readings), (done, *_short(doing, readings)))
 
 
 def _demand_air(doing: Doing, got: Understood) -> None:
@@ -290,16 +294,24 @@ def _each(takings: Iterable[Callable[[], ReadingTaken]]) -> list[ReadingTaken]:
     return found
 
 
+def _short(doing: Doing, readings: list[ReadingTaken]) -> list[str]:
+    """What is within its limit and yet short of what the criteria expect."""
+    view, campaign = doing.making.view, doing.row.campaign
+    return [each for reading in readings for each in short_of_expected(view, campaign, reading)]
+
+
 def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note: str) -> None:
     entered = {**got.entered, **_entered_readings(got, doing.step.inputs, readings)}
     flags = [window.sentence for window in doing.found.windows if not window.judged]
     flags += [doing.order] if doing.order else []
     flags += _axis_flag(doing, got)
+    flags += lapsed_flags(doing.making.view, doing.making.signer.person, doing.day)
     flags += [
         f"{reading.check} {reading.stage}: {reading.verdict.word}"
         for reading in readings
         if reading.verdict.word != "pass"
     ]
+    flags += _short(doing, readings)
     body = StepDone(
         point=doing.row.id,
         subject=doing.found.subject,

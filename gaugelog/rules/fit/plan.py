@@ -68,6 +68,8 @@ class Plan:
             label for label, lot in self.consumables.items() if lot.type == "cable"
         )
         """Labels of the cable lots in stock."""
+        self.cleaners = tuple(view.all(ConsumableRow, type="cleaner"))
+        """The cleaner lots in stock."""
         self.shelf = Counter(
             gauge.lot
             for gauge in view.all(GaugeRow, state="on shelf")

@@ -6,12 +6,13 @@ from collections.abc import Iterator
 
 from gaugelog.ledger.campaign import Article
 from gaugelog.ledger.routes import RouteAdopted
+from gaugelog.rules.article import forbids_cleaner
 from gaugelog.rules.fit.finding import PlanFinding
 from gaugelog.rules.fit.plan import Plan
 
 
 def surface_findings(plan: Plan) -> Iterator[PlanFinding]:
-    """Each route on each article: its temperature, its abrasion."""
+    """Each route on each article: its temperature, its abrasion; the cleaners in stock."""
     pairs = {
         (point.article, point.route): point
         for point in plan.points
@@ -20,6 +21,18 @@ def surface_findings(plan: Plan) -> Iterator[PlanFinding]:
     for article, route in pairs:
         yield from _temperature(plan.articles[article], plan.routes[route])
         yield from _abrasion(plan.articles[article], plan.routes[route])
+    for label in sorted({article for article, _route in pairs}):
+        yield from _cleaners(plan, plan.articles[label])
+
+
+def _cleaners(plan: Plan, article: Article) -> Iterator[PlanFinding]:
+    """A cleaner in stock that the article forbids is warned of; the step refuses it."""
+    for lot in plan.cleaners:
+        word = forbids_cleaner(article, lot.name)
+        if word:
+            what = f"must not be cleaned with {word}; cleaner {lot.label} in stock is {lot.name}"
+            subject = f"article {article.label}"
+            yield PlanFinding("warning", subject, what, "", article.surface.agreed_by)
 
 
 def _temperature(article: Article, route: RouteAdopted) -> Iterator[PlanFinding]:
