@@ -108,6 +108,8 @@ class StepRow(SQLModel, table=True):
     """The note, or the reason of a skip or refusal."""
     data: str
     """The inputs as JSON."""
+    flags: str = "[]"
+    """JSON list of what was seen and could not be judged, for the reviewer's eye."""
     seq: int
 
 
@@ -120,6 +122,7 @@ def apply_step_done(known: Known, at: At, fact: StepDone) -> Iterator[Change]:
     inputs = {name: item.model_dump(mode="json") for name, item in fact.inputs.items()}
     row = _row(at, fact, "done", fact.done_by, fact.observed_at, fact.note)
     row["data"] = json.dumps(inputs, ensure_ascii=False)
+    row["flags"] = json.dumps(fact.flags, ensure_ascii=False)
     yield Put("step", row)
     yield from move(known, have(known, "point", fact.point), step.reaches)
     yield from count_for_sharers(known, row, fact.done_by)
@@ -229,5 +232,6 @@ def _row(
         "uptime_ms": at.uptime_ms,
         "note": note,
         "data": "{}",
+        "flags": "[]",
         "seq": at.seq,
     }

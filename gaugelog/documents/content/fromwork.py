@@ -53,6 +53,7 @@ def _step(view: View, number: int, step: RouteStep, label: str, row: StepRow | N
             "observed_at": row.observed_at,
             "entered_at": row.entered_at,
             "note": row.note,
+            "flags": json.loads(row.flags),
             "inputs": tuple(_inputs(view, step, row)),
         }
     )

@@ -42,6 +42,8 @@ class StepShown(Shown):
     note: str = ""
     """The note, or the reason of a skip or refusal."""
     inputs: tuple[InputShown, ...] = ()
+    flags: tuple[str, ...] = ()
+    """What the program saw and could not judge, for the reviewer's eye."""
 
 
 class AmendsShown(Shown):
