@@ -17,7 +17,7 @@ from gaugelog.errors import Fault, Faulty
 if TYPE_CHECKING:
     from gaugelog.rules.progress import NextStep
 
-group = typer.Typer(help="Steps: what comes next, do it, walk on, go back, skip.")
+group = typer.Typer(help="Steps: what comes next, do it, walk on, go back, skip, note.")
 group.command()(walk)
 
 Point = Annotated[str, typer.Argument(help="Label of the point.")]
@@ -135,6 +135,22 @@ def redo(
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd))
     say(*steps.redo(logbook, signer, point=point, step=step, reason=reason).lines)
+
+
+@group.command()
+def note(
+    ctx: typer.Context,
+    point: Point,
+    text: Annotated[str, typer.Argument(help="What was found, or why the step stays open.")],
+    as_: As = "",
+    secret_fd: SecretFd = None,
+) -> None:
+    """Leave a note at the open step; it is told there until the step is done, and in the record."""
+    from gaugelog.work.noting import leave_note
+
+    logbook = open_logbook(ctx)
+    signer = unlock(logbook, as_, Secrets(secret_fd))
+    say(*leave_note(logbook, signer, point=point, note=text).lines)
 
 
 @group.command()

@@ -38,6 +38,7 @@ _MOODS = {
     "gauge replaced": "doubt",
     "withdrawn": "doubt",
     "step reopened": "doubt",
+    "note left": "doubt",
 }
 
 

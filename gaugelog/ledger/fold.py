@@ -22,6 +22,7 @@ from gaugelog.ledger import (
     circuits,
     dispositions,
     instruments,
+    notes,
     papers,
     people,
     photos,
@@ -73,6 +74,7 @@ _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
         (shiftchecks.MeterChecked, shiftchecks.apply_meter_checked),
         (papers.CertificateKept, papers.apply_certificate_kept),
         (photos.PhotoKept, photos.apply_photo_kept),
+        (notes.NoteLeft, notes.apply_note_left),
         (standing.StandingSet, standing.apply_standing_set),
         (restored.LogbookRestored, restored.apply_logbook_restored),
     )

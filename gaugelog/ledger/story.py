@@ -24,6 +24,7 @@ Turn = Literal[
     "change seen",
     "gauge replaced",
     "withdrawn",
+    "note left",
 ]
 
 

@@ -13,14 +13,18 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.windows import local_text, time_of
 
 _OF_THE_RECORD = {"returned": "Returned", "amendment": "Taken up again"}
-_AT_A_STEP = {"hold refused": "Hold refused", "step reopened": "To be done again"}
+_AT_A_STEP = {
+    "hold refused": "Hold refused",
+    "step reopened": "To be done again",
+    "note left": "Note",
+}
 _SETTLES = frozenset({"submitted", "accepted", "withdrawn"})
 
 
 def sent_back(view: View, point: PointRow, now: Moment) -> Iterator[str]:
     """Each reason that is not dealt with, the oldest first: what, who, when, why.
 
-    A refused hold, or a step to be done again, is dealt with when that step is settled since;
+    A refused hold, a step to be done again and a note are dealt with when that step is settled;
     all of them when the point is submitted anew.
     """
     turns = view.all(StoryRow, point=point.id)
@@ -43,4 +47,4 @@ def _what(view: View, turn: StoryRow) -> str:
 
 def _settled_since(view: View, turn: StoryRow) -> bool:
     rows = view.all(StepRow, point=turn.point, step=turn.step)
-    return all(row.outcome in SETTLED and row.seq > turn.seq for row in rows)
+    return bool(rows) and all(row.outcome in SETTLED and row.seq > turn.seq for row in rows)

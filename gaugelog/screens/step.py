@@ -26,7 +26,7 @@ from gaugelog.screens.rail import Rail
 from gaugelog.screens.room import Room, show
 from gaugelog.screens.step_keys import cautions_wait, working_keys
 from gaugelog.screens.submit import SubmitDialog
-from gaugelog.screens.walk import RedoDialog, SkipDialog
+from gaugelog.screens.walk import NoteDialog, RedoDialog, SkipDialog
 from gaugelog.screens.words import BAD, CALM, WAIT, Words, lines, plain
 from gaugelog.work import looking, steps
 from gaugelog.work.doing import StepOutcome
@@ -44,6 +44,7 @@ class StepScreen(Room):
         Binding("f6", "pins", "Find the cause"),
         Binding("f7", "redo", "Earlier step"),
         Binding("f9", "skip", "Skip"),
+        Binding("ctrl+l", "leave", "Leave a note"),
         Binding("ctrl+n", "add('note')", "Note", show=False),
         Binding("ctrl+o", "add('when')", "Observed at", show=False),
         Binding("up,shift+tab", "app.focus_previous", "Up", show=False),
@@ -298,6 +299,17 @@ class StepScreen(Room):
         """Go back to an earlier step."""
         if self.hand is not None:
             self.full.push_screen(RedoDialog(self.point, self.hand.route), self._decided)
+
+    def action_leave(self) -> None:
+        """Leave the step as it is, with a note for whoever takes it up."""
+        if self.hand is not None:
+            self._keep_draft()
+            self.full.push_screen(NoteDialog(self.hand.next), self._noted)
+
+    def _noted(self, outcome: StepOutcome | None) -> None:
+        if outcome is not None:
+            self.tell(text.outcome_text(outcome))
+            self.facts_changed()
 
     def action_skip(self) -> None:
         """Skip the step, with a reason."""

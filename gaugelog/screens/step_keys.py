@@ -27,6 +27,11 @@ def working_keys(found: NextStep, waiting: bool) -> dict[str, bool]:
         "hold": free and hold,
         "submit": step is None and found.title != "none" and not found.blocks,
         "pins": found.again and step is not None and step.subject in {"grid", "circuit"},
-        "redo": found.state not in _AT_REST,
+        "leave": step is not None and (found.again or bool(found.blocks)) and _in_work(found),
+        "redo": _in_work(found),
         "skip": skippable and not found.forbidden,
     }
+
+
+def _in_work(found: NextStep) -> bool:
+    return found.state not in _AT_REST

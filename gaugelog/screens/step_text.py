@@ -97,7 +97,8 @@ def facts_text(facts: Sequence[str]) -> Content:
 def holding_text(found: NextStep) -> Content:
     """What blocks the step, and what runs."""
     shut = {window.sentence for window in found.windows if not window.open}
-    told = [
+    told = [plain(f"← {reason}", f"bold {BAD}") for reason in found.sent_back]
+    told += [
         plain(f"◷ {window.sentence}", WAIT if not window.open else "") for window in found.windows
     ]
     told += [plain(f"! {block}", BAD) for block in found.blocks if block not in shut]

@@ -14,6 +14,7 @@ from gaugelog.screens.words import CALM, lines, plain
 from gaugelog.work import steps
 from gaugelog.work.doing import StepOutcome
 from gaugelog.work.looking import StepWalked
+from gaugelog.work.noting import leave_note
 
 
 class RedoDialog(Dialog[StepOutcome]):
@@ -46,6 +47,31 @@ class RedoDialog(Dialog[StepOutcome]):
         return steps.redo(
             desk.logbook, desk.signer, point=self._point, step=wanted.id, reason=given["reason"]
         )
+
+
+class NoteDialog(Dialog[StepOutcome]):
+    """Asks what is to be known of a step that stays open."""
+
+    heading = "Leave the step open, with a note"
+    doing = "Keeping it"
+
+    def __init__(self, found: NextStep) -> None:
+        super().__init__()
+        self._found = found
+
+    def explained(self) -> Content:
+        """Which step, and where the note is told."""
+        note = plain("It is told here until the step is done, and stands in the record.", CALM)
+        return lines(plain(f"{self._found.point}: {self._found.title}", "bold"), note)
+
+    def questions(self) -> tuple[Question, ...]:
+        """The note."""
+        return (Question("note", "Note"),)
+
+    def answer(self, given: dict[str, str]) -> StepOutcome:
+        """Keep it."""
+        desk = self.full.desk
+        return leave_note(desk.logbook, desk.signer, point=self._found.point, note=given["note"])
 
 
 class SkipDialog(Dialog[StepOutcome]):

@@ -247,6 +247,8 @@ def _held(each: Listed) -> tuple[str, str]:
         return f"◷ {_short(shut[0])}", WAIT
     if found.blocks:
         return f"! {found.blocks[0]}", BAD if found.step is not None else CALM
+    if found.sent_back:
+        return f"← {found.sent_back[-1]}", BAD
     running = [window.sentence for window in found.windows if "left" in window.sentence]
     if running:
         return f"◷ {_short(running[0])}", WAIT
@@ -260,7 +262,8 @@ def _short(sentence: str) -> str:
 
 def _more(each: Listed) -> Content:
     found = each.next
-    told = [plain(window.sentence, "" if window.open else WAIT) for window in found.windows]
+    told = [plain(f"← {reason}", BAD) for reason in found.sent_back]
+    told += [plain(window.sentence, "" if window.open else WAIT) for window in found.windows]
     told += [plain(f"! {block}", BAD) for block in found.forbidden if found.step is not None]
     yours = f"You may {WANTED[each.wanted]}: Enter." if each.wanted else ""
     return lines(

@@ -82,6 +82,7 @@ _TELL: dict[str, Callable[[Fact], str]] = {
     "step.done": lambda fact: str(fact["step"]),
     "step.skipped": lambda fact: f"{fact['step']}, {fact['reason']}",
     "step.reopened": lambda fact: f"from {fact['step']}, {fact['reason']}",
+    "note.left": lambda fact: f"{fact['step']}, {fact['note']}",
     "hold.decided": lambda fact: f"{fact['step']} {fact['outcome']}",
     "reading.taken": _reading,
     "logbook.restored": lambda fact: f"from a backup at {fact['head']}, {fact['reason']}",

@@ -52,6 +52,21 @@ def test_a_resistance_that_is_none_is_told(at: At) -> None:
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
+def test_a_failed_check_is_left_with_a_note_for_whoever_takes_it_up(at: At) -> None:
+    async def play(seen: Seen) -> None:
+        await _failed(seen)
+        assert "^l Leave a note" in seen.lines()[-1]
+        await seen.keys("ctrl+l")
+        await seen.type("damp under the tab")
+        assert "stays open, with a note." in seen.text()
+        assert "damp under the tab" in seen.text()
+        await seen.keys("escape")
+        assert "damp under the tab" in seen.text()
+
+    job = at(9)
+    run_screen(job.book, job.folder, play, size=LARGE)
+
+
 def test_without_a_failed_check_the_key_is_not_there(at: At) -> None:
     async def play(seen: Seen) -> None:
         await seen.sign_on()
