@@ -2,19 +2,21 @@
 
 from __future__ import annotations
 
+from contextlib import suppress
 from pathlib import Path
 from typing import TYPE_CHECKING, Annotated
 
 import typer
 
+from gaugelog.commands.outputs import write_out
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
-from gaugelog.commands.talk import as_json, put_json, put_table, say
+from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 
 if TYPE_CHECKING:
     from gaugelog.ledger.photos import PhotoKept
 
-group = typer.Typer(help="Photos: keep them as evidence of a point, list them.")
+group = typer.Typer(help="Photos: keep them as evidence of a point, list them, write out copies.")
 
 Point = Annotated[str, typer.Argument(help="Label of the point.")]
 
@@ -43,6 +45,38 @@ def add(
     signer = unlock(logbook, as_, Secrets(secret_fd))
     kept = photos.add(logbook, signer, pictures, point=point, step=step, note=note, at=at)
     say(*(f"{point}: {_told(each)} is kept; SHA-256 {each.file}" for each in kept))
+
+
+@group.command()
+def export(
+    ctx: typer.Context,
+    point: Point,
+    folder: Annotated[Path, typer.Argument(help="Where to; it is made where it is not there.")],
+    originals: Annotated[
+        bool,
+        typer.Option("--originals", help="The files as given, with the camera's data."),
+    ] = False,
+) -> None:
+    """Write a point's photos out, as a client may have them: smaller, without the camera's data.
+
+    The paths go to stdout.
+    """
+    from gaugelog.documents.pictures import client_copy
+    from gaugelog.work import photos
+
+    logbook = open_logbook(ctx)
+    found = [fact for _, fact in photos.kept(logbook, point)]
+    with suppress(OSError):  # what can't be written is told of the file
+        folder.mkdir(parents=True, exist_ok=True)
+    for number, fact in enumerate(found, start=1):
+        data = logbook.evidence.get(fact.file)
+        ending = _ENDINGS[fact.format] if originals else "jpg"
+        target = folder / f"{point}-photo-{number}.{ending}"
+        write_out(target, data if originals else client_copy(fact.name, data))
+        put(str(target))
+
+
+_ENDINGS = {"JPEG": "jpg", "PNG": "png", "WEBP": "webp", "TIFF": "tif"}
 
 
 @group.command("list")

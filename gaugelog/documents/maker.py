@@ -11,8 +11,7 @@ from gaugelog.documents.pictures import client_copy
 from gaugelog.documents.render import Drawing, render_record
 from gaugelog.documents.sign import sign_first, sign_second
 from gaugelog.errors import StorageTrouble
-from gaugelog.journal.entry import sha256
-from gaugelog.journal.evidence import Evidence
+from gaugelog.journal.evidence import Evidence, MemoryEvidence
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.campaign import Paper
 from gaugelog.rules.pages import paper_of
@@ -55,11 +54,9 @@ class PdfRecordMaker:
 
 
 def _copy(photo: PhotoShown, evidence: Evidence | None) -> bytes:
-    """What the page shows of a photo. Raises StorageTrouble when its file is not as it was kept."""
-    data = evidence.get(photo.sha256) if evidence is not None else b""
-    if sha256(data) != photo.sha256:
-        raise StorageTrouble(
-            f"The photo {photo.name} is not the file that was kept ({photo.sha256}).",
-            "Restore it from a backup; `gaugelog journal check` names what else is missing.",
-        )
+    """What the page shows of a photo. Raises StorageTrouble when its file is gone or altered."""
+    try:
+        data = (evidence or MemoryEvidence()).get(photo.sha256)
+    except StorageTrouble as error:
+        raise StorageTrouble(f"The photo {photo.name}: {error.message}", error.remedy) from error
     return client_copy(photo.name, data)

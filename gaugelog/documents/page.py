@@ -88,7 +88,7 @@ def plain_environment(lettering: Lettering) -> Environment:
     )
     made.filters.update(
         q=wording.quantity,
-        tidy=wording.tidy,
+        brief=wording.brief,
         judged=wording.judged,
         expanded=wording.expanded,
         probability=wording.probability,

@@ -15,6 +15,7 @@ from gaugelog.rules.digits import probability_text
 _MINUS = "−"
 _THIN = "\u202f"
 _DIGITS = 5
+_BRIEF = 3
 
 
 def number(text: str) -> str:
@@ -65,6 +66,16 @@ def tidy(value: Quantity | None) -> Quantity | None:
     if value is None or len(value.value.strip("+-0.").replace(".", "")) <= _DIGITS:
         return value
     return Quantity(value=rounded(value.value, _DIGITS), unit=value.unit)
+
+
+def brief(value: Quantity) -> str:
+    """A worked-out quantity to three significant digits, as a bound is read.
+
+    The attached data keeps every digit that decided.
+    """
+    if len(value.value.strip("+-0.").replace(".", "")) <= _BRIEF:
+        return quantity(value)
+    return quantity(Quantity(value=rounded(value.value, _BRIEF), unit=value.unit))
 
 
 def expanded(reading: ReadingShown) -> str:

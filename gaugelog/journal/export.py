@@ -31,15 +31,15 @@ def export(
 
     An entry is `chain-<id>/000012.header.json`, `.body.json` and, at the end of a deed, `.sig`,
     each the exact bytes that were hashed or signed. Evidence files whose digests are `left_out`
-    are not written, and the guide says so. `READ ME.txt` tells how to check them with
-    openssl and sha256sum only. Raises StorageTrouble when the folder holds files or can't be
-    written.
+    are not written, and the guide says so; nor are files that no entry names. `READ ME.txt` tells
+    how to check them with openssl and sha256sum only. Raises StorageTrouble when the folder holds
+    files or can't be written.
     """
     try:
         _demand_empty(folder)
         count = _write_entries(reader, folder, progress)
         _write_certificates(certificates_of(reader), folder)
-        _write_evidence(evidence, folder, left_out)
+        _write_evidence(evidence, folder, _named(reader) - set(left_out))
         (folder / "READ ME.txt").write_text(guide(_heads(reader), len(left_out)), encoding="utf-8")
     except OSError as error:
         raise StorageTrouble(
@@ -93,11 +93,17 @@ def _write_certificates(certificates: Certificates, folder: Path) -> None:
         (place / f"{issued.fingerprint}.pub.pem").write_bytes(public)
 
 
-def _write_evidence(evidence: Evidence, folder: Path, left_out: Collection[str]) -> None:
+def _named(reader: Reader) -> set[str]:
+    """The digests of every file that an entry names."""
+    bodies = (entry.body for entry in reader.entries() if entry.body_bytes is not None)
+    return {digest for body in bodies for digest in body.evidence}
+
+
+def _write_evidence(evidence: Evidence, folder: Path, wanted: Collection[str]) -> None:
     place = folder / "evidence"
     place.mkdir()
     for digest in evidence.digests():
-        if digest in left_out:
+        if digest not in wanted:
             continue
         (place / digest).write_bytes(evidence.as_it_lies(digest))
 

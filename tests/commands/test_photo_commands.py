@@ -9,7 +9,7 @@ import pytest
 
 from gaugelog.journal.entry import sha256
 from tests.commands.conftest import PASSPHRASE, Command, Outcome
-from tests.pictures import camera_jpeg, camera_png
+from tests.pictures import SECRETS, camera_jpeg, camera_png
 
 
 @pytest.fixture
@@ -57,6 +57,22 @@ def test_photos_are_added_listed_and_drawn(demo: Path, act: Command, command: Co
     assert "photo.kept: IMG_2.png, 640 × 480 pixels" in command("journal", "show", point).out
 
 
+def test_photos_are_written_out_for_a_client_without_the_cameras_data(
+    demo: Path, act: Command, command: Command
+) -> None:
+    point = open_point(act, command)
+    (demo / "IMG_2.png").write_bytes(camera_png())
+    assert 0 == act("photo", "add", point, str(demo / "IMG_2.png")).code
+    told = command("photo", "export", point, str(demo / "out"))
+    copies = [Path(line) for line in told.out.split()]
+    assert (0, f"{point}-photo-1.jpg") == (told.code, copies[-1].name.replace("-2.", "-1."))
+    assert copies[-1].read_bytes().startswith(b"\xff\xd8")
+    assert not any(secret in path.read_bytes() for path in copies for secret in SECRETS)
+    told = command("photo", "export", point, str(demo / "whole"), "--originals")
+    assert camera_png() == Path(told.out.split()[-1]).read_bytes()
+    assert 6 == command("photo", "export", point, str(demo / "IMG_2.png" / "out")).code
+
+
 def test_every_file_that_is_no_photo_is_told_and_none_is_kept(
     demo: Path, act: Command, command: Command
 ) -> None:
@@ -91,7 +107,7 @@ def test_a_record_whose_photo_is_gone_is_not_drawn(
     told = command("record", point, "--draft", "--out", str(demo / "draft.pdf"))
     assert (6, True) == (
         told.code,
-        f"IMG_1.jpg is not the file that was kept ({digest})" in told.err,
+        f"The photo IMG_1.jpg: The file {digest} was altered" in told.err,
     )
     place.unlink()
     assert 6 == command("record", point, "--draft", "--out", str(demo / "draft.pdf")).code

@@ -37,12 +37,14 @@ def test_every_entry_is_written_byte_for_byte(journal: SampleJournal, tmp_path: 
 def test_certificates_evidence_and_the_guide_are_there(
     journal: SampleJournal, tmp_path: Path
 ) -> None:
-    digest = journal.evidence.put(b"a drawing")
+    digest, stray = journal.evidence.put(b"a drawing"), journal.evidence.put(b"named by nothing")
+    journal.keep(note(evidence=(digest,)))
     exported(journal, tmp_path)
     names = {path.name for path in (tmp_path / "certificates").iterdir()}
     prints = (signer().fingerprint, signer("technician").fingerprint)
     assert {f"{one}.{end}" for one in prints for end in ("pem", "pub.pem")} == names
     assert b"a drawing" == (tmp_path / "evidence" / digest).read_bytes()
+    assert not (tmp_path / "evidence" / stray).exists()
     assert "BEGIN CERTIFICATE" in (tmp_path / "authority.pem").read_text()
     assert journal.entries()[-1].head.printed in (tmp_path / "READ ME.txt").read_text()
     assert authority().certificate
