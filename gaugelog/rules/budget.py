@@ -73,7 +73,10 @@ class _Known:
 
 
 def point_budget(view: View, row: PointRow) -> PointBudget | None:
-    """The budget of the point's first grid in its circuit; None while no gauge is in place."""
+    """The budget of the point's first grid in its circuit.
+
+    None while no gauge is in place, and for a dummy, which feels no strain.
+    """
     known = _known(view, row)
     if known is None:
         return None
@@ -96,6 +99,8 @@ def _known(view: View, row: PointRow) -> _Known | None:
     if not grids or not row.gauge or lot is None or campaign is None:
         return None
     point = PointPlanned.model_validate_json(row.data)
+    if point.dummy:
+        return None
     articles = CampaignPlanned.model_validate_json(campaign.data).articles
     article = next((each for each in articles if each.id == point.article), None)
     planned = planned_circuit(view, grids[0].circuit)

@@ -142,6 +142,10 @@ def test_a_record_says_what_warmth_does_to_its_circuit(point: str, value: str, w
     assert [value] == said
 
 
+def test_a_dummys_record_says_nothing_of_a_strain(whole: Path) -> None:
+    assert _data(whole / "records" / "FB-5-r1.pdf")["budget"] is None
+
+
 def test_only_a_gauge_that_was_given_up_is_said_to_be_gone(whole: Path) -> None:
     gone = {
         record.name: {each["earlier_gauge"] for each in _data(record)["readings"]} - {""}
