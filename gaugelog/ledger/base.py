@@ -23,9 +23,12 @@ DateText = Annotated[str, StringConstraints(pattern=r"^\d{4}-\d\d-\d\d$")]
 
 
 class Part(BaseModel):
-    """A part of a fact. Frozen; fields a newer program wrote are kept."""
+    """A part of a fact. Frozen; fields a newer program wrote are kept.
 
-    model_config = ConfigDict(frozen=True, extra="allow")
+    What validates it is built when it is first needed: a command needs a few of many kinds.
+    """
+
+    model_config = ConfigDict(frozen=True, extra="allow", defer_build=True)
 
 
 class FactBody(Part):
