@@ -20,6 +20,8 @@ def main() -> None:
     """Run the command line on the process's arguments and exit with its code."""
     # Starting makes many objects and next to no garbage; a search for it now and then is enough.
     gc.set_threshold(_SELDOM)
+    # We have no plugins for validation, and looking for some in every package takes long.
+    os.environ.setdefault("PYDANTIC_DISABLE_PLUGINS", "__all__")
     code = run(sys.argv[1:])
     _drop_what_is_stuck()
     sys.exit(code)
@@ -64,7 +66,8 @@ def _run(arguments: Sequence[str]) -> int:
     from gaugelog.errors import ExitCode
 
     try:
-        code = application()(args=list(arguments), prog_name="gaugelog", standalone_mode=False)
+        typed = list(arguments)
+        code = application(typed)(args=typed, prog_name="gaugelog", standalone_mode=False)
     except TyperException as error:
         tell_usage(error)
         return int(ExitCode.USAGE)

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+import os
+from collections.abc import Callable, Collection
+from inspect import getdoc
 from pathlib import Path
 from typing import Annotated
 
@@ -46,8 +48,13 @@ _PANELS = {
 }
 
 
-def application() -> typer.Typer:
-    """The whole command line as one Typer application."""
+def application(words: Collection[str] | None = None) -> typer.Typer:
+    """The command line as one Typer application.
+
+    With the `words` of a command line, only commands among them are there in full, of the others
+    name and help: looking at the options of all of them takes most of the time to start.
+    """
+    asked = None if words is None or _completing() else frozenset(words)
     app = typer.Typer(
         name="gaugelog",
         help=_HELP,
@@ -57,16 +64,21 @@ def application() -> typer.Typer:
         context_settings={"help_option_names": ["-h", "--help"]},
     )
     app.callback()(_root)
-    app.command("start", rich_help_panel=SET_UP)(start.start)
     for name, group in _GROUPS.items():
-        app.add_typer(group, name=name, rich_help_panel=_PANELS[name])
-    for name, command in _AT_WORK.items():
-        app.command(name, rich_help_panel=WORK)(command)
-    for command in (calc.calc, doctor.doctor, demo.demo):
-        app.command(command.__name__, rich_help_panel=LOOK)(command)
-    for command in (backup.backup, backup.restore):
-        app.command(command.__name__, rich_help_panel=SET_UP)(command)
+        whole = group if asked is None or name in asked else typer.Typer(help=group.info.help)
+        app.add_typer(whole, name=name, rich_help_panel=_PANELS[name])
+    for name, (panel, command) in _COMMANDS.items():
+        called = command if asked is None or name in asked else _not_called
+        app.command(name, rich_help_panel=panel, help=getdoc(command))(called)
     return app
+
+
+def _not_called() -> None:
+    """Stand in for a command that the words don't name."""
+
+
+def _completing() -> bool:
+    return "_GAUGELOG_COMPLETE" in os.environ
 
 
 _GROUPS: dict[str, typer.Typer] = {
@@ -79,17 +91,23 @@ _GROUPS: dict[str, typer.Typer] = {
     "photo": photo.group,
     "journal": journal.group,
 }
-_AT_WORK: dict[str, Callable[..., None]] = {
-    "install": screen.install,
-    "review": screen.review,
-    "diagnose": diagnose.diagnose,
-    "submit": review.submit,
-    "accept": review.accept,
-    "return": review.give_back,
-    "amend": review.amend,
-    "replace": disposition.replace,
-    "withdraw": disposition.withdraw,
-    "record": record.record,
+_COMMANDS: dict[str, tuple[str, Callable[..., None]]] = {
+    "start": (SET_UP, start.start),
+    "backup": (SET_UP, backup.backup),
+    "restore": (SET_UP, backup.restore),
+    "install": (WORK, screen.install),
+    "review": (WORK, screen.review),
+    "diagnose": (WORK, diagnose.diagnose),
+    "submit": (WORK, review.submit),
+    "accept": (WORK, review.accept),
+    "return": (WORK, review.give_back),
+    "amend": (WORK, review.amend),
+    "replace": (WORK, disposition.replace),
+    "withdraw": (WORK, disposition.withdraw),
+    "record": (WORK, record.record),
+    "calc": (LOOK, calc.calc),
+    "doctor": (LOOK, doctor.doctor),
+    "demo": (LOOK, demo.demo),
 }
 
 

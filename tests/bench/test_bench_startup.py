@@ -72,7 +72,7 @@ def a_command(name: str = typer.Argument(help="A name."), loud: bool = typer.Opt
     Console().print(name)
 
 
-for number in range(12):
+for number in range(24):
     app.command(f"command-{number}")(a_command)
 app()
 '''
