@@ -15,6 +15,7 @@ from gaugelog.ledger.routes import (
     AXIS,
     BOND_LINE,
     HUMIDITY,
+    MIXED,
     PLACE_X,
     PLACE_Y,
     SURFACE,
@@ -33,7 +34,7 @@ LONG = 4000
 _TIMES = ("s", "min", "h", "d")
 _Bound = Literal["not before", "within"]
 _TYPES: dict[str, tuple[str, ...]] = {
-    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE, PLACE_X, PLACE_Y, AXIS),
+    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE, MIXED, PLACE_X, PLACE_Y, AXIS),
     "consumable": get_args(ConsumableKind),
     "instrument": tuple(QUANTITY_UNITS),
 }
@@ -143,6 +144,8 @@ def _check_type(item: Fields, found: StepInput) -> None:
         item.fault("type", "is missing.", f"Kinds: {', '.join(types)}.")
     elif found.type and not types:
         item.fault("type", "belongs to a consumable, an instrument or a quantity only.")
+    elif found.type == MIXED and found.unit not in _TIMES:
+        item.fault("unit", "is no unit of time.", f"Units: {', '.join(_TIMES)}.")
     elif found.type and found.type not in types:
         item.fault("type", f"“{found.type[:40]}” is not one of {', '.join(types)}.")
 

@@ -21,6 +21,9 @@ SkipRule = Literal["never", "planner", "with reason"]
 BOND_LINE = "bond-line temperature"
 """What a quantity stands for from which a cure time is taken."""
 
+MIXED = "time since mixing"
+"""What a quantity stands for that is held against a lot's pot life."""
+
 PLACE_X, PLACE_Y, AXIS = "position x", "position y", "axis direction"
 """What a quantity stands for that is held against the planned place."""
 

@@ -15,6 +15,7 @@ from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, 
 from gaugelog.rules.air import air_troubles
 from gaugelog.rules.expected import short_of_expected
 from gaugelog.rules.facts import plan_facts
+from gaugelog.rules.mixed import mixed_troubles, unmixed_flags
 from gaugelog.rules.order import order_flag
 from gaugelog.rules.piece import demand_one_piece
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
@@ -194,6 +195,7 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
     demand_qualified(view, doing.making.signer.person, doing.step, doing.day)
     got = understand(Asked(view, row, doing.step, doing.day, doing.observed), typed)
     _demand_air(doing, got)
+    _demand_pot_life(doing, got)
     _demand_place(doing, got)
     demand_one_piece(view, row, doing.step, doing.found.subject, got.entered)
     readings = _readings(doing, got, reason)
@@ -216,6 +218,15 @@ def _demand_air(doing: Doing, got: Understood) -> None:
             f"{doing.row.label}: “{doing.step.title}” can't be done in this air: "
             f"{' '.join(troubles)}",
             "Warm the surface, dry the air or wait; then measure again.",
+        )
+
+
+def _demand_pot_life(doing: Doing, got: Understood) -> None:
+    troubles = mixed_troubles(doing.step, got.quantities, got.consumables)
+    if troubles:
+        title = doing.step.title
+        raise Refused(
+            f"{doing.row.label}: “{title}” can't be done: {' '.join(troubles)}", "Mix afresh."
         )
 
 
@@ -305,6 +316,7 @@ def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note
     flags = [window.sentence for window in doing.found.windows if not window.judged]
     flags += [doing.order] if doing.order else []
     flags += _axis_flag(doing, got)
+    flags += unmixed_flags(doing.step, got.quantities, got.consumables)
     flags += lapsed_flags(doing.making.view, doing.making.signer.person, doing.day)
     flags += [
         f"{reading.check} {reading.stage}: {reading.verdict.word}"

@@ -46,7 +46,7 @@ WALK: tuple[tuple[str, dict[str, str]], ...] = (
     ("t.okoro", {"solder": "SO-17", "flux-removed": "yes"}),
     ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": ">20 GΩ"}),
     ("q.reyes", {}),
-    ("t.okoro", {"coating": "CT-088"}),
+    ("t.okoro", {"coating": "CT-088", "mixed": "15 min"}),
     ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "18 GΩ"}),
     ("t.okoro", {"meter": "RM-2", "loop": "1.98 ohm"}),
     ("t.okoro", {"module": "QB-1", "zero": "0.36 mV/V"}),
