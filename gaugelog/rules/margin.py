@@ -15,8 +15,8 @@ _DIGITS = 3
 class Margin:
     """The distance to the nearest limit; below zero when it lies beyond.
 
-    `amount` is in the unit of the limit, `share` the same as a part of that limit; none where
-    the limit is zero.
+    `amount` is in the unit of the limit. `share` is the same as a part of the room that the limits
+    leave: half the band between two limits, else the limit itself; none where that is zero.
     """
 
     amount: Quantity
@@ -31,15 +31,19 @@ def margin_of(reading: ReadingTaken) -> Margin | None:
     judged = reading.result or reading.value
     if judged is None:
         return None
-    found = [
-        (side * (judged.si() - limit.si()), limit)
-        for ruling in reading.limits
-        if ruling.rules
-        for side, limit in ((1, ruling.at_least), (-1, ruling.at_most))
-        if limit is not None
-    ]
+    rules = [limit for limit in reading.limits if limit.rules]
+    lows = [limit.at_least for limit in rules if limit.at_least is not None]
+    highs = [limit.at_most for limit in rules if limit.at_most is not None]
+    found = [(judged.si() - low.si(), low) for low in lows]
+    found += [(high.si() - judged.si(), high) for high in highs]
     if not found:
         return None
     distance, limit = min(found, key=lambda each: each[0])
-    bound = abs(limit.si())
-    return Margin(quantity(distance, limit.unit, _DIGITS), distance / bound if bound else None)
+    room = _room(lows, highs, limit)
+    return Margin(quantity(distance, limit.unit, _DIGITS), distance / room if room else None)
+
+
+def _room(lows: list[Quantity], highs: list[Quantity], nearest: Quantity) -> float:
+    if lows and highs:
+        return (min(high.si() for high in highs) - max(low.si() for low in lows)) / 2
+    return abs(nearest.si())

@@ -15,17 +15,24 @@ from gaugelog.errors import GaugelogError
 from gaugelog.screens.desk import Desk, Seat
 from gaugelog.screens.dialog import Dialog
 from gaugelog.screens.drafts import Drafts
+from gaugelog.screens.evidence import EvidenceScreen
+from gaugelog.screens.plan import PlanScreen
 from gaugelog.screens.review import ReviewScreen
-from gaugelog.screens.room import Room
+from gaugelog.screens.room import Room, look_keys
 from gaugelog.screens.sign_on import SignOn
 from gaugelog.screens.step import StepScreen
+from gaugelog.screens.stock import StockScreen
 from gaugelog.screens.themes import THEMES, first_theme, next_theme
+from gaugelog.screens.wiring import WiringScreen
 from gaugelog.screens.worklist import WorklistScreen
 
 PLACES: dict[str, Callable[[str], Room]] = {
     "worklist": lambda _point: WorklistScreen(),
     "step": StepScreen,
-    "review": ReviewScreen,
+    "review": lambda point: EvidenceScreen(point) if point else ReviewScreen(),
+    "wiring": lambda _point: WiringScreen(),
+    "stock": lambda _point: StockScreen(),
+    "plan": lambda _point: PlanScreen(),
 }
 """Where one can go, and how the screen there is made for a point (empty: none in particular)."""
 
@@ -33,6 +40,9 @@ _SCREENS: dict[str, type[Room]] = {
     "worklist": WorklistScreen,
     "step": StepScreen,
     "review": ReviewScreen,
+    "wiring": WiringScreen,
+    "stock": StockScreen,
+    "plan": PlanScreen,
 }
 
 TICK_SECONDS = 1.0
@@ -51,7 +61,7 @@ class FullScreen(App[None]):
     HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (110, "-wide")]  # noqa: RUF012 (as App has it)
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("f2", "go('worklist')", "Worklist"),
-        Binding("f3", "go('review')", "Review"),
+        *look_keys("go", show=False),
         Binding("f8", "hand_over", "Hand over", priority=True),
         Binding("ctrl+t", "next_look", "Look", show=False),
         Binding("ctrl+q,ctrl+c", "quit", "Leave", priority=True, show=False),

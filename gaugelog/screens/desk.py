@@ -11,6 +11,7 @@ from typing import TYPE_CHECKING
 from gaugelog.errors import KeyTrouble, Refused
 from gaugelog.journal.keys import KeyFolder, Signer
 from gaugelog.ledger.people import PersonRow
+from gaugelog.screens.viewer import Viewer
 from gaugelog.work.logbook import Logbook
 
 if TYPE_CHECKING:
@@ -47,6 +48,7 @@ class Desk:
     drafts: Path
     idle_seconds: float = IDLE_SECONDS
     ticks: Callable[[], float] = monotonic
+    viewer: Viewer = field(default_factory=Viewer)
     seat: Seat | None = None
     _touched: float = field(default=0.0, repr=False)
 

@@ -16,7 +16,7 @@ from textual.widgets import Input
 
 from gaugelog.errors import GaugelogError
 from gaugelog.screens.keys_line import KeysLine
-from gaugelog.screens.words import CALM, Words, plain, told
+from gaugelog.screens.words import CALM, Words, defect, plain, told
 
 if TYPE_CHECKING:
     from gaugelog.screens.app import FullScreen
@@ -74,9 +74,17 @@ class Dialog(ModalScreen[T | None], Generic[T]):
         """The fields, in order."""
         return ()
 
+    def listed(self) -> Content:
+        """What may be looked up while the fields are filled; it stands below them."""
+        return plain("")
+
     def answer(self, given: dict[str, str]) -> T:
         """Do the deed with what was given; on another thread. Raises GaugelogError."""
         raise NotImplementedError
+
+    def answered(self, result: T) -> None:
+        """The deed is done: close with what came of it."""
+        self.dismiss(result)
 
     def compose(self) -> ComposeResult:
         """Heading, explanation, fields, what went wrong."""
@@ -86,6 +94,8 @@ class Dialog(ModalScreen[T | None], Generic[T]):
             for question in self.questions():
                 yield from _field(question)
             yield Words(id="trouble")
+            if self.listed().plain:
+                yield Words(self.listed())
         yield KeysLine()
 
     def on_mount(self) -> None:
@@ -133,9 +143,11 @@ class Dialog(ModalScreen[T | None], Generic[T]):
             try:
                 result = self.answer(given)
             except GaugelogError as error:
-                self._finish(lambda error=error: self._refused(error))  # type: ignore[misc]
+                self._finish(lambda error=error: self._refused(told(error)))  # type: ignore[misc]
+            except Exception as error:  # a defect: said plainly, and asked again
+                self._finish(lambda error=error: self._refused(defect(error)))  # type: ignore[misc]
             else:
-                self._finish(lambda: self.dismiss(result))
+                self._finish(lambda: self.answered(result))
 
         self.run_worker(work, thread=True, exit_on_error=False)
 
@@ -148,8 +160,8 @@ class Dialog(ModalScreen[T | None], Generic[T]):
         self._busy = False
         message.act()
 
-    def _refused(self, error: GaugelogError) -> None:
-        self.trouble(told(error))
+    def _refused(self, why: Content) -> None:
+        self.trouble(why)
         for field in self.query(Input):
             if field.password:
                 field.value = ""

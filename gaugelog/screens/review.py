@@ -1,47 +1,82 @@
-"""Review: the points whose records wait for a second person."""
+"""Review: the queue of points whose records wait for a second person."""
 
 from __future__ import annotations
 
 from collections.abc import Iterable
 
-from textual.widget import Widget
+from textual.content import Content
 
-from gaugelog.screens.room import Room
-from gaugelog.screens.words import Words, lines, plain
-from gaugelog.work import looking
+from gaugelog.screens.columns import Cell, Column
+from gaugelog.screens.listing import Listing, Row
+from gaugelog.screens.words import CALM, WAIT, lines, plain, state_word
+from gaugelog.work.reviewing import Waiting, waiting_for_review
+
+Queue = dict[str, Waiting]
 
 
-class ReviewScreen(Room):
-    """The queue of points under review; `point` is the one asked for, if any."""
+class ReviewScreen(Listing[Queue]):
+    """Points under review; Enter opens the evidence of one."""
 
-    def __init__(self, point: str = "") -> None:
-        super().__init__()
-        self.point = point
+    finds = "Find or scan a point"
+    columns = (
+        Column("point", least=6),
+        Column("zone", least=6),
+        Column("revision", number=True),
+        Column("signed by", least=10),
+        Column("waits since"),
+        Column("yours?", least=10),
+    )
 
     def title_text(self) -> str:
-        """The point, if one was asked for."""
-        return f"review {self.point}".strip()
+        """How many wait, and how many of them the person here may judge."""
+        if self.found is None:
+            return "review"
+        mine = sum(not each.bar for each in self.found.values())
+        return f"review: {len(self.found)} wait, {mine} for you"
 
-    def body(self) -> Iterable[Widget]:
-        """The queue."""
-        yield Words(id="queue")
+    def read(self, person: str) -> Queue:
+        """The points under review, by label."""
+        return {each.point: each for each in waiting_for_review(self.desk.logbook, person)}
 
-    def on_mount(self) -> None:
-        """Read the queue."""
-        self.facts_changed()
+    def rows(self, found: Queue) -> Iterable[Row]:
+        """Those for the person here first."""
+        for mine in (True, False):
+            for each in found.values():
+                if mine == (not each.bar):
+                    yield _row(each)
 
-    def facts_changed(self) -> None:
-        """Read again which points wait."""
-        seat = self.desk.seat
-        listed = looking.for_person(self.desk.logbook, seat.person if seat is not None else "")
-        waiting = [each for each in listed if each.next.state == "awaiting review"]
-        told = [
-            plain(
-                f"{each.next.point}, zone {each.next.zone}"
-                + ("" if each.wanted else ": not yours to review")
-            )
-            for each in waiting
-        ]
-        self.query_one("#queue", Words).say(
-            lines(*told) if told else plain("Nothing waits for review.")
+    def more(self, found: Queue, name: str, width: int) -> Content:
+        """Who signed, and whether the person here may judge it."""
+        each = found[name]
+        head = Content.assemble(
+            plain(f"{each.point}, zone {each.zone}: ", "bold"), state_word("awaiting review")
         )
+        yours = plain(f"✗ Not for you: {each.bar}", WAIT) if each.bar else plain("Enter: open it.")
+        return lines(head, plain(f"signed by {each.submitted_by}"), yours)
+
+    def nothing(self) -> str:
+        """The queue is empty."""
+        return "Nothing waits for review."
+
+    def chosen(self, name: str) -> None:
+        """Open its evidence."""
+        self.full.go("review", name)
+
+    def clicked(self, name: str) -> None:
+        """The same."""
+        self.chosen(name)
+
+
+def _row(each: Waiting) -> Row:
+    return Row(
+        each.point,
+        "Not for you" if each.bar else "For you",
+        (
+            Cell(each.point, "" if each.bar else "bold"),
+            Cell(each.zone),
+            Cell(str(each.revision)),
+            Cell(each.submitted_by),
+            Cell(each.submitted_at[:16].replace("T", " ")),
+            Cell("– not yours", CALM) if each.bar else Cell("▸ yes"),
+        ),
+    )

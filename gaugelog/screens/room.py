@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass
 from datetime import timedelta
 from typing import TYPE_CHECKING, Any, TypeVar, cast
 
 from textual.app import ComposeResult
+from textual.binding import Binding
 from textual.containers import Horizontal
 from textual.content import Content
 from textual.message import Message
@@ -16,7 +17,7 @@ from textual.widget import Widget
 
 from gaugelog.errors import GaugelogError
 from gaugelog.screens.keys_line import KeysLine
-from gaugelog.screens.words import BAD, CALM, WAIT, Words, plain, told
+from gaugelog.screens.words import CALM, WAIT, Words, defect, plain, told
 
 if TYPE_CHECKING:
     from gaugelog.screens.app import FullScreen
@@ -25,6 +26,17 @@ if TYPE_CHECKING:
 T = TypeVar("T")
 
 _WARN_SECONDS = 60.0
+
+
+def look_keys(action: str, *, show: bool = True) -> Iterator[Binding]:
+    """Keys that lead to the screens to look at; `action` is that of the program, `go`."""
+    for key, place, name in (
+        ("f3", "review", "Review"),
+        ("f4", "wiring", "Wiring"),
+        ("f10", "stock", "Stock"),
+        ("f12", "plan", "Plan"),
+    ):
+        yield Binding(key, f"{action}('{place}')", name, show=show)
 
 
 class Room(Screen[None]):
@@ -39,8 +51,15 @@ class Room(Screen[None]):
 
         act: Callable[[], None]
 
+    @dataclass
+    class Looked(Message):
+        """A look at what is kept has ended; `act` runs on the thread that draws."""
+
+        act: Callable[[], None]
+
     def __init__(self) -> None:
         super().__init__()
+        self._looking = False
         self.ready = False
         """Whether its widgets are there: until then nothing is drawn or changed."""
         self._doing = ""
@@ -158,6 +177,37 @@ class Room(Screen[None]):
 
         self.run_worker(work, thread=True, group="slow", exit_on_error=False)
 
+    def look_again(self, act: Callable[[], T], then: Callable[[T], None]) -> None:
+        """Look at what is kept, on another thread, and say nothing of it unless it fails.
+
+        The keys work meanwhile, and what was told stands. While one look runs none is begun.
+        """
+        if self._looking:
+            return
+        self._looking = True
+
+        def work() -> None:
+            try:
+                result = act()
+            except GaugelogError as error:
+                self._seen(lambda error=error: self.tell_error(error))  # type: ignore[misc]
+            except Exception as error:  # a defect: said plainly, the screen stays
+                self._seen(lambda error=error: self._tell_defect(error))  # type: ignore[misc]
+            else:
+                self._seen(lambda: then(result))
+
+        self.run_worker(work, thread=True, group="look", exit_on_error=False)
+
+    def _seen(self, act: Callable[[], None]) -> None:
+        self.post_message(self.Looked(act))
+
+    def on_room_looked(self, message: Room.Looked) -> None:
+        """A look has ended: show what was found."""
+        message.stop()
+        self._looking = False
+        if self.is_mounted:
+            message.act()
+
     def _finish(self, act: Callable[[], None]) -> None:
         self.post_message(self.Finished(act))
 
@@ -170,13 +220,7 @@ class Room(Screen[None]):
             message.act()
 
     def _tell_defect(self, error: Exception) -> None:
-        kind = type(error).__name__
-        self.tell(
-            plain(
-                f"✗ This is a defect of Gaugelog ({kind}: {error}); nothing half-done was stored.",
-                BAD,
-            )
-        )
+        self.tell(defect(error))
 
     def _draw_doing(self) -> None:
         if self._doing:

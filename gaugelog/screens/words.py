@@ -68,6 +68,12 @@ def told(error: GaugelogError) -> Content:
     return lines(sentence, plain(f"  {error.remedy}")) if error.remedy else sentence
 
 
+def defect(error: Exception) -> Content:
+    """What is said of an error that nobody foresaw; nothing of the deed was kept."""
+    text = f"This is a defect of Gaugelog ({type(error).__name__}: {error})"
+    return plain(f"✗ {text}; nothing half-done was stored.", BAD)
+
+
 class Words(Static):
     """A piece of text; a plain string in it is never read as markup."""
 

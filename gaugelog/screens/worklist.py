@@ -15,7 +15,7 @@ from textual.widget import Widget
 from textual.widgets import Input, OptionList
 from textual.widgets.option_list import Option
 
-from gaugelog.screens.room import Room
+from gaugelog.screens.room import Room, look_keys
 from gaugelog.screens.words import BAD, CALM, STATES, WAIT, Words, lines, plain, state_word
 from gaugelog.visible import visible
 from gaugelog.work import looking
@@ -40,7 +40,8 @@ class WorklistScreen(Room):
         Binding("down", "cursor(1)", "Down", show=False),
         Binding("pageup", "page(-1)", "Page up", show=False),
         Binding("pagedown", "page(1)", "Page down", show=False),
-        Binding("escape", "clear", "All points"),
+        Binding("escape", "clear", "All points", show=False),
+        *look_keys("app.go"),
     ]
 
     def __init__(self) -> None:

@@ -45,6 +45,22 @@ class PlannedPoint:
     """What plan revisions changed here since a reviewer last looked."""
 
 
+@dataclass(frozen=True, slots=True)
+class PlanHead:
+    """Which plan it is: its label and title, the revision that stands, and its state."""
+
+    label: str
+    title: str
+    revision: int
+    state: str
+
+
+def head(logbook: Logbook) -> PlanHead:
+    """The plan that is checked, as `check` takes it. Raises Refused when none is loaded."""
+    with logbook.storage.reading() as reader, _as_drafted(reader.connection) as (_view, campaign):
+        return PlanHead(campaign.label, campaign.title, campaign.revision, campaign.state)
+
+
 @no_collection()
 def understand(logbook: Logbook, folder: Path) -> PlanFacts:
     """Read the planner's files in `folder`. Raises Faulty naming every fault of every file."""

@@ -84,7 +84,7 @@ def accept(
     """
     demand_meaning(meaning)
     with logbook.reading() as view:
-        row, record = _under_review(view, point, signer, "accept it")
+        row, record = under_review(view, point, signer.person, "accept it")
         _demand_fit(view, row, record)
         stamp = Stamp(
             signer.person,
@@ -95,7 +95,7 @@ def accept(
         )
     pdf = maker.accepted(logbook.evidence.get(record.submitted_file), stamp, signer)
     with logbook.deed(signer) as deed:
-        latest, now = _under_review(deed.view, point, signer, "accept it")
+        latest, now = under_review(deed.view, point, signer.person, "accept it")
         if now.id != record.id:
             raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
         _demand_fit(deed.view, latest, now)
@@ -124,7 +124,7 @@ def give_back(
     """
     demand_reason(reason)
     with logbook.deed(signer) as deed:
-        row, record = _under_review(deed.view, point, signer, "return it")
+        row, record = under_review(deed.view, point, signer.person, "return it")
         if redo_from:
             demand_step(deed.view, row, redo_from)
         body = PointReturned(
@@ -200,25 +200,29 @@ def records(logbook: Logbook) -> list[dict[str, str]]:
         ]
 
 
+def under_review(view: View, point: str, person: str, what: str) -> tuple[PointRow, RecordRow]:
+    """The point and the record that `person` may judge; `what` says what for.
+
+    Raises Refused when they may not, or nothing is submitted.
+    """
+    row = point_row(view, point)
+    demand_role(view, person, "reviewer")
+    demand_second_person(view, person, row.id, what)
+    rows = view.all(RecordRow, point=row.id)
+    if not rows or rows[-1].state != "submitted":
+        raise Refused(f"{point} is not under review.", "It must be submitted first.")
+    if rows[-1].submitted_by == person:
+        raise Refused(
+            f"{person} signed this record and can't {what}.",
+            "Have a second person review it; the two signatures are of two people.",
+        )
+    return row, rows[-1]
+
+
 def _request(view: View, row: PointRow, head: str, meaning: str, logbook: Logbook) -> RecordRequest:
     revision = 1 + max((item.revision for item in view.all(RecordRow, point=row.id)), default=0)
     now = logbook.clock.now()
     return RecordRequest(row.id, revision, head, now, meaning, logbook.evidence)
-
-
-def _under_review(view: View, point: str, signer: Signer, what: str) -> tuple[PointRow, RecordRow]:
-    row = point_row(view, point)
-    demand_role(view, signer.person, "reviewer")
-    demand_second_person(view, signer.person, row.id, what)
-    rows = view.all(RecordRow, point=row.id)
-    if not rows or rows[-1].state != "submitted":
-        raise Refused(f"{point} is not under review.", "It must be submitted first.")
-    if rows[-1].submitted_by == signer.person:
-        raise Refused(
-            f"{signer.person} signed this record and can't {what}.",
-            "Have a second person review it; the two signatures are of two people.",
-        )
-    return row, rows[-1]
 
 
 def _demand_fit(view: View, row: PointRow, record: RecordRow) -> None:

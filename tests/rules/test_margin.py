@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.readings import LimitFound, ReadingTaken, Verdict
@@ -83,3 +85,18 @@ def test_a_limit_of_zero_gives_no_share() -> None:
 def test_without_a_limit_or_a_value_there_is_none() -> None:
     assert margin_of(_reading("2 ohm")) is None
     assert margin_of(_reading("", _limit(low="1 Gohm"))) is None
+
+
+@pytest.mark.parametrize(("value", "share"), [("350", 1.0), ("350.5", 0.5), ("352", -1.0)])
+def test_between_two_limits_the_share_is_of_half_the_band(value: str, share: float) -> None:
+    found = margin_of(_reading(f"{value} ohm", _limit("349 ohm", "351 ohm")))
+    assert found is not None
+    assert share == pytest.approx(found.share)
+
+
+@given(st.integers(0, 4000))
+def test_the_share_is_below_zero_exactly_outside_the_limits(tenths: int) -> None:
+    found = margin_of(_reading(f"{tenths / 10:.1f} ohm", _limit("100 ohm", "300 ohm")))
+    assert found is not None
+    assert found.share is not None
+    assert (found.share >= -1e-12) == (100 <= tenths / 10 <= 300)

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from gaugelog.screens.review import ReviewScreen
+from gaugelog.screens.evidence import EvidenceScreen
 from gaugelog.screens.step import StepScreen
 from gaugelog.screens.worklist import WorklistScreen
 from gaugelog.work import steps
@@ -111,7 +111,7 @@ def test_a_point_under_review_opens_the_review_of_who_may_review_it(at: At) -> N
     async def play(seen: Seen) -> None:
         await seen.sign_on("q.reyes")
         await seen.type("FB-1")
-        assert isinstance(seen.room, ReviewScreen)
+        assert isinstance(seen.room, EvidenceScreen)
 
     job = at(18)
     job.submit()
