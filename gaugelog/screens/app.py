@@ -4,18 +4,22 @@ from __future__ import annotations
 
 import os
 from collections.abc import Callable, Iterable
+from functools import partial
 from typing import Any, ClassVar
 
 from textual import events
 from textual.app import App, SystemCommand
 from textual.binding import Binding, BindingType
 from textual.screen import Screen
+from textual.widgets import Input
 
 from gaugelog.errors import GaugelogError
 from gaugelog.screens.desk import Desk, Seat
 from gaugelog.screens.dialog import Dialog
 from gaugelog.screens.drafts import Drafts
 from gaugelog.screens.evidence import EvidenceScreen
+from gaugelog.screens.help import HelpDialog, keys_of
+from gaugelog.screens.palette import PointCommands
 from gaugelog.screens.plan import PlanScreen
 from gaugelog.screens.review import ReviewScreen
 from gaugelog.screens.room import Room, look_keys
@@ -59,11 +63,13 @@ class FullScreen(App[None]):
     TITLE = "Gaugelog"
     CSS_PATH = "look.tcss"
     HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (110, "-wide")]  # noqa: RUF012 (as App has it)
+    COMMANDS = App.COMMANDS | {PointCommands}
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("f2", "go('worklist')", "Worklist"),
         *look_keys("go", show=False),
         Binding("f8", "hand_over", "Hand over", priority=True),
-        Binding("ctrl+t", "next_look", "Look", show=False),
+        Binding("f1", "help", "Help", priority=True),
+        Binding("ctrl+t", "next_look", "Other colours", show=False),
         Binding("ctrl+q,ctrl+c", "quit", "Leave", priority=True, show=False),
     ]
 
@@ -108,6 +114,8 @@ class FullScreen(App[None]):
         """A key is shown only where it works now."""
         if action in {"go", "hand_over"} and (self.desk.seat is None or self._asking()):
             return False
+        if action == "help":
+            return self._may_help()
         if action == "go":
             return not isinstance(self.screen, _SCREENS[str(parameters[0])])
         return True
@@ -115,6 +123,22 @@ class FullScreen(App[None]):
     def action_hand_over(self) -> None:
         """Lock the desk for the next person to sign on."""
         self.lock("Who takes over? What was half typed is kept for its person.")
+
+    def action_help(self) -> None:
+        """Tell what the screen is for, and its keys."""
+        screen = self.screen
+        if isinstance(screen, (Room, Dialog)):
+            self.push_screen(HelpDialog(screen.about, keys_of(screen)))
+
+    def _may_help(self) -> bool:
+        return isinstance(self.screen, (Room, Dialog)) and not isinstance(self.screen, HelpDialog)
+
+    def _asks_help(self, event: events.Event) -> bool:
+        """Whether it is a question mark that no field wants: one that is typed stays one."""
+        if not isinstance(event, events.Key) or event.character != "?" or not self._may_help():
+            return False
+        field = self.screen.focused
+        return not (isinstance(field, Input) and (field.value or field.password))
 
     def action_next_look(self) -> None:
         """Dark, light, sixteen colours, in turn."""
@@ -153,17 +177,21 @@ class FullScreen(App[None]):
         """Any key or click says that somebody is there."""
         if isinstance(event, (events.Key, events.MouseDown)):
             self.desk.touch()
+        if self._asks_help(event):
+            self.action_help()
+            return
         await super().on_event(event)
 
     def get_system_commands(self, screen: Screen[Any]) -> Iterable[SystemCommand]:
         """The palette offers the keys that work now, in words, and nothing else."""
         for _key, bound in sorted(screen.active_bindings.items()):
-            binding = bound.binding
-            if binding.description and bound.enabled and binding.action != "command_palette":
+            binding, ours = bound.binding, bound.node in {screen, self}
+            known = binding.description and binding.action != "command_palette"
+            if ours and known and bound.enabled:
                 yield SystemCommand(
                     binding.description,
                     f"Key: {self.get_key_display(binding)}",
-                    lambda action=binding.action: self.call_later(self.run_action, action),
+                    partial(self.call_later, self.run_action, binding.action, bound.node),
                 )
 
     def _asking(self) -> bool:

@@ -50,6 +50,11 @@ class Dialog(ModalScreen[T | None], Generic[T]):
 
     heading = ""
     doing = ""
+    about = (
+        "Fill the fields; Enter goes to the next one, and after the last one it is done. Escape "
+        "takes it back: nothing is kept."
+    )
+    """How it is used, for the help."""
 
     @dataclass
     class Answered(Message):

@@ -24,6 +24,13 @@ _PARTS = ("state", "bars", "checks", "skipped", "photos", "notes", "people", "st
 class EvidenceScreen(Room):
     """What was done and measured at one point; opened for any point, judged by who may."""
 
+    about = (
+        "All that was kept of one point. The checks with the smallest margin stand first; share "
+        "is the margin as a part of the room: half the band between two limits, else the limit. "
+        "Accept signs the record with your passphrase; Return sends the point back with a reason. "
+        "Who did a step of the point, or signed its record, can't judge it. A digit opens a photo."
+    )
+
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("f5", "accept", "Accept"),
         Binding("f7", "return", "Return"),

@@ -49,8 +49,8 @@ class Listing(Room, Generic[T]):
         Binding("down", "cursor(1)", "Down", show=False),
         Binding("pageup", "page(-1)", "Page up", show=False),
         Binding("pagedown", "page(1)", "Page down", show=False),
-        Binding("ctrl+up", "more(-1)", "Scroll what is told up", show=False),
-        Binding("ctrl+down", "more(1)", "Scroll what is told down", show=False),
+        Binding("ctrl+up", "more(-1)", "Details up", show=False),
+        Binding("ctrl+down", "more(1)", "Details down", show=False),
         Binding("escape", "clear", "Show all", show=False),
         *look_keys("app.go"),
     ]

@@ -72,6 +72,12 @@ class PinsScreen(Room):
     Nothing of this is kept: it says where to look.
     """
 
+    about = (
+        "Unplug the circuit from its module and measure resistances between its pins; leave out "
+        "what you did not measure. The values of a sound circuit stand beside the fields. The most "
+        "likely cause comes first. Nothing of this is kept: what counts is the check, read again."
+    )
+
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("up,shift+tab", "app.focus_previous", "Up", show=False),
         Binding("down,tab", "app.focus_next", "Down", show=False),

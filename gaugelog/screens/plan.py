@@ -33,6 +33,11 @@ class Checked:
 class PlanScreen(Listing[Checked]):
     """Findings of the plan check, refusals first."""
 
+    about = (
+        "What the plan check found: what it refuses first, then warnings, then what fits, each "
+        "with the figure that decided and its source. A draft is checked as it would be released."
+    )
+
     finds = "Find a point, circuit, lot or subject"
     columns = (
         Column(""),

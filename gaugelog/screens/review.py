@@ -17,6 +17,11 @@ Queue = dict[str, Waiting]
 class ReviewScreen(Listing[Queue]):
     """Points under review; Enter opens the evidence of one."""
 
+    about = (
+        "Records that wait for a second person. Enter opens the evidence of the point under the "
+        "cursor. Points where you did a step are not yours to judge; they stand below."
+    )
+
     finds = "Find or scan a point"
     columns = (
         Column("point", least=6),

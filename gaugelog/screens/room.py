@@ -45,6 +45,9 @@ class Room(Screen[None]):
     What is slow goes through `in_background`; what is to be said goes through `tell`.
     """
 
+    about = ""
+    """What the screen is for and how it is used, for the help."""
+
     @dataclass
     class Finished(Message):
         """Slow work has ended; `act` runs on the thread that draws."""

@@ -36,6 +36,14 @@ from gaugelog.work.looking import InHand
 class StepScreen(Room):
     """One point's step in hand. Enter goes from field to field; the last one does the step."""
 
+    about = (
+        "The step in hand, beside the route of the point. Space says that you read the cautions; "
+        "then fill the fields. Enter goes to the next field, and after the last one keeps the "
+        "step. A number without its unit is taken in the unit beside the field. What you have half "
+        "typed is put away for you when you leave. A check that fails stays open: find the cause, "
+        "then measure again and say why."
+    )
+
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("space", "acknowledge", "Cautions read"),
         Binding("enter", "do", "Done"),

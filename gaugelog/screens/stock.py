@@ -16,6 +16,12 @@ from gaugelog.work.stocked import ConsumableShown, InstrumentShown, LotShown, St
 class StockScreen(Listing[Stock]):
     """Gauge lots, consumables and instruments; more of the one under the cursor."""
 
+    about = (
+        "Gauge lots, consumables and instruments. Left counts the pieces on the shelf that may be "
+        "used, wanted the points of the plan that have no gauge yet. What expires within 30 days "
+        "is marked. Quarantine, free and scrap with: gaugelog stock."
+    )
+
     finds = "Find or scan a lot, pack, gauge or instrument"
     columns = (
         Column("label", least=6),

@@ -26,6 +26,13 @@ class Wired:
 class WiringScreen(Listing[Wired]):
     """Circuits in the order of their channels; the one under the cursor is drawn."""
 
+    about = (
+        "Circuits in the order of their channels, those with something used twice first, then the "
+        "spare channels. The circuit under the cursor is drawn: tabs and arms at the article at "
+        "the left, the mark of each wire in the middle, the module's pins at the right. Scan a "
+        "mark or a label to find its circuit."
+    )
+
     finds = "Find or scan a channel, circuit, point or wire mark"
     columns = (
         Column("channel"),

@@ -35,6 +35,13 @@ _YOURS = "For you now"
 class WorklistScreen(Room):
     """Points one a line under their zone; typing finds, Enter opens."""
 
+    about = (
+        "Every point by its zone, what it needs next, what blocks it and what runs; what is yours "
+        "to do stands first. Type a part of a label, zone or state to narrow the list, or scan a "
+        "label; Enter opens the point under the cursor. The plan, the stock and the wiring are a "
+        "key away."
+    )
+
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("up", "cursor(-1)", "Up", show=False),
         Binding("down", "cursor(1)", "Down", show=False),

@@ -64,6 +64,12 @@ def in_hand(logbook: Logbook, point: str) -> InHand:
         return InHand(found, tuple(_walked(view, row)), _attempts(view, found))
 
 
+def points_called(logbook: Logbook) -> list[tuple[str, str]]:
+    """Label and zone of every point, in the order of the plan."""
+    with logbook.reading() as view:
+        return [(row.label, row.zone) for row in view.all(PointRow)]
+
+
 def for_person(logbook: Logbook, person: str) -> list[Listed]:
     """Every point with what it needs now and what it wants of `person`: theirs first, by zone."""
     now = logbook.clock.now()

@@ -94,7 +94,7 @@ class Seen:
         return "\n".join(self.lines())
 
 
-_CHARACTERS = {"enter": "\r", "space": " ", "tab": "\t"}
+_CHARACTERS = {"enter": "\r", "space": " ", "tab": "\t", "question_mark": "?"}
 _LOOK_SECONDS, _QUIET_LOOKS = 0.004, 3
 
 Play = Callable[[Seen], Awaitable[None]]

@@ -65,6 +65,7 @@ STATES: dict[str, tuple[int, Callable[[Seen], Awaitable[None]]]] = {
     "wiring": (2, _opened("q.reyes", "f4")),
     "stock": (2, _opened("q.reyes", "f10")),
     "plan": (2, _opened("q.reyes", "f12")),
+    "help": (2, _opened("q.reyes", "f4", "f1")),
     "queue": (18, _opened("q.reyes", "f3")),
     "evidence": (18, _opened("q.reyes", "f3", "enter")),
     "evidence-not-yours": (18, _opened("t.okoro", "f3", "enter")),
