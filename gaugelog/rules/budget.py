@@ -17,7 +17,6 @@ from gaugelog.physics.arrangements import arrangement
 from gaugelog.physics.circuit_budget import circuit_budget
 from gaugelog.physics.estimates import Estimate, normal, rectangular
 from gaugelog.physics.leads import correction_factor
-from gaugelog.physics.leakage import leakage_strain
 from gaugelog.physics.reading import PlannedCircuit
 from gaugelog.physics.temperature import SCATTER_RATES, mismatch_output
 from gaugelog.physics.transverse import uncorrected_error
@@ -25,6 +24,8 @@ from gaugelog.physics.uncertainty import Budget
 from gaugelog.rules.certificate import certificate_at
 from gaugelog.rules.compensated import SOURCE as COMPENSATED
 from gaugelog.rules.compensated import thermal_share
+from gaugelog.rules.leaked import SOURCE as LEAKED
+from gaugelog.rules.leaked import middle_leak
 from gaugelog.rules.wired import Wired, planned_circuit, wired
 
 TRANSVERSE_WIDTH = 0.002
@@ -169,15 +170,28 @@ def _leak_middle(known: _Known) -> list[Correction]:
     insulation = _insulation(known)
     if insulation is None:
         return []
-    factor = known.grid.gauge_factor.si()
-    shown = float(leakage_strain(known.wired.resistance, factor, 2 * insulation))
+    shown = middle_leak(
+        known.wired.resistance,
+        known.grid.gauge_factor.si(),
+        insulation,
+        _arm(known),
+        known.planned.arrangement,
+        known.article.material.poisson_ratio.si(),
+    )
     return [
         Correction(
             "leakage, on the middle between none and all across the grid: reads too much by",
             f"{shown * 1e6:+.2g} µm/m",
-            "−R/(K (R + 2 Ri)), parallel resistance and ASTM E251 (from memory)",
+            LEAKED,
         )
     ]
+
+
+def _arm(known: _Known) -> int:
+    """The first arm that holds a grid of the point, 1 to 4 round the bridge."""
+    own = {grid.id for grid in known.point.grids}
+    arms = enumerate(known.planned.arms, start=1)
+    return next(number for number, arm in arms if own & {each.grid for each in arm})
 
 
 def _instrument(known: _Known) -> dict[str, Estimate]:
