@@ -81,6 +81,26 @@ def test_a_coverage_out_of_bounds_is_told(plan: Path, coverage: str) -> None:
     assert line.startswith("criteria.toml, decision.coverage: ")
 
 
+@pytest.mark.parametrize(
+    ("kind", "lines", "told"),
+    [
+        ("resistance", 'at_most = "0.3 %"\nexpected = "0.4 %"', "expected: lies above at_most"),
+        ("resistance", 'at_most = "0.3 %"\nexpected = "1 ohm"', "expected: mixes per cent"),
+        ("insulation", 'at_least = "10 Gohm"\nexpected = "9 Gohm"', "expected: lies below"),
+        (
+            "resistance",
+            'physics = ["lot tolerance"]\nexpected = "350 ohm"',
+            "expected: stands beside one limit",
+        ),
+    ],
+)
+def test_what_is_expected_lies_on_the_good_side_of_one_limit(
+    plan: Path, kind: str, lines: str, told: str
+) -> None:
+    check = f'[[check]]\nkind = "{kind}"\nstage = "periodic"\n{lines}\nsource = "s"\n\n[decision]'
+    assert told in refusal(plan, "criteria.toml", "[decision]", check)
+
+
 def test_limits_upside_down_or_mixed_are_told(plan: Path) -> None:
     upside = 'at_most = "0.3 %"\nat_least = "0.5 %"'
     assert "lies below at_least" in refusal(plan, "criteria.toml", 'at_most = "0.3 %"', upside)

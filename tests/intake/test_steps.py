@@ -26,6 +26,7 @@ def refusal(before: str, after: str) -> list[str]:
         ('check = "resistance"', 'check = "weight"', "check: “weight” is not one of"),
         ('unit = "Ω"', 'unit = "GΩ"', "unit: “GΩ” is no unit of it."),
         ('unit = "mm"', 'unit = "cubit"', "unit: “cubit” is no unit."),
+        ('unit = "min"', 'unit = "degC"', "unit: is no unit of time."),
         ('type = "cleaner"', 'type = "soap"', "type: “soap” is not one of adhesive"),
         ('type = "cleaner"', "", "type: is missing."),
         ('type = "resistance"', 'type = "weight"', "type: “weight” is not one of resistance"),
