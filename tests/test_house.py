@@ -2,10 +2,12 @@
 
 from __future__ import annotations
 
+import ast
 import re
 import subprocess
 import sys
 import tomllib
+from itertools import pairwise
 from pathlib import Path
 
 import pytest
@@ -58,3 +60,40 @@ def test_links_between_documents_lead_somewhere(name: str) -> None:
     text = (ROOT / name).read_text(encoding="utf-8")
     targets = re.findall(r"\]\(([^)#]+)\)", text)
     assert [] == [target for target in targets if not (ROOT / target).exists()]
+
+
+def test_every_error_that_stops_the_program_says_what_to_do() -> None:
+    errors = {"Refused", "KeyTrouble", "StorageTrouble", "MachineTrouble"}
+    mute = [
+        f"{file.relative_to(ROOT)}:{call.lineno}"
+        for file in sorted((ROOT / "gaugelog").rglob("*.py"))
+        for call in ast.walk(ast.parse(file.read_text(encoding="utf-8")))
+        if isinstance(call, ast.Call) and isinstance(call.func, ast.Name)
+        if call.func.id in errors and len(call.args) + len(call.keywords) < len(("what", "remedy"))
+    ]
+    assert [] == mute
+
+
+_NAMES_OF_OUR_OWN = {
+    "usual",
+    "wanted",
+    "kinds",
+    "pattern",
+    "values['body']",
+    "type(value).__name__",
+}
+"""What may stand behind the article: figures, and words of our own that begin with no vowel."""
+
+
+def test_no_article_stands_before_a_word_that_comes_from_data() -> None:
+    crooked = [
+        f"{file.relative_to(ROOT)}:{text.lineno}: a {{{ast.unparse(word.value)}}}"
+        for file in sorted((ROOT / "gaugelog").rglob("*.py"))
+        for text in ast.walk(ast.parse(file.read_text(encoding="utf-8")))
+        if isinstance(text, ast.JoinedStr)
+        for before, word in pairwise(text.values)
+        if isinstance(before, ast.Constant) and isinstance(word, ast.FormattedValue)
+        if re.search(r"(^|[\s(“])[Aa]n? “?$", str(before.value))
+        if ast.unparse(word.value) not in _NAMES_OF_OUR_OWN
+    ]
+    assert [] == crooked

@@ -31,6 +31,7 @@ from gaugelog.commands import (
     stock,
     wiring,
 )
+from gaugelog.commands.examples import add_examples
 from gaugelog.commands.session import Place
 
 _HELP = """Plan strain-gauge installations, lead them step by step, and keep signed records.
@@ -70,6 +71,7 @@ def application(words: Collection[str] | None = None) -> typer.Typer:
     for name, (panel, command) in _COMMANDS.items():
         called = command if asked is None or name in asked else _not_called
         app.command(name, rich_help_panel=panel, help=getdoc(command))(called)
+    add_examples(app)
     return app
 
 

@@ -136,7 +136,7 @@ def checks(
         "Checks of meters",
         ["meter", "reference", ">known", ">reads", ">off", ">at most", "outcome", "when", "by"],
         [_check_cells(fact) for fact in found],
-        empty="No meter was checked. Try: gaugelog instrument check METER reference=… reads=…",
+        empty="No meter was checked. Next: gaugelog instrument check METER reference=… reads=…",
     )
 
 

@@ -96,7 +96,7 @@ def list_(
         "Photos",
         ["point", "step", "file", "pixels", "SHA-256", "taken", "by", "note"],
         [_cells(label, fact) for label, fact in found],
-        empty="No photo is kept. Try: gaugelog photo add POINT FILE.jpg",
+        empty="No photo is kept. Next: gaugelog photo add POINT FILE.jpg",
     )
 
 

@@ -185,7 +185,7 @@ def compare(reader: SqliteReader) -> list[Trouble]:
 
     def judge(known: Known, at: At, fact: FactBody) -> None:
         found.extend(
-            Trouble(_STEP, f"entry {at.seq}, a {fact.kind}", what, _PAST_THE_PROGRAM)
+            Trouble(_STEP, f"entry {at.seq} ({fact.kind})", what, _PAST_THE_PROGRAM)
             for what in misgivings(known, at, fact)
         )
 

@@ -195,7 +195,10 @@ def _unseen(point: PointRow) -> Iterator[str]:
 def demand_changes_seen(point: PointRow) -> None:
     """Raise Refused while a change of the plan waits for a reviewer's eye at the point."""
     for told in _unseen(point):
-        raise Refused(f"The plan changed under {point.label}. {told}")
+        raise Refused(
+            f"The plan changed under {point.label}. {told}",
+            f"A reviewer says so with: gaugelog plan seen {point.label}",
+        )
 
 
 def _blocking(view: View, point: PointRow, found: OpenStep) -> list[ReadingRow]:
@@ -210,7 +213,7 @@ def demand_complete(view: View, point: PointRow) -> None:
     """Raise Refused, naming everything open, unless the point is ready to be submitted."""
     state = state_of(view, point)
     if state in {"awaiting review", "accepted", "withdrawn"}:
-        raise Refused(f"{point.label} is {state} already.")
+        raise Refused(f"{point.label} is {state} already.", remedy_for(point.label, state))
     demand_changes_seen(point)
     still = [*_open_things(view, point)]
     if still:
@@ -230,6 +233,15 @@ def _open_things(view: View, point: PointRow) -> Iterator[str]:
     for key in json.loads(point.blocked):
         subject, check, stage = key.split("/", 2)
         yield f"{check} {stage} of {subject_label(view, subject) or point.label} blocks"
+
+
+def remedy_for(point: str, state: str) -> str:
+    """What has to happen first where work at a point in this state is over, or not begun."""
+    return {
+        "planned": "Release the plan first: gaugelog plan release",
+        "awaiting review": f"A reviewer sends it back first: gaugelog return {point}",
+        "accepted": f"Take it up again first: gaugelog amend {point}",
+    }.get(state, f"See what became of it: gaugelog journal show {point}")
 
 
 def demand_walked(view: View, point: PointRow, step: RouteStep) -> None:

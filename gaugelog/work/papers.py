@@ -40,7 +40,7 @@ def add(
         _, of, name, number = item
         digest = sha256(paper.data)
         if deed.view.all(CertificateRow, item=of, number=number, file=digest):
-            raise Refused(f"This certificate of {name} is kept already.")
+            raise Refused(f"This certificate of {name} is kept already.", "There is nothing to do.")
         return keep_paper(deed, item, paper, note)
 
 
@@ -71,8 +71,10 @@ def _item(view: View, label: str, kinds: Collection[PaperOf]) -> Item:
             f"No {' or '.join(kinds)} is called {label}.", f"See `gaugelog {where} list`."
         )
     if len(found) > 1:
-        both = " and a ".join(kind for kind, *_ in found)
-        raise Refused(f"{label} is a {both}.", "Give a new delivery a label of its own.")
+        several = " and ".join(kind for kind, *_ in found)
+        raise Refused(
+            f"{label} is a label of {several}.", "Give a new delivery a label of its own."
+        )
     return found[0]
 
 

@@ -190,7 +190,7 @@ def _erase(deed: Deed, row: PersonRow, reason: str) -> None:
         if digest in there
     ]
     if not sheets:
-        raise Refused(f"The name of {row.id} is erased already.")
+        raise Refused(f"The name of {row.id} is erased already.", "There is nothing to do.")
     for digest in sheets:
         deed.writer.erase_sheet(digest)
         deed.keep_fact(sheet_erased(digest, reason, (row.id,)))

@@ -140,7 +140,10 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
         demand_role(deed.view, signer.person, "planner")
         before = planned_campaign(deed.view)
         if before.state == "released" and drafted(deed.view, before) is None:
-            raise Refused(f"Revision {before.revision} is released already.")
+            raise Refused(
+                f"Revision {before.revision} is released already.",
+                "Work on: gaugelog step next. To change the plan: gaugelog plan load --reason WHY",
+            )
         with _as_drafted(deed.writer.connection) as (view, campaign):
             findings = check_plan(view, campaign, deed.moment.local.date())
             points = [row.id for row in view.all(PointRow)]

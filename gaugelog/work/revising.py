@@ -53,7 +53,10 @@ def revise(logbook: Logbook, signer: Signer, facts: PlanFacts, *, reason: str) -
             }
         )
         if not body.changes:
-            raise Refused(f"These files say what revision {campaign.revision} says already.")
+            raise Refused(
+                f"These files say what revision {campaign.revision} says already.",
+                "Look whether they are the changed ones.",
+            )
         deed.keep(body, _concerned(body), evidence=facts.digests.values())
     return body
 
@@ -103,7 +106,9 @@ def see(
         demand_second_person(deed.view, signer.person, row.id, "look at its changes")
         _demand_not_own(deed, signer.person)
         if not json.loads(row.touched):
-            raise Refused(f"No change of the plan waits at {row.label}.")
+            raise Refused(
+                f"No change of the plan waits at {row.label}.", "See `gaugelog plan show`."
+            )
         if redo_from:
             _demand_open(deed, row, redo_from)
         body = ChangeSeen(

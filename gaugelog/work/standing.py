@@ -98,9 +98,11 @@ def _demand_change(view: View, item: _Item, standing: Standing) -> None:
     row = view.get(StandingRow, item.id)
     now = row.standing if row is not None else "free"
     if now == standing:
-        raise Refused(f"{item.kind} {item.label} is {now} already.")
+        raise Refused(f"{item.kind} {item.label} is {now} already.", "See `gaugelog stock list`.")
     states = {gauge.state for gauge in item.gauges}
     if now == "scrapped" or states == {"scrapped"}:
-        raise Refused(f"{item.kind} {item.label} is scrapped, and that is for good.")
+        raise Refused(
+            f"{item.kind} {item.label} is scrapped, and that is for good.", "Take another."
+        )
     if standing == "scrapped" and item.kind == "gauge" and states == {"in service"}:
         raise Refused(f"{item.label} is in service.", "Replace it first: gaugelog replace POINT.")

@@ -19,7 +19,7 @@ from gaugelog.rules.mixed import mixed_troubles, unmixed_flags
 from gaugelog.rules.order import order_flag
 from gaugelog.rules.piece import demand_one_piece
 from gaugelog.rules.placed import axis_effect, placed_troubles, poisson_at
-from gaugelog.rules.progress import NextStep, demand_step, demand_walked, state_of
+from gaugelog.rules.progress import NextStep, demand_step, demand_walked, remedy_for, state_of
 from gaugelog.rules.progress import next_step as progress
 from gaugelog.rules.qualified import demand_qualified, lapsed_flags
 from gaugelog.rules.who import demand_role, roles_of
@@ -115,7 +115,10 @@ def do(  # noqa: PLR0913 (what the person says is each its own word)
         if doing.step.hold:
             return decide(doing, typed, note, refuse)
         if refuse:
-            raise Refused(f"“{found.title}” is no hold; there is nothing to refuse.")
+            raise Refused(
+                f"“{found.title}” is no hold; there is nothing to refuse.",
+                f"Do it, or go back: gaugelog step redo {found.point}",
+            )
         return _do(doing, typed, note, reason)
 
 
@@ -133,9 +136,14 @@ def skip(
         found = progress(making.view, row, making.moment)
         _demand_as_seen(found, seen)
         if found.step is None:
-            raise Refused(f"{row.label} has no step left.")
+            raise Refused(
+                f"{row.label} has no step left.", f"See `gaugelog step next {row.label}`."
+            )
         if found.forbidden:
-            raise Refused(f"“{found.title}” can't be skipped now: {' '.join(found.forbidden)}")
+            raise Refused(
+                f"“{found.title}” can't be skipped now: {' '.join(found.forbidden)}",
+                f"See `gaugelog step next {row.label}`.",
+            )
         _demand_may_skip(making, found)
         body = StepSkipped(
             point=row.id,
@@ -160,7 +168,10 @@ def redo(logbook: Logbook, signer: Signer, *, point: str, step: str, reason: str
         demand_role(making.view, signer.person, "technician")
         state = state_of(making.view, row)
         if state in {"planned", "awaiting review", "accepted", "withdrawn"}:
-            raise Refused(f"{row.label} is {state}; no step can be done again now.")
+            raise Refused(
+                f"{row.label} is {state}; no step can be done again now.",
+                remedy_for(row.label, state),
+            )
         wanted = demand_step(making.view, row, step)
         demand_walked(making.view, row, wanted)
         body = StepReopened(point=row.id, step=step, reason=reason, reopened_by=signer.person)
@@ -375,5 +386,5 @@ def _demand_may_skip(making: Deed, found: NextStep) -> None:
     if rule == "never" or (found.step is not None and found.step.hold):
         raise Refused(f"“{found.title}” can't be skipped.", "Do it, or ask the planner.")
     if rule == "planner" and "planner" not in roles_of(making.view, making.signer.person):
-        raise Refused(f"“{found.title}” can only be skipped by a planner.")
+        raise Refused(f"“{found.title}” can only be skipped by a planner.", "Ask one.")
     demand_role(making.view, making.signer.person, "technician", "planner")

@@ -11,6 +11,7 @@ import pytest
 import typer.main
 
 from gaugelog.commands.application import application
+from gaugelog.commands.examples import EXAMPLES, MEANING, epilog_for
 from gaugelog.errors import ExitCode
 from tests.commands.conftest import Command
 
@@ -36,6 +37,32 @@ def test_every_command_and_option_has_help(path: tuple[str, ...], command: Any) 
     assert command.help, path
     for option in command.params:
         assert option.name == "help" or option.help, (path, option.name)
+
+
+@pytest.mark.parametrize(
+    ("path", "command"),
+    [each for each in COMMANDS if not hasattr(each[1], "commands")],
+    ids=[" ".join(path) for path, each in COMMANDS if not hasattr(each, "commands")],
+)
+def test_every_command_has_examples_that_can_be_typed(path: tuple[str, ...], command: Any) -> None:
+    examples = EXAMPLES[" ".join(path)]
+    assert examples
+    for line in examples:
+        words = shlex.split(line)
+        assert ["gaugelog", *path] == words[: len(path) + 1], line
+        command.make_context(" ".join(path), words[len(path) + 1 :])  # raises where it can't be
+
+
+def test_no_example_is_of_a_command_that_is_gone() -> None:
+    assert set(EXAMPLES) == {" ".join(path) for path, each in COMMANDS if each.epilog}
+
+
+def test_every_exit_code_has_a_meaning_under_each_help() -> None:
+    assert list(ExitCode) == list(MEANING)
+    told = epilog_for("step do")
+    assert "130 stopped with Ctrl-C" in told
+    assert "Units are typed with the figure" in told
+    assert "Units" not in epilog_for("plan show")
 
 
 def test_every_command_the_readme_types_exists() -> None:

@@ -80,5 +80,5 @@ class Unproven:
 
     def _greet(self, look: Look, kind: str) -> None:
         if kind not in {JOURNAL_BEGUN, RESTORED}:
-            what = f"A chain begins here with a {kind}; no entry says whose copy it is."
+            what = f"A chain begins here with {kind}; no entry says whose copy it is."
             self._findings.notice(where(look.filed.chain, look.filed.seq), what)
