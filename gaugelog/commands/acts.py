@@ -113,8 +113,8 @@ def _amend(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
 
 
 def _replace(stage: Stage, act: Mapping[str, Any], key: UnlockedKey) -> None:
-    from gaugelog.commands.disposition import REPLACE_MEANING
     from gaugelog.work import dispositions
+    from gaugelog.work.meanings import REPLACE_MEANING
 
     dispositions.replace(
         stage.book, key, point=act["replace"], reason=act["reason"], meaning=REPLACE_MEANING

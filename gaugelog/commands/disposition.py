@@ -7,14 +7,11 @@ from typing import Annotated
 import typer
 
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import say
+from gaugelog.work.meanings import REPLACE_MEANING, WITHDRAW_MEANING
 
-Point = Annotated[str, typer.Argument(help="Label of the point.")]
 Reason = Annotated[str, typer.Option(help="Why; the record's story shows it.")]
-
-REPLACE_MEANING = "I decided that the gauge in place is given up and replaced."
-WITHDRAW_MEANING = "I decided that this point is withdrawn."
 
 
 def replace(

@@ -73,12 +73,14 @@ EXAMPLES: dict[str, tuple[str, ...]] = {
         'gaugelog step do FB-1 tester=IT-5 insulation=">20 GΩ" unplugged=yes --at 14:30',
         'gaugelog step do FB-1 --refuse "lines 2 mm off" --as q.reyes',
     ),
+    "step note": ('gaugelog step note FB-1 "rain stopped the work at 11:20" --as t.okoro',),
     "step redo": ('gaugelog step redo FB-1 clean --reason "rust came up" --as t.okoro',),
     "step skip": ('gaugelog step skip FB-1 --reason "engraved at the works" --as p.lind',),
     "photo add": (
         'gaugelog photo add FB-1 bonded.jpg --step bond --note "under the glass" --as t.okoro',
     ),
     "photo list": ("gaugelog photo list",),
+    "photo export": ("gaugelog photo export FB-1 ../photos",),
     "journal check": (
         "gaugelog journal check",
         "gaugelog journal check --head 137:ABCDEFGHIJKLMNOPQRSTUVWXYZ",
@@ -123,6 +125,7 @@ def add_examples(app: typer.Typer) -> None:
 def epilog_for(words: str) -> str:
     """What stands under the help of the command with these words, as Markdown."""
     lines = [f"- `{line}`" for line in EXAMPLES.get(words, ())]
+    examples = ["**Examples**", *lines] if lines else []
     units = [_UNITS] if words in _TYPED_QUANTITIES else []
     codes = "; ".join(f"{int(code)} {meaning}" for code, meaning in MEANING.items())
-    return "\n\n".join(["**Examples**", *lines, *units, f"**Exit codes**: {codes}."])
+    return "\n\n".join([*examples, *units, f"**Exit codes**: {codes}."])

@@ -2,11 +2,15 @@
 
 from __future__ import annotations
 
+import re
 import shutil
 import textwrap
 from typing import TextIO
 
 _NARROWEST = 20
+
+WHOLE_WORD = 12
+"""A word of so many letters or less is never broken in a table."""
 
 
 def folded(text: str, stream: TextIO) -> list[str]:
@@ -28,3 +32,25 @@ def _pieces(line: str, width: int) -> list[str]:
     return textwrap.wrap(
         line, width, subsequent_indent=hanging, break_long_words=False, break_on_hyphens=False
     )
+
+
+def broken(cell: str) -> str:
+    """A table's cell with its long words broken after their hyphens, where they have some.
+
+    >>> broken("room-temperature-bond-metal")
+    'room-\\ntemperature-\\nbond-metal'
+    """
+    return "\n".join(
+        " ".join(_broken_word(word) for word in line.split(" ")) for line in cell.split("\n")
+    )
+
+
+def _broken_word(word: str) -> str:
+    if len(word) <= WHOLE_WORD:
+        return word
+    lines = [""]
+    for piece in re.findall(r"[^-]*-+|[^-]+", word):
+        if lines[-1] and len(lines[-1]) + len(piece) > WHOLE_WORD:
+            lines.append("")
+        lines[-1] += piece
+    return "\n".join(lines)

@@ -10,15 +10,13 @@ import typer
 
 from gaugelog.commands.outputs import write_out
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, At, Json, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put, put_json, put_table, say
 
 if TYPE_CHECKING:
     from gaugelog.ledger.photos import PhotoKept
 
 group = typer.Typer(help="Photos: keep them as evidence of a point, list them, write out copies.")
-
-Point = Annotated[str, typer.Argument(help="Label of the point.")]
 
 
 @group.command()

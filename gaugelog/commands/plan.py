@@ -8,10 +8,11 @@ from typing import TYPE_CHECKING, Annotated, Any
 import typer
 
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, Json, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put, put_json, put_prose, put_table, say
 from gaugelog.errors import ExitCode
 from gaugelog.visible import counted
+from gaugelog.work.meanings import RELEASE_MEANING, SEEN_MEANING
 
 if TYPE_CHECKING:
     from gaugelog.ledger.revisions import PlanRevised
@@ -21,8 +22,6 @@ group = typer.Typer(help="The plan: load, check, show, release.")
 
 _SIGNS = {"ok": "✓", "warning": "!", "refusal": "✗"}
 _MARKS = {"added": "+", "changed": "~", "dropped": "-"}
-_MEANING = "I release this plan and its acceptance criteria for work."
-_SEEN_MEANING = "I looked at what the plan's revision changes here and let the work go on."
 
 
 @group.command()
@@ -119,7 +118,7 @@ def changes(ctx: typer.Context, json: Json = False) -> None:
 @group.command()
 def seen(
     ctx: typer.Context,
-    point: Annotated[str, typer.Argument(help="Label of the point.")],
+    point: Point,
     remark: Annotated[str, typer.Option(help="What you found; kept in the record's story.")],
     redo_from: Annotated[
         str, typer.Option(help="Step to go on from; left out: nothing is done again.")
@@ -133,52 +132,37 @@ def seen(
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"let {point} go on")
     revising.see(
-        logbook, signer, point=point, remark=remark, meaning=_SEEN_MEANING, redo_from=redo_from
+        logbook, signer, point=point, remark=remark, meaning=SEEN_MEANING, redo_from=redo_from
     )
     say(f"{point} may go on. Next: gaugelog step next {point}")
 
 
 @group.command()
 def show(ctx: typer.Context, json: Json = False) -> None:
-    """Show the plan: each point with its place, lot, circuit, channel and state."""
+    """Show the plan, by route: each point with its place, lot, circuit, channel and state."""
     from gaugelog.work import plan
 
     rows = plan.overview(open_logbook(ctx))
     if json:
         put_json([as_json(row) for row in rows])
         return
-    routes = {row.route for row in rows}
-    shared = routes.pop() if len(routes) == 1 else ""
-    put_table(
-        f"Plan; every point by route {shared}" if shared else "Plan",
-        list(_COLUMNS),
-        [_cells(row, shared) for row in rows],
-        empty="No plan is loaded. Next: gaugelog plan load FOLDER",
-    )
+    if not rows:
+        say("No plan is loaded. Next: gaugelog plan load FOLDER")
+    for route in dict.fromkeys(row.route for row in rows):
+        told = [_cells(row) for row in rows if row.route == route]
+        put_table(f"Points by route {route}", _COLUMNS, told, empty="")
 
 
-_COLUMNS = (
-    "point",
-    "zone",
-    "lot",
-    "circuit",
-    "channel",
-    "route",
-    ">permitted error",
-    "state",
-    "touched by",
-)
+_COLUMNS = ("point", "zone", "lot", "circuit", "channel", ">permitted error", "state", "touched by")
 
 
-def _cells(row: Any, shared: str) -> list[str]:
-    """A point's cells; a route that all share stands in the title instead, for it is long."""
+def _cells(row: Any) -> list[str]:
     return [
         row.point,
         row.zone,
         row.lot,
         row.circuit,
         row.channel,
-        "" if shared else row.route,
         row.permitted_error,
         row.state,
         "; ".join(row.touched),
@@ -192,5 +176,5 @@ def release(ctx: typer.Context, as_: As = "", secret_fd: SecretFd = None) -> Non
 
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose="release the plan")
-    released = plan.release(logbook, signer, meaning=_MEANING)
+    released = plan.release(logbook, signer, meaning=RELEASE_MEANING)
     say(f"Revision {released.revision} is released. Next: gaugelog step next")

@@ -8,11 +8,9 @@ import typer
 
 from gaugelog.commands.paper import PaperAsked, demand_paper
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import say
 from gaugelog.work.meanings import ACCEPT_MEANING, SUBMIT_MEANING
-
-Point = Annotated[str, typer.Argument(help="Label of the point.")]
 
 
 def submit(

@@ -18,6 +18,7 @@ if TYPE_CHECKING:
 
 KEYS_VARIABLE = "GAUGELOG_KEYS"
 
+Point = Annotated[str, typer.Argument(help="Label of the point.")]
 As = Annotated[
     str,
     typer.Option("--as", envvar="GAUGELOG_PERSON", help="Id of the person who acts and signs."),

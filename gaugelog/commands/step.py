@@ -8,7 +8,7 @@ import typer
 
 from gaugelog.commands.calc.engine import parse_pairs
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, At, Json, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, At, Json, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.steptext import prompt_for, tell_outcome, tell_step, tell_what_follows
 from gaugelog.commands.talk import as_json, ask, put_json, put_table, say
 from gaugelog.commands.walk import walk
@@ -19,8 +19,6 @@ if TYPE_CHECKING:
 
 group = typer.Typer(help="Steps: what comes next, do it, walk on, go back, skip, note.")
 group.command()(walk)
-
-Point = Annotated[str, typer.Argument(help="Label of the point.")]
 
 
 @group.command("next")

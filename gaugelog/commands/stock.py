@@ -95,13 +95,13 @@ def list_(ctx: typer.Context, json: Json = False) -> None:
         return
     put_table(
         "Gauge lots",
-        ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other", ">certificates"],
+        ["lot", "type", ">Ω", ">factor", ">on shelf", ">in service", ">other", ">files"],
         [[str(value) for value in row.values()] for row in lots],
         empty="No gauge lot was received. Next: gaugelog stock receive lots.csv",
     )
     put_table(
         "Consumables",
-        ["lot", "kind", "name", "expires", ">certificates"],
+        ["lot", "kind", "name", "expires", ">files"],
         [[str(value) for value in row.values()] for row in consumables],
         empty="No consumable was received. Next: gaugelog stock receive consumables.csv",
     )

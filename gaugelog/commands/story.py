@@ -123,8 +123,9 @@ class Story:
         planner = self.keys["p.lind"]
         facts = plan.understand(self.book(), self.files / "plan")
         plan.load(self.book(), planner, facts)
-        meaning = "I release this plan and its acceptance criteria for work."
-        plan.release(self.book(), planner, meaning=meaning)
+        from gaugelog.work.meanings import RELEASE_MEANING
+
+        plan.release(self.book(), planner, meaning=RELEASE_MEANING)
 
 
 def read_story(maker: RecordMaker) -> Story:

@@ -101,43 +101,17 @@ def _escape_unseen(text: str) -> str:
 def put_table(
     title: str, columns: Sequence[str], rows: Iterable[Sequence[str]], *, empty: str
 ) -> None:
-    """Give a table on stdout; a column whose heading starts with `>` is aligned right.
+    """Give a table on stdout that fits the terminal (see `tables.draw`).
 
-    A column that says nothing in any row is left out. With no rows, `empty` is told on stderr
-    instead: stdout stays free of talk.
+    With no rows, `empty` is told on stderr instead: stdout stays free of talk.
     """
-    from rich import box
-    from rich.table import Table
-    from rich.text import Text
+    from gaugelog.commands.tables import draw
 
-    body = [[Text(visible(cell, keep_newlines=True)) for cell in row] for row in rows]
+    body = [[visible(cell, keep_newlines=True) for cell in row] for row in rows]
     if not body:
         say(empty)
         return
-    told = [place for place in range(len(columns)) if any(cells[place].plain for cells in body)]
-    columns = [columns[place] for place in told]
-    body = [[cells[place] for place in told] for cells in body]
-    table = Table(title=Text(title), title_justify="left", box=box.SIMPLE_HEAD, pad_edge=False)
-    for place, column in enumerate(columns):
-        right, heading = column.startswith(">"), column.removeprefix(">")
-        table.add_column(
-            Text(heading),
-            justify="right" if right else "left",
-            overflow="fold",
-            min_width=_least_width(heading, [cells[place].plain for cells in body]),
-        )
-    for cells in body:
-        table.add_row(*cells)
-    console().print(table)
-
-
-def _least_width(heading: str, cells: Iterable[str]) -> int:
-    """How narrow a column may get: its words stay whole, those of a dozen letters or less."""
-    words = [*heading.split(), *(word for cell in cells for word in cell.split())]
-    return max((len(word) for word in words if len(word) <= _WHOLE_WORD), default=1)
-
-
-_WHOLE_WORD = 12
+    draw(title, columns, body, console())
 
 
 def tell_error(error: GaugelogError) -> None:

@@ -5,12 +5,12 @@ from __future__ import annotations
 import time
 from collections.abc import Callable
 from dataclasses import dataclass, field
-from typing import TYPE_CHECKING, Annotated
+from typing import TYPE_CHECKING
 
 import typer
 
 from gaugelog.commands.passphrases import Secrets
-from gaugelog.commands.session import As, SecretFd, open_logbook, unlock
+from gaugelog.commands.session import As, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.steptext import describe, prompt_for, tell_outcome, tell_step
 from gaugelog.commands.talk import ask, put, say, tell_error
 from gaugelog.errors import Faulty, KeyTrouble, Refused
@@ -61,7 +61,7 @@ class Unlocked:
 
 def walk(
     ctx: typer.Context,
-    point: Annotated[str, typer.Argument(help="Label of the point.")],
+    point: Point,
     as_: As = "",
     secret_fd: SecretFd = None,
 ) -> None:

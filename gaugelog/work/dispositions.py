@@ -13,7 +13,7 @@ from gaugelog.ledger.sharing import points_in
 from gaugelog.ledger.steps import was_mounted
 from gaugelog.ledger.view import View
 from gaugelog.rules.amended import record_in_force
-from gaugelog.rules.progress import route_for, state_of
+from gaugelog.rules.progress import remedy_for, route_for, state_of
 from gaugelog.rules.taken import circuits_of
 from gaugelog.rules.who import demand_role
 from gaugelog.work.doing import about, point_row
@@ -100,10 +100,8 @@ def _latest(view: View, point: str, circuits: Sequence[str]) -> Iterator[str]:
 
 def _demand_open(view: View, row: PointRow) -> None:
     state = state_of(view, row)
-    if state == "awaiting review":
-        raise Refused(f"{row.label} is under review.", "Have the reviewer return it first.")
-    if state in {"withdrawn", "planned"}:
-        raise Refused(f"{row.label} is {state}.", "See `gaugelog plan show`.")
+    if state in {"awaiting review", "withdrawn", "planned"}:
+        raise Refused(f"{row.label} is {state}.", remedy_for(row.label, state))
 
 
 def _demand_mounted(view: View, row: PointRow) -> None:

@@ -14,7 +14,7 @@ from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.progress import open_step
 from gaugelog.ledger.readings import ReadingTaken
 from gaugelog.ledger.view import View
-from gaugelog.rules.progress import demand_step, route_for, state_of
+from gaugelog.rules.progress import demand_step, remedy_for, route_for, state_of
 from gaugelog.rules.who import demand_role
 from gaugelog.work.doing import about, observed_at, point_row, utc_text
 from gaugelog.work.kept import text_to_keep
@@ -105,7 +105,7 @@ def _demand_open(view: View, row: PointRow) -> None:
     if state in _AT_REST:
         raise Refused(
             f"{row.label} is {state}; no photo can be added now.",
-            "A record under review is returned first; an accepted one is amended.",
+            remedy_for(row.label, state),
         )
 
 

@@ -143,9 +143,9 @@ def test_without_a_bonded_gauge_there_is_nothing_to_replace(job: Job) -> None:
 def test_under_review_nothing_is_replaced_or_withdrawn(job: Job) -> None:
     job.walk()
     job.submit()
-    with pytest.raises(Refused, match="under review"):
+    with pytest.raises(Refused, match="awaiting review"):
         _replace(job)
-    with pytest.raises(Refused, match="under review"):
+    with pytest.raises(Refused, match="awaiting review"):
         _withdraw(job)
 
 
