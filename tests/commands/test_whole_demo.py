@@ -93,6 +93,7 @@ def test_the_journal_holds_a_failure_a_return_an_amendment_and_a_replacement(
     shown = json.loads(command("journal", "show", "--json", "--last", "9999").out)
     kinds = {entry["header"]["kind"] for entry in shown}
     assert {"point.returned", "point.reopened", "disposition.made"} <= kinds
+    assert {"photo.kept", "meter.checked"} <= kinds
     readings = [
         entry["body"]["fact"] for entry in shown if entry["header"]["kind"] == "reading.taken"
     ]
