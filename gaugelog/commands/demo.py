@@ -121,6 +121,7 @@ def _next_lines(story: Story, folder: Path, first: Path) -> list[str]:
         "Type next:",
         f"  cd {folder}/logbook",
         f"  export GAUGELOG_KEYS=../keys    # the passphrase of everyone: {PASSPHRASE}",
+        f"  {program}    # the full screen: sign on as t.okoro",
         *(f"  {program} {words}    # {why}" for words, why in typed),
         f"  pdfsig ../records/{first.name}    # the signatures, judged by a foreign program",
     ]

@@ -12,6 +12,7 @@ from gaugelog.commands.session import Place, key_folder
 from gaugelog.errors import MachineTrouble
 
 if TYPE_CHECKING:
+    from gaugelog.screens.desk import Desk
     from gaugelog.work.ports import RecordMaker
 
 Point = Annotated[str, typer.Argument(help="Label of a point; left out: the list.")]
@@ -55,14 +56,26 @@ def _sign_above(start: Path) -> bool:
 def open_screen(place: Place, where: str = "", point: str = "") -> None:
     """Open the full screen; `where` names its first screen, `point` what it is about.
 
-    Raises MachineTrouble without a terminal, StorageTrouble without a logbook.
+    Raises MachineTrouble without a terminal, StorageTrouble without a logbook, and what nobody
+    foresaw as it came, when the terminal is as it was before.
     """
     if not at_a_terminal():
         raise MachineTrouble(
             "The full screen needs a terminal.",
             "Without one: gaugelog step next, gaugelog step do, gaugelog submit, gaugelog accept.",
         )
+    if place.folder is not None or not _sign_above(Path.cwd()):
+        place.find()  # says that there is none, before the screen is there
     from gaugelog.screens.app import FullScreen
+
+    app = FullScreen(lambda: _desk(place, point), where, point)
+    app.run()
+    if app.defect is not None:
+        raise app.defect
+
+
+def _desk(place: Place, point: str) -> Desk:
+    """The logbook, opened, with what the screen needs; slow. Raises Refused for no such point."""
     from gaugelog.screens.desk import Desk
     from gaugelog.work.doing import point_row
     from gaugelog.work.logbook import Logbook
@@ -70,12 +83,9 @@ def open_screen(place: Place, where: str = "", point: str = "") -> None:
     logbook = Logbook.open(place.find())
     if point:
         with logbook.reading() as view:
-            point = point_row(view, point).label
+            point_row(view, point)
     keys = key_folder(logbook.id)
-    app = FullScreen(Desk(logbook, keys, _maker, keys.path / "drafts"), where, point)
-    app.run()
-    if app.return_code:
-        raise typer.Exit(app.return_code)
+    return Desk(logbook, keys, _maker, keys.path / "drafts")
 
 
 def _maker() -> RecordMaker:

@@ -5,7 +5,8 @@ from __future__ import annotations
 import os
 from collections.abc import Callable, Iterable
 from functools import partial
-from typing import Any, ClassVar
+from pathlib import Path
+from typing import TYPE_CHECKING, Any, ClassVar
 
 from textual import events
 from textual.app import App, SystemCommand
@@ -14,40 +15,17 @@ from textual.screen import Screen
 from textual.widgets import Input
 
 from gaugelog.errors import GaugelogError
-from gaugelog.screens.desk import Desk, Seat
+from gaugelog.screens import places
+from gaugelog.screens.desk import Desk, Opening, Seat
 from gaugelog.screens.dialog import Dialog
-from gaugelog.screens.drafts import Drafts
-from gaugelog.screens.evidence import EvidenceScreen
 from gaugelog.screens.help import HelpDialog, keys_of
 from gaugelog.screens.palette import PointCommands
-from gaugelog.screens.plan import PlanScreen
-from gaugelog.screens.review import ReviewScreen
 from gaugelog.screens.room import Room, look_keys
 from gaugelog.screens.sign_on import SignOn
-from gaugelog.screens.step import StepScreen
-from gaugelog.screens.stock import StockScreen
 from gaugelog.screens.themes import THEMES, first_theme, next_theme
-from gaugelog.screens.wiring import WiringScreen
-from gaugelog.screens.worklist import WorklistScreen
 
-PLACES: dict[str, Callable[[str], Room]] = {
-    "worklist": lambda _point: WorklistScreen(),
-    "step": StepScreen,
-    "review": lambda point: EvidenceScreen(point) if point else ReviewScreen(),
-    "wiring": lambda _point: WiringScreen(),
-    "stock": lambda _point: StockScreen(),
-    "plan": lambda _point: PlanScreen(),
-}
-"""Where one can go, and how the screen there is made for a point (empty: none in particular)."""
-
-_SCREENS: dict[str, type[Room]] = {
-    "worklist": WorklistScreen,
-    "step": StepScreen,
-    "review": ReviewScreen,
-    "wiring": WiringScreen,
-    "stock": StockScreen,
-    "plan": PlanScreen,
-}
+if TYPE_CHECKING:
+    from gaugelog.screens.drafts import Drafts
 
 TICK_SECONDS = 1.0
 LOOK_AGAIN_TICKS = 15
@@ -57,11 +35,12 @@ LOOK_AGAIN_TICKS = 15
 class FullScreen(App[None]):
     """Gaugelog on the whole terminal. `place` and `point` say where it opens after sign-on.
 
-    `look` names a theme; empty: by the terminal.
+    `desk` may be a function that opens the logbook: it is called on another thread, while the
+    sign-on stands there already. `look` names a theme; empty: by the terminal.
     """
 
     TITLE = "Gaugelog"
-    CSS_PATH = "look.tcss"
+    CSS_PATH = Path(__file__).with_name("look.tcss")
     HORIZONTAL_BREAKPOINTS = [(0, "-narrow"), (110, "-wide")]  # noqa: RUF012 (as App has it)
     COMMANDS = App.COMMANDS | {PointCommands}
     BINDINGS: ClassVar[list[BindingType]] = [
@@ -73,14 +52,17 @@ class FullScreen(App[None]):
         Binding("ctrl+q,ctrl+c", "quit", "Leave", priority=True, show=False),
     ]
 
-    def __init__(self, desk: Desk, place: str = "", point: str = "", look: str = "") -> None:
+    def __init__(
+        self, desk: Desk | Callable[[], Desk], place: str = "", point: str = "", look: str = ""
+    ) -> None:
         super().__init__()
-        self.desk = desk
-        self.drafts = Drafts(desk.drafts)
+        self.opening = Opening(desk)
         self._place, self._point = place, point
         self._look = look or first_theme(os.environ)
         self._head = 0
         self._ticks = 0
+        self.defect: Exception | None = None
+        """What nobody foresaw, and ended the program; told by who opened the screen."""
 
     def on_mount(self) -> None:
         """Ask who is there, and begin to watch."""
@@ -89,6 +71,38 @@ class FullScreen(App[None]):
         self.theme = self._look
         self.push_screen(SignOn(), self._arrived)
         self.set_interval(TICK_SECONDS, self.tick)
+        self.run_worker(self._open, thread=True, exit_on_error=False)
+
+    @property
+    def desk(self) -> Desk:
+        """The logbook and who sits at it, once it is open."""
+        return self.opening.desk
+
+    @property
+    def drafts(self) -> Drafts:
+        """Where half-typed fields are put away."""
+        from gaugelog.screens.drafts import Drafts
+
+        return Drafts(self.desk.drafts)
+
+    @property
+    def seated(self) -> bool:
+        """Whether somebody is signed on."""
+        return self.opening.done and self.desk.seat is not None
+
+    def _open(self) -> None:
+        """Open the logbook, and load what comes after the sign-on; on another thread."""
+        try:
+            self.opening.wait()
+            places.warm()
+        except Exception as error:
+            self.call_later(self._handle_exception, error)
+            return
+        self.call_later(self._opened)
+
+    def _opened(self) -> None:
+        if isinstance(self.screen, SignOn):
+            self.screen.say_where()
 
     def rooms(self) -> list[Room]:
         """The screens that are open, the topmost last; not one being built or taken down."""
@@ -102,7 +116,7 @@ class FullScreen(App[None]):
         """Open a screen above the worklist; going to the worklist closes what is above it."""
         self._close_all_but_home()
         if place != "worklist":
-            self.push_screen(PLACES[place](point))
+            self.push_screen(places.made(place, point))
         else:
             self.rooms()[-1].facts_changed()
 
@@ -112,12 +126,12 @@ class FullScreen(App[None]):
 
     def check_action(self, action: str, parameters: tuple[object, ...]) -> bool | None:
         """A key is shown only where it works now."""
-        if action in {"go", "hand_over"} and (self.desk.seat is None or self._asking()):
+        if action in {"go", "hand_over"} and (not self.seated or self._asking()):
             return False
         if action == "help":
             return self._may_help()
-        if action == "go":
-            return not isinstance(self.screen, _SCREENS[str(parameters[0])])
+        if action == "go" and isinstance(self.screen, Room):
+            return self.screen.place != parameters[0]
         return True
 
     def action_hand_over(self) -> None:
@@ -160,7 +174,7 @@ class FullScreen(App[None]):
 
     def tick(self) -> None:
         """Every second: lock an idle desk, and look whether something was kept by anyone."""
-        if self.desk.seat is None or not self.is_running:
+        if not self.seated or not self.is_running:
             return
         if self.desk.seconds_left <= 0:
             minutes = self.desk.idle_seconds / 60
@@ -175,12 +189,21 @@ class FullScreen(App[None]):
 
     async def on_event(self, event: events.Event) -> None:
         """Any key or click says that somebody is there."""
-        if isinstance(event, (events.Key, events.MouseDown)):
+        if self.opening.done and isinstance(event, (events.Key, events.MouseDown)):
             self.desk.touch()
         if self._asks_help(event):
             self.action_help()
             return
         await super().on_event(event)
+
+    def _handle_exception(self, error: Exception) -> None:
+        # Textual would print a traceback with every local variable, a passphrase among them.
+        self.defect = self.defect or error
+        self._return_code = 1
+        if self._exception is None:
+            self._exception = error
+            self._exception_event.set()
+        self._close_messages_no_wait()
 
     def get_system_commands(self, screen: Screen[Any]) -> Iterable[SystemCommand]:
         """The palette offers the keys that work now, in words, and nothing else."""
@@ -212,11 +235,11 @@ class FullScreen(App[None]):
             return
         self.desk.sit(seat)
         self._something_kept()
-        self.push_screen(WorklistScreen())
+        self.push_screen(places.made(places.HOME))
         draft = self.drafts.load(seat.person)
         place = self._place or ("step" if draft.open and draft.point else "")
         if place and place != "worklist":
-            self.push_screen(PLACES[place](self._point or draft.point))
+            self.push_screen(places.made(place, self._point or draft.point))
 
     def _returned(self, seat: Seat | None) -> None:
         if seat is None:
@@ -228,7 +251,7 @@ class FullScreen(App[None]):
             room.seat_changed()
 
     def _close_all_but_home(self) -> None:
-        while isinstance(self.screen, Room) and not isinstance(self.screen, WorklistScreen):
+        while isinstance(self.screen, Room) and self.screen.place != places.HOME:
             self.screen.closing()
             self.pop_screen()
 

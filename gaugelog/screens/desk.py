@@ -5,16 +5,16 @@ from __future__ import annotations
 from collections.abc import Callable
 from dataclasses import dataclass, field
 from pathlib import Path
+from threading import Lock
 from time import monotonic
 from typing import TYPE_CHECKING
 
 from gaugelog.errors import KeyTrouble, Refused
-from gaugelog.journal.keys import KeyFolder, Signer
-from gaugelog.ledger.people import PersonRow
 from gaugelog.screens.viewer import Viewer
-from gaugelog.work.logbook import Logbook
 
 if TYPE_CHECKING:
+    from gaugelog.journal.keys import KeyFolder, Signer
+    from gaugelog.work.logbook import Logbook
     from gaugelog.work.ports import RecordMaker
 
 IDLE_SECONDS = 15 * 60.0
@@ -57,6 +57,8 @@ class Desk:
 
         Raises KeyTrouble for a wrong secret or a missing key, Refused for someone not enrolled.
         """
+        from gaugelog.ledger.people import PersonRow
+
         if not person.strip():
             raise KeyTrouble("Who signs was not said.", "Type your id.")
         with self.logbook.reading() as view:
@@ -86,3 +88,31 @@ class Desk:
         if self.seat is None:
             raise KeyTrouble("Nobody is signed on.", "Sign on first.")
         return self.seat.signer
+
+
+class Opening:
+    """A desk that is there already, or is opened once, by whoever needs it first."""
+
+    def __init__(self, desk: Desk | Callable[[], Desk]) -> None:
+        self._desk = desk if isinstance(desk, Desk) else None
+        self._open = desk if not isinstance(desk, Desk) else None
+        self._lock = Lock()
+
+    @property
+    def done(self) -> bool:
+        """Whether the desk is there."""
+        return self._desk is not None
+
+    @property
+    def desk(self) -> Desk:
+        """The desk. Raises KeyTrouble while it is not there."""
+        if self._desk is None:
+            raise KeyTrouble("The logbook is not open yet.", "Wait a moment.")
+        return self._desk
+
+    def wait(self) -> Desk:
+        """The desk, opened now if it was not; slow, so never on the thread that draws."""
+        with self._lock:
+            if self._desk is None and self._open is not None:
+                self._desk = self._open()
+        return self.desk

@@ -16,7 +16,7 @@ from textual.widgets import Input
 
 from gaugelog.errors import GaugelogError
 from gaugelog.screens.keys_line import KeysLine
-from gaugelog.screens.words import CALM, Words, defect, plain, told
+from gaugelog.screens.words import CALM, Words, defect, plain, show_unseen, told
 
 if TYPE_CHECKING:
     from gaugelog.screens.app import FullScreen
@@ -112,6 +112,12 @@ class Dialog(ModalScreen[T | None], Generic[T]):
                 return
         if fields:
             fields[0].focus()
+
+    def on_input_changed(self, event: Input.Changed) -> None:
+        """What is pasted is shown as it is; a secret is left alone."""
+        event.stop()
+        if not event.input.password:
+            show_unseen(event.input)
 
     def on_input_submitted(self, event: Input.Submitted) -> None:
         """Enter: the next empty field, or the deed when none is left."""

@@ -15,7 +15,7 @@ from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.routes import StepInput
 from gaugelog.screens.drafts import Carried
 from gaugelog.screens.room import show
-from gaugelog.screens.words import BAD, CALM, WAIT, Words, plain
+from gaugelog.screens.words import BAD, CALM, WAIT, Words, plain, show_unseen
 
 REASON = StepInput(name="~reason", kind="text", prompt="Why is it measured again?")
 NOTE = StepInput(name="~note", kind="text", prompt="Note, kept with the step", required=False)
@@ -115,6 +115,7 @@ class FieldRow(Vertical):
 
     def changed(self) -> None:
         """The person typed: it is carried no more, and a fault may be mended."""
+        show_unseen(self.input)
         self.carried = None
         self.beneath(plain(""))
 

@@ -8,7 +8,6 @@ from typing import TYPE_CHECKING, cast
 from textual.command import DiscoveryHit, Hit, Hits, Provider
 
 from gaugelog.screens.dialog import Dialog
-from gaugelog.work import looking
 
 if TYPE_CHECKING:
     from gaugelog.screens.app import FullScreen
@@ -26,7 +25,7 @@ class PointCommands(Provider):
 
     @property
     def _works(self) -> bool:
-        return self.full.desk.seat is not None and not isinstance(self.screen, Dialog)
+        return self.full.seated and not isinstance(self.screen, Dialog)
 
     async def discover(self) -> Hits:
         """Nothing before something is typed but how to find a point."""
@@ -37,6 +36,8 @@ class PointCommands(Provider):
         """Points whose label or zone is like what is typed."""
         if not self._works:
             return
+        from gaugelog.work import looking  # loaded when it is wanted: the sign-on comes first
+
         matcher = self.matcher(query)
         for point, zone in looking.points_called(self.full.desk.logbook):
             for place, what in _PLACES:

@@ -62,6 +62,8 @@ class Room(Screen[None]):
 
     def __init__(self) -> None:
         super().__init__()
+        self.place = ""
+        """Where this is, as keys name it; see `places`."""
         self._looking = False
         self.ready = False
         """Whether its widgets are there: until then nothing is drawn or changed."""

@@ -9,7 +9,7 @@ from textual.content import Content
 
 from gaugelog.screens.desk import Seat
 from gaugelog.screens.dialog import Dialog, Question
-from gaugelog.screens.words import lines, plain
+from gaugelog.screens.words import Words, lines, plain
 
 
 class SignOn(Dialog[Seat]):
@@ -20,6 +20,7 @@ class SignOn(Dialog[Seat]):
 
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("escape", "take_back", "Start over", priority=True),
+        Binding("ctrl+q", "app.quit", "Leave", priority=True),
     ]
 
     heading = "Sign on"
@@ -31,11 +32,18 @@ class SignOn(Dialog[Seat]):
 
     def explained(self) -> Content:
         """Which logbook, why it is asked, and whose keys are on this machine."""
-        desk = self.full.desk
+        opening = self.full.opening
+        if not opening.done:
+            return lines(plain("Opening the logbook …"), plain("Type on meanwhile."))
+        desk = opening.desk
         here = ", ".join(desk.keys.people())
         keys = f"Keys on this machine: {here}." if here else "No key is on this machine yet."
         why = [plain(self._why)] if self._why else []
         return lines(plain(desk.logbook.name, "bold"), *why, plain(keys))
+
+    def say_where(self) -> None:
+        """The logbook is open: say which it is."""
+        self.query_one(".explained", Words).say(self.explained())
 
     def questions(self) -> tuple[Question, ...]:
         """Who, and the secret."""
@@ -46,7 +54,7 @@ class SignOn(Dialog[Seat]):
 
     def answer(self, given: dict[str, str]) -> Seat:
         """Unlock the key."""
-        return self.full.desk.sign_on(given["person"], given["secret"])
+        return self.full.opening.wait().sign_on(given["person"], given["secret"])
 
     def action_take_back(self) -> None:
         """Empty the fields: another person signs on."""

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from textual.content import Content
-from textual.widgets import Static
+from textual.widgets import Input, Static
 
 from gaugelog.errors import Faulty, GaugelogError
 from gaugelog.visible import visible
@@ -90,6 +90,15 @@ class Words(Static):
     def text(self) -> str:
         """What stands there, without its styles."""
         return str(self.content)
+
+
+def show_unseen(field: Input) -> None:
+    """Make what was typed or pasted visible, where it holds what can't be seen or acts."""
+    shown = visible(field.value)
+    if shown != field.value:
+        with field.prevent(Input.Changed):
+            field.value = shown
+            field.cursor_position = len(shown)
 
 
 def _content(text: Content | str) -> Content:

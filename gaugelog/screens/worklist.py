@@ -16,7 +16,17 @@ from textual.widgets import Input, OptionList
 from textual.widgets.option_list import Option
 
 from gaugelog.screens.room import Room, look_keys
-from gaugelog.screens.words import BAD, CALM, STATES, WAIT, Words, lines, plain, state_word
+from gaugelog.screens.words import (
+    BAD,
+    CALM,
+    STATES,
+    WAIT,
+    Words,
+    lines,
+    plain,
+    show_unseen,
+    state_word,
+)
 from gaugelog.visible import visible
 from gaugelog.work import looking
 from gaugelog.work.looking import Listed
@@ -113,6 +123,7 @@ class WorklistScreen(Room):
     def on_input_changed(self, event: Input.Changed) -> None:
         """What is typed narrows the list."""
         event.stop()
+        show_unseen(event.input)
         self._draw()
 
     def on_input_submitted(self, event: Input.Submitted) -> None:
