@@ -136,7 +136,7 @@ class FullScreen(App[None]):
 
     def action_hand_over(self) -> None:
         """Lock the desk for the next person to sign on."""
-        self.lock("Who takes over? What was half typed is kept for its person.")
+        self.lock("Who takes over? What was half typed is kept for its person.", for_another=True)
 
     def action_help(self) -> None:
         """Tell what the screen is for, and its keys."""
@@ -163,12 +163,16 @@ class FullScreen(App[None]):
         self._leaving()
         self.exit()
 
-    def lock(self, why: str) -> None:
-        """Forget the unlocked key and ask who is there; what is half typed is put away."""
+    def lock(self, why: str, *, for_another: bool = False) -> None:
+        """Forget the unlocked key and ask who is there; what is half typed is put away.
+
+        Who sat here is named already, unless it is `for_another`.
+        """
         self._leaving()
         while isinstance(self.screen, Dialog):
             self.pop_screen()
-        last = self.desk.seat.person if self.desk.seat is not None else ""
+        seat = self.desk.seat
+        last = seat.person if seat is not None and not for_another else ""
         self.desk.sit(None)
         self.push_screen(SignOn(last, why), self._returned)
 
