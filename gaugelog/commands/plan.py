@@ -10,6 +10,7 @@ import typer
 from gaugelog.commands.passphrases import Secrets
 from gaugelog.commands.session import As, Json, Point, SecretFd, open_logbook, unlock
 from gaugelog.commands.talk import as_json, put, put_json, put_prose, put_table, say
+from gaugelog.commands.waiting import bar
 from gaugelog.errors import ExitCode
 from gaugelog.visible import counted
 from gaugelog.work.meanings import RELEASE_MEANING, SEEN_MEANING
@@ -48,7 +49,8 @@ def load(
     from gaugelog.work import plan
 
     logbook = open_logbook(ctx)
-    facts = plan.understand(logbook, folder)
+    with bar("Reading the plan"):
+        facts = plan.understand(logbook, folder)
     signer = unlock(logbook, as_, Secrets(secret_fd))
     if reason and plan.is_released(logbook):
         from gaugelog.work import revising
@@ -56,7 +58,8 @@ def load(
         _tell_changes(revising.revise(logbook, signer, facts, reason=reason))
         say("Next: gaugelog plan check")
         return
-    loaded = plan.load(logbook, signer, facts)
+    with bar("Keeping the plan") as progress:
+        loaded = plan.load(logbook, signer, facts, progress)
     say(
         f"Draft revision {loaded.revision} loaded: {counted(len(loaded.points), 'point')}, "
         f"{counted(len(loaded.circuits), 'circuit')}.",
@@ -72,7 +75,9 @@ def check(ctx: typer.Context, json: Json = False) -> None:
     """
     from gaugelog.work import plan
 
-    findings = plan.check(open_logbook(ctx))
+    logbook = open_logbook(ctx)
+    with bar("Checking the plan") as progress:
+        findings = plan.check(logbook, progress)
     if json:
         put_json([as_json(finding) for finding in findings])
     else:
@@ -176,5 +181,6 @@ def release(ctx: typer.Context, as_: As = "", secret_fd: SecretFd = None) -> Non
 
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose="release the plan")
-    released = plan.release(logbook, signer, meaning=RELEASE_MEANING)
+    with bar("Checking the plan once more") as progress:
+        released = plan.release(logbook, signer, meaning=RELEASE_MEANING, progress=progress)
     say(f"Revision {released.revision} is released. Next: gaugelog step next")

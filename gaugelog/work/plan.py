@@ -20,7 +20,7 @@ from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
 from gaugelog.ledger.routes import RouteRow
 from gaugelog.ledger.stock import LotRow
 from gaugelog.ledger.view import View
-from gaugelog.rules.fit import PlanFinding, check_plan
+from gaugelog.rules.fit import PlanFinding, Progress, check_plan
 from gaugelog.rules.planned import latest_campaign, planned_campaign
 from gaugelog.rules.progress import worst_state
 from gaugelog.rules.who import demand_role
@@ -61,6 +61,9 @@ def head(logbook: Logbook) -> PlanHead:
         return PlanHead(campaign.label, campaign.title, campaign.revision, campaign.state)
 
 
+_TOLD_EVERY = 50
+
+
 @no_collection()
 def understand(logbook: Logbook, folder: Path) -> PlanFacts:
     """Read the planner's files in `folder`. Raises Faulty naming every fault of every file."""
@@ -70,7 +73,9 @@ def understand(logbook: Logbook, folder: Path) -> PlanFacts:
 
 
 @no_collection()
-def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
+def load(
+    logbook: Logbook, signer: Signer, facts: PlanFacts, progress: Progress | None = None
+) -> PlanLoaded:
     """Keep a plan as the draft; an earlier draft is replaced. Returns what was loaded.
 
     Raises Refused when the one who acts is no planner, or the plan is released already; Faulty
@@ -88,7 +93,7 @@ def load(logbook: Logbook, signer: Signer, facts: PlanFacts) -> PlanLoaded:
                 "A released plan is changed by a revision: say why, with --reason.",
             )
         loaded = _loaded(facts, earlier)
-        _keep(deed, facts, loaded)
+        _keep(deed, facts, loaded, progress)
     return loaded
 
 
@@ -110,10 +115,10 @@ def _demand_plain_names(facts: PlanFacts) -> None:
 
 
 @no_collection()
-def check(logbook: Logbook) -> list[PlanFinding]:
+def check(logbook: Logbook, progress: Progress | None = None) -> list[PlanFinding]:
     """Everything found about the plan: ok, warning or refusal, each with figure and source."""
     with logbook.storage.reading() as reader, _as_drafted(reader.connection) as (view, campaign):
-        return check_plan(view, campaign, logbook.clock.now().local.date())
+        return check_plan(view, campaign, logbook.clock.now().local.date(), progress)
 
 
 @contextmanager
@@ -130,7 +135,9 @@ def _as_drafted(connection: Connection) -> Iterator[tuple[View, CampaignRow]]:
 
 
 @no_collection()
-def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
+def release(
+    logbook: Logbook, signer: Signer, *, meaning: str, progress: Progress | None = None
+) -> PlanReleased:
     """Release the draft for work: plan and criteria are frozen. Returns what was released.
 
     Raises Refused when the check refuses something, naming it, or there is no draft.
@@ -145,7 +152,7 @@ def release(logbook: Logbook, signer: Signer, *, meaning: str) -> PlanReleased:
                 "Work on: gaugelog step next. To change the plan: gaugelog plan load --reason WHY",
             )
         with _as_drafted(deed.writer.connection) as (view, campaign):
-            findings = check_plan(view, campaign, deed.moment.local.date())
+            findings = check_plan(view, campaign, deed.moment.local.date(), progress)
             points = [row.id for row in view.all(PointRow)]
         refused = [finding for finding in findings if finding.level == "refusal"]
         if refused:
@@ -225,17 +232,26 @@ def _loaded(facts: PlanFacts, earlier: CampaignRow | None) -> PlanLoaded:
     )
 
 
-def _keep(deed: Deed, facts: PlanFacts, loaded: PlanLoaded) -> None:
-    campaign = facts.campaign.id
+def _keep(
+    deed: Deed, facts: PlanFacts, loaded: PlanLoaded, progress: Progress | None = None
+) -> None:
+    campaign, total = facts.campaign.id, len(facts.points) + len(facts.circuits)
     deed.keep(facts.campaign, [campaign, *(article.id for article in facts.campaign.articles)])
     deed.keep(facts.criteria, [campaign, facts.criteria.id])
     for route in facts.routes:
         deed.keep(route, [campaign, route.id], evidence=[route.file])
-    for point in facts.points:
+    for done, point in enumerate(facts.points, start=1):
         deed.keep(point, _about_point(campaign, point))
-    for circuit in facts.circuits:
+        _tell(progress, done, total)
+    for done, circuit in enumerate(facts.circuits, start=len(facts.points) + 1):
         deed.keep(circuit, [campaign, circuit.id, circuit.channel, *circuit.grids])
+        _tell(progress, done, total)
     deed.keep(loaded, [campaign], evidence=loaded.files.values())
+
+
+def _tell(progress: Progress | None, done: int, total: int) -> None:
+    if progress and (done % _TOLD_EVERY == 0 or done == total):
+        progress(done, total)
 
 
 def _about_point(campaign: str, point: PointPlanned) -> Iterable[str]:

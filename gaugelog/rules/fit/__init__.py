@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from datetime import date
 
 from gaugelog.ledger.campaign import CampaignRow
@@ -21,7 +22,7 @@ from gaugelog.rules.fit.surface import surface_findings
 from gaugelog.rules.fit.warmth import warmth_findings
 from gaugelog.rules.fit.wiring import wiring_findings
 
-__all__ = ["Level", "PlanFinding", "check_plan"]
+__all__ = ["Level", "PlanFinding", "Progress", "check_plan"]
 
 _SUBJECTS = (
     point_findings,
@@ -39,12 +40,22 @@ _SUBJECTS = (
 _ORDER: dict[Level, int] = {"refusal": 0, "warning": 1, "ok": 2}
 
 
-def check_plan(view: View, campaign: CampaignRow, day: date) -> list[PlanFinding]:
+Progress = Callable[[int, int], None]
+"""Told how many parts are done and how many there are."""
+
+
+def check_plan(
+    view: View, campaign: CampaignRow, day: date, progress: Progress | None = None
+) -> list[PlanFinding]:
     """Everything found about a plan: refusals first, then warnings, then what is well.
 
     `day` is the day it is looked at: a lot may have expired by then.
     """
     plan = Plan(view, campaign)
-    found = [finding for subject in _SUBJECTS for finding in subject(plan)]
+    found: list[PlanFinding] = []
+    for done, subject in enumerate(_SUBJECTS, start=1):
+        found += subject(plan)
+        if progress:
+            progress(done, len(_SUBJECTS))
     found += stock_findings(plan, day)
     return sorted(found, key=lambda finding: _ORDER[finding.level])
