@@ -7,15 +7,18 @@ from html.parser import HTMLParser
 from pathlib import Path
 from typing import Any
 
+import jinja2
 import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
+from jinja2 import TemplateError
 
 from gaugelog.documents.content import RecordContent
 from gaugelog.documents.fetcher import ForbiddenReference
 from gaugelog.documents.fonts import Lettering
-from gaugelog.documents.page import record_html
+from gaugelog.documents.page import plain_environment, record_html
 from gaugelog.documents.render import draw, memory_fetcher, render_record
+from gaugelog.documents.shipped import templates
 from tests.documents import hostile
 from tests.documents.sample import sample
 
@@ -41,6 +44,34 @@ def test_the_ear_hears_what_is_opened(tmp_path: Path) -> None:
     with hostile.listening() as heard:
         canary.read_text(encoding="utf-8")
     assert [each for each in heard if "canary" in each]
+
+
+TEMPLATES_BEYOND = (
+    "../README.md",
+    "../../etc/hostname",
+    "/etc/hostname",
+    "fonts/../../pyproject.toml",
+    "..\\README.md",
+    "record.html/../../README.md",
+    "file:///etc/hostname",
+    "http://127.0.0.1:9/x",
+    "./../README.md",
+    "%2e%2e/README.md",
+)
+
+
+@pytest.mark.parametrize("name", TEMPLATES_BEYOND)
+def test_a_template_reaches_nothing_beyond_its_folder(name: str) -> None:
+    made = plain_environment(Lettering())
+    with hostile.listening() as heard:
+        for page in (f"{{% include '{name}' %}}", f"{{% extends '{name}' %}}"):
+            with pytest.raises(TemplateError):
+                made.from_string(page.replace("\\", "\\\\")).render()
+        with pytest.raises(TemplateError):
+            made.get_template(name)
+    # The library loads a module of its own to tell of an error.
+    allowed = (f"open {templates()}", f"open {Path(jinja2.__file__).parent}")
+    assert [] == [each for each in heard if not each.startswith(allowed)]
 
 
 @pytest.mark.parametrize(
