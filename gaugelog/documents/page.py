@@ -10,6 +10,7 @@ from jinja2 import Environment, FileSystemLoader, StrictUndefined
 from markupsafe import Markup
 
 from gaugelog.documents import wording
+from gaugelog.documents.compiled import COMPILED
 from gaugelog.documents.content import RecordContent
 from gaugelog.documents.diagram import bridge_diagram
 from gaugelog.documents.fonts import Lettering
@@ -80,6 +81,7 @@ def plain_environment(lettering: Lettering) -> Environment:
 
     made = Environment(
         loader=FileSystemLoader(templates()),
+        bytecode_cache=COMPILED,
         autoescape=True,
         undefined=StrictUndefined,
         finalize=finalize,
