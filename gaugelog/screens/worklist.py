@@ -15,6 +15,7 @@ from textual.widget import Widget
 from textual.widgets import Input, OptionList
 from textual.widgets.option_list import Option
 
+from gaugelog.screens.cursor import CursorList
 from gaugelog.screens.room import Room, look_keys
 from gaugelog.screens.words import (
     BAD,
@@ -84,7 +85,7 @@ class WorklistScreen(Room):
             classes="field",
         )
         yield Words(id="columns")
-        table = OptionList(id="points", markup=False)
+        table = CursorList(id="points", markup=False)
         table.can_focus = False
         yield table
         yield Words(id="more")
