@@ -123,11 +123,12 @@ class Listing(Room, Generic[T]):
             self.tell_error(error)
             return
         if asked != self._asked:
-            self._asked = asked
-            self.look_again(lambda: self.read(seat.person), self._read)
+            self.look_again(lambda: (asked, self.read(seat.person)), self._read)
 
-    def _read(self, found: T) -> None:
-        self.found = found
+    def _read(self, answer: tuple[tuple[str, int], T]) -> None:
+        if self.found is None:
+            self.tell("")  # what kept it from being read
+        self._asked, self.found = answer
         self._draw()
         self.draw_bar()
         if not self._rows and not self.query_one("#find", Input).value:

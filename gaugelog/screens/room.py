@@ -65,6 +65,7 @@ class Room(Screen[None]):
         self.place = ""
         """Where this is, as keys name it; see `places`."""
         self._looking = False
+        self._look_due: Callable[[], None] | None = None
         self.ready = False
         """Whether its widgets are there: until then nothing is drawn or changed."""
         self._doing = ""
@@ -185,9 +186,11 @@ class Room(Screen[None]):
     def look_again(self, act: Callable[[], T], then: Callable[[T], None]) -> None:
         """Look at what is kept, on another thread, and say nothing of it unless it fails.
 
-        The keys work meanwhile, and what was told stands. While one look runs none is begun.
+        The keys work meanwhile, and what was told stands. While one look runs, the last one that
+        was asked for waits its turn: it is for who sits here now, and sees what is kept by then.
         """
         if self._looking:
+            self._look_due = lambda: self.look_again(act, then)
             return
         self._looking = True
 
@@ -210,8 +213,11 @@ class Room(Screen[None]):
         """A look has ended: show what was found."""
         message.stop()
         self._looking = False
+        due, self._look_due = self._look_due, None
         if self.is_mounted:
             message.act()
+            if due is not None:
+                due()
 
     def _finish(self, act: Callable[[], None]) -> None:
         self.post_message(self.Finished(act))

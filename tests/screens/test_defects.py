@@ -2,12 +2,16 @@
 
 from __future__ import annotations
 
+import threading
+
 import pytest
 
-from gaugelog.screens.desk import Desk
+from gaugelog.errors import StorageTrouble
+from gaugelog.screens.desk import Desk, Seat
 from gaugelog.screens.evidence import EvidenceScreen
 from gaugelog.screens.worklist import WorklistScreen
-from gaugelog.work.reviewing import evidence_of
+from gaugelog.work.logbook import Logbook
+from gaugelog.work.reviewing import Waiting, evidence_of, waiting_for_review
 from tests.screens.conftest import At
 from tests.screens.pilot import LARGE, Seen, run_screen
 from tests.work.job import WORD
@@ -50,3 +54,53 @@ def test_a_look_that_fails_is_told_and_the_next_one_shows(
 
     job = at(2)
     run_screen(job.book, job.folder, play, place="review", point="FB-1", size=LARGE)
+
+
+def test_a_look_for_another_person_is_not_lost_while_one_runs(
+    at: At, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    gate, asked = threading.Event(), []
+
+    def slowly(book: Logbook, person: str) -> list[Waiting]:
+        asked.append(person)
+        if person == "q.reyes":
+            gate.wait(5)
+        return waiting_for_review(book, person)
+
+    async def play(seen: Seen) -> None:
+        monkeypatch.setattr("gaugelog.screens.review.waiting_for_review", slowly)
+        await seen.sign_on("q.reyes")
+        seen.app.go("review")
+        await seen.pilot.pause()
+        seen.app.desk.sit(Seat(job.keys["t.okoro"], "Tobe Okoro"))
+        seen.room.seat_changed()
+        gate.set()
+        await seen.rest()
+        assert "1 wait, 0 for you" in seen.lines()[0]
+        assert ["q.reyes", "t.okoro"] == asked
+
+    job = at(18)
+    job.submit()
+    run_screen(job.book, job.folder, play)
+
+
+def test_a_list_that_could_not_be_read_is_read_when_it_can_be(
+    at: At, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    def broken(*_: object) -> None:
+        raise StorageTrouble("The logbook can't be read.", "Look at the disk.")
+
+    async def play(seen: Seen) -> None:
+        monkeypatch.setattr("gaugelog.screens.review.waiting_for_review", broken)
+        await seen.sign_on("q.reyes")
+        await seen.keys("f3")
+        assert "✗ The logbook can't be read." in seen.text()
+        monkeypatch.setattr("gaugelog.screens.review.waiting_for_review", waiting_for_review)
+        seen.room.facts_changed()
+        await seen.rest()
+        assert "1 wait, 1 for you" in seen.lines()[0]
+        assert "can't be read" not in seen.text()
+
+    job = at(18)
+    job.submit()
+    run_screen(job.book, job.folder, play)
