@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-from gaugelog.errors import Refused
+from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.pictures import Picture
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
@@ -17,6 +17,7 @@ from gaugelog.ledger.view import View
 from gaugelog.rules.progress import demand_step, remedy_for, route_for, state_of
 from gaugelog.rules.who import demand_role
 from gaugelog.work.doing import about, observed_at, point_row, utc_text
+from gaugelog.work.inputs import LONGEST_TEXT
 from gaugelog.work.kept import text_to_keep
 from gaugelog.work.logbook import Deed, Logbook
 
@@ -52,6 +53,9 @@ def add(
     `at` is when they were taken, if not now. Raises Refused when the point is at rest or the step
     lies ahead, Faulty for a time or text that can't be kept.
     """
+    if len(note) > LONGEST_TEXT:
+        what = f"has {len(note)} characters; {LONGEST_TEXT} are kept at most."
+        raise Faulty([Fault("note", what, "Say what the photo shows.")])
     with logbook.deed(signer) as deed:
         row = point_row(deed.view, point)
         demand_role(deed.view, signer.person, "technician")

@@ -162,6 +162,14 @@ def test_a_photo_at_a_time_to_come_or_of_no_point_is_refused(job: Job, photo: Pa
     assert [] == photos.kept(job.book)
 
 
+def test_a_note_that_no_page_could_hold_is_refused(job: Job, photo: Path) -> None:
+    with pytest.raises(Faulty) as caught:
+        add(job, photo, note="x" * 100_000)
+    assert "has 100000 characters; 2000 are kept at most." == caught.value.faults[0].what
+    assert [] == photos.kept(job.book)
+    assert "x" * 2000 == add(job, photo, note="x" * 2000)[0].note
+
+
 def test_a_missing_or_altered_photo_is_named_by_the_check(job: Job, photo: Path) -> None:
     (kept,) = add(job, photo)
     assert check_logbook(job.book).ok
