@@ -10,7 +10,7 @@ from typing import TextIO
 _NARROWEST = 20
 
 WHOLE_WORD = 12
-"""A word of so many letters or less is never broken in a table."""
+"""A word of so many letters or less is not broken after its hyphens either."""
 
 
 def folded(text: str, stream: TextIO) -> list[str]:

@@ -41,7 +41,7 @@ def next_(
         return
     put_table(
         "Worklist",
-        ["point", "zone", "state", "next step", "sent back, blocked by"],
+        ["point", "zone", "state", "next step", "read first, blocked by"],
         [
             [row.point, row.zone, row.state, row.title, " ".join([*row.sent_back, *row.blocks])]
             for row in rows

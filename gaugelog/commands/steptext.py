@@ -29,7 +29,7 @@ def tell_step(found: NextStep) -> None:
 def describe(found: NextStep) -> None:
     """The step in hand: why it was sent back, instruction, cautions, plan, times, blocks."""
     put(f"{found.point}, zone {found.zone}: {found.state}")
-    put(*(line for told in found.sent_back for line in wrapped(told, "SENT BACK: ")))
+    put(*(line for told in found.sent_back for line in wrapped(told, "READ FIRST: ")))
     if found.step is not None:
         _describe(found, found.step.hold)
     put(*([""] if found.blocks and found.step else []))

@@ -6,13 +6,16 @@ import textwrap
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from typing import TYPE_CHECKING
 
-from gaugelog.commands.folding import WHOLE_WORD, broken
+from gaugelog.commands.folding import broken
 
 if TYPE_CHECKING:
     from rich.console import Console
 
 _BETWEEN = 3
 """How far two columns stand apart."""
+
+_LONGEST_WHOLE = 32
+"""A word of so many letters or less, such as a printed head, is never broken in a column."""
 
 Rows = list[list[str]]
 Widest = Callable[[Iterable[str]], int]
@@ -99,6 +102,6 @@ def _longest(cells: Iterable[str]) -> int:
 
 
 def _least(cells: Iterable[str]) -> int:
-    """How narrow a column may get: its words stay whole, those of a dozen letters or less."""
+    """How narrow a column may get: its words stay whole, unless they are very long."""
     words = (word for cell in cells for word in cell.split())
-    return max((len(word) for word in words if len(word) <= WHOLE_WORD), default=1)
+    return max((len(word) for word in words if len(word) <= _LONGEST_WHOLE), default=1)

@@ -100,6 +100,15 @@ def test_the_first_steps_are_led_and_kept(job: Path, command: Command) -> None:
     assert "Degrease" in command("step", "next", "FB-1").out
 
 
+def test_what_is_to_be_read_first_stands_first(job: Path, command: Command) -> None:
+    rain = ("rain stopped the work", "--as", "t.okoro")
+    assert 0 == command("step", "note", "FB-1", *rain, secrets=f"{WORD}\n").code
+    first, second, *_ = command("step", "next", "FB-1").out.splitlines()
+    assert first.startswith("FB-1, zone midspan")
+    assert second.startswith("  READ FIRST: Note (access) by t.okoro (XX), ")
+    assert "rain stopped the work" in " ".join(command("step", "next").out.split())
+
+
 def test_another_gauges_value_is_refused_before_it_is_a_reading(
     job: Path, command: Command
 ) -> None:

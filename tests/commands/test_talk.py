@@ -69,6 +69,19 @@ def test_a_table_that_is_too_wide_breaks_long_words_after_their_hyphens(
     assert {"North-", "abutment-", "room-", "temperature-", "bond-metal"} <= words
 
 
+def test_a_head_is_never_broken(
+    monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
+) -> None:
+    monkeypatch.setattr("sys.stdout.isatty", lambda: True)
+    head = "137:ABCDEFGHIJKLMNOPQRSTUVWXYZ"
+    for others in range(8):
+        row = [head, *["somebody"] * others]
+        put_table("Records", ["head", *["by"] * others], [row], empty="")
+        told = capsys.readouterr().out
+        assert head in told
+        assert others == told.count("somebody")
+
+
 @pytest.mark.parametrize(
     ("cell", "lines"),
     [
