@@ -32,7 +32,7 @@ from tests.work.job import Job, released_job
 pytestmark = [pytest.mark.bench, pytest.mark.xdist_group("bench")]
 
 POINTS = 2000
-_TIMES = 12
+_TIMES = 20
 
 OURS = """
 import os
