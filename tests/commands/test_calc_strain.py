@@ -203,7 +203,7 @@ def test_only_a_rosette_is_drawn_and_into_a_place_that_can_be(
         "--plot",
         str(tmp_path / "no" / "where.svg"),
     )
-    assert 3 == nowhere.code
+    assert 6 == nowhere.code
     assert "can't be written" in nowhere.err
 
 

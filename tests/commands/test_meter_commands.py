@@ -68,6 +68,6 @@ def test_packs_that_come_later_are_received_and_a_wrong_file_is_one_fault(
         f"{lots[0]}\n{row.replace('K7-03', 'K7-77')}\n", encoding="utf-8"
     )
     told = act("stock", "receive", str(demo / "more.csv"))
-    assert (0, True) == (told.code, "1 packs more of lots in stock" in told.err), told.err
+    assert (0, True) == (told.code, "1 pack more of lots in stock" in told.err), told.err
     told = act("stock", "receive", str(demo / "references.toml"))
     assert (3, 1) == (told.code, told.err.count("✗")), told.err

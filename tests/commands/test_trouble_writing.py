@@ -163,7 +163,7 @@ def test_ctrl_c_is_told_and_has_a_code_of_its_own(
 def test_ctrl_c_before_the_command_line_is_read_has_the_same_code(
     desk: Desk, monkeypatch: pytest.MonkeyPatch
 ) -> None:
-    def stopped() -> None:
+    def stopped(*_: object, **__: object) -> None:
         raise KeyboardInterrupt
 
     monkeypatch.setattr(application, "application", stopped)
