@@ -158,7 +158,7 @@ def test_only_a_gauge_that_was_given_up_is_said_to_be_gone(whole: Path) -> None:
 def test_what_the_summary_says_to_type_runs(
     whole: Path, played: tuple[Path, str], command: Command
 ) -> None:
-    lines = re.findall(r"gaugelog ([^#\n]+?)\s+#", played[1])
+    lines = re.findall(r"gaugelog (\S[^#\n]*?)\s+#", played[1])
     assert any(line.startswith("step do") for line in lines)
     for line in lines:
         words = shlex.split(line)
