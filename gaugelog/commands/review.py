@@ -13,6 +13,10 @@ from gaugelog.commands.talk import say
 from gaugelog.work.meanings import ACCEPT_MEANING, SUBMIT_MEANING
 
 
+def _flagged(flags: tuple[str, ...]) -> list[str]:
+    return [f"LOOK INTO: {flag}" for flag in flags]
+
+
 def submit(
     ctx: typer.Context,
     point: Point,
@@ -30,6 +34,7 @@ def submit(
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"submit {point}")
     done = reviews.submit(logbook, signer, maker, point=point, meaning=meaning)
     say(
+        *_flagged(done.flags),
         f"{point}: record revision {done.revision} signed and submitted; head {done.head}.",
         f"Next, by a reviewer: gaugelog accept {point} --as ID",
     )
@@ -49,6 +54,7 @@ def accept(
     logbook = open_logbook(ctx)
     signer = unlock(logbook, as_, Secrets(secret_fd), purpose=f"accept {point}")
     done = reviews.accept(logbook, signer, PdfRecordMaker(), point=point, meaning=meaning)
+    say(*_flagged(done.flags))
     say(f"{point} is accepted; head {done.head}. Next: gaugelog record {point}")
 
 

@@ -52,6 +52,7 @@ def _describe(found: NextStep, hold: bool) -> None:
         )
     times = [window.sentence for window in found.windows if window.open]
     put(*([""] if times else []), *(line for time in times for line in wrapped(time, "Time: ")))
+    put(*(line for flag in found.flags for line in wrapped(flag, "LOOK INTO: ")))
 
 
 def _blocked(found: NextStep, block: str) -> list[str]:

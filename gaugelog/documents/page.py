@@ -52,7 +52,7 @@ def record_html(content: RecordContent) -> str:
     return page.render(
         record=content,
         summary=summary(content),
-        notices=notices_of(lettering),
+        notices=[*to_look_into(content), *notices_of(lettering)],
         diagrams=[bridge_diagram(circuit) for circuit in content.circuits],
         wirings=[wiring_list(circuit) for circuit in content.circuits],
         titles={step.step: step.title for step in content.steps},
@@ -111,6 +111,16 @@ def summary(content: RecordContent) -> str:
     counted = ", ".join(f"{count} {word}" for word, count in words.items())
     again = sum(not (each.latest or each.earlier_gauge) for each in content.readings)
     return f"{counted}; {again} measured again" if again else counted
+
+
+def to_look_into(content: RecordContent) -> list[str]:
+    """What was flagged in readings that stand, though it did not rule."""
+    return [
+        f"To look into, {reading.check} {reading.stage} of {reading.subject}: {flag}"
+        for reading in content.readings
+        if reading.latest
+        for flag in reading.verdict.flags
+    ]
 
 
 def notices_of(lettering: Lettering) -> list[str]:

@@ -95,6 +95,8 @@ def judged(reading: ReadingShown) -> str:
         return f"{sign}{quantity(tidy(reading.result))}"
     if reading.qualifier == "overload":
         return "overload"
+    if reading.value is None:
+        return "–"  # a mark, no number: it stands as typed
     sign = "" if reading.qualifier == "=" else f"{reading.qualifier}\u00a0"
     return f"{sign}{quantity(reading.value)}"
 

@@ -96,9 +96,12 @@ def _check(each: Fields) -> CheckCriterion:
         physics=each.texts("physics"),
         expected=each.maybe_quantity("expected", units, positive=True),
         largest_test_voltage=each.maybe_quantity("largest_test_voltage", ("V",), positive=True),
+        per=each.maybe_quantity("per", ("s", "min", "h", "d"), positive=True),
+        bandwidth=each.maybe_quantity("bandwidth", ("Hz", "kHz"), positive=True),
         source=each.text("source"),
     )
     _sides(each, found)
+    _counted(each, found)
     each.done()
     return found
 
@@ -133,6 +136,14 @@ def _expectation(each: Fields, found: CheckCriterion) -> None:
         each.fault("expected", "lies below at_least.")
     elif found.at_most is not None and found.expected.si() > limit.si():
         each.fault("expected", "lies above at_most.")
+
+
+def _counted(each: Fields, found: CheckCriterion) -> None:
+    """A time or a bandwidth belongs to the checks whose figure is counted over it."""
+    for name in ("per", "bandwidth") if each.sound("kind") else ():
+        if each.has(name) and CHECKS[found.check].counted != name:
+            kinds = ", ".join(kind.name for kind in CHECKS.values() if kind.counted == name)
+            each.fault(name, f"says nothing of {found.check}.", f"It belongs to {kinds}.")
 
 
 def _twice(tables: list[Fields], checks: tuple[CheckCriterion, ...]) -> None:

@@ -10,15 +10,24 @@ from gaugelog.intake.instruments import QUANTITY_UNITS
 from gaugelog.intake.typed import CHECK_UNITS
 from gaugelog.intake.units import unit_of
 from gaugelog.ledger.base import UNITS
+from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.routes import (
     AIR,
     AXIS,
+    BANDWIDTH,
     BOND_LINE,
+    EXPECTED_SIGN,
+    FIRST_WIRE,
+    GAUGE_TEMPERATURE,
     HUMIDITY,
+    LEAD_TEMPERATURE,
     MIXED,
     PLACE_X,
     PLACE_Y,
+    PRESSED,
     SURFACE,
+    ZERO_BEFORE,
+    ZERO_SEEN,
     InputKind,
     RouteStep,
     SkipRule,
@@ -34,7 +43,12 @@ LONG = 4000
 _TIMES = ("s", "min", "h", "d")
 _Bound = Literal["not before", "within"]
 _TYPES: dict[str, tuple[str, ...]] = {
-    "quantity": (AIR, HUMIDITY, SURFACE, BOND_LINE, MIXED, PLACE_X, PLACE_Y, AXIS),
+    "quantity": (
+        *(AIR, HUMIDITY, SURFACE, BOND_LINE, MIXED, PLACE_X, PLACE_Y, AXIS),
+        *(FIRST_WIRE, ZERO_BEFORE, PRESSED, ZERO_SEEN, GAUGE_TEMPERATURE, LEAD_TEMPERATURE),
+        BANDWIDTH,
+    ),
+    "text": (EXPECTED_SIGN,),
     "consumable": get_args(ConsumableKind),
     "instrument": tuple(QUANTITY_UNITS),
 }
@@ -95,6 +109,18 @@ def _check_readings(each: Fields, step: RouteStep) -> None:
     checks = [item.check for item in readings if item.check]
     if len(set(checks)) != len(checks):
         each.fault("input", "has two readings of one check.", "Give each a step of its own.")
+    _check_beside(each, step, checks)
+
+
+def _check_beside(each: Fields, step: RouteStep, checks: list[str]) -> None:
+    """What a check works its result out of is asked for in the same step."""
+    types = {item.type for item in step.inputs if item.required}
+    for check in checks if each.sound("input") else ():
+        wanted = (EXPECTED_SIGN,) if check == "polarity" else CHECKS[check].beside
+        for missing in (item for item in wanted if item not in types):
+            kind = "text" if missing == EXPECTED_SIGN else "quantity"
+            what = f"has a reading of {check} without {missing}."
+            each.fault("input", what, f"Ask for it as a {kind} of that type.")
 
 
 def _check_windows(each: Fields, step: RouteStep) -> None:
@@ -143,7 +169,7 @@ def _check_type(item: Fields, found: StepInput) -> None:
     if found.kind == "consumable" and not item.has("type"):
         item.fault("type", "is missing.", f"Kinds: {', '.join(types)}.")
     elif found.type and not types:
-        item.fault("type", "belongs to a consumable, an instrument or a quantity only.")
+        item.fault("type", "belongs to a consumable, an instrument, a quantity or a text only.")
     elif found.type == MIXED and found.unit not in _TIMES:
         item.fault("unit", "is no unit of time.", f"Units: {', '.join(_TIMES)}.")
     elif found.type and found.type not in types:

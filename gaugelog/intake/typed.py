@@ -47,6 +47,8 @@ def parse_reading(text: str, check: str) -> TypedReading:
     '20 GΩ'
     """
     typed, units = text.strip(), CHECK_UNITS[check]
+    if CHECKS[check].attribute:
+        return _mark(typed)
     if _is_overload(typed, units):
         return TypedReading("overload", None, typed)
     match = _match(typed, "reading", units)
@@ -54,6 +56,13 @@ def parse_reading(text: str, check: str) -> TypedReading:
     if found.si() < 0 and check not in SIGNED:
         raise _fault(typed, f"is below 0, which no {check} is.", "Measure again; mind the leads.")
     return TypedReading(_qualifier(match["sign"]), found, typed)
+
+
+def _mark(typed: str) -> TypedReading:
+    """A reading that is no number: the label of the channel that answered."""
+    if len(typed) > LONGEST:
+        raise _fault(typed, "is too long for a label.", "Type it as it stands on the channel.")
+    return TypedReading("=", None, typed)
 
 
 def parse_quantity(text: str, units: Sequence[str]) -> Quantity:

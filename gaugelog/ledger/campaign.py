@@ -132,6 +132,10 @@ class CheckCriterion(Part):
     expected: Quantity | None = None
     """What good work reaches: short of it, though within the limit, the reviewer is told."""
     largest_test_voltage: Quantity | None = None
+    per: Quantity | None = None
+    """For a drift: the time that the figure is meant for."""
+    bandwidth: Quantity | None = None
+    """For a noise: the bandwidth that the figure is meant at."""
     source: str
 
 

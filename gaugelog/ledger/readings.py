@@ -41,6 +41,8 @@ class Verdict(Part):
     guard_band: Quantity | None = None
     coverage: DecimalText = "2"
     reason: str = ""
+    flags: tuple[str, ...] = ()
+    """What a person should look into though it does not rule: a fall between stages."""
     rule: str
     """Name and version of the rule, `insulation 1`."""
 
@@ -66,6 +68,7 @@ class ReadingTaken(FactBody):
     range: str
     test_voltage: Quantity | None = None
     conditions: dict[str, Quantity] = {}
+    """What was entered beside it, by its type: a temperature, a bandwidth, the zero before."""
     observed_at: TimeText
     observed_by: Id
     reason: str = ""

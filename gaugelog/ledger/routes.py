@@ -27,6 +27,25 @@ MIXED = "time since mixing"
 PLACE_X, PLACE_Y, AXIS = "position x", "position y", "axis direction"
 """What a quantity stands for that is held against the planned place."""
 
+FIRST_WIRE = "first of the pair"
+"""A resistance to one wire of a pair; the reading beside it is that to the other."""
+
+ZERO_BEFORE, PRESSED = "zero before", "pressed"
+"""Strain before a gauge is pressed and while it is; the reading beside them is that after."""
+
+ZERO_SEEN, GAUGE_TEMPERATURE, LEAD_TEMPERATURE = (
+    "zero seen",
+    "gauge temperature",
+    "lead temperature",
+)
+"""A zero that a later one is held against, and how warm gauge and leads were."""
+
+BANDWIDTH = "bandwidth"
+"""Bandwidth that a noise was read at."""
+
+EXPECTED_SIGN = "expected sign"
+"""A text: the sign that a reading should have, `+` or `-`."""
+
 AIR, HUMIDITY, SURFACE = "air temperature", "relative humidity", "surface temperature"
 """What a quantity may stand for: rules on dew point and adhesive windows look for these."""
 

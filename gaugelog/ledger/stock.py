@@ -7,7 +7,7 @@ from typing import ClassVar, Literal
 
 from sqlmodel import Field, SQLModel
 
-from gaugelog.ledger.base import DateText, FactBody, Id, Part, Quantity
+from gaugelog.ledger.base import DateText, DecimalText, FactBody, Id, Part, Quantity
 from gaugelog.ledger.rows import At, Change, Known, Put, have
 
 GaugeState = Literal["on shelf", "in service", "removed", "scrapped"]
@@ -55,6 +55,11 @@ class LotReceived(FactBody):
     temperature_min: Quantity | None = None
     temperature_max: Quantity | None = None
     strain_limit: Quantity | None = None
+    thermal_output: tuple[DecimalText, ...] = ()
+    """Thermal output on the material of its class by the lot's sheet: coefficients of a
+    polynomial in °C, the constant first, µm/m."""
+    thermal_output_factor: DecimalText | None = None
+    """Gauge factor that it was measured with; none: that of the grid."""
     test_voltage_max: Quantity | None = None
     expires: DateText | None = None
     received_on: DateText

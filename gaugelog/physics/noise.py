@@ -114,6 +114,19 @@ def averaged_noise(effective: Number, count: int) -> Number:
     return not_negative("effective", effective) / sqrt(float(count))
 
 
+def noise_at_bandwidth(effective: Number, bandwidth: Number, wanted: Number) -> Number:
+    """White noise of one bandwidth as it would be at another: e √(B₂/B₁).
+
+    Hum and drift are not white and do not follow it. Units: those of the noise; both bandwidths
+    in hertz. Source: a white noise's power goes with the bandwidth; as `amplifier_noise`.
+
+    >>> noise_at_bandwidth(0.4e-6, 400.0, 100.0)
+    2e-07
+    """
+    ratio = not_negative("wanted", wanted) / positive("bandwidth", bandwidth)
+    return not_negative("effective", effective) * sqrt(ratio)
+
+
 def digital_step(span: Number, bits: int) -> Number:
     """Smallest step of a converter: its whole span over 2ⁿ.
 

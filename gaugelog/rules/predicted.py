@@ -120,13 +120,7 @@ def _shunt(known: Expected, taken: Taken, least: float) -> _Comparison:
 
 
 def _loop(known: Expected, taken: Taken, least: float) -> _Comparison:
-    layout = known.wired.circuit.layout
-    if len(set(layout.wires.values())) == len(layout.wires):
-        raise Refused(
-            f"In circuit {known.planned.arrangement} on {len(layout.wires)} wires no two wires "
-            "end at one tab, so there is no loop of wires alone.",
-            "Skip the step with that reason.",
-        )
+    demand_pair(known)
     predicted = _loop_predicted(known)
     tolerance = max(least, 2 * taken.on.uncertainty(taken.si))
     excess = taken.si - predicted
@@ -141,6 +135,17 @@ def _loop(known: Expected, taken: Taken, least: float) -> _Comparison:
     else:
         hint = "Look for wires that touch, or a shorter cable."
     return _Comparison("lead loop", "ohm", LOOP_SOURCE, predicted, tolerance, judgement, hint)
+
+
+def demand_pair(known: Expected) -> None:
+    """Raise Refused unless two wires of the circuit end at one tab."""
+    layout = known.wired.circuit.layout
+    if len(set(layout.wires.values())) == len(layout.wires):
+        raise Refused(
+            f"In a {known.planned.arrangement} circuit on {len(layout.wires)} wires no two wires "
+            "end at one tab, so there is no loop of wires alone.",
+            "Skip the step with that reason.",
+        )
 
 
 def _loop_predicted(known: Expected) -> float:

@@ -62,6 +62,8 @@ class NextStep:
     """What the plan says that the step needs."""
     sent_back: tuple[str, ...] = ()
     """Why work was sent back, until that is dealt with."""
+    flags: tuple[str, ...] = ()
+    """What was flagged at the point so far."""
 
     @property
     def title(self) -> str:

@@ -67,6 +67,47 @@ def judge_value(basis: Basis, check: str, stage: str, taken: Taken) -> Judged:
     return Judged(limits, _verdict(found, basis.criteria, uncertainty, taken.unit, rule))
 
 
+@dataclass(frozen=True, slots=True)
+class Worked:
+    """A result worked out of a reading and what was entered beside it; SI units.
+
+    `told` says how, in a sentence, or is empty.
+    """
+
+    value: float
+    uncertainty: float
+    unit: str
+    told: str = ""
+
+
+def judge_worked(basis: Basis, check: str, stage: str, worked: Worked) -> Judged:
+    """Judge a result worked out of a reading against the limits of its check and stage."""
+    limits = limits_for(basis, check, stage)
+    if check in SIGNED:
+        limits = _both_ways(limits)
+    allowed, rule = strictest(limits), f"{check} {VERSION}"
+    result = quantity(worked.value, worked.unit, 4)
+    if allowed is None:
+        verdict = _unlimited(rule)
+    else:
+        coverage = float(basis.criteria.coverage)
+        found = judge(worked.value, worked.uncertainty, allowed, coverage=coverage)
+        verdict = _verdict(found, basis.criteria, worked.uncertainty, worked.unit, rule)
+    reason = f"{worked.told} {verdict.reason}".strip()
+    return Judged(limits, verdict.model_copy(update={"reason": reason}), result)
+
+
+def worded(basis: Basis, check: str, found: Judgement, result: Quantity | None = None) -> Judged:
+    """A word that no figure of the criteria gave: nothing to compare, or no answer at all."""
+    verdict = _verdict(found, basis.criteria, None, "1", f"{check} {VERSION}")
+    return Judged((), verdict, result)
+
+
+def only_a_bound(taken: Taken) -> bool:
+    """Whether a reading is no value: beyond the range, or typed as more or less than one."""
+    return taken.value is None or taken.qualifier != "="
+
+
 def judge_change(basis: Basis, stage: str, before: Taken, after: Taken) -> Judged:
     """Judge a resistance by its change against an earlier one, in per cent of the earlier.
 

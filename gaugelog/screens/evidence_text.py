@@ -104,7 +104,8 @@ def _judged(reading: ReadingTaken) -> tuple[Cell, Cell]:
     """The value that was judged and its unit, apart so that the figures stand under each other."""
     judged = reading.result or reading.value
     if reading.qualifier == "overload" or judged is None:
-        return Cell("overload"), Cell("")
+        word = "overload" if reading.qualifier == "overload" else "–"
+        return Cell(word), Cell("")
     number, unit = _amount(judged)
     sign = f"{reading.qualifier} " if reading.qualifier in {">", "<"} else ""
     return Cell(f"{sign}{number.text}", number.style), unit

@@ -14,12 +14,13 @@ from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded
 from gaugelog.ledger.points import PointPlanned, PointRow
-from gaugelog.ledger.routes import RouteStep, StepInput
+from gaugelog.ledger.routes import EXPECTED_SIGN, RouteStep, StepInput
 from gaugelog.ledger.steps import Entered
 from gaugelog.ledger.stock import ConsumableReceived, ConsumableRow, LotReceived, LotRow
 from gaugelog.ledger.view import View
 from gaugelog.rules.article import article_of, forbids_cleaner
 from gaugelog.rules.barred import why_barred, why_gauge_barred
+from gaugelog.rules.proof import SIGNS
 from gaugelog.rules.shift import shift_demand, why_unchecked
 
 LONGEST_TEXT = 2000
@@ -170,7 +171,8 @@ def _instrument(asked: Asked, item: StepInput, text: str, where: str, found: Und
 
 def _demand_checked(asked: Asked, item: StepInput, meter: InstrumentAdded) -> None:
     """What the criteria ask of a meter at the start of a shift, for what is read on it here."""
-    readings = [CHECKS[each.check].quantity for each in asked.step.inputs if each.check]
+    kinds = [CHECKS[each.check] for each in asked.step.inputs if each.check]
+    readings = [kind.quantity for kind in kinds if not kind.attribute]
     measured = dict.fromkeys(readings or [item.type])
     demand = shift_demand(asked.view, asked.point.campaign)
     remedy = f"Take another, or: gaugelog instrument check {meter.label} reference=… reads=…"
@@ -193,6 +195,8 @@ def _quantity(asked: Asked, item: StepInput, text: str, where: str, found: Under
 def _text(asked: Asked, item: StepInput, text: str, where: str, found: Understood) -> None:
     if len(text) > LONGEST_TEXT:
         raise _fault(f"has {len(text)} characters; {LONGEST_TEXT} are kept at most.")
+    if item.type == EXPECTED_SIGN and text.casefold() not in SIGNS:
+        raise _fault(f"“{text[:40]}” is no sign.", "Type + or −, or tension or compression.")
     found.entered[item.name] = Entered(typed=text)
 
 

@@ -2,52 +2,26 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-
 from gaugelog.errors import Fault, Faulty, Refused
 from gaugelog.intake.typed import TypedReading
 from gaugelog.journal.ids import new_id
-from gaugelog.ledger.campaign import (
-    CampaignRow,
-    Channel,
-    ChannelRow,
-    CriteriaAgreed,
-    CriteriaRow,
-)
+from gaugelog.ledger.base import Quantity
+from gaugelog.ledger.campaign import CampaignRow, CriteriaAgreed, CriteriaRow
 from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded
-from gaugelog.ledger.points import GridRow, PointPlanned, PointRow
-from gaugelog.ledger.readings import LimitFound, ReadingRow, ReadingTaken
-from gaugelog.ledger.routes import RouteStep
+from gaugelog.ledger.points import GridRow, PointPlanned
+from gaugelog.ledger.readings import LimitFound, ReadingTaken
+from gaugelog.ledger.routes import LEAD_TEMPERATURE
 from gaugelog.ledger.stock import GaugeRow, LotReceived, LotRow
-from gaugelog.ledger.view import View
-from gaugelog.rules.accuracy import range_for, taken_on
-from gaugelog.rules.certificate import certificate_at
+from gaugelog.rules.accuracy import RangeTaken
 from gaugelog.rules.digits import probability_text
-from gaugelog.rules.limits import Basis, criteria_for
+from gaugelog.rules.limits import Basis
 from gaugelog.rules.plausible import demand_plausible
-from gaugelog.rules.predicted import Expected, judge_prediction
 from gaugelog.rules.shift import in_force
-from gaugelog.rules.verdicts import Judged, Taken, judge_change, judge_value
+from gaugelog.rules.verdicts import Judged, Taken
 from gaugelog.rules.voltage import range_within, voltage_bounds
 from gaugelog.rules.windows import time_of
-from gaugelog.rules.wired import planned_circuit, wired
-
-RECEIVED = "received"
-"""The stage that a change of resistance is counted from."""
-
-
-@dataclass(frozen=True, slots=True)
-class Observation:
-    """Who took a reading, when (UTC text), in which step of which point, on which subject."""
-
-    view: View
-    point: PointRow
-    step: RouteStep
-    subject: str
-    observed_at: str
-    observed_by: str
-    reason: str
+from gaugelog.work.judging import Observation, judge_mark, judge_reading, latest
 
 
 def reading_taken(
@@ -61,13 +35,14 @@ def reading_taken(
     where = f"point {seen.point.label}, step {seen.step.id}, {check}"
     basis = _basis(seen, gauge)
     demand_plausible(check, typed.quantity, basis.lot, where)
-    bounds = voltage_bounds(basis, check, seen.step.stage)
-    span = range_within(bounds, instrument, check, typed.quantity, typed.qualifier)
-    taken = Taken(typed.quantity, typed.qualifier, span)
-    earlier = _latest(seen, check, seen.step.stage)
+    span = None
+    if not CHECKS[check].attribute:
+        bounds = voltage_bounds(basis, check, seen.step.stage)
+        span = range_within(bounds, instrument, check, typed.quantity, typed.qualifier)
+    earlier = latest(seen, check, seen.step.stage)
     if earlier is not None and not seen.reason.strip():
         raise Faulty([Fault(where, "was measured before.", "Say why again, with --reason.")])
-    judged, compared = _judge(seen, basis, check, taken)
+    judged, compared = _judged(seen, basis, check, typed, span)
     return ReadingTaken(
         id=new_id(),
         point=seen.point.id,
@@ -81,8 +56,9 @@ def reading_taken(
         value=typed.quantity,
         gauge=gauge,
         instrument=instrument.id,
-        range=span.range.name,
-        test_voltage=span.range.test_voltage,
+        range=span.range.name if span is not None else "",
+        test_voltage=span.range.test_voltage if span is not None else None,
+        conditions=_conditions(seen, check),
         observed_at=seen.observed_at,
         observed_by=seen.observed_by,
         reason=seen.reason if earlier is not None else "",
@@ -100,12 +76,27 @@ def _checked(seen: Observation, basis: Basis, check: str, instrument: Instrument
     return in_force(seen.view, instrument.id, measured, when, basis.criteria.shift_check)
 
 
+def _judged(
+    seen: Observation, basis: Basis, check: str, typed: TypedReading, span: RangeTaken | None
+) -> tuple[Judged, str | None]:
+    if span is None:
+        return judge_mark(seen, basis, typed.typed), None
+    return judge_reading(seen, basis, check, Taken(typed.quantity, typed.qualifier, span))
+
+
+def _conditions(seen: Observation, check: str) -> dict[str, Quantity]:
+    """What was entered beside a reading and belongs to it."""
+    wanted = (*CHECKS[check].beside, *((LEAD_TEMPERATURE,) if check == "zero drift" else ()))
+    return {each: seen.beside[each] for each in wanted if each in seen.beside}
+
+
 def explain(reading: ReadingTaken) -> list[str]:
     """The verdict in plain lines: limits with the one that ruled, margin, probability, why."""
     verdict = reading.verdict
     lines = []
     if reading.result is not None:
-        lines.append(f"change {reading.result}")
+        word = "change" if reading.check == "resistance" else "judged"
+        lines.append(f"{word} {reading.result}")
     lines += [_limit_line(limit) for limit in reading.limits]
     if verdict.standard_uncertainty is not None:
         lines.append(
@@ -116,7 +107,7 @@ def explain(reading: ReadingTaken) -> list[str]:
         chance = probability_text(verdict.probability)
         equals = "" if chance[0] in "<>" else "= "
         lines.append(f"P {equals}{chance}, the probability of conformance (flat prior)")
-    return [*lines, verdict.reason]
+    return [*lines, verdict.reason, *(f"LOOK INTO: {flag}" for flag in verdict.flags)]
 
 
 def _limit_line(limit: LimitFound) -> str:
@@ -127,52 +118,6 @@ def _limit_line(limit: LimitFound) -> str:
         sides.append(f"at most {limit.at_most}")
     ruled = "ruling" if limit.rules else "also"
     return f"{ruled} limit: {' and '.join(sides)} by {limit.origin} ({limit.source})"
-
-
-def _judge(seen: Observation, basis: Basis, check: str, taken: Taken) -> tuple[Judged, str | None]:
-    if CHECKS[check].judged == "prediction":
-        return judge_prediction(_expected(seen, basis), check, seen.step.stage, taken), None
-    if not _judges_change(basis, check, seen.step.stage):
-        return judge_value(basis, check, seen.step.stage, taken), None
-    row = _latest(seen, check, RECEIVED)
-    if row is None:
-        raise Refused(
-            f"{seen.point.label} has no {check} as received to compare with.",
-            "Measure it as received first.",
-        )
-    before = _taken_before(seen.view, row)
-    return judge_change(basis, seen.step.stage, before, taken), row.id
-
-
-def _expected(seen: Observation, basis: Basis) -> Expected:
-    """What the circuit of this step predicts from: its plan, its readings, its channel."""
-    planned = planned_circuit(seen.view, seen.subject)
-    channel = seen.view.get(ChannelRow, planned.channel)
-    if channel is None:
-        raise Refused("The channel of this circuit is not known.", "Check the journal.")
-    spec = Channel.model_validate_json(channel.data)
-    return Expected(basis, planned, wired(seen.view, planned), spec)
-
-
-def _judges_change(basis: Basis, check: str, stage: str) -> bool:
-    figures = [item.at_most or item.at_least for item in criteria_for(basis, check, stage)]
-    return check == "resistance" and any(
-        figure is not None and figure.unit == "%" for figure in figures
-    )
-
-
-def _taken_before(view: View, row: ReadingRow) -> Taken:
-    reading = ReadingTaken.model_validate_json(row.data)
-    body = certificate_at(view, reading.instrument, row.seq)
-    span = next((taken_on(body, item) for item in body.ranges if item.name == reading.range), None)
-    if span is None:
-        span = range_for(body, reading.check, reading.value, reading.qualifier)
-    return Taken(reading.value, reading.qualifier, span)
-
-
-def _latest(seen: Observation, check: str, stage: str) -> ReadingRow | None:
-    rows = seen.view.all(ReadingRow, subject=seen.subject, check=check, stage=stage, latest=1)
-    return rows[-1] if rows else None
 
 
 def _basis(seen: Observation, gauge: str) -> Basis:

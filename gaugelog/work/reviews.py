@@ -12,6 +12,7 @@ from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted
 from gaugelog.ledger.view import View
 from gaugelog.rules.amended import under_amendment
 from gaugelog.rules.barred import demand_place_free
+from gaugelog.rules.flagged import flags_at
 from gaugelog.rules.progress import demand_changes_seen, demand_complete, demand_step
 from gaugelog.rules.untouched import demand_untouched
 from gaugelog.rules.who import demand_role, demand_second_person
@@ -23,10 +24,14 @@ from gaugelog.work.ports import RecordMaker, RecordRequest, Stamp
 
 @dataclass(frozen=True, slots=True)
 class SignedOff:
-    """A sign-off that was kept: the record's revision and the journal's new head, as printed."""
+    """A sign-off that was kept: the record's revision and the journal's new head, as printed.
+
+    `flags` are what was seen at the point and not judged, to be looked into.
+    """
 
     revision: int
     head: str
+    flags: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -54,6 +59,7 @@ def submit(
         row = point_row(view, point)
         demand_role(view, signer.person, "technician")
         demand_complete(view, row)
+        flags = flags_at(view, row)
         request = _request(view, row, head, meaning, logbook)
         pdf = maker.submitted(view, request, signer)
     with logbook.deed(signer) as deed:
@@ -72,7 +78,7 @@ def submit(
             revises=amended.revision if amended else None,
         )
         deed.keep(body, _about(deed.view, row), evidence=[file])
-    return SignedOff(request.revision, logbook.head().printed)
+    return SignedOff(request.revision, logbook.head().printed, flags)
 
 
 def accept(
@@ -86,6 +92,7 @@ def accept(
     with logbook.reading() as view:
         row, record = under_review(view, point, signer.person, "accept it")
         _demand_fit(view, row, record)
+        flags = flags_at(view, row)
         stamp = Stamp(
             signer.person,
             view.name(signer.person),
@@ -111,7 +118,7 @@ def accept(
             accepted_by=signer.person,
         )
         deed.keep(body, _about(deed.view, row), evidence=[file])
-    return SignedOff(record.revision, logbook.head().printed)
+    return SignedOff(record.revision, logbook.head().printed, flags)
 
 
 def give_back(

@@ -15,6 +15,7 @@ from gaugelog.ledger.steps import Entered, HoldDecided, StepDone, StepReopened, 
 from gaugelog.rules.air import air_troubles
 from gaugelog.rules.expected import short_of_expected
 from gaugelog.rules.facts import plan_facts
+from gaugelog.rules.flagged import flags_at
 from gaugelog.rules.mixed import mixed_troubles, unmixed_flags
 from gaugelog.rules.order import order_flag
 from gaugelog.rules.piece import demand_one_piece
@@ -35,10 +36,11 @@ from gaugelog.work.doing import (
 )
 from gaugelog.work.holds import decide
 from gaugelog.work.inputs import Asked, Understood, understand
+from gaugelog.work.judging import Observation
 from gaugelog.work.kept import demand_reason
 from gaugelog.work.logbook import Deed, Logbook
 from gaugelog.work.photos import Shows, keep_photo
-from gaugelog.work.readings import Observation, reading_taken
+from gaugelog.work.readings import reading_taken
 
 __all__ = ["StepOutcome", "do", "next_step", "redo", "skip", "worklist"]
 
@@ -54,7 +56,7 @@ def next_step(logbook: Logbook, point: str) -> NextStep:
         if found.step is None:
             return found
         facts = plan_facts(view, row, found.step, found.subject, found.number)
-        return replace(found, facts=tuple(facts))
+        return replace(found, facts=tuple(facts), flags=flags_at(view, row))
 
 
 def rehearse(
@@ -277,6 +279,9 @@ def _readings(doing: Doing, got: Understood, reason: str) -> list[ReadingTaken]:
         utc_text(doing.observed),
         doing.making.signer.person,
         reason,
+        doing.making.moment,
+        {kinds[name].type: each for name, each in got.quantities.items() if kinds[name].type},
+        {kinds[name].type: each.typed for name, each in got.entered.items() if kinds[name].type},
     )
     return _each(
         partial(reading_taken, seen, kinds[name].check, typed, got.instrument, _gauge(doing, got))
@@ -334,6 +339,7 @@ def _keep_done(doing: Doing, got: Understood, readings: list[ReadingTaken], note
         for reading in readings
         if reading.verdict.word != "pass"
     ]
+    flags += [flag for reading in readings for flag in reading.verdict.flags]
     flags += _short(doing, readings)
     body = StepDone(
         point=doing.row.id,

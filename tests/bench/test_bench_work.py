@@ -17,11 +17,11 @@ from gaugelog.ledger import fold, schema
 from gaugelog.ledger.buffer import Buffer
 from gaugelog.work import steps
 from tests.bench.compare import compare
-from tests.work.job import Job, released_job
+from tests.work.job import INSULATION, Job, released_job
 
 pytestmark = [pytest.mark.bench, pytest.mark.xdist_group("bench")]
 
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
 READINGS = 10_000
 
 
@@ -29,7 +29,7 @@ READINGS = 10_000
 def job(tmp_path: Path) -> Job:
     """A point at its insulation check, with one failed reading."""
     made = released_job(tmp_path)
-    made.walk(9)
+    made.walk(8)
     made.do("t.okoro", FAILING)
     return made
 

@@ -32,9 +32,9 @@ from tests.commands.hostile_job import HOSTILE, REFUSED, SMALL_JOB, every_field,
 from tests.foreign import needs
 from tests.pictures import camera_jpeg
 from tests.work import job as jobs
-from tests.work.job import CHEAP_ROUNDS, WALK, Job, start_job
+from tests.work.job import CHEAP_ROUNDS, INSULATION, WALK, Job, start_job
 
-FAILED = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+FAILED = {**INSULATION, "insulation": "0.4 GΩ"}
 LEAST_KEPT = 60
 """Fields of the planner's files that keep free text; a guard against a walk that finds none."""
 

@@ -80,7 +80,7 @@ def test_a_head_that_is_none_is_told_with_what_it_looks_like(demo: Path, command
 
 def test_entries_are_told_by_label_and_in_words(demo: Path, command: Command) -> None:
     told = command("journal", "show", "FB-2", "--last", "40")
-    assert "insulation bonded 0.42 GΩ, FAIL" in told.out
+    assert "insulation cabled 0.42 GΩ, FAIL" in told.out
     assert "attempt 2" in told.out
 
 

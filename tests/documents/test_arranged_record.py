@@ -37,7 +37,8 @@ def rosette(tmp_path_factory: pytest.TempPathFactory) -> RecordContent:
 def test_a_circuits_steps_and_readings_stand_in_each_points_record(dummy: RecordContent) -> None:
     # Point A's turn came first, so the readings of C-1 were entered there.
     shared = [(each.check, each.subject) for each in dummy.readings if each.subject == "C-1"]
-    assert [("zero offset", "C-1"), ("shunt", "C-1")] == shared
+    kinds = ("zero offset", "shunt", "channel", "polarity", "noise", "zero drift")
+    assert [(kind, "C-1") for kind in kinds] == shared
     steps = {each.step: each.outcome for each in dummy.steps if each.subject == "C-1"}
     assert ("done", "done", "skipped") == (steps["wires"], steps["zero"], steps["loop"])
     assert "QB-1" in [each.label for each in dummy.instruments]

@@ -57,7 +57,7 @@ def test_a_changed_copy_needs_a_label_of_its_own(plan: Path) -> None:
 def test_the_faults_of_a_route_are_told_once_and_each_row_that_names_it(
     plan: Path, own: Path
 ) -> None:
-    change(own, 'edition = "1"', "edition = 1")
+    change(own, 'edition = "2"', "edition = 2")
     first, second = lines_of(lambda: understood(plan))
     assert first.startswith("own.toml, edition: ")
     assert "grids.csv, row 3, column route: “own.toml” can't be used, as said above." == second

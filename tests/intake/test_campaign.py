@@ -115,5 +115,5 @@ def test_an_insulation_floor_in_milli_or_mega_is_asked(plan: Path) -> None:
 
 def test_every_figure_of_the_demos_criteria_names_its_source(plan: Path) -> None:
     sources = [check.source for check in understood(plan).criteria.checks]
-    assert 9 == len(sources)
+    assert 15 == len(sources)
     assert all(source.startswith(("common practice", "lot certificate")) for source in sources)

@@ -43,8 +43,8 @@ def refusal(before: str, after: str) -> list[str]:
         ('kind = "gauge"', 'kind = "text"', "step: asks for the gauge 0 times."),
         ('id = "clean"', 'id = "access"', "id: “access” stands twice."),
         ('name = "safe"', 'name = "safe and sound"', "can't be a label"),
-        ('edition = "1"', "edition = 1", "edition: is a number, not text."),
-        ('edition = "1"', 'edition = "1"\nauthor = "x"', "author: is not known here."),
+        ('edition = "2"', "edition = 2", "edition: is a number, not text."),
+        ('edition = "2"', 'edition = "2"\nauthor = "x"', "author: is not known here."),
     ],
 )
 def test_a_slip_is_told_at_its_key(before: str, after: str, what: str) -> None:
@@ -60,7 +60,7 @@ def test_a_hold_asks_for_nothing() -> None:
 
 def test_a_refusal_goes_back_from_a_hold_only() -> None:
     lines = refusal('skip = "with reason"', 'skip = "with reason"\nrefused_to = "coat"')
-    assert ["own.toml, step[14].refused_to: belongs to a hold only."] == lines
+    assert ["own.toml, step[15].refused_to: belongs to a hold only."] == lines
 
 
 def test_a_reading_asks_for_the_one_meter_it_is_read_on() -> None:

@@ -16,9 +16,9 @@ from gaugelog.ledger import fold, schema
 from gaugelog.ledger.buffer import Buffer
 from gaugelog.work import reviews, steps
 from gaugelog.work.history import check_logbook
-from tests.work.job import WALK, Job, released_job
+from tests.work.job import INSULATION, WALK, Job, released_job
 
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
 
 
 def _differences(job: Job) -> list[str]:
@@ -30,10 +30,10 @@ def _differences(job: Job) -> list[str]:
 def walked(tmp_path: Path) -> Job:
     """A job with an accepted point."""
     job = released_job(tmp_path)
-    job.walk(9)
+    job.walk(10)
     job.do("t.okoro", FAILING)
-    job.do("t.okoro", WALK[9][1], reason="dried")
-    for who, typed in WALK[10:]:
+    job.do("t.okoro", WALK[10][1], reason="dried")
+    for who, typed in WALK[11:]:
         job.do(who, typed)
     job.submit()
     job.accept()

@@ -26,6 +26,7 @@ CHECKS = (
     noise.digital_step,
     noise.step_noise,
     noise.bandwidth_for_noise,
+    noise.noise_at_bandwidth,
 )
 _SPICE_CELSIUS = 27.0
 """ngspice computes noise at 27 °C unless told."""
@@ -75,6 +76,13 @@ def test_the_boltzmann_constant_is_scipys() -> None:
     """SciPy, scipy.constants (CODATA); absolute zero likewise."""
     assert constants.k == noise.BOLTZMANN
     assert -constants.zero_Celsius == ABSOLUTE_ZERO
+
+
+def test_noise_of_another_bandwidth_goes_with_its_root() -> None:
+    """Horowitz and Hill, The Art of Electronics: 10 kΩ make 1.3 µV in 10 kHz (from memory)."""
+    assert 0.13e-6 == pytest.approx(noise.noise_at_bandwidth(1.3e-6, 10e3, 100.0))
+    thermal = (4 * constants.k * 300.0 * 10e3 * 100.0) ** 0.5
+    assert thermal == pytest.approx(noise.noise_at_bandwidth(1.3e-6, 10e3, 100.0), rel=0.02)
 
 
 def test_a_kilohm_makes_four_nanovolts_a_root_hertz() -> None:

@@ -19,7 +19,7 @@ from gaugelog.rules.progress import (
 )
 from gaugelog.rules.windows import WindowFound
 from gaugelog.work import steps
-from tests.work.job import WALK, Job, released_job
+from tests.work.job import INSULATION, WALK, Job, released_job
 from tests.work.walking import walk_to
 
 
@@ -87,11 +87,11 @@ def _point(job: Job) -> PointRow:
 
 def test_everything_open_is_named_before_a_point_is_submitted(job: Job) -> None:
     walk_to(job, "insulation")
-    failing = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+    failing = {**INSULATION, "insulation": "0.4 GΩ"}
     job.do("t.okoro", failing)
     with job.book.reading() as view, pytest.raises(Refused) as caught:
         demand_complete(view, _point(job))
-    assert "step 10, “" in caught.value.message
+    assert "step 9, “" in caught.value.message
     assert "insulation bonded of FB-1 blocks" in caught.value.message
 
 
@@ -127,7 +127,7 @@ def test_a_step_on_a_circuit_names_the_circuit(job: Job) -> None:
 def test_a_measured_step_that_failed_asks_for_a_reason_next_time(job: Job) -> None:
     walk_to(job, "insulation")
     assert not steps.next_step(job.book, "FB-1").again
-    job.do("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"})
+    job.do("t.okoro", {**INSULATION, "insulation": "0.4 GΩ"})
     assert steps.next_step(job.book, "FB-1").again
 
 

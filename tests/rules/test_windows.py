@@ -31,6 +31,7 @@ def _row(observed: str = "2026-11-17T12:00:00Z") -> StepRow:
         uptime_ms=BOOT_AT_NOON_MS,
         note="",
         data="{}",
+        flags="[]",
         seq=1,
     )
 

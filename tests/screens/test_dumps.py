@@ -35,7 +35,7 @@ async def _step(seen: Seen) -> None:
 async def _failed(seen: Seen) -> None:
     await _step(seen)
     await seen.keys("space")
-    for typed in ("yes", "IT-5", "0.4 GΩ"):
+    for typed in ("yes", "yes", "yes", "IT-5", "yes", "0.4 GΩ", "yes"):
         await seen.type(typed)
 
 
@@ -58,18 +58,18 @@ STATES: dict[str, tuple[int, Callable[[Seen], Awaitable[None]]]] = {
     "step-first": (0, _step),
     "step-bond": (6, _step),
     "step-waits": (7, _step),
-    "step-failed": (9, _failed),
-    "step-wires": (8, _step),
-    "hold": (10, _hold),
-    "end": (18, _step),
+    "step-failed": (10, _failed),
+    "step-wires": (9, _step),
+    "hold": (11, _hold),
+    "end": (23, _step),
     "wiring": (2, _opened("q.reyes", "f4")),
     "stock": (2, _opened("q.reyes", "f10")),
     "plan": (2, _opened("q.reyes", "f12")),
     "help": (2, _opened("q.reyes", "f4", "f1")),
-    "queue": (18, _opened("q.reyes", "f3")),
-    "evidence": (18, _opened("q.reyes", "f3", "enter")),
-    "evidence-not-yours": (18, _opened("t.okoro", "f3", "enter")),
-    "return": (18, _opened("q.reyes", "f3", "enter", "f7")),
+    "queue": (23, _opened("q.reyes", "f3")),
+    "evidence": (23, _opened("q.reyes", "f3", "enter")),
+    "evidence-not-yours": (23, _opened("t.okoro", "f3", "enter")),
+    "return": (23, _opened("q.reyes", "f3", "enter", "f7")),
 }
 SUBMITTED = {"queue", "evidence", "evidence-not-yours", "return"}
 """States in which the point awaits review."""

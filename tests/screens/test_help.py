@@ -50,7 +50,7 @@ def test_help_names_the_keys_that_work_now_and_no_others(at: At) -> None:
         await seen.keys("escape", "space", "f1")
         assert "Cautions read" not in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 

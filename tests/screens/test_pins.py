@@ -12,7 +12,7 @@ async def _failed(seen: Seen) -> None:
     await seen.sign_on()
     await seen.type("FB-1")
     await seen.keys("space")
-    for typed in ("yes", "IT-5", "0.4 GΩ"):
+    for typed in ("yes", "yes", "yes", "IT-5", "yes", "0.4 GΩ", "yes"):
         await seen.type(typed)
 
 
@@ -33,7 +33,7 @@ def test_a_failed_check_leads_to_the_pins_and_back_with_nothing_kept(at: At) -> 
         assert "Why is it measured again?" in seen.text()
         assert head == job.book.head()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
@@ -48,7 +48,7 @@ def test_a_resistance_that_is_none_is_told(at: At) -> None:
         await seen.type("352.1")
         assert "What it says" in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
@@ -63,7 +63,7 @@ def test_a_failed_check_is_left_with_a_note_for_whoever_takes_it_up(at: At) -> N
         await seen.keys("escape")
         assert "damp under the tab" in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
@@ -75,5 +75,5 @@ def test_without_a_failed_check_the_key_is_not_there(at: At) -> None:
         assert isinstance(seen.room, StepScreen)
         assert "f6" not in seen.lines()[-1]
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play)

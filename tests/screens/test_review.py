@@ -15,7 +15,7 @@ from gaugelog.work import photos, reviews, steps
 from tests.pictures import camera_jpeg
 from tests.screens.conftest import At
 from tests.screens.pilot import LARGE, SMALL, Job, Seen, run_screen
-from tests.work.job import WORD
+from tests.work.job import INSULATION, WORD
 
 
 class Watched(Viewer):
@@ -36,7 +36,7 @@ class Watched(Viewer):
 @pytest.fixture
 def submitted(at: At) -> Job:
     """A job whose first point waits for review."""
-    job = at(18)
+    job = at(23)
     job.submit()
     return job
 
@@ -80,11 +80,14 @@ def test_the_evidence_stands_on_one_page(submitted: Job, size: tuple[int, int]) 
         text = seen.text()
         assert "awaiting review" in text
         assert "Checks, the smallest margin first" in text
-        assert text.index("resistance, b") < text.index("insulation, b")
-        await seen.keys("pagedown")
-        assert "let go on at steps 5, 11" in seen.text()
+        assert text.index("noise, on") < text.index("resistance, b") < text.index("press, on")
+        pages = []
+        for _ in range(4):
+            await seen.keys("pagedown")
+            pages.append(seen.text())
+        assert any("let go on at steps 5, 12" in page for page in pages)
         await seen.keys("end")
-        assert "18  Label and leave" in seen.text()
+        assert "23  Label and leave" in seen.text()
 
     run_screen(submitted.book, submitted.folder, play, size=size)
 
@@ -130,9 +133,9 @@ def test_the_reviewer_returns_it_with_a_reason_to_a_step(submitted: Job) -> None
         assert "“99” is no step that is done." in seen.text()
         await seen.keys("up")
         await seen.keys("backspace", "backspace")
-        await seen.type("12")
+        await seen.type("13")
         await seen.type(WORD)
-        assert "FB-1 is returned; work goes on from step 12." in seen.text()
+        assert "FB-1 is returned; work goes on from step 13." in seen.text()
         await seen.keys("end")
         assert "returned revision 1, Quilla Reyes (QR): seal is thin" in seen.text()
 
@@ -245,11 +248,9 @@ def test_escape_leads_back_to_the_queue(submitted: Job) -> None:
 
 
 def test_attempts_and_skipped_steps_are_shown_with_their_reasons(at: At) -> None:
-    job = at(9)
-    job.do("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "0.2 GΩ"})
-    job.do(
-        "t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "2 GΩ"}, reason="flux left"
-    )
+    job = at(10)
+    job.do("t.okoro", {**INSULATION, "insulation": "0.2 GΩ"})
+    job.do("t.okoro", {**INSULATION, "insulation": "2 GΩ"}, reason="flux left")
 
     async def play(seen: Seen) -> None:
         await seen.sign_on("q.reyes")

@@ -9,7 +9,7 @@ from gaugelog.work import looking, steps
 from tests.screens.conftest import At
 from tests.screens.pilot import LARGE, Job, Seen, run_screen
 
-FAILING = ("yes", "IT-5", "0.4 GΩ")
+FAILING = ("yes", "yes", "yes", "IT-5", "yes", "0.4 GΩ", "yes")
 
 
 def _step(seen: Seen) -> StepScreen:
@@ -30,11 +30,11 @@ def test_fields_open_only_after_the_cautions_were_acknowledged(at: At) -> None:
         assert "space Cautions read" in seen.lines()[-1]
         await seen.keys("y", "enter", "enter")
         await seen.rest()
-        assert "1/18" in seen.text()
+        assert "1/23" in seen.text()
         await seen.keys("space")
         assert "cautions read: 1" in seen.text()
         await seen.type("yes")
-        assert "2/18" in seen.text()
+        assert "2/23" in seen.text()
 
     job = at(0)
     run_screen(job.book, job.folder, play)
@@ -50,7 +50,7 @@ def test_enter_goes_from_field_to_field_and_the_last_keeps_the_step(at: At) -> N
         assert "✓ PASS  resistance received 350.12 Ω" in text
         assert "limit at least 348.95 Ω and at most 351.05 Ω, ruled by prediction" in text
         assert "margin 0.93 Ω" in text
-        assert "3/18" in text
+        assert "3/23" in text
 
     job = at(1)
     run_screen(job.book, job.folder, play, size=LARGE)
@@ -71,15 +71,15 @@ def test_units_stand_beside_the_fields_before_anything_is_typed(at: At) -> None:
 def test_an_insulation_needs_its_unit_typed(at: At) -> None:
     async def play(seen: Seen) -> None:
         await _open(seen, "space")
-        for typed in ("yes", "IT-5", "18"):
+        for typed in ("yes", "yes", "yes", "IT-5", "yes", "18"):
             await seen.type(typed)
         assert "“18” has no unit." in seen.text()
-        assert "10/18" in seen.text()
+        assert "11/23" in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
     with job.book.reading() as view:
-        assert [] == view.all(ReadingRow, check="insulation")
+        assert [] == view.all(ReadingRow, check="insulation", stage="cabled")
 
 
 def test_a_wrong_label_is_told_at_once_beside_its_field(at: At) -> None:
@@ -113,21 +113,21 @@ def test_a_failed_reading_stays_and_measuring_again_asks_why(at: At) -> None:
         for typed in FAILING:
             await seen.type(typed)
         text = seen.text()
-        assert "✗ FAIL  insulation bonded 0.4 GΩ" in text
+        assert "✗ FAIL  insulation cabled 0.4 GΩ" in text
         assert "margin -0.6 GΩ" in text
         assert "1. insulation 0.4 GΩ  ✗ FAIL" in text
         assert "Why is it measured again?" in text
         assert "" == _step(seen).entry.live[-1].input.value
         await seen.type("tab was damp; dried it")
-        for typed in ("yes", "18 GΩ"):
+        for typed in ("yes", "yes", "yes", "yes", "18 GΩ", "yes"):
             await seen.type(typed)
-        assert "✓ PASS  insulation bonded 18 GΩ" in seen.text()
-        assert "11/18" in seen.text()
+        assert "✓ PASS  insulation cabled 18 GΩ" in seen.text()
+        assert "12/23" in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
     with job.book.reading() as view:
-        kept = view.all(ReadingRow, check="insulation")
+        kept = view.all(ReadingRow, check="insulation", stage="cabled")
     assert [("0.4 GΩ", 1), ("18 GΩ", 2)] == [(row.typed, row.attempt) for row in kept]
 
 
@@ -142,7 +142,7 @@ def test_a_reading_is_never_filled_in_but_a_meter_is_carried_with_its_age(at: At
         await seen.rest()
         assert "what was carried is too old" in seen.text()
 
-    job = at(9)
+    job = at(10)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
@@ -169,7 +169,7 @@ def test_another_process_that_did_the_step_is_noticed_and_nothing_is_kept_twice(
         seen.app.tick()
         await seen.rest()
         assert "FB-1 was changed elsewhere meanwhile" in seen.text()
-        assert "2/18" in seen.text()
+        assert "2/23" in seen.text()
 
     job = at(0)
     run_screen(job.book, job.folder, play)
@@ -185,7 +185,7 @@ def test_enter_on_a_step_that_was_done_meanwhile_keeps_nothing(at: At) -> None:
         steps.redo(job.book, job.keys["t.okoro"], point="FB-1", step="access", reason="again")
         seen.room.action_do()
         await seen.rest()
-        assert "1/18" in seen.text()
+        assert "1/23" in seen.text()
 
     job = at(2)
     run_screen(job.book, job.folder, play)
@@ -227,7 +227,7 @@ def test_a_note_and_a_time_are_added_on_demand_and_kept(at: At) -> None:
         await seen.type("08:00", enter=False)
         await seen.keys("up", "up")
         await seen.type("yes")
-        assert "2/18" in seen.text()
+        assert "2/23" in seen.text()
 
     job = at(0)
     job.clock.advance(3600)
@@ -261,7 +261,7 @@ def test_going_back_asks_which_step_and_why(at: At) -> None:
         await seen.type("1")
         await seen.type("gantry moved")
         assert "Work goes on from “Make the place safe to work at”." in seen.text()
-        assert "1/18" in seen.text()
+        assert "1/23" in seen.text()
 
     job = at(2)
     run_screen(job.book, job.folder, play)
@@ -274,10 +274,10 @@ def test_a_step_is_skipped_only_where_its_rule_lets_it(at: At) -> None:
         await seen.keys("f9")
         await seen.type("three-wire, no two end at one tab")
         assert "is skipped" in seen.text()
-        assert "15/18" in seen.text()
+        assert "16/23" in seen.text()
         assert "f9" not in seen.lines()[-1]
 
-    job = at(13)
+    job = at(14)
     run_screen(job.book, job.folder, play)
 
 
@@ -288,7 +288,7 @@ def test_someone_without_the_role_is_told_when_keeping(at: At) -> None:
         await seen.keys("space")
         await seen.type("yes")
         assert "q.reyes does not have the role technician." in seen.text()
-        assert "1/18" in seen.text()
+        assert "1/23" in seen.text()
 
     job = at(0)
     run_screen(job.book, job.folder, play)

@@ -105,7 +105,7 @@ def _ran(job: Job, environment: dict[str, str], *words: str) -> str:
 def test_from_sign_on_to_a_record_with_both_signatures(
     at: At, terminal: Terminal, tmp_path: Path
 ) -> None:
-    job = at(17)
+    job = at(22)
     environment = _environment(job, tmp_path / "keys")
     _begin(terminal, job, environment)
     terminal.type(GAUGELOG)
@@ -113,7 +113,7 @@ def test_from_sign_on_to_a_record_with_both_signatures(
     terminal.type("t.okoro", WORD)
     terminal.wait("For you now")
     terminal.type("FB-1")
-    terminal.wait("18/18")
+    terminal.wait("23/23")
     terminal.type("yes")
     terminal.wait("Every step is done.")
     terminal.press("F5")
@@ -152,7 +152,7 @@ def test_a_lost_terminal_keeps_what_was_half_typed(
     terminal.type(f"{GAUGELOG} install FB-1")
     terminal.wait("Sign on")
     terminal.type("t.okoro", WORD)
-    terminal.wait("2/18")
+    terminal.wait("2/23")
     terminal.type("K7-03/1")
     terminal.tmux("send-keys", "-l", "RM")
     terminal.wait("[RM ")
@@ -162,7 +162,7 @@ def test_a_lost_terminal_keeps_what_was_half_typed(
     terminal.type(GAUGELOG)
     terminal.wait("Sign on")
     terminal.type("t.okoro", WORD)
-    shown = terminal.wait("2/18")
+    shown = terminal.wait("2/23")
     assert "[K7-03/1" in shown
     assert "[RM " in shown
     _ran(job, environment, "journal", "check")

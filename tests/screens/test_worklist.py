@@ -18,7 +18,7 @@ def test_each_point_shows_its_state_by_word_and_sign_and_its_next_step(at: At) -
     async def play(seen: Seen) -> None:
         await seen.sign_on()
         assert "▸ in work" in _row(seen, "FB-1")
-        assert "7/18 Bond the gauge" in _row(seen, "FB-1")
+        assert "7/23 Bond the gauge" in _row(seen, "FB-1")
         assert "○ released" in _row(seen, "FB-2")
         assert "2 points, 2 for you" in seen.lines()[0]
 
@@ -45,7 +45,7 @@ def test_what_is_yours_comes_first_and_the_rest_by_zone(at: At) -> None:
         assert text.index("Zone ") < text.index("FB-2")
         assert "you: decide the hold" in _row(seen, "FB-1")
 
-    job = at(10)
+    job = at(11)
     run_screen(job.book, job.folder, play, size=LARGE)
 
 
@@ -101,7 +101,7 @@ def test_what_another_process_keeps_shows_by_itself(at: At) -> None:
         steps.do(job.book, job.keys["t.okoro"], point="FB-2", typed={"safe": "yes"})
         seen.app.tick()
         await seen.rest()
-        assert "2/18" in _row(seen, "FB-2")
+        assert "2/23" in _row(seen, "FB-2")
 
     job = at(0)
     run_screen(job.book, job.folder, play)
@@ -113,7 +113,7 @@ def test_a_point_under_review_opens_the_review_of_who_may_review_it(at: At) -> N
         await seen.type("FB-1")
         assert isinstance(seen.room, EvidenceScreen)
 
-    job = at(18)
+    job = at(23)
     job.submit()
     run_screen(job.book, job.folder, play)
 

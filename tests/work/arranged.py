@@ -13,20 +13,7 @@ from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.stock import LotRow
 from gaugelog.rules.fit import PlanFinding
 from gaugelog.work import instruments, plan, steps, stock
-from tests.work.job import DEMO, WALK, Job, start_job
-
-TYPED = dict(
-    zip(
-        (
-            *("access", "gauge", "clean", "layout", "layout-hold", "condition", "bond", "bonded"),
-            *("wires", "insulation", "coating-hold", "coat", "coated", "loop", "zero", "shunt"),
-            *("polarity", "finish"),
-        ),
-        WALK,
-        strict=True,
-    )
-)
-"""Who types what, by the id of the step."""
+from tests.work.job import DEMO, TYPED, Job, start_job
 
 LOTS = (
     "lot,pack,pieces,maker,type,pattern,grid_angles_deg,resistance_ohm,"
@@ -209,6 +196,7 @@ class Walker:
         else:
             piece = {"gauge": self._piece(point)} if step == "gauge" else {}
             given = {**typed, **piece, **({step: own[step]} if step in own else {})}
+            given |= {"channel": subject.removeprefix("C-")} if "channel" in given else {}
             self.job.do(who, given, point, minutes=35 if step != "bond" else 5)
         self.done.append((point, step, subject))
 

@@ -31,30 +31,66 @@ PEOPLE = (
     Newcomer("q.reyes", "Quilla Reyes", "QR", ("reviewer",)),
 )
 
-WALK: tuple[tuple[str, dict[str, str]], ...] = (
-    ("t.okoro", {"safe": "yes"}),
-    ("t.okoro", {"gauge": "K7-03/1", "meter": "RM-2", "resistance": "350.12 ohm"}),
-    ("t.okoro", {"cleaner": "CL-301", "finish": "220 grit"}),
-    ("t.okoro", {"x": "0 mm", "y": "0 mm", "axis": "0 deg"}),
-    ("q.reyes", {}),
-    ("t.okoro", {"clean": "yes"}),
-    (
+INSULATION = {
+    "unplugged": "yes",
+    "joined": "yes",
+    "bare-metal": "yes",
+    "tester": "IT-5",
+    "steady": "yes",
+    "discharged": "yes",
+}
+"""The tick-offs of an insulation reading and its tester."""
+
+TYPED: dict[str, tuple[str, dict[str, str]]] = {
+    "access": ("t.okoro", {"safe": "yes"}),
+    "gauge": ("t.okoro", {"gauge": "K7-03/1", "meter": "RM-2", "resistance": "350.12 ohm"}),
+    "clean": ("t.okoro", {"cleaner": "CL-301", "finish": "220 grit"}),
+    "layout": ("t.okoro", {"x": "0 mm", "y": "0 mm", "axis": "0 deg"}),
+    "layout-hold": ("q.reyes", {}),
+    "condition": ("t.okoro", {"clean": "yes"}),
+    "bond": (
         "t.okoro",
         {"adhesive": "AD-612", "air": "20 degC", "humidity": "50 %RH", "surface": "19 degC"},
     ),
-    ("t.okoro", {"meter": "RM-2", "resistance": "350.50 ohm"}),
-    ("t.okoro", {"solder": "SO-17", "flux-removed": "yes"}),
-    ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": ">20 GΩ"}),
-    ("q.reyes", {}),
-    ("t.okoro", {"coating": "CT-088", "mixed": "15 min"}),
-    ("t.okoro", {"unplugged": "yes", "tester": "IT-5", "insulation": "18 GΩ"}),
-    ("t.okoro", {"meter": "RM-2", "loop": "1.98 ohm"}),
-    ("t.okoro", {"module": "QB-1", "zero": "0.36 mV/V"}),
-    ("t.okoro", {"module": "QB-1", "shunt": "-1696 um/m"}),
-    ("t.okoro", {"right-channel": "yes", "direction": "yes", "comes-back": "yes"}),
-    ("t.okoro", {"labelled": "yes"}),
-)
-"""Who types what at each step of the shipped route, for point FB-1."""
+    "bonded": ("t.okoro", {"meter": "RM-2", "resistance": "350.50 ohm"}),
+    "insulation": ("t.okoro", {**INSULATION, "insulation": ">20 GΩ"}),
+    "wires": ("t.okoro", {"solder": "SO-17", "flux-removed": "yes"}),
+    "cabled": ("t.okoro", {**INSULATION, "insulation": ">20 GΩ"}),
+    "coating-hold": ("q.reyes", {}),
+    "coat": ("t.okoro", {"coating": "CT-088", "mixed": "15 min"}),
+    "coated": ("t.okoro", {**INSULATION, "insulation": "18 GΩ"}),
+    "loop": (
+        "t.okoro",
+        {"meter": "RM-2", "loop": "1.98 ohm", "first": "352.48 ohm", "second": "352.49 ohm"},
+    ),
+    "zero": ("t.okoro", {"module": "QB-1", "zero": "0.36 mV/V"}),
+    "shunt": ("t.okoro", {"module": "QB-1", "shunt": "-1696 um/m"}),
+    "polarity": (
+        "t.okoro",
+        {"module": "QB-1", "channel": "1", "expected": "+", "pushed": "31.2 um/m"},
+    ),
+    "press": (
+        "t.okoro",
+        {"module": "QB-1", "before": "0.1 um/m", "pressed": "38 um/m", "after": "0.4 um/m"},
+    ),
+    "noise": ("t.okoro", {"module": "QB-1", "bandwidth": "100 Hz", "noise": "0.4 um/m"}),
+    "watch": ("t.okoro", {"zero": "0.4 um/m", "gauge-temperature": "19.0 degC"}),
+    "drift": (
+        "t.okoro",
+        {"module": "QB-1", "gauge-temperature": "19.5 degC", "drift": "1.1 um/m"},
+    ),
+    "finish": ("t.okoro", {"labelled": "yes"}),
+}
+"""Who types what at each step of the shipped route, by its id, for point FB-1."""
+
+WALK = tuple(TYPED.values())
+"""The same in the order of the route."""
+
+
+def before(step: str) -> int:
+    """How many steps of the route come before one."""
+    return list(TYPED).index(step)
+
 
 LAYOUT = WALK[3][1]
 FB_2_LAYOUT = {"x": "150 mm", "y": "220 mm", "axis": "90 deg"}
@@ -100,6 +136,7 @@ class Job:
         """Do the next step `minutes` after the last."""
         self.clock.advance(60 * minutes)
         typed = FB_2_LAYOUT if typed == LAYOUT and point == "FB-2" else typed
+        typed = {**typed, "channel": "2"} if "channel" in typed and point == "FB-2" else typed
         return steps.do(self.book, self.keys[who], point=point, typed=typed, **more)
 
     def walk(self, count: int = len(WALK), point: str = "FB-1", gauge: str = "K7-03/1") -> None:

@@ -19,10 +19,10 @@ from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import KeyFolder, UnlockedKey
 from gaugelog.work import steps
 from gaugelog.work.logbook import Logbook
-from tests.work.job import CHEAP_ROUNDS, START, WORD
+from tests.work.job import CHEAP_ROUNDS, INSULATION, START, WORD
 
 DAY = START + timedelta(days=1)
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
 
 
 def opened(book: Path) -> Logbook:

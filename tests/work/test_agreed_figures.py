@@ -67,7 +67,7 @@ def test_insulation_typed_at_the_article(
         assert verdict.probability is None
     else:
         assert probability == pytest.approx(float(verdict.probability or "nan"), abs=5e-4)
-    assert ("coating-hold" if settled else "insulation") == here(indoors)
+    assert ("wires" if settled else "insulation") == here(indoors)
 
 
 def test_milli_is_refused_before_it_is_a_reading(indoors: Job) -> None:

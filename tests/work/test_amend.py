@@ -11,7 +11,7 @@ from gaugelog.work.amend import amend
 from gaugelog.work.history import check_logbook
 from tests.work.job import WALK, Job
 
-COATED_AGAIN = 11
+COATED_AGAIN = 12
 WHY = "coating nicked by the scaffolders"
 
 

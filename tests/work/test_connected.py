@@ -17,7 +17,8 @@ def _read(job: Job, step: str, name: str, typed: str) -> ReadingTaken:
     if here(job) != step:
         walk_to(job, step)
     given = {**typed_here(job)[1], name: typed}
-    return job.do("t.okoro", given, reason="looked again").readings[0].reading
+    kept = [each.reading for each in job.do("t.okoro", given, reason="looked again").readings]
+    return next(reading for reading in kept if reading.typed == typed)
 
 
 def _limits(reading: ReadingTaken) -> tuple[float, float]:
@@ -80,11 +81,28 @@ def test_a_shunt_reading_of_the_other_sign_blocks(job: Job) -> None:
     assert "polarity" == here(job)
 
 
-def test_no_polarity_means_no_done_step(job: Job) -> None:
+def test_the_sign_of_a_push_in_a_known_direction_is_the_expected_one(job: Job) -> None:
+    wrong = _read(job, "polarity", "pushed", "-31 um/m").verdict
+    assert ("fail", True) == (wrong.word, wrong.blocks)
+    assert "swapped arm or polarity" in wrong.reason
+    # Twice the module's ±(0.05 % + 2 µm/m): 2.3 µm/m and less have no sign.
+    assert "undecided" == _read(job, "polarity", "pushed", "2.2 um/m").verdict.word
+    assert "pass" == _read(job, "polarity", "pushed", "2.4 um/m").verdict.word
+
+
+def test_another_channel_that_answers_blocks(job: Job) -> None:
+    wrong = _read(job, "polarity", "channel", "M1/2")
+    assert ("channel", "M1/2", None) == (wrong.check, wrong.typed, wrong.value)
+    assert ("fail", True) == (wrong.verdict.word, wrong.verdict.blocks)
+    assert "M1/2 answered; planned is M1/1" in wrong.verdict.reason
+    assert "pass" == _read(job, "polarity", "channel", "m1/1").verdict.word
+
+
+def test_what_is_no_sign_is_refused(job: Job) -> None:
     walk_to(job, "polarity")
-    with pytest.raises(Faulty) as caught:
-        job.do("t.okoro", {**typed_here(job)[1], "direction": "no"})
-    assert "is no, so the step is not done" in caught.value.faults[0].what
+    with pytest.raises(Faulty, match="fault") as caught:
+        job.do("t.okoro", {**typed_here(job)[1], "expected": "up"})
+    assert "“up” is no sign." == caught.value.faults[0].what
 
 
 def test_a_circuit_that_fails_keeps_its_point_from_being_submitted(job: Job) -> None:

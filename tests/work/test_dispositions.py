@@ -11,11 +11,11 @@ from gaugelog.ledger.stock import GaugeRow
 from gaugelog.ledger.story import StoryRow
 from gaugelog.work import dispositions, reviews, steps
 from gaugelog.work.history import check_logbook
-from tests.work.job import WALK, Job
+from tests.work.job import INSULATION, WALK, Job
 
 WHY = "grid torn while soldering"
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
-BONDED, BEFORE_INSULATION = 8, 9
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
+BONDED, BEFORE_INSULATION = 8, 8
 
 
 def _replace(job: Job, who: str = "t.okoro", reason: str = WHY) -> None:

@@ -15,10 +15,10 @@ import pytest
 from gaugelog.ledger.readings import ReadingRow
 from gaugelog.work.history import check_logbook
 from gaugelog.work.logbook import Logbook
-from tests.work.job import Job
+from tests.work.job import INSULATION, Job
 
 ROOT = Path(__file__).parents[2]
-BEFORE_INSULATION = 9
+BEFORE_INSULATION = 8
 
 PATIENCE = 60.0
 """Seconds after which a worker that acknowledges nothing is broken, not slow."""
@@ -113,7 +113,7 @@ def test_work_resumes_after_a_kill(job: Job, tmp_path: Path) -> None:
     _kill_again_and_again(job, tmp_path, 3)
     outcome = job.do(
         "t.okoro",
-        {"unplugged": "yes", "tester": "IT-5", "insulation": "19 GΩ"},
+        {**INSULATION, "insulation": "19 GΩ"},
         reason="dried",
     )
     assert outcome.settled

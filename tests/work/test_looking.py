@@ -8,7 +8,7 @@ import pytest
 
 from gaugelog.errors import Refused
 from gaugelog.work import looking
-from tests.work.job import Job, released_job
+from tests.work.job import INSULATION, Job, released_job
 
 
 @pytest.fixture
@@ -24,7 +24,7 @@ def _wanted(job: Job, person: str) -> dict[str, str]:
 def test_the_route_shows_what_was_done_by_whom_and_what_is_ahead(job: Job) -> None:
     job.walk(6)
     hand = looking.in_hand(job.book, "fb-1")
-    assert 18 == len(hand.route)
+    assert 23 == len(hand.route)
     assert [*["done"] * 4, "released", "done", ""] == [each.outcome for each in hand.route[:7]]
     assert ("q.reyes", True) == (hand.route[4].by, hand.route[4].hold)
     assert hand.next.step is not None
@@ -32,9 +32,9 @@ def test_the_route_shows_what_was_done_by_whom_and_what_is_ahead(job: Job) -> No
 
 
 def test_attempts_are_those_of_the_step_in_hand_oldest_first(job: Job) -> None:
-    job.walk(9)
+    job.walk(10)
     assert () == looking.in_hand(job.book, "FB-1").attempts
-    low = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+    low = {**INSULATION, "insulation": "0.4 GΩ"}
     job.do("t.okoro", low)
     job.do("t.okoro", {**low, "insulation": "0.5 GΩ"}, reason="dried")
     attempts = looking.in_hand(job.book, "FB-1").attempts

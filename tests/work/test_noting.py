@@ -11,9 +11,9 @@ from gaugelog.ledger import fold
 from gaugelog.ledger.story import StoryRow
 from gaugelog.work import steps
 from gaugelog.work.noting import leave_note
-from tests.work.job import WALK, Job, released_job
+from tests.work.job import INSULATION, WALK, Job, released_job
 
-LOW = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+LOW = {**INSULATION, "insulation": "0.4 GΩ"}
 NOTE = "damp under the tab, drying until tomorrow"
 
 
@@ -21,7 +21,7 @@ NOTE = "damp under the tab, drying until tomorrow"
 def job(tmp_path: Path) -> Job:
     """A point whose insulation failed."""
     made = released_job(tmp_path)
-    made.walk(9)
+    made.walk(10)
     made.do("t.okoro", LOW)
     return made
 
@@ -33,10 +33,10 @@ def _leave(job: Job, who: str = "t.okoro", note: str = NOTE, point: str = "FB-1"
 def test_a_note_is_told_at_its_step_until_the_step_is_done(job: Job) -> None:
     _leave(job)
     (told,) = steps.next_step(job.book, "FB-1").sent_back
-    assert "Note (insulation) by Tobe Okoro (TO)" in told
+    assert "Note (cabled) by Tobe Okoro (TO)" in told
     assert told.endswith(NOTE)
     assert steps.next_step(job.book, "FB-1").again
-    job.do("t.okoro", WALK[9][1], reason="dried")
+    job.do("t.okoro", WALK[10][1], reason="dried")
     assert () == steps.next_step(job.book, "FB-1").sent_back
 
 
@@ -46,7 +46,7 @@ def test_a_note_stands_in_the_story_and_changes_no_state(job: Job) -> None:
     assert before == job.state() == "non-conforming"
     with job.book.reading() as view:
         (turn,) = view.all(StoryRow)
-    assert ("note left", "insulation", "t.okoro", NOTE) == (
+    assert ("note left", "cabled", "t.okoro", NOTE) == (
         turn.turn,
         turn.step,
         turn.by,
@@ -62,7 +62,7 @@ def test_the_ledger_is_rebuilt_with_its_notes(job: Job) -> None:
 
 def test_who_leaves_a_note_may_still_judge_the_point(job: Job) -> None:
     _leave(job, "q.reyes")
-    job.do("t.okoro", WALK[9][1], reason="dried")
+    job.do("t.okoro", WALK[10][1], reason="dried")
     assert job.do("q.reyes", {}).settled
 
 
@@ -71,8 +71,8 @@ def test_a_note_without_words_or_without_an_open_step_is_refused(job: Job) -> No
         _leave(job, note="  ")
     with pytest.raises(Refused, match="There is no point"):
         _leave(job, point="ZZ-1")
-    job.do("t.okoro", WALK[9][1], reason="dried")
-    for who, typed in WALK[10:]:
+    job.do("t.okoro", WALK[10][1], reason="dried")
+    for who, typed in WALK[11:]:
         job.do(who, typed)
     with pytest.raises(Refused, match="FB-1 has no step open"):
         _leave(job)

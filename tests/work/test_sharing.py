@@ -64,8 +64,8 @@ def test_nobody_wires_a_bridge_of_which_one_gauge_is_not_bonded(bending: Walker)
 
 def test_a_step_on_a_circuit_is_done_once_and_counts_for_both_points(bending: Walker) -> None:
     bending.to("A")
-    bending.to("B", "insulation")
-    assert ("insulation", "insulation") == (here(bending.job, "A"), here(bending.job, "B"))
+    bending.to("B", "cabled")
+    assert ("cabled", "cabled") == (here(bending.job, "A"), here(bending.job, "B"))
     with bending.job.book.reading() as view:
         rows = view.all(StepRow, step="wires")
     assert {point_id(bending.job, label) for label in "AB"} == {row.point for row in rows}
@@ -136,10 +136,10 @@ def test_a_shared_dummy_is_walked_with_its_first_circuit_and_holds_up_no_other(
     job = walker.job
     walker.to("D")
     assert "C-1 waits for A" in steps.next_step(job.book, "D").blocks[0]
-    walker.to("A", "insulation")
+    walker.to("A", "cabled")
     walker.to("D", "loop")
-    walker.to("B", "insulation")
-    assert ("insulation", "loop") == (here(job, "B"), here(job, "D"))
+    walker.to("B", "cabled")
+    assert ("cabled", "loop") == (here(job, "B"), here(job, "D"))
     dummy = point_id(job, "D")
     with job.book.reading() as view:
         (grid,) = view.all(GridRow, point=dummy)

@@ -14,13 +14,13 @@ from gaugelog.errors import ExitCode, Faulty, Refused
 from gaugelog.ledger.readings import ReadingRow
 from gaugelog.ledger.steps import StepRow
 from gaugelog.work import plan, steps
-from tests.work.job import DEMO, WALK, Job, start_job
+from tests.work.job import DEMO, INSULATION, WALK, Job, start_job
 from tests.work.test_plan_deeds import stocked
 from tests.work.walking import here, typed_here, walk_to
 
 __all__ = ["stocked"]
 
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
 
 
 def _last_fact(job: Job) -> Mapping[str, Any]:
@@ -124,7 +124,8 @@ def test_when_a_skip_was_entered_binds_no_later_step(job: Job) -> None:
     steps.skip(job.book, job.keys["c.ward"], point="FB-1", reason="engraved at the works")
     job.clock.advance(600)
     steps.redo(job.book, job.keys["t.okoro"], point="FB-1", step="polarity", reason="wrong channel")
-    job.do("t.okoro", typed_here(job)[1], minutes=0, at=f"{job.clock.now().local:%H:%M}")
+    when = f"{job.clock.now().local:%H:%M}"
+    job.do("t.okoro", typed_here(job)[1], minutes=0, at=when, reason="the other plug")
     assert [] == _last_fact(job)["flags"]
 
 

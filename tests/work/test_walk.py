@@ -10,11 +10,11 @@ from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.stock import GaugeRow
 from gaugelog.work import people, reviews, steps
 from gaugelog.work.history import check_logbook
-from tests.work.job import WALK, WORD, Job, PlainMaker
+from tests.work.job import INSULATION, WALK, WORD, Job, PlainMaker
 
-FAILING = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
-GOOD = {"unplugged": "yes", "tester": "IT-5", "insulation": "19 GΩ"}
-BEFORE_INSULATION, BEFORE_HOLD = 9, 4
+FAILING = {**INSULATION, "insulation": "0.4 GΩ"}
+GOOD = {**INSULATION, "insulation": "19 GΩ"}
+BEFORE_INSULATION, BEFORE_HOLD = 10, 4
 
 
 def test_a_point_walks_from_plan_to_accepted(job: Job) -> None:
@@ -35,7 +35,7 @@ def test_a_hold_and_what_follows_it_show_as_states(job: Job) -> None:
     assert job.state() == "on hold"
     job.do("q.reyes", {})
     assert job.state() == "in work"
-    for who, typed in WALK[5:11]:
+    for who, typed in WALK[5:12]:
         job.do(who, typed)
     assert job.state() == "ready to coat"
 
@@ -67,14 +67,14 @@ def test_a_failing_reading_is_kept_and_the_step_stays_open(job: Job) -> None:
     assert job.do("t.okoro", GOOD, reason="flux cleaned off").settled
     assert job.state() == "on hold"
     with job.book.reading() as view:
-        rows = view.all(ReadingRow, check="insulation")
+        rows = view.all(ReadingRow, check="insulation", stage="cabled")
     assert [(row.attempt, row.latest, row.word) for row in rows] == [(1, 0, "fail"), (2, 1, "pass")]
 
 
 def test_a_blocking_reading_keeps_the_point_from_being_submitted(job: Job) -> None:
     job.walk(BEFORE_INSULATION)
     job.do("t.okoro", FAILING)
-    with pytest.raises(Refused, match="insulation bonded of FB-1 blocks"):
+    with pytest.raises(Refused, match="insulation cabled of FB-1 blocks"):
         job.submit()
 
 
@@ -185,7 +185,7 @@ def test_a_returned_point_goes_on_from_the_step_named(job: Job) -> None:
         job.book, job.keys["q.reyes"], point="FB-1", reason="coat again", redo_from="coat"
     )
     assert job.state() == "returned"
-    for who, typed in WALK[11:]:
+    for who, typed in WALK[12:]:
         job.do(who, typed, reason="coated again")
     assert job.submit().revision == 2
     job.accept()

@@ -9,7 +9,7 @@ from gaugelog.ledger.points import PointRow
 from gaugelog.ledger.stock import GaugeRow
 from gaugelog.rules.who import workers_of
 from gaugelog.work import people, reviews, steps
-from tests.work.job import Job, PlainMaker
+from tests.work.job import INSULATION, Job, PlainMaker
 from tests.work.walking import enrol, typed_here, walk_to
 
 
@@ -63,7 +63,7 @@ def test_who_skipped_a_step_is_no_second_person(job: Job) -> None:
 def test_whose_reading_failed_did_a_step_too(job: Job) -> None:
     enrol(job, "b.oth", "technician", "reviewer")
     walk_to(job, "insulation")
-    failing = {"unplugged": "yes", "tester": "IT-5", "insulation": "0.4 GΩ"}
+    failing = {**INSULATION, "insulation": "0.4 GΩ"}
     job.do("b.oth", failing)
     walk_to(job, "coating-hold")
     with pytest.raises(Refused, match="can't decide this hold"):
