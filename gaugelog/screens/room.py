@@ -26,6 +26,8 @@ if TYPE_CHECKING:
 T = TypeVar("T")
 
 _WARN_SECONDS = 60.0
+_DOING = "… "
+"""What the talk begins with while slow work runs."""
 
 
 def look_keys(action: str, *, show: bool = True) -> Iterator[Binding]:
@@ -227,7 +229,8 @@ class Room(Screen[None]):
         message.stop()
         self._doing = ""
         if self.app.is_running:
-            self.tell("")
+            if self.talk.startswith(_DOING):
+                self.tell("")
             message.act()
 
     def _tell_defect(self, error: Exception) -> None:
@@ -236,7 +239,7 @@ class Room(Screen[None]):
     def _draw_doing(self) -> None:
         if self._doing:
             seconds = self.desk.ticks() - self._since
-            self.tell(plain(f"… {self._doing} ({seconds:.0f} s)", CALM))
+            self.tell(plain(f"{_DOING}{self._doing} ({seconds:.0f} s)", CALM))
 
 
 def show(widget: Widget, shown: bool) -> None:
