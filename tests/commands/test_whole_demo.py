@@ -7,6 +7,7 @@ import re
 import shlex
 import shutil
 import subprocess
+from datetime import datetime, timedelta
 from pathlib import Path
 from typing import Any
 
@@ -101,6 +102,15 @@ def test_the_journal_holds_a_failure_a_return_an_amendment_and_a_replacement(
     assert (1, 0) == (words.count("fail"), words.count("conditional fail"))
     # A story in which hardly anything passes would say that its values were made up badly.
     assert words.count("conditional pass") <= 0.1 * len(words)
+
+
+def test_nobody_works_at_night(whole: Path, command: Command) -> None:
+    shown = json.loads(command("journal", "show", "--json", "--last", "9999").out)
+    hours = {
+        (datetime.fromisoformat(header["time"]) + timedelta(hours=1)).hour
+        for header in (entry["header"] for entry in shown)
+    }
+    assert {7, 18} == {min(hours), max(hours)}
 
 
 def test_the_whole_journal_is_found_in_order(whole: Path, command: Command) -> None:
