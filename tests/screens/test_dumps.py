@@ -74,8 +74,8 @@ STATES: dict[str, tuple[int, Callable[[Seen], Awaitable[None]]]] = {
 SUBMITTED = {"queue", "evidence", "evidence-not-yours", "return"}
 """States in which the point awaits review."""
 
-_HEAD = re.compile(r"\b\d+:[A-Z2-7]{26}")
-"""A head as printed; it is another one in each run."""
+_HEAD = re.compile(r"\b\d+:[A-Z2-7]{26}|(?<=[│╮╯])[A-Z2-7]{8,}")
+"""A head as printed, or what a dialog leaves of it; it is another one in each run."""
 
 
 @pytest.mark.parametrize("size", [SMALL, LARGE], ids=["80x24", "120x40"])
