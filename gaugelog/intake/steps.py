@@ -118,9 +118,9 @@ def _check_beside(each: Fields, step: RouteStep, checks: list[str]) -> None:
     for check in checks if each.sound("input") else ():
         wanted = (EXPECTED_SIGN,) if check == "polarity" else CHECKS[check].beside
         for missing in (item for item in wanted if item not in types):
-            kind = "text" if missing == EXPECTED_SIGN else "quantity"
+            kind = "text input" if missing == EXPECTED_SIGN else "quantity"
             what = f"has a reading of {check} without {missing}."
-            each.fault("input", what, f"Ask for it as a {kind} of that type.")
+            each.fault("input", what, f"Ask for it: {kind} of that type.")
 
 
 def _check_windows(each: Fields, step: RouteStep) -> None:

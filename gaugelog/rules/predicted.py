@@ -142,8 +142,8 @@ def demand_pair(known: Expected) -> None:
     layout = known.wired.circuit.layout
     if len(set(layout.wires.values())) == len(layout.wires):
         raise Refused(
-            f"In a {known.planned.arrangement} circuit on {len(layout.wires)} wires no two wires "
-            "end at one tab, so there is no loop of wires alone.",
+            f"No two of the {len(layout.wires)} wires of this circuit "
+            f"({known.planned.arrangement}) end at one tab: there is no loop of wires alone.",
             "Skip the step with that reason.",
         )
 

@@ -36,7 +36,7 @@ def test_several_steps_are_kept_with_one_unlock_up_to_the_hold(walk: Walk) -> No
     assert 0 == told.code, told.err
     assert 4 == told.err.count("is done.")
     assert "resistance received 350.2 ohm: PASS" in told.out
-    assert "Step 5 of 18, a HOLD: a second person decides" in told.out
+    assert "Step 5 of 23, a HOLD: a second person decides" in told.out
     assert told.out.rstrip().endswith("Next: gaugelog step do FB-1")
 
 
@@ -54,7 +54,7 @@ def test_leaving_keeps_nothing_half_entered(
     before = command("journal", "head").out
     told = walk(*answers)
     assert 0 == told.code
-    assert "FB-1 stands at step 1 of 18" in told.err
+    assert "FB-1 stands at step 1 of 23" in told.err
     assert "Go on with: gaugelog step walk FB-1" in told.err
     assert before == command("journal", "head").out
 

@@ -20,7 +20,7 @@ ASTM_E1237 = (
     "bond",
     "bonded",
     "wires",
-    "insulation",
+    "cabled",
     "coat",
     "coated",
     "finish",
@@ -100,10 +100,17 @@ def test_checks_are_read_in_the_order_of_the_work(
         ("resistance", "received"),
         ("resistance", "bonded"),
         ("insulation", "bonded"),
+        ("insulation", "cabled"),
         ("insulation", "coated"),
         ("lead loop", "cabled"),
+        ("lead symmetry", "cabled"),
         ("zero offset", "on channel"),
         ("shunt", "on channel"),
+        ("channel", "on channel"),
+        ("polarity", "on channel"),
+        ("press", "on channel"),
+        ("noise", "on channel"),
+        ("zero drift", "on channel"),
     ] == read
 
 

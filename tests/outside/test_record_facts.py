@@ -34,10 +34,10 @@ def test_each_signature_shows_name_time_and_meaning(demo: Path) -> None:  # noqa
     for shown in (
         "Tobe Okoro (TO)",
         "I did or saw the work recorded here and submit it for review.",
-        "2026-11-17 14:52:00 UTC+01:00",
+        "2026-11-17 17:12:00 UTC+01:00",
         "Quilla Reyes (QR)",
         "I reviewed this record against its criteria and accept it.",
-        "2026-11-17 15:54:00 UTC+01:00",
+        "2026-11-17 18:14:00 UTC+01:00",
     ):
         assert shown in text, shown
 
@@ -80,9 +80,9 @@ def test_the_record_carries_what_a_report_carries(demo: Path) -> None:  # noqa: 
         "who did it, and where they are": "Saltmere Measurement, 4 Weir Yard, Tarnwick",
         "place of the work": "Tarnwick, north bank",
         "unique identification": "Record TARN-BRIDGE-FB-1-R1",
-        "parts recognisable, clear end": "Page 4 of 4",
+        "parts recognisable, clear end": "Page 5 of 5",
         "customer": "Borough of Tarnwick",
-        "method": "Room-temperature bond of a foil gauge on metal, edition 1",
+        "method": "Room-temperature bond of a foil gauge on metal, edition 2",
         "item": "Main girder, south side",
         "date of receipt": "2026-09-14",
         "dates of the work": "2026-11-17",

@@ -12,10 +12,10 @@ from gaugelog.work import photos, reviews, steps
 from gaugelog.work.reviewing import PointEvidence, evidence_of, waiting_for_review
 from gaugelog.work.standing import set_standing
 from tests.pictures import camera_jpeg
-from tests.work.job import WALK, Job
+from tests.work.job import WALK, Job, before
 
-LOOP = 13
-"""Steps before the lead loop, which a technician may skip with a reason."""
+INSULATION, LOOP = before("insulation"), before("loop")
+"""Steps before the first insulation, and before the lead loop, which may be skipped."""
 
 
 def seen(job: Job, person: str = "q.reyes", point: str = "FB-1") -> PointEvidence:
@@ -26,11 +26,11 @@ def seen(job: Job, person: str = "q.reyes", point: str = "FB-1") -> PointEvidenc
 @pytest.fixture
 def submitted(job: Job) -> Job:
     """A job whose first point waits for review; one check failed before, one step was skipped."""
-    for who, typed in WALK[:9]:
-        job.do(who, typed)
-    job.do("t.okoro", {**WALK[9][1], "insulation": "0.2 GΩ"})
-    job.do("t.okoro", WALK[9][1], reason="flux left; cleaned again", note="solvent twice")
-    for who, typed in WALK[10:LOOP]:
+    job.walk(INSULATION)
+    first = WALK[INSULATION][1]
+    job.do("t.okoro", {**first, "insulation": "0.2 GΩ"})
+    job.do("t.okoro", first, reason="flux left; cleaned again", note="solvent twice")
+    for who, typed in WALK[INSULATION + 1 : LOOP]:
         job.do(who, typed)
     steps.skip(job.book, job.keys["t.okoro"], point="FB-1", reason="connector is moulded")
     for who, typed in WALK[LOOP + 1 :]:
@@ -58,13 +58,13 @@ def test_who_did_a_step_may_not_judge_the_point(job: Job) -> None:
 
 def test_checks_come_with_the_smallest_margin_first(submitted: Job) -> None:
     shares = [each.margin.share for each in seen(submitted).checks if each.margin is not None]
-    assert 6 == len(shares)
+    assert 11 == len(shares)
     assert sorted(share for share in shares if share is not None) == shares
 
 
 def test_a_check_that_blocks_comes_before_all_others(job: Job) -> None:
-    job.walk(9)
-    job.do("t.okoro", {**WALK[9][1], "insulation": "0.2 GΩ"})
+    job.walk(INSULATION)
+    job.do("t.okoro", {**WALK[INSULATION][1], "insulation": "0.2 GΩ"})
     first = seen(job).checks[0]
     assert ("insulation", True) == (first.last.check, first.last.verdict.blocks)
     assert first.margin is not None
@@ -81,7 +81,7 @@ def test_every_attempt_is_there_with_its_reason(submitted: Job) -> None:
 
 def test_skipped_steps_and_notes_are_told_with_who(submitted: Job) -> None:
     (skipped,) = seen(submitted).skipped
-    assert (14, "connector is moulded", "Tobe Okoro (TO)") == (
+    assert (15, "connector is moulded", "Tobe Okoro (TO)") == (
         skipped.number, skipped.note, skipped.by,
     )  # fmt: skip
     assert ["solvent twice"] == [each.note for each in seen(submitted).noted]
@@ -89,9 +89,9 @@ def test_skipped_steps_and_notes_are_told_with_who(submitted: Job) -> None:
 
 def test_who_did_what_is_told_for_each_person(submitted: Job) -> None:
     did = dict(seen(submitted).people)
-    assert ("let go on at 5", "let go on at 11") == did["Quilla Reyes (QR)"]
-    assert "skipped 14" in did["Tobe Okoro (TO)"]
-    assert "7 readings" == did["Tobe Okoro (TO)"][-1]
+    assert ("let go on at 5", "let go on at 12") == did["Quilla Reyes (QR)"]
+    assert "skipped 15" in did["Tobe Okoro (TO)"]
+    assert "14 readings" == did["Tobe Okoro (TO)"][-1]
 
 
 def test_what_keeps_a_record_from_being_accepted_is_named(submitted: Job) -> None:
