@@ -40,7 +40,7 @@ from gaugelog.ledger import (
 )
 from gaugelog.ledger.base import FactBody
 from gaugelog.ledger.buffer import Buffer
-from gaugelog.ledger.rights import Judge, misgivings
+from gaugelog.ledger.rights import Judge, Rights
 from gaugelog.ledger.rows import Apply, At, Change, Known, Row
 
 _FOLD: dict[tuple[str, int], tuple[type[FactBody], Apply]] = {
@@ -182,11 +182,12 @@ def compare(reader: SqliteReader) -> list[Trouble]:
     """Rebuild the ledger in memory; name what nobody might say, and each row that differs."""
     connection = reader.connection
     found: list[Trouble] = []
+    rights = Rights()
 
     def judge(known: Known, at: At, fact: FactBody) -> None:
         found.extend(
             Trouble(_STEP, f"entry {at.seq} ({fact.kind})", what, _PAST_THE_PROGRAM)
-            for what in misgivings(known, at, fact)
+            for what in rights.misgivings(known, at, fact)
         )
 
     wanted = fold(reader.entries(), one_chain=len(reader.chains()) == 1, judge=judge).rows

@@ -11,8 +11,10 @@ from gaugelog.ledger.campaign import PlanReleased
 from gaugelog.ledger.reviews import PointAccepted, PointReturned
 from gaugelog.ledger.rights import RIGHTS
 from gaugelog.ledger.steps import StepSkipped
+from gaugelog.work import people
 from gaugelog.work.history import check_logbook
-from tests.work.job import Job, released_job
+from gaugelog.work.people import Newcomer
+from tests.work.job import TYPED, WALK, WORD, Job, before, released_job
 
 
 @pytest.fixture
@@ -62,6 +64,25 @@ def test_a_role_is_asked_as_it_was_then(submitted: Job) -> None:
         point=row.id, revision=1, reason="dirt", redo_from="", returned_by="c.ward"
     )
     assert ["c.ward did not have the role reviewer then."] == kept(submitted, "c.ward", returned)
+
+
+def test_who_only_measured_is_no_second_person(tmp_path: Path) -> None:
+    job = released_job(tmp_path)
+    newcomer = Newcomer("b.oth", "Bo Oth", "BO", ("technician", "reviewer"))
+    job.keys["b.oth"] = people.enrol(
+        *(job.book, job.keys["c.ward"], job.folder.unlock_authority(WORD), job.folder),
+        newcomer=newcomer,
+        passphrase=WORD,
+    )
+    job.walk(before("insulation"))
+    typed = TYPED["insulation"][1]
+    job.do("b.oth", {**typed, "insulation": "0.2 GΩ"})
+    job.do("t.okoro", typed, reason="dried")
+    for who, more in WALK[before("insulation") + 1 :]:
+        job.do(who, more)
+    job.submit()
+    found = kept(job, "b.oth", accepted_by(job, "b.oth"))
+    assert ["b.oth did a step of this point, which asks for a second person."] == found
 
 
 def test_a_plan_is_released_by_a_planner(submitted: Job) -> None:

@@ -58,8 +58,10 @@ def test_who_did_a_step_may_not_judge_the_point(job: Job) -> None:
 
 def test_checks_come_with_the_smallest_margin_first(submitted: Job) -> None:
     shares = [each.margin.share for each in seen(submitted).checks if each.margin is not None]
-    assert 11 == len(shares)
-    assert sorted(share for share in shares if share is not None) == shares
+    known = [share for share in shares if share is not None]
+    assert 10 == len(known)
+    # What has no limit to lie near to, such as a sign that is seen or not, comes last.
+    assert sorted(known) == shares[: len(known)]
 
 
 def test_a_check_that_blocks_comes_before_all_others(job: Job) -> None:
@@ -91,7 +93,7 @@ def test_who_did_what_is_told_for_each_person(submitted: Job) -> None:
     did = dict(seen(submitted).people)
     assert ("let go on at 5", "let go on at 12") == did["Quilla Reyes (QR)"]
     assert "skipped 15" in did["Tobe Okoro (TO)"]
-    assert "14 readings" == did["Tobe Okoro (TO)"][-1]
+    assert "13 readings" == did["Tobe Okoro (TO)"][-1]
 
 
 def test_what_keeps_a_record_from_being_accepted_is_named(submitted: Job) -> None:
