@@ -26,6 +26,7 @@ from gaugelog.rules.compensated import SOURCE as COMPENSATED
 from gaugelog.rules.compensated import thermal_share
 from gaugelog.rules.leaked import SOURCE as LEAKED
 from gaugelog.rules.leaked import middle_leak
+from gaugelog.rules.taken import readings_at
 from gaugelog.rules.wired import Wired, planned_circuit, wired
 
 TRANSVERSE_WIDTH = 0.002
@@ -61,6 +62,8 @@ class _Known:
     grid: GridData
     planned: CircuitPlanned
     wired: Wired
+    subjects: frozenset[str]
+    """Ids of what its readings may be of: the point, the grid and its circuit."""
 
     @property
     def strain(self) -> float:
@@ -113,7 +116,8 @@ def _known(view: View, row: PointRow) -> _Known | None:
         return None
     body = LotReceived.model_validate_json(lot.data)
     data = body.grid(grids[0].number)
-    return _Known(view, point, article, body, data, planned, as_wired)
+    subjects = frozenset({row.id, grids[0].id, planned.id})
+    return _Known(view, point, article, body, data, planned, as_wired, subjects)
 
 
 def _inputs(known: _Known) -> dict[str, Estimate]:
@@ -134,20 +138,29 @@ def _inputs(known: _Known) -> dict[str, Estimate]:
 
 
 def _warmth(known: _Known) -> dict[str, Estimate]:
-    """Thermal output by mismatch, not corrected, and its scatter, over half the planned span."""
+    """Thermal output by mismatch, not corrected, and its scatter, over half the planned span.
+
+    Of the mismatch, as much as the circuit shows: none where its gauges cancel each other's.
+    """
     half = known.half_span
     found = {"scatter": normal(0.0, SCATTER_RATES["constantan"] * half / 2)}
     if known.lot.expansion_class is not None:
         rates = known.article.material.expansion.si(), known.lot.expansion_class.si()
-        found["thermal"] = rectangular(0.0, abs(float(mismatch_output(*rates, half))))
+        shown = abs(_thermal_share(known))
+        found["thermal"] = rectangular(0.0, shown * abs(float(mismatch_output(*rates, half))))
     return found
 
 
+def _thermal_share(known: _Known) -> float:
+    return thermal_share(known.planned, known.article.material.poisson_ratio.si())
+
+
 def _insulation(known: _Known) -> float | None:
-    """The insulation last read, ohm."""
+    """The insulation last read of the grid or of its circuit, at whatever point, ohm."""
     rows = [
         ReadingTaken.model_validate_json(row.data)
-        for row in known.view.all(ReadingRow, point=known.point.id, check="insulation", latest=1)
+        for row in readings_at(known.view, known.point.id)
+        if row.check == "insulation" and row.latest and row.subject in known.subjects
     ]
     values = [row.value.si() for row in rows if row.value is not None and row.value.si() > 0]
     return values[-1] if values else None
@@ -243,7 +256,7 @@ def _thermal_correction(known: _Known) -> Iterator[Correction]:
     """Of the circuit's reading: none where its gauges cancel each other's thermal output."""
     if known.lot.expansion_class is None:
         return
-    share = thermal_share(known.planned, known.article.material.poisson_ratio.si())
+    share = _thermal_share(known)
     if not share:
         yield Correction("thermal output by mismatch", "cancels", COMPENSATED)
         return
