@@ -55,7 +55,7 @@ CHECKS: dict[str, CheckKind] = {
             "insulation",
             ("ohm", "kohm", "Mohm", "Gohm", "Tohm"),
             "value",
-            ("permitted error", "trend"),
+            ("permitted error",),
         ),
         CheckKind("lead loop", "resistance", _OHMS, "prediction", relative=True),
         CheckKind("lead symmetry", "resistance", ("ohm",), "value", beside=(FIRST_WIRE,)),

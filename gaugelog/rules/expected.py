@@ -26,7 +26,7 @@ def short_of_expected(view: View, campaign: str, reading: ReadingTaken) -> Itera
 
 
 def is_short(item: CheckCriterion, reading: ReadingTaken) -> bool:
-    """Whether a value lies on the wrong side of what is expected; a bound that may reach it not."""
+    """Whether a value misses what is expected. A bound such as “> 20 GΩ” gets the benefit."""
     expected = item.expected
     if expected is None:
         return False

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from math import degrees
 
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.points import PointPlanned
@@ -51,9 +52,9 @@ def axis_effect(
         return ""
     strain = max((planned.strain_min.si(), planned.strain_max.si()), key=abs)
     error = float(misalignment_error(strain, -poisson * strain, 0.0, off[0]))
-    degrees = off[0] * 57.29577951308232
+    off_degrees = degrees(off[0])
     return (
-        f"axis {degrees:+.2g}° off: {error * 1e6:+.2g} µm/m at {strain * 1e6:.0f} µm/m, "
+        f"axis {off_degrees:+.2g}° off: {error * 1e6:+.2g} µm/m at {strain * 1e6:.0f} µm/m, "
         "uniaxial stress along the axis"
     )
 

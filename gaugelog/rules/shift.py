@@ -6,6 +6,7 @@ from collections.abc import Iterable
 from dataclasses import dataclass
 from datetime import datetime, timedelta
 
+from gaugelog.journal.clock import Moment
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.campaign import CampaignRow, CriteriaAgreed, CriteriaRow, ShiftDemand
 from gaugelog.ledger.instruments import InstrumentAdded, InstrumentRow, ReferenceValue
@@ -14,7 +15,7 @@ from gaugelog.ledger.view import View
 from gaugelog.physics.agreement import combined, e_number
 from gaugelog.rules.accuracy import RangeTaken
 from gaugelog.rules.digits import decimal_text, quantity
-from gaugelog.rules.windows import time_of
+from gaugelog.rules.windows import local_text, time_of
 
 RULE = "shift check 1"
 COVERAGE = 2
@@ -87,18 +88,24 @@ def why_unchecked(
     measured: Iterable[str],
     observed: datetime,
     demand: ShiftDemand | None,
+    now: Moment,
 ) -> list[str]:
     """Why a meter may not be read by the criteria, a sentence a quantity; empty when it may."""
     asked = [each for each in measured if demand is not None and each in demand.of]
     return [
         why
         for each in asked
-        if demand is not None and (why := _why(view, meter, each, observed, demand))
+        if demand is not None and (why := _why(view, meter, each, observed, demand, now))
     ]
 
 
 def _why(
-    view: View, meter: InstrumentAdded, measured: str, observed: datetime, demand: ShiftDemand
+    view: View,
+    meter: InstrumentAdded,
+    measured: str,
+    observed: datetime,
+    demand: ShiftDemand,
+    now: Moment,
 ) -> str:
     row = speaking(view, meter.id, measured, observed)
     wanted = f"the criteria ask for one within {demand.within} ({demand.source})"
@@ -107,7 +114,8 @@ def _why(
     if row.outcome == "fail":
         reference = view.get(InstrumentRow, row.reference)
         on = f" on {reference.label}" if reference is not None else ""
-        return f"{meter.label} failed its check of {measured}{on} at {row.observed_at}."
+        when = local_text(time_of(row.observed_at), now)
+        return f"{meter.label} failed its check of {measured}{on} at {when}."
     age = _age(row, observed)
     if age > timedelta(seconds=demand.within.si()):
         hours = age.total_seconds() / 3600

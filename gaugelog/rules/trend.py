@@ -1,4 +1,4 @@
-"""Trends between stages: a fall of insulation is flagged, and rules only if the criteria say so."""
+"""Trends between stages: a fall of insulation is flagged, and never rules."""
 
 from __future__ import annotations
 

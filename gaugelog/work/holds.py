@@ -23,7 +23,7 @@ def decide(doing: Doing, typed: Mapping[str, str], note: str, refuse: str) -> St
     person = making.signer.person
     if refuse and not refuse.strip():
         raise Faulty([Fault("refuse", "is empty.", "Say why the hold is refused.")])
-    understand(Asked(making.view, row, step, doing.day, doing.observed), typed)
+    understand(Asked(making.view, row, step, doing.day, doing.observed, making.moment), typed)
     demand_role(making.view, person, "technician", "reviewer")
     demand_qualified(making.view, person, step, doing.day)
     demand_second_person(making.view, person, row.id, "decide this hold")

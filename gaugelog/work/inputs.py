@@ -10,6 +10,7 @@ from pathlib import Path
 from gaugelog.errors import Fault, Faulty
 from gaugelog.intake.pictures import Picture, load_pictures
 from gaugelog.intake.typed import TypedReading, parse_quantity, parse_reading
+from gaugelog.journal.clock import Moment
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.checks import CHECKS
 from gaugelog.ledger.instruments import InstrumentAdded
@@ -58,6 +59,8 @@ class Asked:
     """The calendar day where the work is done: lots expire and meters fall due at its end."""
     observed: datetime
     """When the step was observed, UTC."""
+    now: Moment
+    """When it is entered, by the clock of this machine."""
 
 
 def understand(asked: Asked, typed: Mapping[str, str]) -> Understood:
@@ -178,7 +181,7 @@ def _demand_checked(asked: Asked, item: StepInput, meter: InstrumentAdded) -> No
     remedy = f"Take another, or: gaugelog instrument check {meter.label} reference=… reads=…"
     faults = [
         Fault("", what, remedy)
-        for what in why_unchecked(asked.view, meter, measured, asked.observed, demand)
+        for what in why_unchecked(asked.view, meter, measured, asked.observed, demand, asked.now)
     ]
     if faults:
         raise Faulty(faults)

@@ -9,6 +9,7 @@ from datetime import date
 from gaugelog.errors import ExitCode, Fault, Faulty
 from gaugelog.intake.instruments import QUANTITY_UNITS
 from gaugelog.intake.typed import parse_quantity
+from gaugelog.journal.clock import Moment
 from gaugelog.journal.ids import new_id
 from gaugelog.journal.keys import Signer
 from gaugelog.ledger.base import Quantity
@@ -22,6 +23,7 @@ from gaugelog.rules.accuracy import range_of
 from gaugelog.rules.digits import quantity
 from gaugelog.rules.shift import COVERAGE, RULE, agreement
 from gaugelog.rules.who import demand_role
+from gaugelog.rules.windows import local_text, time_of
 from gaugelog.work.doing import day_of, observed_at, utc_text
 from gaugelog.work.logbook import Logbook
 
@@ -86,7 +88,7 @@ def check(
             checked_by=signer.person,
         )
         deed.keep(fact, [read_on.id, known.id])
-        return Checked(fact, tuple(_told(deed.view, fact)))
+        return Checked(fact, tuple(_told(deed.view, fact, deed.moment)))
 
 
 def checks(logbook: Logbook, meter: str = "") -> list[MeterChecked]:
@@ -168,17 +170,17 @@ def _typed(reads: str, measured: str) -> Quantity:
         raise Faulty([Fault("reads", each.what, each.remedy) for each in error.faults]) from None
 
 
-def _told(view: View, fact: MeterChecked) -> Iterator[str]:
+def _told(view: View, fact: MeterChecked, now: Moment) -> Iterator[str]:
     most = quantity(fact.at_most.si(), fact.at_most.unit, 3)
     yield (
         f"{fact.label} on {fact.reference_label}, {fact.value}: reads {fact.reads}, "
         f"{fact.off} off; at most {most} either way (k = {COVERAGE}): {fact.outcome.upper()}"
     )
     if fact.outcome == "fail":
-        yield from _in_doubt(view, fact)
+        yield from _in_doubt(view, fact, now)
 
 
-def _in_doubt(view: View, fact: MeterChecked) -> Iterator[str]:
+def _in_doubt(view: View, fact: MeterChecked, now: Moment) -> Iterator[str]:
     """What was read with the meter since it last passed."""
     passed = [
         row.observed_at
@@ -193,8 +195,9 @@ def _in_doubt(view: View, fact: MeterChecked) -> Iterator[str]:
     ]
     if rows:
         labels = ", ".join(_labels(view, rows))
-        when = f"since it passed at {since}" if since else "before"
-        yield f"In doubt: {len(rows)} readings taken with it {when}, of {labels}. Measure again."
+        when = f"since it passed at {local_text(time_of(since), now)}" if since else "before"
+        counted = f"{len(rows)} reading{'s'[: len(rows) > 1]}"
+        yield f"In doubt: {counted} taken with it {when}, of {labels}. Measure again."
     yield f"Put {fact.label} away, or find the cause and check it again."
 
 

@@ -73,7 +73,7 @@ def rehearse(
         order_flag(view, row, observed, moment, reason)
         step = _open(progress(view, row, moment, observed))
         if not step.hold:
-            understand(Asked(view, row, step, day_of(observed, moment), observed), typed)
+            understand(Asked(view, row, step, day_of(observed, moment), observed, moment), typed)
 
 
 def worklist(logbook: Logbook) -> list[NextStep]:
@@ -206,7 +206,9 @@ def _do(doing: Doing, typed: Mapping[str, str], note: str, reason: str) -> StepO
     view, row = doing.making.view, doing.row
     demand_role(view, doing.making.signer.person, "technician")
     demand_qualified(view, doing.making.signer.person, doing.step, doing.day)
-    got = understand(Asked(view, row, doing.step, doing.day, doing.observed), typed)
+    got = understand(
+        Asked(view, row, doing.step, doing.day, doing.observed, doing.making.moment), typed
+    )
     _demand_air(doing, got)
     _demand_pot_life(doing, got)
     _demand_place(doing, got)

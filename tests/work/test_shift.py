@@ -163,7 +163,7 @@ def test_a_check_speaks_for_twelve_hours_and_no_longer(strict: Job) -> None:
 def test_a_meter_that_failed_is_not_read_until_it_passes(strict: Job) -> None:
     check(strict, "350.1 ohm")
     check(strict, "351 ohm")
-    assert refusal(strict).startswith("RM-2 failed its check of resistance on RB-1 at 2026-11-17")
+    assert refusal(strict).startswith("RM-2 failed its check of resistance on RB-1 at 2026-11-17 ")
     check(strict, "350.05 ohm")
     assert take_gauge(strict).settled
 
@@ -193,7 +193,7 @@ def test_a_failed_check_names_what_was_read_since_it_passed(strict: Job) -> None
     take_gauge(strict)
     told = check(strict, "352 ohm").lines
     assert "RM-2 on RB-1, 350 Ω: reads 352 Ω, 2 Ω off; at most 0.319 Ω either way" in told[0]
-    assert told[1].startswith("In doubt: 1 readings taken with it since it passed at 2026-11-17")
+    assert told[1].startswith("In doubt: 1 reading taken with it since it passed at 2026-11-17 ")
     assert "of FB-1. Measure again." in told[1]
 
 
