@@ -118,7 +118,8 @@ class FullScreen(App[None]):
         if place != "worklist":
             self.push_screen(places.made(place, point))
         else:
-            self.rooms()[-1].facts_changed()
+            for room in self.rooms()[-1:]:  # none while one is being built
+                room.facts_changed()
 
     def action_go(self, place: str, point: str = "") -> None:
         """A key that leads to a screen."""
@@ -228,7 +229,8 @@ class FullScreen(App[None]):
         try:
             seq = self.desk.logbook.head().seq
         except GaugelogError as error:
-            self.rooms()[-1].tell_error(error)
+            for room in self.rooms()[-1:]:
+                room.tell_error(error)
             return False
         changed, self._head = seq != self._head, seq
         return changed

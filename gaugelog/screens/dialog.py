@@ -93,7 +93,7 @@ class Dialog(ModalScreen[T | None], Generic[T]):
 
     def compose(self) -> ComposeResult:
         """Heading, explanation, fields, what went wrong."""
-        with VerticalScroll(id="dialog"):
+        with _Box(id="dialog"):
             yield Words(plain(self.heading, "bold"), classes="heading")
             yield Words(self.explained(), classes="explained")
             for question in self.questions():
@@ -177,6 +177,15 @@ class Dialog(ModalScreen[T | None], Generic[T]):
             if field.password:
                 field.value = ""
                 field.focus()
+
+
+class _Box(VerticalScroll, can_focus=False, inherit_bindings=False):
+    """What is too long scrolls by the page; up and down are left to go from field to field."""
+
+    BINDINGS: ClassVar[list[BindingType]] = [
+        Binding("pageup", "page_up", "Page up", show=False),
+        Binding("pagedown", "page_down", "Page down", show=False),
+    ]
 
 
 def _field(question: Question) -> Iterator[Horizontal]:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass
 from datetime import timedelta
-from typing import TYPE_CHECKING, Any, TypeVar, cast
+from typing import TYPE_CHECKING, TypeVar, cast
 
 from textual.app import ComposeResult
 from textual.binding import Binding
@@ -245,8 +245,3 @@ class Room(Screen[None]):
 def show(widget: Widget, shown: bool) -> None:
     """Show a widget, or leave its room to others."""
     widget.display = shown
-
-
-def only(screen: Any, kind: type[T]) -> T | None:
-    """The screen if it is of a kind, else None."""
-    return screen if isinstance(screen, kind) else None

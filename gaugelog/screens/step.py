@@ -262,10 +262,16 @@ class StepScreen(Room):
             note,
             at,
         )
-        self.in_background("Keeping it", attempt, self._done, self._refused)
+        person = self._person()
+        self.in_background(
+            "Keeping it", attempt, lambda what: self._done(what, person), self._refused
+        )
 
-    def _done(self, what: tuple[StepOutcome, InHand]) -> None:
+    def _done(self, what: tuple[StepOutcome, InHand], person: str) -> None:
         outcome, hand = what
+        if person != self._person():  # handed over meanwhile: nothing of it is the next person's
+            self.facts_changed()
+            return
         self.entry.carry(self.draft, self._now())
         self.tell(text.outcome_text(outcome))
         self._go_on(hand)
@@ -371,6 +377,9 @@ class StepScreen(Room):
     def _focus_first(self) -> None:
         if not self.entry.focus_first():
             self.set_focus(None)
+
+    def _person(self) -> str:
+        return self.desk.seat.person if self.desk.seat is not None else ""
 
     def _now(self) -> datetime:
         return self.desk.logbook.clock.now().utc

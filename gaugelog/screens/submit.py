@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from textual.content import Content
 
-from gaugelog.errors import KeyTrouble
 from gaugelog.screens.dialog import Dialog, Question
+from gaugelog.screens.judge import secret_of, unlocked_again
 from gaugelog.screens.words import lines, plain
 from gaugelog.work import reviews
 from gaugelog.work.meanings import SUBMIT_MEANING
@@ -27,18 +27,14 @@ class SubmitDialog(Dialog[str]):
 
     def questions(self) -> tuple[Question, ...]:
         """The secret of who sits here."""
-        seat = self.full.desk.seat
-        whose = f"Passphrase of {seat.person}" if seat is not None else "Passphrase"
-        return (Question("secret", whose, secret=True),)
+        return (secret_of(self.full.desk),)
 
     def answer(self, given: dict[str, str]) -> str:
         """Draw, sign, keep."""
         desk = self.full.desk
-        if desk.seat is None:
-            raise KeyTrouble("Nobody is signed on.", "Sign on first.")
-        again = desk.sign_on(desk.seat.person, given["secret"])
+        signer = unlocked_again(desk, given["secret"])
         done = reviews.submit(
-            desk.logbook, again.signer, desk.maker(), point=self._point, meaning=SUBMIT_MEANING
+            desk.logbook, signer, desk.maker(), point=self._point, meaning=SUBMIT_MEANING
         )
         return (
             f"{self._point}: record revision {done.revision} is signed and submitted; "

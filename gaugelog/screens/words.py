@@ -9,7 +9,6 @@ from gaugelog.errors import Faulty, GaugelogError
 from gaugelog.visible import visible
 
 GOOD, BAD, WAIT, CALM = "$text-success", "$text-error", "$text-warning", "$text-muted"
-EMPHASIS = "bold"
 
 STATES: dict[str, tuple[str, str]] = {
     "planned": ("·", CALM),

@@ -7,7 +7,6 @@ from itertools import groupby
 from typing import ClassVar
 
 from textual import events
-from textual.app import ComposeResult
 from textual.binding import Binding, BindingType
 from textual.containers import Horizontal
 from textual.content import Content
@@ -90,10 +89,6 @@ class WorklistScreen(Room):
         yield table
         yield Words(id="more")
 
-    def compose(self) -> ComposeResult:
-        """As every screen."""
-        yield from super().compose()
-
     def on_mount(self) -> None:
         """Read the list."""
         self.query_one("#find", Input).focus()
@@ -109,9 +104,7 @@ class WorklistScreen(Room):
         if seat is None:
             return
         book, person = self.desk.logbook, seat.person
-        self.in_background(
-            "Reading the points", lambda: looking.for_person(book, person), self._read
-        )
+        self.look_again(lambda: looking.for_person(book, person), self._read)
 
     def _read(self, listed: list[Listed]) -> None:
         if listed != self._listed:

@@ -79,7 +79,7 @@ def test_a_look_for_another_person_is_not_lost_while_one_runs(
         assert "1 wait, 0 for you" in seen.lines()[0]
         assert ["q.reyes", "t.okoro"] == asked
 
-    job = at(18)
+    job = at(23)
     job.submit()
     run_screen(job.book, job.folder, play)
 
@@ -101,6 +101,6 @@ def test_a_list_that_could_not_be_read_is_read_when_it_can_be(
         assert "1 wait, 1 for you" in seen.lines()[0]
         assert "can't be read" not in seen.text()
 
-    job = at(18)
+    job = at(23)
     job.submit()
     run_screen(job.book, job.folder, play)

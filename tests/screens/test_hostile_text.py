@@ -107,7 +107,7 @@ def test_a_draft_that_can_not_be_written_is_said_and_stops_nothing(at: At, tmp_p
         await seen.type("RM-2")
         await seen.type("350.12")
         assert isinstance(seen.room, StepScreen)
-        assert "3/18" in seen.text()
+        assert "3/23" in seen.text()
 
     job = at(1)
     blocked = tmp_path / "file"
