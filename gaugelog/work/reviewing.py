@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from itertools import groupby
 
@@ -15,14 +15,12 @@ from gaugelog.ledger.reviews import RecordRow
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.story import StoryRow
 from gaugelog.ledger.view import View
-from gaugelog.rules.barred import demand_place_free
 from gaugelog.rules.margin import Margin, margin_of
-from gaugelog.rules.progress import demand_changes_seen, route_for, state_of, subject_label
+from gaugelog.rules.progress import route_for, state_of, subject_label
 from gaugelog.rules.taken import readings_at
-from gaugelog.rules.untouched import demand_untouched
 from gaugelog.work.doing import point_row
 from gaugelog.work.logbook import Logbook
-from gaugelog.work.reviews import under_review
+from gaugelog.work.reviews import under_review, unfit
 
 
 @dataclass(frozen=True, slots=True)
@@ -160,7 +158,7 @@ def evidence_of(logbook: Logbook, point: str, person: str) -> PointEvidence:
             tuple(_photos(view, row)),
             tuple(_story(view, row)),
             _bar(view, row.label, person),
-            tuple(_blocks(view, row, last)),
+            tuple(_blocks(logbook, view, row, last)),
         )
 
 
@@ -176,29 +174,23 @@ def _waiting(view: View, point: PointRow, record: RecordRow, person: str) -> Wai
 
 
 def _bar(view: View, point: str, person: str) -> str:
-    return _refusal(lambda: under_review(view, point, person, "review it"))
-
-
-def _blocks(view: View, point: PointRow, record: RecordRow | None) -> Iterator[str]:
-    if record is None or record.state != "submitted":
-        return
-    for demand in (
-        lambda: demand_untouched(view, point, record),
-        lambda: demand_changes_seen(point),
-        lambda: demand_place_free(view, point),
-    ):
-        refused = _refusal(demand)
-        if refused:
-            yield refused
-
-
-def _refusal(demand: Callable[[], object]) -> str:
-    """What a rule says against it, with the way out; empty when it says nothing."""
     try:
-        demand()
+        under_review(view, point, person, "review it")
     except Refused as error:
-        return f"{error.message} {error.remedy}".strip()
+        return _sentence(error)
     return ""
+
+
+def _blocks(logbook: Logbook, view: View, point: PointRow, record: RecordRow | None) -> list[str]:
+    if record is None or record.state != "submitted":
+        return []
+    with logbook.storage.reading() as reader:
+        return [_sentence(each) for each in unfit(view, reader, logbook.chain, point, record)]
+
+
+def _sentence(refused: Refused) -> str:
+    """What a rule says against it, with the way out."""
+    return f"{refused.message} {refused.remedy}".strip()
 
 
 def _checks(view: View, point: PointRow) -> list[CheckFound]:

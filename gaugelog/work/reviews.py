@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass
 
 from gaugelog.errors import Refused
 from gaugelog.journal.append import touched_since
 from gaugelog.journal.keys import Signer
+from gaugelog.journal.storage.port import Reader
 from gaugelog.ledger.points import GridRow, PointRow
 from gaugelog.ledger.reviews import PointAccepted, PointReturned, PointSubmitted, RecordRow
 from gaugelog.ledger.view import View
@@ -89,9 +91,9 @@ def accept(
     Raises Refused when nothing is submitted, or the reviewer did a step of the point.
     """
     demand_meaning(meaning)
-    with logbook.reading() as view:
+    with logbook.reading() as view, logbook.storage.reading() as reader:
         row, record = under_review(view, point, signer.person, "accept it")
-        _demand_fit(view, row, record)
+        _demand_fit(view, reader, logbook.chain, row, record)
         flags = flags_at(view, row)
         stamp = Stamp(
             signer.person,
@@ -105,8 +107,7 @@ def accept(
         latest, now = under_review(deed.view, point, signer.person, "accept it")
         if now.id != record.id:
             raise Refused(f"{point} was submitted anew meanwhile.", "Look at it again.")
-        _demand_fit(deed.view, latest, now)
-        _demand_told(deed, latest, now)
+        _demand_fit(deed.view, deed.writer, deed.chain, latest, now)
         # Only now: a file with both signatures is never left behind by a deed that was refused.
         file = logbook.evidence.put(pdf)
         body = PointAccepted(
@@ -232,16 +233,34 @@ def _request(view: View, row: PointRow, head: str, meaning: str, logbook: Logboo
     return RecordRequest(row.id, revision, head, now, meaning, logbook.evidence)
 
 
-def _demand_fit(view: View, row: PointRow, record: RecordRow) -> None:
-    """Raise Refused when what the record tells no longer holds at the point."""
-    demand_untouched(view, row, record)
-    demand_changes_seen(row)
-    demand_place_free(view, row)
+def unfit(
+    view: View, reader: Reader, chain: str, row: PointRow, record: RecordRow
+) -> Iterator[Refused]:
+    """Everything that keeps a submitted record from being accepted, whoever looks.
+
+    What it tells no longer holds at the point, or `chain` holds more of it than it can tell.
+    """
+    for demand in (
+        lambda: demand_untouched(view, row, record),
+        lambda: demand_changes_seen(row),
+        lambda: demand_place_free(view, row),
+        lambda: _demand_told(view, reader, chain, row, record),
+    ):
+        try:
+            demand()
+        except Refused as error:
+            yield error
 
 
-def _demand_told(deed: Deed, row: PointRow, record: RecordRow) -> None:
+def _demand_fit(view: View, reader: Reader, chain: str, row: PointRow, record: RecordRow) -> None:
+    """Raise Refused with the first that keeps a record from being accepted."""
+    for refused in unfit(view, reader, chain, row, record):
+        raise refused
+
+
+def _demand_told(view: View, reader: Reader, chain: str, row: PointRow, record: RecordRow) -> None:
     """Raise Refused when the journal holds more about the point than its record can tell."""
-    later = touched_since(deed.writer, _about(deed.view, row), record.seq, deed.chain)
+    later = touched_since(reader, _about(view, row), record.seq, chain)
     if later:
         raise Refused(
             f"{row.label} changed since its record was submitted (entry {later[0].header.seq}, "

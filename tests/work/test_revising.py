@@ -15,6 +15,7 @@ from gaugelog.ledger.story import StoryRow
 from gaugelog.work import people, plan, reviews, revising, steps
 from gaugelog.work.history import check_logbook
 from gaugelog.work.people import Newcomer
+from gaugelog.work.reviewing import evidence_of
 from tests.work.job import DEMO, WALK, WORD, Job
 
 WHY = "drawing revision C"
@@ -233,7 +234,11 @@ def test_a_point_under_review_whose_plan_changed_is_submitted_anew(planner: Plan
     with pytest.raises(Refused, match="The plan changed under FB-1"):
         job.accept()
     _see(job)
-    # The record tells what the plan said before; nobody signs that.
+    # The record tells what the plan said before; nobody signs that, and a reviewer is told at once.
+    assert any(
+        "changed since its record was submitted" in each
+        for each in evidence_of(job.book, "FB-1", "q.reyes").blocks
+    )
     with pytest.raises(Refused, match="changed since its record was submitted"):
         job.accept()
     reviews.give_back(job.book, job.keys["q.reyes"], point="FB-1", reason="the plan changed")
