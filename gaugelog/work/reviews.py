@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 
 from gaugelog.errors import Refused
@@ -240,12 +240,13 @@ def unfit(
 
     What it tells no longer holds at the point, or `chain` holds more of it than it can tell.
     """
-    for demand in (
+    demands: tuple[Callable[[], None], ...] = (
         lambda: demand_untouched(view, row, record),
         lambda: demand_changes_seen(row),
         lambda: demand_place_free(view, row),
         lambda: _demand_told(view, reader, chain, row, record),
-    ):
+    )
+    for demand in demands:
         try:
             demand()
         except Refused as error:
