@@ -13,6 +13,9 @@ from gaugelog.intake.tables import Columns
 from gaugelog.ledger.base import Quantity
 from gaugelog.ledger.stock import LotReceived, PackReceived
 
+CURVE = "thermal_output_um_per_m"
+CURVE_FACTOR = "thermal_output_factor"
+
 LOT_COLUMNS = Columns(
     needed=(
         "lot",
@@ -37,6 +40,8 @@ LOT_COLUMNS = Columns(
         "temperature_max_degC",
         "strain_limit_um_per_m",
         "test_voltage_max_V",
+        CURVE,
+        CURVE_FACTOR,
         "expires",
         CERTIFICATE,
     ),
@@ -120,6 +125,10 @@ CERTIFIED: dict[str, Callable[[LotReceived], object]] = {
     "temperature_max_degC": lambda lot: _plain(lot.temperature_max),
     "strain_limit_um_per_m": lambda lot: _plain(lot.strain_limit),
     "test_voltage_max_V": lambda lot: _plain(lot.test_voltage_max),
+    CURVE: lambda lot: [float(each) for each in lot.thermal_output],
+    CURVE_FACTOR: lambda lot: (
+        None if lot.thermal_output_factor is None else float(lot.thermal_output_factor)
+    ),
     "expires": lambda lot: lot.expires,
 }
 """What a lot's certificate says, by its column."""
@@ -129,6 +138,21 @@ _SAME: dict[str, Callable[[LotReceived], object]] = {
     "received_on": lambda lot: lot.received_on,
 }
 """What every row of a lot in one delivery must say alike."""
+
+
+def _curve(row: Fields) -> tuple[str, ...]:
+    """Coefficients of the curve of thermal output in °C, the constant first; none without one."""
+    if not row.has(CURVE):
+        return ()
+    return tuple(each.value for each in row.numbers(CURVE, "um/m"))
+
+
+def _curve_factor(row: Fields) -> str | None:
+    """The factor that the curve was measured with; it says nothing without a curve."""
+    found = row.maybe_number(CURVE_FACTOR, "1", positive=True)
+    if found is not None and not row.has(CURVE):
+        row.fault(CURVE_FACTOR, "has no curve.", f"Give {CURVE}, or leave this empty.")
+    return None if found is None else found.value
 
 
 def _lot_data(row: Fields) -> LotReceived:
@@ -150,6 +174,8 @@ def _lot_data(row: Fields) -> LotReceived:
         temperature_max=row.maybe_number("temperature_max_degC", "degC"),
         strain_limit=row.maybe_number("strain_limit_um_per_m", "um/m", positive=True),
         test_voltage_max=row.maybe_number("test_voltage_max_V", "V", positive=True),
+        thermal_output=_curve(row),
+        thermal_output_factor=_curve_factor(row),
         expires=row.maybe_day("expires"),
         received_on=row.day("received_on"),
         packs=(),

@@ -6,6 +6,7 @@ from pathlib import Path
 
 import pytest
 
+from gaugelog.intake.lots import unlike
 from gaugelog.intake.papers import Paper
 from gaugelog.intake.stock import load_stock
 from tests.intake.conftest import DEMO, change, counter, faults_of
@@ -195,3 +196,56 @@ def test_several_figures_for_a_gauge_of_one_grid_are_told(tmp_path: Path) -> Non
     file = _rosette(tmp_path, pattern="", angles="")
     whats = [fault.what for fault in faults_of(lambda: load_stock([file], counter()))]
     assert ["gives 3 values for one grid."] * 2 == whats
+
+
+CURVE = "-31.2; 2.4; −0.0571; 2.9e-4; -4.1e-7"
+
+
+def _with_curve(folder: Path, curve: str, factor: str, second: str | None = None) -> Path:
+    """The lots' file with a curve in each row; `second` in the second one."""
+    file = _copy("lots.csv", folder)
+    head, *rows = file.read_text(encoding="utf-8").splitlines()
+    curves = (curve, curve if second is None else second)
+    lines = [f"{head},thermal_output_um_per_m,thermal_output_factor"]
+    lines += [f"{row},{each},{factor}" for row, each in zip(rows, curves, strict=True)]
+    file.write_text("\n".join(lines) + "\n", encoding="utf-8")
+    return file
+
+
+def test_the_curve_of_thermal_output_is_kept_as_it_stands_on_the_sheet(tmp_path: Path) -> None:
+    (lot,) = load_stock([_with_curve(tmp_path, CURVE, "2.0")], counter()).lots
+    assert ("-31.2", "2.4", "-0.0571", "2.9e-4", "-4.1e-7") == lot.thermal_output
+    assert "2.0" == lot.thermal_output_factor
+
+
+def test_a_lot_may_have_no_curve(tmp_path: Path) -> None:
+    (lot,) = load_stock([_with_curve(tmp_path, "", "")], counter()).lots
+    assert ((), None) == (lot.thermal_output, lot.thermal_output_factor)
+
+
+@pytest.mark.parametrize(
+    ("curve", "factor", "column"),
+    [
+        ("-31.2; two", "2.0", "thermal_output_um_per_m"),
+        ("-31.2; 2.4", "0", "thermal_output_factor"),
+        ("", "2.0", "thermal_output_factor"),
+    ],
+)
+def test_a_curve_that_can_not_be_understood_is_told(
+    tmp_path: Path, curve: str, factor: str, column: str
+) -> None:
+    file = _with_curve(tmp_path, curve, factor)
+    found = faults_of(lambda: load_stock([file], counter()))
+    assert f"lots.csv, row 2, column {column}" == found[0].where
+
+
+def test_one_lot_has_one_curve(tmp_path: Path) -> None:
+    file = _with_curve(tmp_path, "-31.2; 2.4", "2.0", second="-31.2; 2.5")
+    (fault,) = faults_of(lambda: load_stock([file], counter()))
+    assert "lots.csv, row 3, column thermal_output_um_per_m" == fault.where
+
+
+def test_more_packs_under_another_curve_are_another_certificate(tmp_path: Path) -> None:
+    (first,) = load_stock([_with_curve(tmp_path, CURVE, "2.0")], counter()).lots
+    (plain,) = load_stock([DEMO / "lots.csv"], counter()).lots
+    assert ["thermal_output_um_per_m", "thermal_output_factor"] == unlike(first, plain)
