@@ -247,7 +247,7 @@ def test_an_export_keeps_hostile_words_out_of_its_paths(
     assert [] == [name for name in names if not re.fullmatch(r"[\w ./~-]+", name, re.ASCII)]
 
 
-@pytest.mark.parametrize(("number", "field"), every_field(), ids=str)
+@pytest.mark.parametrize(("number", "field"), list(every_field()), ids=str)
 def test_a_field_keeps_the_text_or_says_why_not(
     tmp_path: Path, number: int, field: Any, capsys: pytest.CaptureFixture[str]
 ) -> None:

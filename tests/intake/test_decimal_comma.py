@@ -40,7 +40,7 @@ def _cells(folder: Path, *names: str) -> Iterator[tuple[str, int, str]]:
 
 
 @pytest.mark.parametrize(
-    ("name", "row", "column"), _cells(DEMO / "plan", "grids.csv", "circuits.csv")
+    ("name", "row", "column"), list(_cells(DEMO / "plan", "grids.csv", "circuits.csv"))
 )
 def test_in_a_table_of_the_plan(plan: Path, name: str, row: int, column: str) -> None:
     set_cell(plan / name, row, column, "2,08")
@@ -48,7 +48,9 @@ def test_in_a_table_of_the_plan(plan: Path, name: str, row: int, column: str) ->
     assert f"{where}“2,08” has a decimal comma. Write 2.08." in lines_of(lambda: understood(plan))
 
 
-@pytest.mark.parametrize(("name", "row", "column"), _cells(DEMO, "lots.csv", "consumables.csv"))
+@pytest.mark.parametrize(
+    ("name", "row", "column"), list(_cells(DEMO, "lots.csv", "consumables.csv"))
+)
 def test_in_a_table_of_stock(tmp_path: Path, name: str, row: int, column: str) -> None:
     file = Path(shutil.copy(DEMO / name, tmp_path / name))
     set_cell(file, row, column, "2,08")
