@@ -74,7 +74,9 @@ def mounted(*words: str | Path) -> Iterator[None]:
 def read_only(folder: Path) -> Iterator[None]:
     """`folder` on a medium that can't be written."""
     with mounted("--bind", folder, folder):
-        subprocess.run(["mount", "-o", "remount,bind,ro", folder], check=True)
+        done = subprocess.run(["mount", "-o", "remount,bind,ro", folder], check=False)
+        if done.returncode != 0:
+            pytest.skip("needs to mount read-only, which is not allowed here")
         yield
 
 
