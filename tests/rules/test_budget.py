@@ -6,6 +6,7 @@ from pathlib import Path
 
 import pytest
 
+from gaugelog.ledger.circuits import CircuitRow
 from gaugelog.rules.budget import PointBudget, point_budget
 from gaugelog.work import steps
 from gaugelog.work.logbook import Logbook
@@ -52,3 +53,22 @@ def test_the_insulation_of_another_grid_does_not_count(tmp_path: Path) -> None:
     for value in ("18 GΩ", "17 GΩ", "16 GΩ"):
         job.do("t.okoro", {**INSULATION, "insulation": value}, "A", reason="once more")
     assert 27.78e-12 / 3**0.5 == pytest.approx(_input(_budget(job.book), "leak"), rel=1e-3)
+
+
+def test_the_insulation_of_the_circuit_counts_wherever_it_was_taken(tmp_path: Path) -> None:
+    """What was read at B of the circuit that both share, 18 GΩ, is known to A's budget too."""
+    book = walk(tmp_path, "half bending").job.book
+    with book.reading() as view:
+        (circuit,) = view.all(CircuitRow)
+        ids = {label: row.id for label in "AB" if (row := view.point(label)) is not None}
+    with book.storage.writing() as writer:
+        # No shipped route reads it of a circuit; one of a planner's own may.
+        writer.connection.execute(
+            "UPDATE reading SET latest = 0 WHERE point = ? AND \"check\" = 'insulation'",
+            (ids["A"],),
+        )
+        writer.connection.execute(
+            "UPDATE reading SET subject = ? WHERE point = ? AND stage = 'coated'",
+            (circuit.id, ids["B"]),
+        )
+    assert 27.78e-12 / 3**0.5 == pytest.approx(_input(_budget(book), "leak"), rel=1e-3)
