@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from rich.cells import cell_len
 from textual.content import Content
 
-from gaugelog.screens.words import CALM, plain
+from gaugelog.screens.words import CALM
 from gaugelog.visible import visible
 
 _GAP = 2
@@ -55,11 +55,10 @@ def widths(columns: Sequence[Column], rows: Sequence[Sequence[Cell]], room: int)
 
 def line(columns: Sequence[Column], cells: Sequence[Cell], wide: Sequence[int]) -> Content:
     """One line: numbers to the right, words to the left, the rest cut with an ellipsis."""
-    parts = [
-        plain(_fit(cell.text, width, column.number), cell.style)
-        for column, cell, width in zip(columns, cells, wide, strict=True)
-    ]
-    return Content(" " * _GAP).join(parts)
+    parts: list[str | tuple[str, str]] = []
+    for column, cell, width in zip(columns, cells, wide, strict=True):
+        parts += [(_fit(cell.text, width, column.number), cell.style), " " * _GAP]
+    return Content.assemble(*parts[:-1])
 
 
 def heading(columns: Sequence[Column], wide: Sequence[int]) -> Content:
@@ -69,6 +68,7 @@ def heading(columns: Sequence[Column], wide: Sequence[int]) -> Content:
 
 def _fit(text: str, width: int, number: bool) -> str:
     shown = visible(text)
-    if number and cell_len(shown) < width:
-        return " " * (width - cell_len(shown)) + shown
-    return str(Content(shown).truncate(width, ellipsis=True, pad=True))
+    spare = width - cell_len(shown)
+    if spare < 0:
+        return str(Content(shown).truncate(width, ellipsis=True, pad=True))
+    return " " * spare + shown if number else shown + " " * spare

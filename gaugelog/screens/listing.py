@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from abc import abstractmethod
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from itertools import groupby
 from typing import ClassVar, Generic, TypeVar
@@ -61,7 +61,9 @@ class Listing(Room, Generic[T]):
     def __init__(self) -> None:
         super().__init__()
         self.found: T | None = None
+        self._all: tuple[Row, ...] = ()
         self._rows: dict[str, Row] = {}
+        self._drawn: tuple[int, dict[str, Content]] = (0, {})
         self._asked = ("", -1)
 
     @abstractmethod
@@ -129,6 +131,7 @@ class Listing(Room, Generic[T]):
         if self.found is None:
             self.tell("")  # what kept it from being read
         self._asked, self.found = answer
+        self._all, self._drawn = tuple(self.rows(self.found)), (0, {})
         self._draw()
         self.draw_bar()
         if not self._rows and not self.query_one("#find", Input).value:
@@ -206,15 +209,22 @@ class Listing(Room, Generic[T]):
         lines = self.query_one("#lines", OptionList)
         before = self.under_cursor
         typed = self.query_one("#find", Input).value.strip().casefold()
-        shown = [row for row in self.rows(self.found) if _fits(row, typed)]
+        shown = [row for row in self._all if _fits(row, typed)]
         self._rows = {row.name: row for row in shown}
-        room = (self.query_one("#list").size.width or self.size.width) - _EDGE
-        wide = widths(self.columns, [row.cells for row in shown], room)
-        head = heading(self.columns, wide)
-        self.query_one("#columns", Words).say(Content.assemble(" ", head))
-        lines.set_options(_options(shown, self.columns, wide))
+        lines.set_options(_options(shown, self._lines()))
         self._go_to(before if before in self._rows else next(iter(self._rows), ""))
         self._draw_more()
+
+    def _lines(self) -> dict[str, Content]:
+        """Each line as it is drawn in the room there is: once, not at every letter typed."""
+        room = (self.query_one("#list").size.width or self.size.width) - _EDGE
+        if room != self._drawn[0]:
+            wide = widths(self.columns, [row.cells for row in self._all], room)
+            drawn = {row.name: line(self.columns, row.cells, wide) for row in self._all}
+            self._drawn = (room, drawn)
+            head = heading(self.columns, wide)
+            self.query_one("#columns", Words).say(Content.assemble(" ", head))
+        return self._drawn[1]
 
     def _draw_more(self) -> None:
         name = self.under_cursor
@@ -231,11 +241,9 @@ def _fits(row: Row, typed: str) -> bool:
     return not typed or any(typed in text.casefold() for text in texts)
 
 
-def _options(
-    shown: Sequence[Row], columns: Sequence[Column], wide: Sequence[int]
-) -> Iterator[Option]:
+def _options(shown: Sequence[Row], lines: Mapping[str, Content]) -> Iterator[Option]:
     for section, group in groupby(shown, key=lambda row: row.section):
         if section:
             yield Option(plain(f" {section}", "bold $primary"), disabled=True)
         for row in group:
-            yield Option(Content.assemble(" ", line(columns, row.cells, wide)), id=row.name)
+            yield Option(Content.assemble(" ", lines[row.name]), id=row.name)
