@@ -30,12 +30,21 @@ _EDGE = 3
 
 @dataclass(frozen=True, slots=True)
 class Row:
-    """One line: what it is called, under which heading it stands, its cells, and words to find."""
+    """One line: what it is called, under which heading it stands, its cells, and words to find.
+
+    `kind` tells apart what goes by one name: `key` is what the list knows the line by.
+    """
 
     name: str
     section: str
     cells: tuple[Cell, ...]
     words: str = ""
+    kind: str = ""
+
+    @property
+    def key(self) -> str:
+        """Its kind and its name: no two lines of a list have the same."""
+        return f"{self.kind} {self.name}" if self.kind else self.name
 
 
 class Listing(Room, Generic[T]):
@@ -75,7 +84,7 @@ class Listing(Room, Generic[T]):
         """The lines, those of one section one after the other."""
 
     def more(self, found: T, name: str, width: int) -> Content:
-        """More about a line, for a pane so wide."""
+        """More about a line, by its key, for a pane so wide."""
         return plain("")
 
     def nothing(self) -> str:
@@ -146,7 +155,7 @@ class Listing(Room, Generic[T]):
         """Enter: the line whose name was typed or scanned, else the one under the cursor."""
         event.stop()
         typed = event.value.strip().casefold()
-        exact = [name for name in self._rows if name.casefold() == typed]
+        exact = [key for key, row in self._rows.items() if row.name.casefold() == typed]
         name = exact[0] if exact else self.under_cursor
         if name:
             self.tell("")
@@ -170,7 +179,7 @@ class Listing(Room, Generic[T]):
 
     @property
     def under_cursor(self) -> str:
-        """The name of the line under the cursor, or empty."""
+        """The key of the line under the cursor, or empty."""
         option = self.query_one("#lines", OptionList).highlighted_option
         return "" if option is None else option.id or ""
 
@@ -210,7 +219,7 @@ class Listing(Room, Generic[T]):
         before = self.under_cursor
         typed = self.query_one("#find", Input).value.strip().casefold()
         shown = [row for row in self._all if _fits(row, typed)]
-        self._rows = {row.name: row for row in shown}
+        self._rows = {row.key: row for row in shown}
         lines.set_options(_options(shown, self._lines()))
         self._go_to(before if before in self._rows else next(iter(self._rows), ""))
         self._draw_more()
@@ -220,7 +229,7 @@ class Listing(Room, Generic[T]):
         room = (self.query_one("#list").size.width or self.size.width) - _EDGE
         if room != self._drawn[0]:
             wide = widths(self.columns, [row.cells for row in self._all], room)
-            drawn = {row.name: line(self.columns, row.cells, wide) for row in self._all}
+            drawn = {row.key: line(self.columns, row.cells, wide) for row in self._all}
             self._drawn = (room, drawn)
             head = heading(self.columns, wide)
             self.query_one("#columns", Words).say(Content.assemble(" ", head))
@@ -246,4 +255,4 @@ def _options(shown: Sequence[Row], lines: Mapping[str, Content]) -> Iterator[Opt
         if section:
             yield Option(plain(f" {section}", "bold $primary"), disabled=True)
         for row in group:
-            yield Option(Content.assemble(" ", lines[row.name]), id=row.name)
+            yield Option(Content.assemble(" ", lines[row.key]), id=row.key)

@@ -7,6 +7,7 @@ from collections.abc import Iterable
 from textual.content import Content
 
 from gaugelog.screens.columns import Cell, Column
+from gaugelog.screens.evidence_text import moment
 from gaugelog.screens.listing import Listing, Row
 from gaugelog.screens.words import CALM, WAIT, lines, plain, state_word
 from gaugelog.work.reviewing import Waiting, waiting_for_review
@@ -81,7 +82,7 @@ def _row(each: Waiting) -> Row:
             Cell(each.zone),
             Cell(str(each.revision)),
             Cell(each.submitted_by),
-            Cell(each.submitted_at[:16].replace("T", " ")),
+            Cell(moment(each.submitted_at)),
             Cell("– not yours", CALM) if each.bar else Cell("▸ yes"),
         ),
     )

@@ -57,13 +57,13 @@ class StockScreen(Listing[Stock]):
     def more(self, found: Stock, name: str, width: int) -> Content:
         """The packs of a lot, the data of a consumable, the ranges of an instrument."""
         for lot in found.lots:
-            if lot.lot.label == name:
+            if _lot(lot).key == name:
                 return lot_text(lot)
         for consumable in found.consumables:
-            if consumable.lot.label == name:
+            if _consumable(consumable).key == name:
                 return consumable_text(consumable)
         for instrument in found.instruments:
-            if instrument.instrument.label == name:
+            if _instrument(instrument).key == name:
                 return instrument_text(instrument)
         return plain("")
 
@@ -84,11 +84,12 @@ def _lot(shown: LotShown) -> Row:
             Cell(until(lot.expires, shown.days_left)),
         ),
         " ".join([lot.maker, *packs, *words]),
+        "lot",
     )
 
 
 def _lot_state(shown: LotShown) -> Cell:
-    held = _held(shown.barred, shown.days_left)
+    held = _held(shown.lot.label, shown.barred, shown.days_left)
     if held is not None:
         return held
     if shown.left < shown.wanted:
@@ -100,7 +101,7 @@ def _lot_state(shown: LotShown) -> Cell:
 
 def _consumable(shown: ConsumableShown) -> Row:
     lot = shown.lot
-    state = _held(shown.barred, shown.days_left) or _soon(shown.days_left)
+    state = _held(shown.lot.label, shown.barred, shown.days_left) or _soon(shown.days_left)
     what = Cell(f"{lot.type}: {lot.name}")
     cells = (Cell(lot.label, "bold"), what, Cell(""), Cell(""), state)
     return Row(
@@ -108,6 +109,7 @@ def _consumable(shown: ConsumableShown) -> Row:
         "Consumables",
         (*cells, Cell(until(lot.expires, shown.days_left))),
         f"{lot.maker} {lot.type}",
+        "consumable",
     )
 
 
@@ -120,13 +122,18 @@ def _instrument(shown: InstrumentShown) -> Row:
         "Instruments",
         (*cells, Cell(until(meter.due, shown.days_left))),
         f"{meter.maker} {meter.serial}",
+        "instrument",
     )
 
 
-def _held(barred: str, days_left: int | None) -> Cell | None:
-    """Why it must not be used, in a word; None when it may."""
+def _held(label: str, barred: str, days_left: int | None) -> Cell | None:
+    """Why it must not be used, in a word; None when it may.
+
+    The sentence begins `lot L-3504 is quarantined:`; what follows are people's own words.
+    """
+    _kind, _name, standing = barred.partition(f" {label} is ")
     for word in ("quarantined", "scrapped"):
-        if f" is {word}" in barred:
+        if standing.startswith(f"{word}:"):
             return Cell(f"✗ {word}", BAD)
     return Cell("✗ expired", BAD) if days_left is not None and days_left < 0 else None
 

@@ -68,15 +68,16 @@ class WiringScreen(Listing[Wired]):
                 yield _row(each, "Circuits")
         for spare in found.map.spare:
             cells = (spare.channel, spare.connector, "", "", "", "spare")
-            yield Row(spare.channel, "Spare channels", tuple(Cell(text, CALM) for text in cells))
+            drawn = tuple(Cell(text, CALM) for text in cells)
+            yield Row(spare.channel, "Spare channels", drawn, kind="spare")
 
     def more(self, found: Wired, name: str, width: int) -> Content:
         """The circuit in characters, or the pins of a spare channel."""
         for each in found.map.circuits:
-            if each.circuit == name:
-                return _circuit(each, found.bridges.get(name), width)
+            if name == f"circuit {each.circuit}":
+                return _circuit(each, found.bridges.get(each.circuit), width)
         for spare in found.map.spare:
-            if spare.channel == name:
+            if name == f"spare {spare.channel}":
                 pins = (plain(f"  {pin:>3}  {function}") for function, pin in spare.pins.items())
                 where = f", connector {spare.connector}" if spare.connector else ""
                 return lines(plain(f"channel {spare.channel}{where}: no circuit", "bold"), *pins)
@@ -106,6 +107,7 @@ def _row(circuit: CircuitWired, section: str) -> Row:
             state,
         ),
         f"{circuit.cable} {marks}",
+        "circuit",
     )
 
 
