@@ -7,10 +7,14 @@ import threading
 import pytest
 
 from gaugelog.errors import StorageTrouble
+from gaugelog.screens.attempt import Attempt
 from gaugelog.screens.desk import Desk, Seat
 from gaugelog.screens.evidence import EvidenceScreen
+from gaugelog.screens.step import StepScreen
 from gaugelog.screens.worklist import WorklistScreen
+from gaugelog.work.doing import StepOutcome
 from gaugelog.work.logbook import Logbook
+from gaugelog.work.looking import InHand
 from gaugelog.work.reviewing import Waiting, evidence_of, waiting_for_review
 from tests.screens.conftest import At
 from tests.screens.pilot import LARGE, Seen, run_screen
@@ -103,4 +107,50 @@ def test_a_list_that_could_not_be_read_is_read_when_it_can_be(
 
     job = at(23)
     job.submit()
+    run_screen(job.book, job.folder, play)
+
+
+def test_a_step_kept_after_the_seat_changed_is_not_carried_to_who_sits_there_now(
+    at: At, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    gate = threading.Event()
+
+    class Slowly(Attempt):
+        def __call__(self) -> tuple[StepOutcome, InHand]:
+            gate.wait(5)
+            return super().__call__()
+
+    async def play(seen: Seen) -> None:
+        monkeypatch.setattr("gaugelog.screens.step.Attempt", Slowly)
+        await seen.sign_on()
+        await seen.type("FB-1")
+        await seen.type("K7-03/1")
+        await seen.type("RM-2")
+        await seen.type("350.12", enter=False)
+        room = seen.room
+        assert isinstance(room, StepScreen)
+        room.action_do()
+        await seen.pilot.pause()
+        seen.app.desk.sit(Seat(job.keys["q.reyes"], "Quilla Reyes"))
+        room.seat_changed()
+        gate.set()
+        await seen.rest()
+        assert "3/23" in seen.text()
+        assert {} == room.draft.carried == seen.app.drafts.load("q.reyes").carried
+
+    job = at(1)
+    run_screen(job.book, job.folder, play)
+
+
+def test_no_room_on_top_ends_nothing(at: At, monkeypatch: pytest.MonkeyPatch) -> None:
+    def broken(*_: object) -> None:
+        raise StorageTrouble("The logbook can't be read.", "Look at the disk.")
+
+    async def play(seen: Seen) -> None:
+        assert [] == seen.app.rooms()
+        seen.app.go("worklist")
+        monkeypatch.setattr(Logbook, "head", broken)
+        assert not seen.app._something_kept()
+
+    job = at(0)
     run_screen(job.book, job.folder, play)

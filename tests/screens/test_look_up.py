@@ -101,6 +101,37 @@ def test_stock_shows_what_is_left_wanted_and_held(at: At, size: tuple[int, int])
     run_screen(job.book, job.folder, play, size=size)
 
 
+def test_a_lot_and_a_consumable_of_one_label_are_two_lines(tmp_path: Path) -> None:
+    files = changed_files(tmp_path, ("consumables.csv", "SO-17", "L-3504"))
+    job = released_job(tmp_path, files)
+
+    async def play(seen: Seen) -> None:
+        await seen.sign_on()
+        await seen.keys("f10")
+        await seen.type("L-3504", enter=False)
+        assert "pack K7-04: 5 of 5 left" in seen.text()
+        await seen.keys("down")
+        assert "tin-lead 60/40" in seen.text().rpartition("────")[0]
+        assert "pack K7-04" not in seen.text()
+
+    run_screen(job.book, job.folder, play, size=LARGE)
+
+
+def test_what_a_reason_says_of_a_standing_is_not_taken_for_it(at: At) -> None:
+    job = at(2)
+    for label in ("AD-612", "CT-088"):
+        reason = f"its box is quarantined: {label} is quarantined: wet"
+        set_standing(job.book, job.keys["t.okoro"], label=label, standing="scrapped", reason=reason)
+
+    async def play(seen: Seen) -> None:
+        await seen.sign_on()
+        await seen.keys("f10")
+        assert 2 == seen.text().count("✗ scrapped")
+        assert "✗ quarantined" not in seen.text()
+
+    run_screen(job.book, job.folder, play, size=LARGE)
+
+
 def test_what_expires_or_is_due_is_said_with_the_days(at: At) -> None:
     job = at(0)
     job.clock.advance(135 * 86400)
