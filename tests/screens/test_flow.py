@@ -27,12 +27,12 @@ async def _walk(seen: Seen, job: Job, counted: Counted) -> None:
         seen.room.facts_changed()
         await seen.rest()
         if who == "t.okoro":
-            await _do(seen, list(typed.values()), counted)
+            await _do(seen, typed, counted)
         else:
             await _decide(seen, who, counted)
 
 
-async def _do(seen: Seen, values: list[str], counted: Counted) -> None:
+async def _do(seen: Seen, values: dict[str, str], counted: Counted) -> None:
     assert isinstance(seen.room, StepScreen)
     before = _number(seen)
     if "Cautions read" in seen.lines()[-1]:
@@ -40,9 +40,9 @@ async def _do(seen: Seen, values: list[str], counted: Counted) -> None:
         counted.cautions += 1
     for _ in range(len(values)):
         focused = next(row for row in seen.room.entry.live if row.input.has_focus)
-        place = seen.room.entry.live.index(focused)
-        assert place < len(values), seen.text()
-        await seen.type(values[place])
+        if focused.item.name not in values:
+            break
+        await seen.type(values[focused.item.name])
         if _number(seen) != before:
             break
     extra = 0
@@ -85,7 +85,7 @@ def test_a_quarter_bridge_is_installed_with_at_most_one_key_a_step_beyond_its_va
     job = at(0)
     run_screen(job.book, job.folder, play)
     assert "awaiting review" == job.state()
-    assert 16 == len(counted.steps)
+    assert 21 == len(counted.steps)
     assert max(counted.steps) <= 1
     with capsys.disabled():
         print(
