@@ -81,7 +81,7 @@ def unseal(data: bytes, passphrase: str, what: str) -> KeyFile:
         # The cause is cut off: nothing that saw the passphrase may reach a log.
         raise KeyTrouble(
             f"The passphrase does not open {what}.",
-            "Type it again; if it is surely right, the file is damaged: restore it from a backup.",
+            "Type it again. A lost one can't be recovered: the custodian enrols the person anew.",
         ) from None
     if found.key is None or found.cert is None:
         raise KeyTrouble(

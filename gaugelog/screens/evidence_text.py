@@ -60,6 +60,7 @@ def _head(found: PointEvidence) -> Content:
 def _may(found: PointEvidence) -> Content:
     """What keeps the person here from judging it, or anyone from accepting it."""
     told = [plain(f"! {each}", BAD) for each in found.blocks]
+    told += [plain(f"! Look into: {each}", WAIT) for each in found.flags]
     if found.bar and found.record_state == "submitted":
         told.insert(0, plain(f"! You can't review this. {found.bar}", WAIT))
     return lines(*told) if told else plain("")

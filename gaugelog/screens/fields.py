@@ -23,6 +23,9 @@ WHEN = StepInput(name="~at", kind="text", prompt="Observed at, if not now (14:30
 OWN = frozenset({REASON.name, NOTE.name, WHEN.name})
 """Names of the fields that are the screen's, not the route's."""
 
+SCANNED = frozenset({"gauge", "consumable", "instrument"})
+"""Kinds of input that a scanner types."""
+
 _FEW_UNITS = 2
 
 
@@ -112,6 +115,8 @@ class FieldRow(Vertical):
     def say_fault(self, text: str) -> None:
         """Show what is wrong with the value."""
         self.beneath(plain(f"✗ {text}", BAD))
+        if self.item.kind in SCANNED:
+            self.input.action_select_all()  # the next code takes its place
 
     def changed(self) -> None:
         """The person typed: it is carried no more, and a fault may be mended."""

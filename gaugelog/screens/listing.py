@@ -162,6 +162,7 @@ class Listing(Room, Generic[T]):
             self.chosen(name)
         elif typed:
             self.tell(plain(f"✗ Nothing here is called “{event.value.strip()}”.", BAD))
+            event.input.action_select_all()  # the next code takes its place
 
     def on_option_list_option_selected(self, event: OptionList.OptionSelected) -> None:
         """A click is as good as the cursor."""

@@ -41,7 +41,11 @@ def pair_input(found: PinsFound, pair: PinPair) -> StepInput:
 
 def to_metal(found: PinsFound) -> list[PinPair]:
     """From each terminal to the bare metal of the article: open in a sound circuit."""
-    return [PinPair((terminal.name, _ARTICLE), math.inf) for terminal in found.terminals]
+    return [
+        PinPair((terminal.name, _ARTICLE), math.inf)
+        for terminal in found.terminals
+        if terminal.name != _ARTICLE
+    ]
 
 
 def answers_text(found: PinsFound) -> Content:

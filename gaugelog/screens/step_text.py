@@ -102,6 +102,7 @@ def holding_text(found: NextStep) -> Content:
         plain(f"◷ {window.sentence}", WAIT if not window.open else "") for window in found.windows
     ]
     told += [plain(f"! {block}", BAD) for block in found.blocks if block not in shut]
+    told += [plain(f"! Look into: {flag}", WAIT) for flag in found.flags]
     return lines(*told) if told else plain("")
 
 

@@ -128,6 +128,7 @@ class WorklistScreen(Room):
         chosen = exact[0] if exact else self._under_cursor()
         if chosen is None:
             self.tell(plain(f"✗ No point is called “{event.value.strip()}”.", BAD))
+            event.input.action_select_all()  # the next code takes its place
             return
         self._open(chosen)
 

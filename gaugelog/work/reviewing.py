@@ -15,6 +15,7 @@ from gaugelog.ledger.reviews import RecordRow
 from gaugelog.ledger.steps import StepRow
 from gaugelog.ledger.story import StoryRow
 from gaugelog.ledger.view import View
+from gaugelog.rules.flagged import flags_at
 from gaugelog.rules.margin import Margin, margin_of
 from gaugelog.rules.progress import route_for, state_of, subject_label
 from gaugelog.rules.taken import readings_at
@@ -117,6 +118,8 @@ class PointEvidence:
     """Why the person who looks may not judge it; empty when they may."""
     blocks: tuple[str, ...]
     """What keeps the record from being accepted, whoever looks."""
+    flags: tuple[str, ...] = ()
+    """What was flagged at steps and readings and is for the reviewer to weigh."""
 
     @property
     def skipped(self) -> tuple[StepTold, ...]:
@@ -159,6 +162,7 @@ def evidence_of(logbook: Logbook, point: str, person: str) -> PointEvidence:
             tuple(_story(view, row)),
             _bar(view, row.label, person),
             tuple(_blocks(logbook, view, row, last)),
+            flags_at(view, row),
         )
 
 

@@ -132,3 +132,16 @@ def test_only_keys_that_work_now_are_shown_and_offered_in_the_palette(at: At) ->
 
     job = at(0)
     run_screen(job.book, job.folder, play)
+
+
+def test_a_code_that_was_refused_makes_room_for_the_next(at: At) -> None:
+    async def play(seen: Seen) -> None:
+        await seen.sign_on()
+        await seen.type("ZZ-9")
+        assert "No point is called “ZZ-9”." in seen.text()
+        await seen.type("FB-2")
+        assert isinstance(seen.room, StepScreen)
+        assert "FB-2" in seen.lines()[0]
+
+    job = at(0)
+    run_screen(job.book, job.folder, play)

@@ -12,7 +12,7 @@ from gaugelog.work import photos, reviews, steps
 from gaugelog.work.reviewing import PointEvidence, evidence_of, waiting_for_review
 from gaugelog.work.standing import set_standing
 from tests.pictures import camera_jpeg
-from tests.work.job import WALK, Job, before
+from tests.work.job import TYPED, WALK, Job, before
 
 INSULATION, LOOP = before("insulation"), before("loop")
 """Steps before the first insulation, and before the lead loop, which may be skipped."""
@@ -132,3 +132,11 @@ def test_photos_are_told_with_their_step_and_note(job: Job, tmp_path: Path) -> N
 def test_there_is_no_evidence_of_a_point_that_is_not_there(job: Job) -> None:
     with pytest.raises(Refused, match="no point FB-9"):
         seen(job, point="FB-9")
+
+
+def test_what_was_flagged_stands_before_the_reviewer(job: Job) -> None:
+    job.walk(before("insulation"))
+    for step, value in (("insulation", "18 GΩ"), ("wires", ""), ("cabled", "1.2 GΩ")):
+        who, typed = TYPED[step]
+        job.do(who, {**typed, "insulation": value} if value else typed)
+    assert any("1.2 GΩ" in flag or "fell" in flag for flag in seen(job).flags)
