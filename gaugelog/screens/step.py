@@ -6,7 +6,7 @@ from collections.abc import Iterable
 from datetime import datetime
 from typing import ClassVar
 
-from textual.binding import Binding, BindingType
+from textual.binding import BindingType
 from textual.containers import Horizontal, VerticalScroll
 from textual.content import Content
 from textual.widget import Widget
@@ -24,7 +24,7 @@ from gaugelog.screens.hold import HoldDialog
 from gaugelog.screens.pins import METER, PinsScreen
 from gaugelog.screens.rail import Rail
 from gaugelog.screens.room import Room, show
-from gaugelog.screens.step_keys import cautions_wait, working_keys
+from gaugelog.screens.step_keys import KEYS, cautions_wait, working_keys
 from gaugelog.screens.submit import SubmitDialog
 from gaugelog.screens.walk import NoteDialog, RedoDialog, SkipDialog
 from gaugelog.screens.words import BAD, CALM, WAIT, Words, lines, plain
@@ -44,23 +44,7 @@ class StepScreen(Room):
         "then measure again and say why."
     )
 
-    BINDINGS: ClassVar[list[BindingType]] = [
-        Binding("space", "acknowledge", "Cautions read"),
-        Binding("enter", "do", "Done"),
-        Binding("f5", "hold", "Decide the hold"),
-        Binding("f5", "submit", "Submit the record"),
-        Binding("f6", "pins", "Find the cause"),
-        Binding("f7", "redo", "Earlier step"),
-        Binding("f9", "skip", "Skip"),
-        Binding("ctrl+l", "leave", "Leave a note"),
-        Binding("ctrl+n", "add('note')", "Note", show=False),
-        Binding("ctrl+o", "add('when')", "Observed at", show=False),
-        Binding("up,shift+tab", "app.focus_previous", "Up", show=False),
-        Binding("down,tab", "app.focus_next", "Down", show=False),
-        Binding("pageup", "scroll(-1)", "Page up", show=False),
-        Binding("pagedown", "scroll(1)", "Page down", show=False),
-        Binding("escape", "app.go('worklist')", "Worklist", show=False),
-    ]
+    BINDINGS: ClassVar[list[BindingType]] = KEYS
 
     def __init__(self, point: str) -> None:
         super().__init__()
@@ -124,7 +108,7 @@ class StepScreen(Room):
         hand = None if self.busy else self._look()
         if hand is None:
             return
-        if before is not None and not _same(before, hand):
+        if before is not None and not text.same(before, hand):
             self.call_later(self._show, hand, True)
             return
         self.hand = hand
@@ -263,15 +247,17 @@ class StepScreen(Room):
             at,
         )
         person = self._person()
-        self.in_background(
-            "Keeping it", attempt, lambda what: self._done(what, person), self._refused
-        )
 
-    def _done(self, what: tuple[StepOutcome, InHand], person: str) -> None:
-        outcome, hand = what
-        if person != self._person():  # handed over meanwhile: nothing of it is the next person's
-            self.facts_changed()
-            return
+        def done(what: tuple[StepOutcome, InHand]) -> None:
+            self._done(*what) if person == self._person() else self.facts_changed()
+
+        def refused(error: GaugelogError) -> None:
+            self._refused(error) if person == self._person() else self.tell_error(error)
+
+        # Handed over meanwhile, nothing of it is entered in the next person's name.
+        self.in_background("Keeping it", attempt, done, refused)
+
+    def _done(self, outcome: StepOutcome, hand: InHand) -> None:
         self.entry.carry(self.draft, self._now())
         self.tell(text.outcome_text(outcome))
         self._go_on(hand)
@@ -400,8 +386,3 @@ class StepScreen(Room):
         seat = self.desk.seat
         if seat is not None and not self.full.drafts.save(seat.person, self.draft):
             self.tell(plain("! What is half typed can't be put away; what was kept is safe.", CALM))
-
-
-def _same(one: InHand, other: InHand) -> bool:
-    """Whether the same is asked for: the same step, on the same subject, for the same reason."""
-    return text.step_key(one) == text.step_key(other) and one.next.again == other.next.again

@@ -2,7 +2,28 @@
 
 from __future__ import annotations
 
+from textual.binding import Binding, BindingType
+
 from gaugelog.rules.progress import NextStep
+
+KEYS: list[BindingType] = [
+    Binding("space", "acknowledge", "Cautions read"),
+    Binding("enter", "do", "Done"),
+    Binding("f5", "hold", "Decide the hold"),
+    Binding("f5", "submit", "Submit the record"),
+    Binding("f6", "pins", "Find the cause"),
+    Binding("f7", "redo", "Earlier step"),
+    Binding("f9", "skip", "Skip"),
+    Binding("ctrl+l", "leave", "Leave a note"),
+    Binding("ctrl+n", "add('note')", "Note", show=False),
+    Binding("ctrl+o", "add('when')", "Observed at", show=False),
+    Binding("up,shift+tab", "app.focus_previous", "Up", show=False),
+    Binding("down,tab", "app.focus_next", "Down", show=False),
+    Binding("pageup", "scroll(-1)", "Page up", show=False),
+    Binding("pagedown", "scroll(1)", "Page down", show=False),
+    Binding("escape", "app.go('worklist')", "Worklist", show=False),
+]
+"""The keys of the step's screen; which of them work now is for `working_keys` to say."""
 
 _AT_REST = frozenset({"planned", "awaiting review", "accepted", "withdrawn"})
 

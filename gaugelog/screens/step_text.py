@@ -179,6 +179,11 @@ def step_key(hand: InHand) -> str:
     return f"{step.id}/{hand.next.subject}" if step is not None else f"end/{hand.next.state}"
 
 
+def same(one: InHand, other: InHand) -> bool:
+    """Whether the same is asked for: the same step, on the same subject, for the same reason."""
+    return step_key(one) == step_key(other) and one.next.again == other.next.again
+
+
 def at_the_end(state: str) -> str:
     """What stands in place of an instruction when the route is walked."""
     return _ENDS.get(
