@@ -1,4 +1,4 @@
-"""Qualifications: a step that names one is done by people who hold it, and while it lasts."""
+"""Qualifications: steps are done by people who hold what they need, and while it lasts."""
 
 from __future__ import annotations
 
@@ -19,8 +19,12 @@ def qualifications_of(view: View, person: str) -> tuple[Qualification, ...]:
 
 
 def demand_qualified(view: View, person: str, step: RouteStep, day: date) -> None:
-    """Raise Refused unless the person holds, on that day, the qualification the step names."""
+    """Raise Refused unless the person holds, on that day, the qualification the step names.
+
+    Where it names none, any that is in force will do; nobody works on after the last has lapsed.
+    """
     if not step.qualification:
+        _demand_one_in_force(view, person, day)
         return
     wanted = step.qualification.casefold()
     held = [
@@ -39,8 +43,19 @@ def demand_qualified(view: View, person: str, step: RouteStep, day: date) -> Non
     )
 
 
+def _demand_one_in_force(view: View, person: str, day: date) -> None:
+    held = qualifications_of(view, person)
+    if held and all(has_lapsed(each, day) for each in held):
+        last = max(held, key=lambda each: str(each.until))
+        raise Refused(
+            f"{person} has no qualification in force: “{last.name}” ended on {last.until}.",
+            "Have it done by someone who is qualified, or have the custodian enrol the person "
+            "anew.",
+        )
+
+
 def lapsed_flags(view: View, person: str, day: date) -> list[str]:
-    """What a person's qualifications leave to be said where the step names none."""
+    """What lapsed of a person's qualifications while another is still in force."""
     return [
         f"The qualification “{each.name}” of {person} ended on {each.until}."
         for each in qualifications_of(view, person)

@@ -43,7 +43,7 @@ def test_a_step_without_a_flag_shows_none(job: Job) -> None:
 
 
 def test_a_lapsed_qualification_is_on_the_record_and_never_markup(job: Job) -> None:
-    qualify(job, "t.okoro", "technician", LAPSED)
+    qualify(job, "t.okoro", "technician", LAPSED, "wiring until 2027-01-01")
     job.do("t.okoro", typed_here(job)[1])
     content = _content(job)
     flag = "The qualification “bonding <b>& more” of t.okoro ended on 2026-11-16."

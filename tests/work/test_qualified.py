@@ -65,8 +65,8 @@ def _done(job: Job) -> Mapping[str, Any]:
 
 def _reach_bond(job: Job, *qualifications: str) -> None:
     qualify(job, "q.reyes", "reviewer", NEEDED)
-    qualify(job, "t.okoro", "technician", *qualifications)
     walk_to(job, "bond")
+    qualify(job, "t.okoro", "technician", *qualifications)
 
 
 @pytest.mark.parametrize(
@@ -123,3 +123,11 @@ def test_a_lapsed_qualification_is_told_where_no_step_names_it(job: Job) -> None
     qualify(job, "t.okoro", "technician", "bonding until 2026-11-16", "wiring until 2027-01-01")
     job.do("t.okoro", typed_here(job)[1])
     assert ["The qualification “bonding” of t.okoro ended on 2026-11-16."] == _done(job)["flags"]
+
+
+def test_nobody_works_on_after_the_last_qualification_has_lapsed(job: Job) -> None:
+    qualify(job, "t.okoro", "technician", "bonding until 2026-10-01", "wiring until 2026-11-16")
+    with pytest.raises(Refused, match="no qualification in force: “wiring” ended on 2026-11-16"):
+        job.do("t.okoro", typed_here(job)[1])
+    qualify(job, "t.okoro", "technician", "bonding until 2026-10-01", "wiring until 2026-11-17")
+    assert job.do("t.okoro", typed_here(job)[1]).settled
