@@ -23,6 +23,13 @@ def tell_step(found: NextStep) -> None:
         return
     if found.step.inputs:
         put("", "To enter:", *(_input_line(item) for item in found.step.inputs))
+    if found.step.hold:
+        put(
+            "",
+            *wrapped(
+                "The second person names themselves with --as ID; --refuse WHY sends it back."
+            ),
+        )
     put("", *([] if found.blocks else [f"Next: {_command(found)}"]), *_ways_back(found))
 
 

@@ -37,6 +37,7 @@ def test_several_steps_are_kept_with_one_unlock_up_to_the_hold(walk: Walk) -> No
     assert 4 == told.err.count("is done.")
     assert "resistance received 350.2 ohm: PASS" in told.out
     assert "Step 5 of 23, a HOLD: a second person decides" in told.out
+    assert "--as ID; --refuse WHY sends it back." in told.out
     assert told.out.rstrip().endswith("Next: gaugelog step do FB-1")
 
 

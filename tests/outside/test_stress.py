@@ -93,6 +93,11 @@ def test_turned_and_principal_stresses_are_those_of_the_tensor() -> None:
     assert vectors[1, 1] / vectors[0, 1] == pytest.approx(np.tan(ends.angle))
 
 
+def test_steel_has_the_shear_modulus_of_the_tables() -> None:
+    """Gere, Mechanics of Materials, table of moduli: steel 200 GPa, 0.3, 77 GPa (from memory)."""
+    assert 77e9 == pytest.approx(stress.shear_modulus(200e9, 0.30), rel=0.01)
+
+
 def test_equal_moduli_make_an_orthotropic_layer_isotropic() -> None:
     # Hooke's law with E1 = E2 and G = E/(2 (1 + ν)); Jones, Mechanics of Composite Materials (from
     # memory)
